@@ -1,0 +1,111 @@
+import { builtinModules } from 'node:module';
+import js from '@eslint/js';
+import nx from '@nx/eslint-plugin';
+import reactHooks from 'eslint-plugin-react-hooks';
+import tseslint from 'typescript-eslint';
+
+/**
+ * Which of our projects may import which. A project that is not listed here fails lint as soon as it imports one of ours.
+ * The table is explained in DEVELOPERS.md; tests/house plants a forbidden import of each kind and sees it refused.
+ */
+const mayImport = {
+  units: [],
+  geometry: [],
+  storage: [],
+  config: [],
+  contracts: ['units'],
+  mechanics: ['contracts', 'units'],
+  jobs: ['contracts', 'units'],
+  pictures: ['contracts', 'units'],
+  client: ['contracts'],
+  drizzle: ['contracts'],
+  api: ['config', 'contracts', 'drizzle', 'jobs', 'storage', 'mechanics', 'units'],
+  worker: ['config', 'contracts', 'drizzle', 'jobs', 'storage', 'mechanics', 'units', 'geometry', 'pictures'],
+  web: ['client', 'contracts', 'mechanics', 'pictures', 'units'],
+  cli: ['config', 'contracts', 'geometry', 'mechanics', 'units', 'client'],
+};
+/** Development only: these may import anything, and nothing imports them. */
+const freeToImport = ['demo', 'tests', 'bench'];
+
+const depConstraints = [
+  ...Object.entries(mayImport).map(([project, allowed]) => ({
+    sourceTag: `project:${project}`,
+    onlyDependOnLibsWithTags: [`project:${project}`, ...allowed.map((name) => `project:${name}`)],
+  })),
+  ...freeToImport.map((project) => ({
+    sourceTag: `project:${project}`,
+    onlyDependOnLibsWithTags: [...Object.keys(mayImport), project].map((name) => `project:${name}`),
+  })),
+];
+
+const nodeModules = [...builtinModules, 'node:*'];
+const frameworks = ['react', 'react-dom', 'react-dom/*', '@nestjs/*', 'three', 'three/*', '@react-three/*', 'drizzle-orm', 'drizzle-orm/*'];
+const queueLibraries = ['bullmq', '@nestjs/bullmq', 'ioredis'];
+const forbid = (group, message) => ({ group, message });
+const restrict = (...patterns) => ['error', { patterns }];
+
+export default tseslint.config(
+  { ignores: ['**/dist/**', '**/node_modules/**', '**/.nx/**', '**/.data/**', '**/.test/**', 'coverage/**', '**/*.generated.ts'] },
+  js.configs.recommended,
+  ...tseslint.configs.recommendedTypeChecked.map((config) => ({ ...config, files: ['**/*.{ts,tsx}'] })),
+  {
+    files: ['**/*.{ts,tsx}'],
+    languageOptions: { parserOptions: { projectService: true, tsconfigRootDir: import.meta.dirname } },
+    plugins: { '@nx': nx },
+    rules: {
+      '@nx/enforce-module-boundaries': ['error', { allow: ['^.*/vite\\.shared$'], depConstraints }],
+      '@typescript-eslint/consistent-type-imports': ['error', { fixStyle: 'inline-type-imports' }],
+      '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
+      '@typescript-eslint/no-explicit-any': 'error',
+      '@typescript-eslint/switch-exhaustiveness-check': ['error', { considerDefaultExhaustiveForUnions: true }],
+      eqeqeq: ['error', 'always'],
+    },
+  },
+  {
+    files: ['**/*.mjs'],
+    languageOptions: { globals: { process: 'readonly', console: 'readonly', URL: 'readonly', fetch: 'readonly', setTimeout: 'readonly', clearTimeout: 'readonly', setInterval: 'readonly', clearInterval: 'readonly', performance: 'readonly', Buffer: 'readonly', AbortController: 'readonly', AbortSignal: 'readonly' } },
+    rules: { 'no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }] },
+  },
+  {
+    // They run in a browser, in a worker thread and on a server alike.
+    files: ['libs/{units,geometry,mechanics}/src/**/*.ts'],
+    ignores: ['**/*.spec.ts'],
+    rules: {
+      'no-restricted-imports': restrict(
+        forbid(nodeModules, 'units, geometry and mechanics use no Node API: they run in a browser too.'),
+        forbid(frameworks, 'units, geometry and mechanics use no framework.'),
+      ),
+      'no-restricted-globals': ['error', 'process', 'Buffer', 'require', '__dirname'],
+    },
+  },
+  {
+    // No rounding that differs between engines may reach a recorded bit.
+    files: ['libs/{geometry,mechanics}/src/**/*.ts'],
+    ignores: ['**/*.spec.ts'],
+    rules: {
+      'no-restricted-properties': ['error', ...['hypot', 'pow', 'sin', 'cos', 'tan', 'asin', 'acos', 'atan', 'atan2', 'exp', 'log', 'cbrt', 'sinh', 'cosh', 'tanh'].map((property) => ({ object: 'Math', property, message: 'Engines may round it differently; only + - * / and Math.sqrt are exact to the last bit.' }))],
+    },
+  },
+  {
+    files: ['apps/api/**/*.ts'],
+    rules: {
+      'no-restricted-imports': restrict(
+        forbid(queueLibraries, 'The api never touches the queue: it writes to the outbox, the worker relays.'),
+        forbid(['@masswright/geometry', '@masswright/geometry/*', '**/libs/geometry/**'], 'The api never touches a mesh: the worker measures.'),
+      ),
+    },
+  },
+  {
+    files: ['apps/web/**/*.{ts,tsx}'],
+    ...reactHooks.configs.flat['recommended-latest'],
+  },
+  {
+    files: ['apps/web/src/features/**/*.{ts,tsx}'],
+    rules: {
+      'no-restricted-imports': restrict(
+        forbid(['../../*/**', '**/features/*/**', '**/routes/**', '**/app/**'], 'Features never import each other, routes or the app: routes compose them.'),
+        forbid(nodeModules, 'The web application has no Node API.'),
+      ),
+    },
+  },
+);
