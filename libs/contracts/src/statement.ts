@@ -1,0 +1,44 @@
+import { z } from 'zod';
+import { lengthUnit } from './setting';
+import { symmetric3, vector3 } from './common';
+import { meshFormat, measuringError, soundness } from './measurement';
+
+/** Elements of the inertia matrix: off-diagonals are -∫xy dm, said in the record itself. */
+export const inertiaTensor = symmetric3.extend({ offDiagonals: z.literal('-∫xy dm') });
+export type InertiaTensor = z.infer<typeof inertiaTensor>;
+
+/** distinct: three axes. disc-like: I₁=I₂<I₃, axis 3 alone is unique. rod-like: I₁<I₂=I₃, axis 1 alone is unique. ball: none is. */
+export const axesKind = z.enum(['distinct', 'disc-like', 'rod-like', 'ball']);
+export type AxesKind = z.infer<typeof axesKind>;
+
+/** The record of a statement: the same keys in the api, in exports and on the command line. SI throughout. */
+export const statementRecord = z.object({
+  schema: z.literal('masswright.statement/1'),
+  file: z.string(),
+  sha256: z.string(),
+  format: meshFormat,
+  lengthUnit,
+  facets: z.number().int(),
+  measuringVersion: z.string(),
+  soundness,
+  densityKgM3: z.number().nullable(),
+  volumeM3: z.number().nullable(),
+  areaM2: z.number(),
+  massKg: z.number().nullable(),
+  boundingBoxM: z.object({ min: vector3, max: vector3 }),
+  frame: z.literal('mesh'),
+  centreOfMassM: vector3.nullable(),
+  inertiaAtCentreOfMassKgM2: inertiaTensor.nullable(),
+  principalMomentsKgM2: vector3.nullable(),
+  principalAxes: z.tuple([vector3, vector3, vector3]).nullable(),
+  axes: axesKind.nullable(),
+  radiiOfGyrationM: vector3.nullable(),
+  aboutAxis: z
+    .object({ pointM: vector3, direction: vector3, inertiaKgM2: z.number(), radiusOfGyrationM: z.number() })
+    .nullable(),
+});
+export type StatementRecord = z.infer<typeof statementRecord>;
+
+/** What stands in the record's place for a file that could not be measured. */
+export const failedRecord = z.object({ file: z.string(), error: measuringError });
+export type FailedRecord = z.infer<typeof failedRecord>;
