@@ -1,0 +1,12 @@
+export { createObjectStorage, type ObjectStorage } from './object-storage';
+export { ObjectStorageError, type ObjectStorageErrorCode } from './object-storage-error';
+export { type ObjectContent, type ObjectRange } from './object-reader';
+export { type ObjectStorageOptions } from './object-storage-options';
+export {
+  largestPartNumber,
+  smallestPartBytes,
+  type OpenUpload,
+  type PartPresignRequest,
+  type StoredPart,
+  type UploadedPart,
+} from './multipart-upload';
