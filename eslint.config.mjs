@@ -18,7 +18,7 @@ const mayImport = {
   jobs: ['contracts', 'units'],
   pictures: ['contracts', 'units'],
   client: ['contracts'],
-  drizzle: ['contracts'],
+  drizzle: ['contracts', 'config'],
   api: ['config', 'contracts', 'drizzle', 'jobs', 'storage', 'mechanics', 'units'],
   worker: ['config', 'contracts', 'drizzle', 'jobs', 'storage', 'mechanics', 'units', 'geometry', 'pictures'],
   web: ['client', 'contracts', 'mechanics', 'pictures', 'units'],

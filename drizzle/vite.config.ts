@@ -1,4 +1,7 @@
-import { defineConfig } from 'vitest/config';
-import { library } from '../vite.shared';
+import { defineConfig, mergeConfig } from 'vitest/config';
+import { nodeProgram } from '../vite.shared';
 
-export default defineConfig(library('drizzle'));
+// The migration program finds its SQL files beside it.
+export default defineConfig(
+  mergeConfig(nodeProgram('drizzle', { migrate: 'src/migration/main.ts' }), { publicDir: 'migrations', build: { copyPublicDir: true } }),
+);

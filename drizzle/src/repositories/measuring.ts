@@ -1,0 +1,188 @@
+import { sql } from 'drizzle-orm';
+import { and, eq, inArray } from 'drizzle-orm';
+import type { Integrals, Measurement, MeasuringError, MeasuringRun, Symmetric3, Vector3 } from '@masswright/contracts';
+import { measurements, measuringRuns, parts, revisions, uploads } from '../schema';
+import type { Transaction } from '../tenancy/database';
+
+/** A run that this worker has taken up: what to read, and the fence that its writes must still match. */
+export interface TakenRun {
+  runId: string;
+  fence: number;
+  revisionId: string;
+  projectId: string;
+  partId: string;
+  uploadId: string;
+  objectKey: string;
+  sizeBytes: number;
+}
+
+/** Takes up a run that isn't finished and raises its fence, which shuts out whoever had it before. Undefined when it is finished. */
+export async function takeRun(tx: Transaction, runId: string): Promise<TakenRun | undefined> {
+  const [taken] = await tx
+    .update(measuringRuns)
+    .set({ fence: sql`${measuringRuns.fence} + 1`, state: 'running', stage: 'reading', progress: 0, startedAt: sql`now()` })
+    .where(and(eq(measuringRuns.id, runId), inArray(measuringRuns.state, ['queued', 'running'])))
+    .returning({ fence: measuringRuns.fence, revisionId: measuringRuns.revisionId });
+  if (taken === undefined) return undefined;
+  const [found] = await tx
+    .select({
+      projectId: parts.projectId,
+      partId: parts.id,
+      uploadId: uploads.id,
+      objectKey: uploads.objectKey,
+      sizeBytes: uploads.sizeBytes,
+    })
+    .from(revisions)
+    .innerJoin(parts, and(eq(parts.organisationId, revisions.organisationId), eq(parts.id, revisions.partId)))
+    .innerJoin(uploads, and(eq(uploads.organisationId, revisions.organisationId), eq(uploads.id, revisions.uploadId)))
+    .where(eq(revisions.id, taken.revisionId));
+  if (found === undefined) throw new Error('The revision of a run is gone.');
+  return { runId, ...taken, ...found };
+}
+
+const held = (run: Pick<TakenRun, 'runId' | 'fence'>) =>
+  and(eq(measuringRuns.id, run.runId), eq(measuringRuns.fence, run.fence), eq(measuringRuns.state, 'running'));
+
+/** Notes how far a run is; false when another worker has taken it up since. */
+export async function noteProgress(
+  tx: Transaction,
+  run: Pick<TakenRun, 'runId' | 'fence'>,
+  progress: Pick<MeasuringRun, 'stage' | 'progress'>,
+): Promise<boolean> {
+  const rows = await tx.update(measuringRuns).set(progress).where(held(run)).returning({ id: measuringRuns.id });
+  return rows.length > 0;
+}
+
+/** Puts a run back to wait, for a worker that shuts down; false when another has it. */
+export async function handBackRun(tx: Transaction, run: Pick<TakenRun, 'runId' | 'fence'>): Promise<boolean> {
+  const rows = await tx
+    .update(measuringRuns)
+    .set({ state: 'queued', stage: 'waiting', progress: 0, startedAt: null })
+    .where(held(run))
+    .returning({ id: measuringRuns.id });
+  return rows.length > 0;
+}
+
+const vectorOf = (values: readonly number[] | null): Vector3 => {
+  const [x, y, z] = values ?? [];
+  if (x === undefined || y === undefined || z === undefined) throw new Error('A stored vector has fewer than three elements.');
+  return [x, y, z];
+};
+const symmetricOf = (values: readonly number[] | null): Symmetric3 => {
+  const [xx, yy, zz, xy, yz, zx] = values ?? [];
+  if (xx === undefined || yy === undefined || zz === undefined || xy === undefined || yz === undefined || zx === undefined) {
+    throw new Error('A stored tensor has fewer than six elements.');
+  }
+  return { xx, yy, zz, xy, yz, zx };
+};
+const listOf = ({ xx, yy, zz, xy, yz, zx }: Symmetric3): number[] => [xx, yy, zz, xy, yz, zx];
+
+type MeasurementRow = typeof measurements.$inferSelect;
+
+/** The measurement that a row holds, bit for bit. */
+export function presentMeasurement(row: MeasurementRow): Measurement {
+  const volume: Integrals | null =
+    row.volume === null
+      ? null
+      : { content: row.volume, centreFromOrigin: vectorOf(row.volumeCentreFromOrigin), second: symmetricOf(row.volumeSecond) };
+  return {
+    measuringVersion: row.measuringVersion,
+    format: row.format,
+    facets: row.facets,
+    origin: vectorOf(row.origin),
+    boundingBox: { min: vectorOf(row.boxMin), max: vectorOf(row.boxMax) },
+    volume,
+    surface: { content: row.area, centreFromOrigin: vectorOf(row.areaCentreFromOrigin), second: symmetricOf(row.areaSecond) },
+    soundness: {
+      closed: row.closed,
+      oriented: row.oriented,
+      outward: row.outward,
+      turned: row.turned,
+      boundaryEdges: row.boundaryEdges,
+      nonManifoldEdges: row.nonManifoldEdges,
+      degenerateFacets: row.degenerateFacets,
+      duplicateFacets: row.duplicateFacets,
+      defensible: row.defensible,
+      findings: row.findings,
+    },
+  };
+}
+
+/** Keeps a measurement, once an organisation, file and measuring version; gives the id of the one that is kept. */
+export async function keepMeasurement(
+  tx: Transaction,
+  kept: { organisationId: string; sha256: Buffer; measurement: Measurement },
+): Promise<string> {
+  const { organisationId, sha256, measurement } = kept;
+  const { soundness } = measurement;
+  const [inserted] = await tx
+    .insert(measurements)
+    .values({
+      organisationId,
+      sha256,
+      measuringVersion: measurement.measuringVersion,
+      format: measurement.format,
+      facets: measurement.facets,
+      origin: measurement.origin,
+      boxMin: measurement.boundingBox.min,
+      boxMax: measurement.boundingBox.max,
+      volume: measurement.volume?.content ?? null,
+      volumeCentreFromOrigin: measurement.volume?.centreFromOrigin ?? null,
+      volumeSecond: measurement.volume === null ? null : listOf(measurement.volume.second),
+      area: measurement.surface.content,
+      areaCentreFromOrigin: measurement.surface.centreFromOrigin,
+      areaSecond: listOf(measurement.surface.second),
+      closed: soundness.closed,
+      oriented: soundness.oriented,
+      outward: soundness.outward,
+      turned: soundness.turned,
+      defensible: soundness.defensible,
+      boundaryEdges: soundness.boundaryEdges,
+      nonManifoldEdges: soundness.nonManifoldEdges,
+      degenerateFacets: soundness.degenerateFacets,
+      duplicateFacets: soundness.duplicateFacets,
+      findings: soundness.findings,
+    })
+    .onConflictDoNothing({ target: [measurements.organisationId, measurements.sha256, measurements.measuringVersion] })
+    .returning({ id: measurements.id });
+  if (inserted !== undefined) return inserted.id;
+  const id = await findMeasurement(tx, sha256, measurement.measuringVersion);
+  if (id === undefined) throw new Error('A measurement conflicts with one that cannot be seen.');
+  return id;
+}
+
+/** The id of the organisation's measurement of a file, if there is one. */
+export async function findMeasurement(tx: Transaction, sha256: Buffer, measuringVersion: string): Promise<string | undefined> {
+  const [row] = await tx
+    .select({ id: measurements.id })
+    .from(measurements)
+    .where(and(eq(measurements.sha256, sha256), eq(measurements.measuringVersion, measuringVersion)));
+  return row?.id;
+}
+
+/** Ends a run with its measurement; false when another worker has taken it up since, and then nothing may be committed. */
+export async function finishRun(tx: Transaction, run: Pick<TakenRun, 'runId' | 'fence'>, measurementId: string): Promise<boolean> {
+  const rows = await tx
+    .update(measuringRuns)
+    .set({ state: 'done', stage: 'storing', progress: 1, measurementId, finishedAt: sql`now()` })
+    .where(held(run))
+    .returning({ id: measuringRuns.id });
+  return rows.length > 0;
+}
+
+/** Ends a run with the reason why the file can't be measured; false as above. */
+export async function failRun(tx: Transaction, run: Pick<TakenRun, 'runId' | 'fence'>, error: MeasuringError): Promise<boolean> {
+  const rows = await tx
+    .update(measuringRuns)
+    .set({
+      state: 'failed',
+      errorCode: error.code,
+      errorMessage: error.message,
+      errorByte: error.at?.byte ?? null,
+      errorLine: error.at?.line ?? null,
+      finishedAt: sql`now()`,
+    })
+    .where(held(run))
+    .returning({ id: measuringRuns.id });
+  return rows.length > 0;
+}

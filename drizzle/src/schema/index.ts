@@ -1,0 +1,4 @@
+export * from './attempts';
+export * from './parts';
+export * from './people';
+export * from './records';
