@@ -1,4 +1,4 @@
 import { defineConfig } from 'vitest/config';
 import { library } from '../vite.shared';
 
-export default defineConfig(library('storage'));
+export default defineConfig(library('storage', { testTimeout: 30_000 }));

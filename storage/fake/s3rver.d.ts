@@ -22,7 +22,7 @@ declare module 's3rver' {
     store: object;
     context: { store: object };
     silent: boolean;
-    on(event: 'error', listener: (error: Error & { status?: number }) => void): this;
+    on(event: 'error', listener: (error: Error & { status?: number; code?: string }) => void): this;
     callback(): RequestListener;
   }
   export default S3rver;

@@ -69,7 +69,8 @@ export async function startFakeObjectStorage(options) {
   app.store = app.context.store = store;
   app.silent = true;
   app.on('error', (error) => {
-    if ((error.status ?? 500) >= 500) console.error(JSON.stringify({ level: 'error', event: 'request-failed', message: error.message, stack: error.stack }));
+    const cutByClient = ['ECONNRESET', 'EPIPE', 'ERR_STREAM_PREMATURE_CLOSE', 'HPE_INVALID_EOF_STATE'].includes(error.code ?? '');
+    if (!cutByClient && ![501, 503].includes(error.status ?? 500) && (error.status ?? 500) >= 500) console.error(JSON.stringify({ level: 'error', event: 'request-failed', message: error.message, stack: error.stack }));
   });
   // After s3rver's first two steps, which log and turn plain objects into XML; before its routes.
   app.middleware.splice(2, 0, guard(store, options));
