@@ -1,0 +1,127 @@
+import { facetBytes } from './detect-format';
+import type { FacetBatch } from './facet-batch';
+import { isDegenerate, isNormalContradicting } from './facet-shape';
+import { createFacetSums } from './facet-sums';
+import { finishIntegrals } from './finish-integrals';
+import { integrateBlocked } from './integrate-blocked';
+import { chooseOpenSums, chooseSums } from './integrate-mesh';
+import { findingFacets, measuringVersion, type Measurement, type Vector3 } from './measurement';
+import { createMeshReader } from './mesh-reader';
+import { checkConnections, judgeSoundness, noOccurrence, type Occurrence } from './soundness';
+import { createWelder } from './weld-corners';
+
+/** The limit where the caller names none; the README says what memory it takes. */
+export const defaultMaximumFacets = 20_000_000;
+
+export interface MeasurerOptions {
+  /** Size of the whole file; exactly so many bytes must be pushed. */
+  sizeBytes: number;
+  /** A mesh of more facets is refused (`too-many-facets`) before memory is taken for them. */
+  maximumFacets?: number;
+}
+
+export interface Measurer {
+  /** Takes the next bytes of the file, in chunks of any size. Throws a MeshError as soon as the file must be refused. */
+  push(chunk: Uint8Array): void;
+  /** What was found. Throws a MeshError where the file cannot be measured. Half of the work of a large mesh is done here. */
+  finish(): Measurement;
+  readonly facetsRead: number;
+}
+
+/**
+ * Measures a mesh file that arrives in chunks. The result depends on the bytes alone, not on how they were cut: the same bytes give the same bits.
+ * Memory grows with the facets received, never with what a header declares.
+ */
+export function createMeasurer({ sizeBytes, maximumFacets = defaultMaximumFacets }: MeasurerOptions): Measurer {
+  // No facet takes fewer bytes, in ASCII neither.
+  const welder = createWelder(Math.min(maximumFacets, Math.max(1, Math.floor(sizeBytes / facetBytes))));
+  const sums = createFacetSums();
+  const origin: Vector3 = [0, 0, 0];
+  const min: Vector3 = [Infinity, Infinity, Infinity];
+  const max: Vector3 = [-Infinity, -Infinity, -Infinity];
+  const degenerate = noOccurrence();
+  const contradicting = noOccurrence();
+  const reader = createMeshReader({ sizeBytes, maximumFacets, onFacets });
+
+  function onFacets(batch: FacetBatch): void {
+    // Adding 0 makes +0 of -0, which JSON could not keep.
+    if (batch.first === 0) for (let k = 0; k < 3; k++) origin[k] = (batch.corners[k] ?? 0) + 0;
+    integrateBlocked(sums, origin, batch.corners, batch.count);
+    extendBox(min, max, batch);
+    examineFacets(batch, degenerate, contradicting);
+    welder.add(batch);
+  }
+
+  function finish(): Measurement {
+    const { format, facets, trailingBytes, solids, nonzeroAttributes } = reader.finish();
+    const mesh = welder.finish();
+    const connections = checkConnections(mesh);
+    const extent = Math.max(max[0] - min[0], max[1] - min[1], max[2] - min[2]);
+    const chosen =
+      connections.closed && connections.oriented
+        ? chooseSums(sums, mesh, origin, extent)
+        : chooseOpenSums(sums, mesh, origin, [(min[0] + max[0]) / 2, (min[1] + max[1]) / 2, (min[2] + max[2]) / 2]);
+    const soundness = judgeSoundness(connections, chosen.sign, {
+      'degenerate-facets': degenerate,
+      'contradicting-normals': contradicting,
+      'trailing-bytes': { count: trailingBytes, facets: [] },
+      'several-solids': { count: solids > 1 ? solids : 0, facets: [] },
+      'nonzero-attributes': nonzeroAttributes,
+    });
+    return {
+      measuringVersion,
+      format,
+      facets,
+      origin,
+      boundingBox: { min, max },
+      volume: soundness.defensible ? finishIntegrals(chosen.body, 'body', soundness.turned ? -1 : 1) : null,
+      surface: finishIntegrals(chosen.surface, 'surface'),
+      soundness,
+    };
+  }
+
+  return {
+    push: (chunk) => reader.push(chunk),
+    finish,
+    get facetsRead() {
+      return reader.facetsRead;
+    },
+  };
+}
+
+/** Measures a mesh file that is at hand as a whole. Throws a MeshError where it cannot be measured. */
+export function measureMesh(bytes: Uint8Array, options: { maximumFacets?: number } = {}): Measurement {
+  const measurer = createMeasurer({ sizeBytes: bytes.length, ...options });
+  if (bytes.length > 0) measurer.push(bytes);
+  return measurer.finish();
+}
+
+function extendBox(min: Vector3, max: Vector3, { corners, count }: FacetBatch): void {
+  for (let k = 0; k < 3; k++) {
+    let least = min[k] ?? 0;
+    let greatest = max[k] ?? 0;
+    for (let at = k; at < 9 * count; at += 3) {
+      const coordinate = (corners[at] ?? 0) + 0;
+      if (coordinate < least) least = coordinate;
+      if (coordinate > greatest) greatest = coordinate;
+    }
+    min[k] = least;
+    max[k] = greatest;
+  }
+}
+
+function examineFacets(batch: FacetBatch, degenerate: Occurrence, contradicting: Occurrence): void {
+  const { corners, normals } = batch;
+  for (let facet = 0; facet < batch.count; facet++) {
+    const at = 9 * facet;
+    if (isDegenerate(corners, at)) note(degenerate, batch.first + facet);
+    else if (isNormalContradicting(corners, at, normals[3 * facet] ?? 0, normals[3 * facet + 1] ?? 0, normals[3 * facet + 2] ?? 0)) {
+      note(contradicting, batch.first + facet);
+    }
+  }
+}
+
+function note(occurrence: Occurrence, facet: number): void {
+  occurrence.count += 1;
+  if (occurrence.facets.length < findingFacets) occurrence.facets.push(facet);
+}

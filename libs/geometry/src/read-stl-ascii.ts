@@ -1,0 +1,195 @@
+import { batchFacets, createFacetBatch, flushFacets, type FacetSink } from './facet-batch';
+import { MeshError, spellCount } from './mesh-error';
+import { isNonFiniteWord, parseDecimal } from './parse-decimal';
+import type { FormatReader } from './read-stl-binary';
+import { createWordScanner } from './scan-words';
+
+/** Binary STL can hold no larger coordinate, and the fifth power of this one still fits binary64. */
+const largestCoordinate = 3.4028234663852886e38;
+
+/** What the reader waits for. In the three name states the words up to the end of the line are a name and mean nothing. */
+type Expected = 'solid' | 'solid-name' | 'normal-or-name' | 'facet' | 'normal' | 'normal-number' | 'outer' | 'loop' | 'vertex' | 'coordinate' | 'endloop' | 'endfacet' | 'end-name';
+
+const wanted: Record<Expected, string> = {
+  solid: '"solid"',
+  'solid-name': 'a name',
+  'normal-or-name': 'a name',
+  facet: '"facet" or "endsolid"',
+  normal: '"normal"',
+  'normal-number': 'a number of the normal (three belong to it)',
+  outer: '"outer loop"',
+  loop: '"loop" after "outer"',
+  vertex: '"vertex": a facet has three corners, and this one has fewer',
+  coordinate: 'a coordinate (three belong to a vertex)',
+  endloop: '"endloop" after three corners',
+  endfacet: '"endfacet"',
+  'end-name': 'a name',
+};
+
+/**
+ * Reads the facets of an ASCII STL file, pushed in chunks of any size. Words in any case, any white space and line ends, several solids, names of
+ * several words. Coordinates keep binary64. Throws a MeshError with the line for anything that does not belong there.
+ */
+export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): FormatReader {
+  const batch = createFacetBatch();
+  let expected: Expected = 'solid';
+  let read = 0;
+  let solids = 0;
+  let numbers = 0;
+  const scanner = createWordScanner(takeWord, takeLineEnd);
+
+  function takeLineEnd(): void {
+    if (expected === 'solid-name') expected = 'facet';
+    else if (expected === 'end-name') expected = 'solid';
+  }
+
+  function takeWord(bytes: Uint8Array, start: number, end: number): void {
+    const is = (keyword: string): boolean => isKeyword(bytes, start, end, keyword);
+    switch (expected) {
+      case 'coordinate':
+        return takeCoordinate(bytes, start, end);
+      case 'vertex':
+        if (is('vertex')) return expect('coordinate');
+        break;
+      case 'facet':
+        if (is('facet')) return expect('normal');
+        if (is('endsolid')) return expect('end-name');
+        break;
+      case 'normal':
+        if (is('normal')) return beginNumbers();
+        break;
+      case 'normal-number':
+        return takeNormal(bytes, start, end);
+      case 'outer':
+        if (is('outer')) return expect('loop');
+        break;
+      case 'loop':
+        if (is('loop')) return beginCorners();
+        break;
+      case 'endloop':
+        if (is('endloop')) return expect('endfacet');
+        if (is('vertex')) refuse('This facet has more than three corners, and STL holds triangles only. Triangulate the mesh and export it again.');
+        break;
+      case 'endfacet':
+        if (is('endfacet')) return endFacet();
+        break;
+      case 'solid':
+        if (is('solid')) {
+          solids += 1;
+          return expect('solid-name');
+        }
+        break;
+      // A whole file may stand on one line, so "facet normal" ends a name too, and "endsolid" does.
+      case 'solid-name':
+        if (is('facet')) expected = 'normal-or-name';
+        else if (is('endsolid')) expected = 'end-name';
+        return;
+      case 'normal-or-name':
+        if (is('normal')) return beginNumbers();
+        expected = is('facet') ? 'normal' : 'solid-name';
+        return;
+      case 'end-name':
+        if (is('solid')) {
+          solids += 1;
+          expected = 'solid-name';
+        }
+        return;
+    }
+    refuseWord(bytes, start, end);
+  }
+
+  function expect(next: Expected): void {
+    expected = next;
+  }
+
+  function beginNumbers(): void {
+    if (read >= maximumFacets) throw tooManyFacets(maximumFacets, { line: scanner.line });
+    numbers = 0;
+    expected = 'normal-number';
+  }
+
+  function beginCorners(): void {
+    numbers = 0;
+    expected = 'vertex';
+  }
+
+  function takeNormal(bytes: Uint8Array, start: number, end: number): void {
+    const number = parseDecimal(bytes, start, end) ?? (isNonFiniteWord(bytes, start, end) ? NaN : undefined);
+    if (number === undefined) refuseNumber(bytes, start, end);
+    batch.normals[3 * batch.count + numbers] = number;
+    numbers += 1;
+    if (numbers === 3) expected = 'outer';
+  }
+
+  function takeCoordinate(bytes: Uint8Array, start: number, end: number): void {
+    const number = parseDecimal(bytes, start, end);
+    if (number === undefined) refuseNumber(bytes, start, end);
+    if (number > largestCoordinate || number < -largestCoordinate) {
+      throw new MeshError('number-not-finite', `A coordinate in line ${spellCount(scanner.line)} is larger than 3.4e38, the most that STL can hold. Export the mesh again.`, { line: scanner.line });
+    }
+    batch.corners[9 * batch.count + numbers] = number;
+    numbers += 1;
+    if (numbers === 9) expected = 'endloop';
+    else if (numbers % 3 === 0) expected = 'vertex';
+  }
+
+  function endFacet(): void {
+    batch.count += 1;
+    read += 1;
+    expected = 'facet';
+    if (batch.count === batchFacets) flushFacets(batch, sink);
+  }
+
+  function refuse(message: string): never {
+    throw new MeshError('syntax-invalid', `Line ${spellCount(scanner.line)}: ${message}`, { line: scanner.line });
+  }
+
+  function refuseWord(bytes: Uint8Array, start: number, end: number): never {
+    refuse(`${quote(bytes, start, end)} stands where ${wanted[expected]} belongs. Export the mesh again.`);
+  }
+
+  function refuseNumber(bytes: Uint8Array, start: number, end: number): never {
+    const line = scanner.line;
+    if (isNonFiniteWord(bytes, start, end)) {
+      throw new MeshError('number-not-finite', `A coordinate in line ${spellCount(line)} is ${quote(bytes, start, end)}, not a finite number. Export the mesh again.`, { line });
+    }
+    const word = quote(bytes, start, end);
+    if (/^"[+-]?\d+,\d*(e[+-]?\d+)?"$/i.test(word)) {
+      throw new MeshError('number-invalid', `Line ${spellCount(line)} has ${word} with a decimal comma; STL has a decimal point. Export the mesh again.`, { line });
+    }
+    if (/^"[+-.]?\d/.test(word)) throw new MeshError('number-invalid', `Line ${spellCount(line)} has ${word}, which is not a number. Export the mesh again.`, { line });
+    refuseWord(bytes, start, end);
+  }
+
+  return {
+    push: (bytes) => scanner.push(bytes),
+    finish() {
+      scanner.finish();
+      if (expected !== 'solid' && expected !== 'end-name') {
+        throw new MeshError('file-truncated', `The file ends in the middle of ${read > 0 ? `a solid, after ${spellCount(read)} whole facets` : 'its first solid'}; "endsolid" is missing. It was cut off: export it again.`, { line: scanner.line });
+      }
+      flushFacets(batch, sink);
+      return { solids, nonzeroAttributes: { count: 0, facets: [] } };
+    },
+    get facetsRead() {
+      return read;
+    },
+  };
+}
+
+export function tooManyFacets(maximumFacets: number, at: { byte: number } | { line: number }): MeshError {
+  return new MeshError('too-many-facets', `The mesh has more than ${spellCount(maximumFacets)} facets, the most that can be examined here. Reduce it or split it into parts.`, at);
+}
+
+/** A word in any case; setting bit 5 maps the capitals, and no other byte, onto the small letters. */
+function isKeyword(bytes: Uint8Array, start: number, end: number, keyword: string): boolean {
+  if (end - start !== keyword.length) return false;
+  for (let k = 0; k < keyword.length; k++) if (((bytes[start + k] ?? 0) | 32) !== keyword.charCodeAt(k)) return false;
+  return true;
+}
+
+/** A word of the file for a message: at most 24 characters, and nothing unprintable. */
+function quote(bytes: Uint8Array, start: number, end: number): string {
+  const word = String.fromCharCode(...bytes.subarray(start, Math.min(end, start + 24))).replace(/[^\x20-\x7e]/g, '?');
+  return `"${word}${end - start > 24 ? '…' : ''}"`;
+}

@@ -1,0 +1,98 @@
+import { facetBytes, headerBytes } from './detect-format';
+import { batchFacets, createFacetBatch, flushFacets, type FacetSink } from './facet-batch';
+import { findingFacets } from './measurement';
+import { MeshError, spellCount } from './mesh-error';
+
+export interface FormatReader {
+  push(bytes: Uint8Array): void;
+  /** Hands on the last facets and says what was seen beside them. */
+  finish(): FileRemarks;
+  readonly facetsRead: number;
+}
+
+/** What was noticed in a file beside its facets. */
+export interface FileRemarks {
+  solids: number;
+  nonzeroAttributes: { count: number; facets: number[] };
+}
+
+/**
+ * Reads the facets of a binary STL file, pushed in chunks of any size: little-endian, 84 bytes of header, then for each facet a normal,
+ * three corners and a 16-bit attribute. The number of facets was found to fit the size of the file; bytes after the last are passed over.
+ */
+export function createBinaryStlReader(facets: number, sink: FacetSink): FormatReader {
+  const batch = createFacetBatch();
+  const carry = new Uint8Array(facetBytes);
+  const carryView = new DataView(carry.buffer);
+  const attributes = { count: 0, facets: [] as number[] };
+  let carried = 0;
+  let toSkip = headerBytes;
+  let read = 0;
+
+  function readFacet(view: DataView, at: number): void {
+    const { corners, normals } = batch;
+    const corner = 9 * batch.count;
+    const normal = 3 * batch.count;
+    for (let k = 0; k < 3; k++) normals[normal + k] = view.getFloat32(at + 4 * k, true);
+    let finite = 0;
+    for (let k = 0; k < 9; k++) {
+      const coordinate = view.getFloat32(at + 12 + 4 * k, true);
+      corners[corner + k] = coordinate;
+      // 0 for every finite number, NaN otherwise.
+      finite += coordinate - coordinate;
+    }
+    if (finite !== 0) refuseFacet(view, at);
+    if (view.getUint16(at + 48, true) !== 0) {
+      attributes.count += 1;
+      if (attributes.facets.length < findingFacets) attributes.facets.push(read);
+    }
+    batch.count += 1;
+    read += 1;
+    if (batch.count === batchFacets) flushFacets(batch, sink);
+  }
+
+  function refuseFacet(view: DataView, at: number): never {
+    for (let k = 0; k < 9; k++) {
+      const coordinate = view.getFloat32(at + 12 + 4 * k, true);
+      if (Number.isFinite(coordinate)) continue;
+      const byte = headerBytes + facetBytes * read + 12 + 4 * k;
+      const which = `Corner ${Math.floor(k / 3) + 1} of facet ${spellCount(read + 1)} (of ${spellCount(facets)})`;
+      throw new MeshError('number-not-finite', `${which} has ${Number.isNaN(coordinate) ? 'a coordinate that is not a number' : 'an infinite coordinate'}. Export the mesh again.`, { byte });
+    }
+    throw new MeshError('number-not-finite', `Facet ${spellCount(read + 1)} has a coordinate that is not finite.`);
+  }
+
+  function push(bytes: Uint8Array): void {
+    let at = Math.min(toSkip, bytes.length);
+    toSkip -= at;
+    if (carried > 0) {
+      const taken = Math.min(facetBytes - carried, bytes.length - at);
+      carry.set(bytes.subarray(at, at + taken), carried);
+      carried += taken;
+      at += taken;
+      if (carried < facetBytes) return;
+      carried = 0;
+      if (read < facets) readFacet(carryView, 0);
+    }
+    const whole = Math.min(facets - read, Math.floor((bytes.length - at) / facetBytes));
+    if (whole > 0) {
+      const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+      for (let n = 0; n < whole; n++, at += facetBytes) readFacet(view, at);
+    }
+    if (read < facets && at < bytes.length) {
+      carry.set(bytes.subarray(at));
+      carried = bytes.length - at;
+    }
+  }
+
+  return {
+    push,
+    finish() {
+      flushFacets(batch, sink);
+      return { solids: 1, nonzeroAttributes: attributes };
+    },
+    get facetsRead() {
+      return read;
+    },
+  };
+}

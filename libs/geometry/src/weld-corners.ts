@@ -1,0 +1,97 @@
+import type { FacetBatch } from './facet-batch';
+import { allocate, growArray } from './grow-array';
+
+/** A mesh whose corners with the same coordinates have become one vertex. Arrays may be longer than what is used. */
+export interface WeldedMesh {
+  facetCount: number;
+  vertexCount: number;
+  /** Three vertices a facet. */
+  corners: Uint32Array;
+  /** Three coordinates a vertex, numbered as they first occur. */
+  coordinates: Float64Array;
+}
+
+export interface Welder {
+  add(batch: FacetBatch): void;
+  /** The mesh; the welder's own table is dropped. */
+  finish(): WeldedMesh;
+}
+
+/** The table stays at most this full; linear probing slows down beyond. */
+const fullest = 0.7;
+
+/**
+ * Gives corners that agree in every bit the same vertex number (-0 counts as +0). Nothing is merged by nearness: a gap of one
+ * unit in the last place stays a gap. Open addressing with linear probing, after a mixed hash of the coordinates' bits.
+ *
+ * @param mostFacets how many facets can come; bounds the growth of the arrays, allocates nothing
+ */
+export function createWelder(mostFacets: number): Welder {
+  let corners = new Uint32Array(3 * Math.min(mostFacets, 1024));
+  let coordinates = new Float64Array(3 * Math.min(3 * mostFacets, 1024));
+  // A slot holds a vertex number plus one; 0 is free.
+  let slots = new Uint32Array(4096);
+  let facetCount = 0;
+  let vertexCount = 0;
+  const key = new Float64Array(3);
+  const keyBits = new Uint32Array(key.buffer);
+
+  function hashKey(): number {
+    let hash = 0x2545f491;
+    for (let k = 0; k < 6; k++) {
+      hash = Math.imul(hash ^ (keyBits[k] ?? 0), 0x85ebca6b);
+      hash = (hash << 13) | (hash >>> 19);
+    }
+    hash = Math.imul(hash ^ (hash >>> 16), 0xc2b2ae35);
+    return (hash ^ (hash >>> 13)) >>> 0;
+  }
+
+  function findVertex(x: number, y: number, z: number): number {
+    // Adding 0 turns -0 into +0 and changes nothing else.
+    key[0] = x + 0;
+    key[1] = y + 0;
+    key[2] = z + 0;
+    const mask = slots.length - 1;
+    let slot = hashKey() & mask;
+    for (let entry = slots[slot] ?? 0; entry !== 0; entry = slots[slot] ?? 0) {
+      const at = 3 * (entry - 1);
+      if (coordinates[at] === x && coordinates[at + 1] === y && coordinates[at + 2] === z) return entry - 1;
+      slot = (slot + 1) & mask;
+    }
+    slots[slot] = vertexCount + 1;
+    if (3 * vertexCount === coordinates.length) coordinates = growArray(coordinates, 3 * vertexCount + 3, 9 * mostFacets);
+    coordinates.set(key, 3 * vertexCount);
+    vertexCount += 1;
+    if (vertexCount > fullest * slots.length) rehash();
+    return vertexCount - 1;
+  }
+
+  function rehash(): void {
+    const length = 2 * slots.length;
+    slots = allocate(() => new Uint32Array(length));
+    const mask = length - 1;
+    for (let vertex = 0; vertex < vertexCount; vertex++) {
+      key[0] = coordinates[3 * vertex] ?? 0;
+      key[1] = coordinates[3 * vertex + 1] ?? 0;
+      key[2] = coordinates[3 * vertex + 2] ?? 0;
+      let slot = hashKey() & mask;
+      while (slots[slot] !== 0) slot = (slot + 1) & mask;
+      slots[slot] = vertex + 1;
+    }
+  }
+
+  return {
+    add(batch) {
+      const needed = 3 * (facetCount + batch.count);
+      if (needed > corners.length) corners = growArray(corners, needed, 3 * mostFacets);
+      for (let corner = 0, at = 0; corner < 3 * batch.count; corner++, at += 3) {
+        corners[3 * facetCount + corner] = findVertex(batch.corners[at] ?? 0, batch.corners[at + 1] ?? 0, batch.corners[at + 2] ?? 0);
+      }
+      facetCount += batch.count;
+    },
+    finish() {
+      slots = new Uint32Array(0);
+      return { facetCount, vertexCount, corners, coordinates };
+    },
+  };
+}
