@@ -4,7 +4,7 @@ import { fileURLToPath } from 'node:url';
 /**
  * Our side of the guardian, a small process that holds a pipe to this one. When this one dies, however it dies, the pipe
  * closes and the guardian stops what was registered, highest order first.
- * @typedef {import('./process-identity.mjs').ProcessIdentity & { name: string, order: number, stopSignal: NodeJS.Signals, deadlineMs: number }} Ward
+ * @typedef {import('./process-identity.mjs').ProcessIdentity & { name: string, order: number, stopSignal: NodeJS.Signals, deadlineMs: number, group?: boolean }} Ward
  */
 
 /** @type {Map<number, Ward>} */

@@ -25,11 +25,11 @@ export function isAlive(identity) {
   return findIdentity(identity.pid)?.startedAt === identity.startedAt;
 }
 
-/** @param {ProcessIdentity} identity @param {NodeJS.Signals} signal @returns {boolean} false when it was gone already */
+/** @param {ProcessIdentity & { group?: boolean }} identity @param {NodeJS.Signals} signal @returns {boolean} false when it was gone already */
 export function sendSignal(identity, signal) {
   if (!isAlive(identity)) return false;
   try {
-    process.kill(identity.pid, signal);
+    process.kill(identity.group === true ? -identity.pid : identity.pid, signal);
     return true;
   } catch {
     return false;
@@ -40,11 +40,13 @@ const pause = (/** @type {number} */ ms) => new Promise((resolve) => setTimeout(
 
 /**
  * Asks a process that need not be our child to end, and ends it when it has not by the deadline.
- * @param {ProcessIdentity} identity
+ * @param {ProcessIdentity & { group?: boolean }} identity with `group`, its process group
  * @param {NodeJS.Signals} signal
  * @param {number} deadlineMs
  */
 export async function endProcess(identity, signal, deadlineMs) {
+  // One that is held by SIGSTOP would never see the signal.
+  sendSignal(identity, 'SIGCONT');
   if (!sendSignal(identity, signal)) return;
   for (const end = Date.now() + deadlineMs; Date.now() < end; await pause(20)) if (!isAlive(identity)) return;
   sendSignal(identity, 'SIGKILL');

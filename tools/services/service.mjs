@@ -32,9 +32,10 @@ export const stopOrder = { postgres: 10, redis: 20, objectStorage: 30, mail: 40,
 /** @typedef {{ code: number | null, signal: NodeJS.Signals | null }} Exit */
 
 export class ServiceFailure extends Error {
-  /** @param {string} message @param {Exit | undefined} exit */
-  constructor(message, exit) {
-    super(message);
+  /** @param {string} what happened @param {string} logTail @param {Exit} [exit] */
+  constructor(what, logTail, exit) {
+    super(`${what}\n${logTail}`);
+    this.logTail = logTail;
     this.exit = exit;
   }
 }
@@ -44,7 +45,7 @@ const pause = (/** @type {number} */ ms) => new Promise((resolve) => setTimeout(
 /**
  * One server process: started and waited for, stopped, killed, started again on the same data and port.
  * It is a child of its own session, so that Ctrl-C in the terminal reaches us alone and we stop things in order.
- * Emits `exit` with {code, signal, expected}.
+ * Emits `spawn` with what the guardian knows of it, and `exit` with {code, signal, expected}.
  */
 export class Service extends EventEmitter {
   /** @type {import('node:child_process').ChildProcess | undefined} */
@@ -71,12 +72,14 @@ export class Service extends EventEmitter {
   /** Starts the process and resolves when it answers. Throws ServiceFailure with the last lines of its log. */
   async start() {
     const deadline = Date.now() + (this.options.readyTimeoutMs ?? 30_000);
+    this.#stopping = false;
     for (;;) {
       const failure = await this.#tryStart(deadline);
       if (failure === undefined) return this;
-      const again = this.options.retryStart === true && failure.exit !== undefined && failure.exit.code !== wrongEnvironment && Date.now() < deadline;
+      const again = !this.#stopping && this.options.retryStart === true && failure.exit !== undefined && failure.exit.code !== wrongEnvironment && Date.now() < deadline;
       if (!again) throw failure;
       await pause(200);
+      if (this.#stopping) throw failure;
     }
   }
 
@@ -89,12 +92,12 @@ export class Service extends EventEmitter {
     let exit;
     void exited.then((seen) => (exit = seen));
     while (Date.now() < deadline) {
-      if (exit !== undefined) return new ServiceFailure(`${this.name} ended (${exit.signal ?? `exit code ${exit.code}`}) before it was ready.\n${this.readLogTail()}`, exit);
+      if (exit !== undefined) return new ServiceFailure(`${this.name} ended (${exit.signal ?? `exit code ${exit.code}`}) before it was ready.`, this.readLogTail(), exit);
       if (await this.options.isReady().catch(() => false)) return undefined;
       await pause(25);
     }
     await this.stop();
-    return new ServiceFailure(`${this.name} did not answer in time.\n${this.readLogTail()}`, undefined);
+    return new ServiceFailure(`${this.name} did not answer in time.`, this.readLogTail());
   }
 
   /** @returns {Promise<Exit>} */
@@ -102,12 +105,15 @@ export class Service extends EventEmitter {
     const { command, args, env, cwd, identity, logFile, order, stopSignal = 'SIGTERM', stopDeadlineMs = 10_000 } = this.options;
     mkdirSync(path.dirname(logFile), { recursive: true });
     const log = openSync(logFile, 'a');
-    this.#stopping = false;
     const child = spawn(command, args, { env: env ?? process.env, cwd, ...identity, detached: true, stdio: ['ignore', log, log] });
     closeSync(log);
     this.#child = child;
     const known = child.pid === undefined ? undefined : findIdentity(child.pid);
-    if (known !== undefined) guard({ ...known, name: this.name, order, stopSignal, deadlineMs: stopDeadlineMs });
+    if (known !== undefined) {
+      const ward = { ...known, name: this.name, order, stopSignal, deadlineMs: stopDeadlineMs };
+      guard(ward);
+      this.emit('spawn', ward);
+    }
     const exited = new Promise((/** @type {(exit: Exit) => void} */ resolve) => {
       child.once('error', () => resolve({ code: 127, signal: null }));
       child.once('exit', (code, signal) => resolve({ code, signal }));
@@ -134,8 +140,8 @@ export class Service extends EventEmitter {
   /** Asks it to end, and ends it at the deadline. @param {NodeJS.Signals} [signal] */
   async stop(signal = this.options.stopSignal ?? 'SIGTERM') {
     const child = this.#child;
-    if (child === undefined) return;
     this.#stopping = true;
+    if (child === undefined) return;
     // One that is held by SIGSTOP would never see the signal.
     child.kill('SIGCONT');
     child.kill(signal);
