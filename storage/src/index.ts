@@ -1,4 +1,4 @@
-export { createObjectStorage, type ObjectStorage } from './object-storage';
+export { createObjectStorage, ObjectStorage } from './object-storage';
 export { ObjectStorageError, type ObjectStorageErrorCode } from './object-storage-error';
 export { type ObjectContent, type ObjectRange } from './object-reader';
 export { type ObjectStorageOptions } from './object-storage-options';
