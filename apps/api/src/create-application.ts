@@ -1,0 +1,34 @@
+import { NestFactory } from '@nestjs/core';
+import type { NestExpressApplication } from '@nestjs/platform-express';
+import { FrameworkLogger, type Logger } from '@masswright/logs';
+import { AppModule } from './app.module';
+import { Metrics } from './health/metrics';
+import type { ApiSettings } from './platform/api-settings';
+
+import { ProblemFilter } from './platform/problem.filter';
+import { logRequests } from './platform/request-log';
+import { securityHeaders } from './platform/security-headers';
+import { serveWebPages } from './platform/web-pages';
+
+/** The routes of every noun are below this; health and metrics stand apart from the version. */
+export const apiPrefix = 'api/v1';
+const unversioned = ['api/health/live', 'api/health/ready', 'api/metrics'];
+
+/** The whole api, not yet listening. */
+export async function createApplication(settings: ApiSettings, logger: Logger): Promise<NestExpressApplication> {
+  const application = await NestFactory.create<NestExpressApplication>(AppModule.with(settings, logger), {
+    logger: new FrameworkLogger(logger),
+    abortOnError: false,
+    bodyParser: false,
+  });
+  application.set('trust proxy', settings.TRUSTED_PROXIES);
+  application.disable('x-powered-by');
+  application.use(logRequests(logger));
+  application.use(application.get(Metrics).observe);
+  application.use(securityHeaders(settings));
+  if (settings.WEB_DIR !== undefined) application.use(...serveWebPages(settings.WEB_DIR));
+  application.useBodyParser('json', { limit: '256kb', strict: true });
+  application.setGlobalPrefix(apiPrefix, { exclude: unversioned });
+  application.useGlobalFilters(new ProblemFilter(logger));
+  return application;
+}

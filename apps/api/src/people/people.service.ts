@@ -1,0 +1,55 @@
+import { Inject, Injectable } from '@nestjs/common';
+import { z } from 'zod';
+import type { Member, Page, PageQuery, Role } from '@masswright/contracts';
+import { deleteMembership, findMember, listMembers, lockAdministrators, publishEvent, setRole } from '@masswright/drizzle';
+import { notFound } from '../platform/app-error';
+import { decodeCursor, toPage } from '../platform/cursor';
+import type { SignedInContext } from '../platform/request-context';
+import { audit, Work } from '../platform/work';
+import { requireAnotherAdministrator, requireManagePeople } from './people.policy';
+import { presentMember } from './people.presenter';
+
+@Injectable()
+export class PeopleService {
+  constructor(@Inject(Work) private readonly work: Work) {}
+
+  list(context: SignedInContext, query: PageQuery): Promise<Page<Member>> {
+    const after = decodeCursor(z.tuple([z.string()]), query.after);
+    return this.work.run(context, async (tx, actor) => {
+      const rows = await listMembers(tx, { afterEmail: after?.[0], limit: query.limit + 1 });
+      return toPage(rows, query.limit, (row) => presentMember(row, actor), (row) => [row.email]);
+    });
+  }
+
+  changeRole(context: SignedInContext, userId: string, role: Role): Promise<Member> {
+    return this.work.run(context, async (tx, actor) => {
+      requireManagePeople(actor);
+      const { organisationId } = context;
+      const administrators = await lockAdministrators(tx, organisationId);
+      const member = await findMember(tx, organisationId, userId);
+      if (member === undefined) throw notFound('person');
+      if (member.role === 'administrator' && role !== 'administrator') requireAnotherAdministrator(administrators);
+      if (member.role !== role) {
+        await setRole(tx, organisationId, userId, role);
+        await audit(tx, context, { action: 'member.change-role', subject: { type: 'user', id: userId }, before: { role: member.role }, after: { role } });
+        await publishEvent(tx, { organisationId, event: { type: 'people' } });
+      }
+      // Who lowers their own role sees at once what they may still do.
+      return presentMember({ ...member, role }, userId === actor.userId ? { ...actor, role } : actor);
+    });
+  }
+
+  remove(context: SignedInContext, userId: string): Promise<void> {
+    return this.work.run(context, async (tx, actor) => {
+      requireManagePeople(actor);
+      const { organisationId } = context;
+      const administrators = await lockAdministrators(tx, organisationId);
+      const member = await findMember(tx, organisationId, userId);
+      if (member === undefined) throw notFound('person');
+      if (member.role === 'administrator') requireAnotherAdministrator(administrators);
+      await deleteMembership(tx, organisationId, userId);
+      await audit(tx, context, { action: 'member.remove', subject: { type: 'user', id: userId }, before: { role: member.role } });
+      await publishEvent(tx, { organisationId, event: { type: 'people' } });
+    });
+  }
+}

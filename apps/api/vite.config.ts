@@ -1,0 +1,4 @@
+import { defineConfig } from 'vitest/config';
+import { nodeProgram } from '../../vite.shared';
+
+export default defineConfig(nodeProgram('apps/api', { main: 'src/main.ts', openapi: 'src/openapi/main.ts' }));

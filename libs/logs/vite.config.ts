@@ -1,0 +1,4 @@
+import { defineConfig } from 'vitest/config';
+import { library } from '../../vite.shared';
+
+export default defineConfig(library('logs'));
