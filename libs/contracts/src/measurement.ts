@@ -91,6 +91,7 @@ export const measuringErrorCodes = [
   'facets-none',
   'size-differs',
   'too-many-facets',
+  'file-missing',
   'gave-up',
 ] as const;
 export const measuringError = z.object({

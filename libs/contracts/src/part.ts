@@ -30,7 +30,7 @@ const revisionHead = z.object({
   /** A, B, C … in the order in which they came. */
   letter: z.string(),
   fileName: z.string(),
-  sizeBytes: z.number().int().positive(),
+  sizeBytes: z.number().int().nonnegative(),
   createdAt: timestamp,
   createdBy: z.string(),
   run: measuringRun,

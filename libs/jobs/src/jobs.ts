@@ -31,6 +31,8 @@ export const queuedJob = z.object({
   outboxId: z.number().int(),
   requestId: z.string(),
   payload: z.unknown(),
+  /** How often the row was handed out before; pauses grow with it. */
+  handedOut: z.number().int().optional(),
 });
 export type QueuedJob = z.infer<typeof queuedJob>;
 

@@ -1,0 +1,139 @@
+import { Inject, Injectable } from '@nestjs/common';
+import type { MeasuringError, MeasuringRun } from '@masswright/contracts';
+import {
+  addToOutbox,
+  Database,
+  failRun,
+  finishRun,
+  handBackRun,
+  keepMeasurement,
+  noteProgress,
+  publishEvent,
+  setUploadHash,
+  takeRun,
+  type TakenRun,
+  type Transaction,
+} from '@masswright/drizzle';
+import type { JobPayload } from '@masswright/jobs';
+import { HandedBackError, TryAgainError, type JobContext } from '../queue/job-handlers';
+import { LatestOnly } from './latest-only';
+import type { MeasuringOutcome, MeasuringProgress } from './measure-object';
+import { MeasuringThreads } from './measuring-threads';
+
+/** A run taken up so often ends each time with the death of the process: then it is the file that kills it. */
+const mostTakeUps = 25;
+const gaveUp: MeasuringError = {
+  code: 'gave-up',
+  message: 'Measuring this file was begun again and again and never came to an end. Export the mesh with fewer facets, or split it, and add it again.',
+  at: null,
+};
+const fileMissing: MeasuringError = {
+  code: 'file-missing',
+  message: 'The stored file is gone from the storage. Add the file again; if it happens again, tell whoever runs this installation.',
+  at: null,
+};
+/** Share of a run's time that reading takes, for the progress bar; what is left is finishing. */
+const readingShare = 0.8;
+
+type Held = TakenRun & { organisationId: string };
+
+/** Thrown inside a transaction to roll it back when another worker has taken the run up since. */
+class SupersededError extends Error {
+  override readonly name = 'SupersededError';
+}
+
+/** Measures a revision's file: takes the run up, has a thread stream the object, and keeps what came of it. */
+@Injectable()
+export class MeasuringHandler {
+  constructor(
+    @Inject(Database) private readonly database: Database,
+    @Inject(MeasuringThreads) private readonly threads: MeasuringThreads,
+  ) {}
+
+  async handle({ organisationId, runId }: JobPayload<'measurement.run'>, context: JobContext): Promise<void> {
+    const run = await this.takeUp(organisationId, runId);
+    if (run === undefined) return;
+    try {
+      if (run.fence > mostTakeUps) {
+        await this.refuse(run, null, gaveUp, context);
+        return;
+      }
+      await this.settle(run, await this.measure(run, context), context);
+    } catch (error) {
+      // Whoever took the run up after us does the rest.
+      if (error instanceof SupersededError) return;
+      await this.inOrganisation(run, (tx) => handBackRun(tx, run)).catch(() => undefined);
+      if (context.signal.aborted) throw new HandedBackError('The process stops.', { cause: error });
+      throw error;
+    }
+  }
+
+  private takeUp(organisationId: string, runId: string): Promise<Held | undefined> {
+    return this.database.transaction({ organisationId }, async (tx) => {
+      const taken = await takeRun(tx, runId);
+      if (taken === undefined) return undefined;
+      const run = { ...taken, organisationId };
+      await this.announce(tx, run, { state: 'running', stage: 'reading', progress: 0 });
+      return run;
+    });
+  }
+
+  private async measure(run: Held, { signal }: JobContext): Promise<MeasuringOutcome> {
+    const notes = new LatestOnly((progress: MeasuringProgress) => this.note(run, progress));
+    try {
+      return await this.threads.measure(run, (progress) => notes.push(progress), signal);
+    } finally {
+      await notes.settle();
+    }
+  }
+
+  private async note(run: Held, { stage, bytesRead }: MeasuringProgress): Promise<void> {
+    const progress = stage === 'reading' ? (readingShare * bytesRead) / Math.max(1, run.sizeBytes) : readingShare;
+    await this.inOrganisation(run, async (tx) => {
+      if (await noteProgress(tx, run, { stage, progress })) await this.announce(tx, run, { state: 'running', stage, progress });
+    });
+  }
+
+  private async settle(run: Held, outcome: MeasuringOutcome, context: JobContext): Promise<void> {
+    switch (outcome.kind) {
+      case 'measured':
+        await this.keep(run, outcome);
+        return;
+      case 'refused':
+        await this.refuse(run, outcome.sha256, outcome.error, context);
+        return;
+      case 'interrupted':
+        if (outcome.code !== 'not-found') throw new TryAgainError(`The storage failed while the file was read (${outcome.code}).`);
+        await this.refuse(run, null, fileMissing, context);
+    }
+  }
+
+  private async keep(run: Held, { sha256, measurement }: Extract<MeasuringOutcome, { kind: 'measured' }>): Promise<void> {
+    const hash = Buffer.from(sha256);
+    await this.inOrganisation(run, async (tx) => {
+      await setUploadHash(tx, run.uploadId, hash);
+      const measurementId = await keepMeasurement(tx, { organisationId: run.organisationId, sha256: hash, measurement });
+      if (!(await finishRun(tx, run, measurementId))) throw new SupersededError();
+      await this.announce(tx, run, { state: 'done', stage: 'storing', progress: 1 });
+    });
+  }
+
+  /** The row keeps the reason; the bytes are of no use to anyone and are deleted. */
+  private async refuse(run: Held, sha256: Uint8Array | null, error: MeasuringError, { requestId }: JobContext): Promise<void> {
+    await this.inOrganisation(run, async (tx) => {
+      if (!(await failRun(tx, run, error))) throw new SupersededError();
+      if (sha256 !== null) await setUploadHash(tx, run.uploadId, Buffer.from(sha256));
+      await addToOutbox(tx, { organisationId: run.organisationId, job: 'object.delete', payload: { objectKey: run.objectKey }, requestId });
+      await this.announce(tx, run, { state: 'failed', stage: 'reading', progress: 1 });
+    });
+  }
+
+  private inOrganisation<Result>(run: Held, work: (tx: Transaction) => Promise<Result>): Promise<Result> {
+    return this.database.transaction({ organisationId: run.organisationId }, work);
+  }
+
+  private announce(tx: Transaction, run: Held, state: Pick<MeasuringRun, 'state' | 'stage' | 'progress'>): Promise<void> {
+    const { organisationId, projectId, partId } = run;
+    return publishEvent(tx, { organisationId, event: { type: 'run', projectId, partId, ...state } });
+  }
+}

@@ -1,0 +1,49 @@
+// Writes what is generated from the code and committed: the OpenAPI document and the types of the web's client.
+// `--check` only compares and fails where something is out of date.
+import { spawnSync } from 'node:child_process';
+import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import path from 'node:path';
+import process from 'node:process';
+import { fileURLToPath } from 'node:url';
+
+const root = fileURLToPath(new URL('..', import.meta.url));
+const client = path.join(root, 'libs/client/src');
+const work = mkdtempSync(path.join(tmpdir(), 'masswright-generate-'));
+
+/** @param {string[]} command @param {Record<string, string>} [environment] */
+function run([program, ...parameters], environment = {}) {
+  const result = spawnSync(program ?? '', parameters, { cwd: root, stdio: ['ignore', 'ignore', 'inherit'], env: { ...process.env, ...environment } });
+  if (result.status !== 0) throw new Error(`${program} ${parameters.join(' ')} failed.`);
+}
+
+try {
+  const document = path.join(work, 'openapi.json');
+  const types = path.join(work, 'schema.generated.ts');
+  run(['npx', 'vite', 'build', 'apps/api', '--outDir', path.join(root, 'node_modules/.cache/openapi')], { BUILD_DIR: '' });
+  run(['node', path.join(root, 'node_modules/.cache/openapi/openapi.js'), document]);
+  run(['npx', 'openapi-typescript', document, '--output', types]);
+  const pairs = [
+    [document, path.join(client, 'openapi.json')],
+    [types, path.join(client, 'schema.generated.ts')],
+  ];
+  const read = (file) => {
+    try {
+      return readFileSync(file, 'utf8');
+    } catch {
+      return '';
+    }
+  };
+  const stale = pairs.filter(([fresh, kept]) => read(fresh) !== read(kept));
+  if (process.argv.includes('--check')) {
+    if (stale.length > 0) {
+      console.error(`Out of date: ${stale.map(([, kept]) => path.relative(root, kept)).join(', ')}. Run: npm run generate`);
+      process.exitCode = 1;
+    }
+  } else {
+    for (const [fresh, kept] of stale) writeFileSync(kept, readFileSync(fresh));
+    console.log(stale.length === 0 ? 'Everything was up to date.' : `Written: ${stale.map(([, kept]) => path.relative(root, kept)).join(', ')}`);
+  }
+} finally {
+  rmSync(work, { recursive: true, force: true });
+}
