@@ -3,6 +3,7 @@ import js from '@eslint/js';
 import nx from '@nx/eslint-plugin';
 import reactHooks from 'eslint-plugin-react-hooks';
 import tseslint from 'typescript-eslint';
+import { pageLayers } from './tools/lint/page-layers.mjs';
 
 /**
  * Which of our projects may import which. A project that is not listed here fails lint as soon as it imports one of ours.
@@ -25,8 +26,8 @@ const mayImport = {
   web: ['client', 'contracts', 'mechanics', 'pictures', 'units'],
   cli: ['config', 'contracts', 'geometry', 'mechanics', 'units', 'client'],
 };
-/** Development only: these may import anything, and nothing imports them. */
-const freeToImport = ['demo', 'tests', 'bench'];
+/** Development only: these may import anything, and nothing but each other imports them. */
+const freeToImport = ['demo', 'tests', 'bench', 'tools'];
 
 const depConstraints = [
   ...Object.entries(mayImport).map(([project, allowed]) => ({
@@ -35,14 +36,20 @@ const depConstraints = [
   })),
   ...freeToImport.map((project) => ({
     sourceTag: `project:${project}`,
-    onlyDependOnLibsWithTags: [...Object.keys(mayImport), project].map((name) => `project:${name}`),
+    onlyDependOnLibsWithTags: [...Object.keys(mayImport), ...freeToImport].map((name) => `project:${name}`),
   })),
 ];
 
-const nodeModules = [...builtinModules, 'node:*'];
-const frameworks = ['react', 'react-dom', 'react-dom/*', '@nestjs/*', 'three', 'three/*', '@react-three/*', 'drizzle-orm', 'drizzle-orm/*'];
+/** What is imported by a relative path from outside its project: the shared Vite settings by all, the services and meshes by tests. */
+const boundaries = (...allow) => ['error', { allow: ['^.*/vite\\.shared$', ...allow], depConstraints }];
+
+const frameworks = ['react', 'react-dom', '@nestjs/*', 'three', '@react-three/*', 'drizzle-orm'];
 const queueLibraries = ['bullmq', '@nestjs/bullmq', 'ioredis'];
-const forbid = (group, message) => ({ group, message });
+const serverPackages = ['@nestjs/*', 'drizzle-orm', 'pg', '@aws-sdk/*', 'nodemailer', 'pino', 'pino-http', ...queueLibraries];
+const escape = (name) => name.replaceAll(/[/.]/g, '\\$&').replace('*', '[^/]+');
+/** Packages by name, with what lies below them. (A glob would match a folder of the same name in a relative path, too.) */
+const forbid = (packages, message) => ({ regex: `^(?:${packages.map(escape).join('|')})(?:/|$)`, message });
+const forbidNode = (message) => ({ regex: `^(?:node:|(?:${builtinModules.map(escape).join('|')})(?:/|$))`, message });
 const restrict = (...patterns) => ['error', { patterns }];
 
 export default tseslint.config(
@@ -54,7 +61,7 @@ export default tseslint.config(
     languageOptions: { parserOptions: { projectService: true, tsconfigRootDir: import.meta.dirname } },
     plugins: { '@nx': nx },
     rules: {
-      '@nx/enforce-module-boundaries': ['error', { allow: ['^.*/vite\\.shared$'], depConstraints }],
+      '@nx/enforce-module-boundaries': boundaries(),
       '@typescript-eslint/consistent-type-imports': ['error', { fixStyle: 'inline-type-imports' }],
       '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
       '@typescript-eslint/no-explicit-any': 'error',
@@ -68,12 +75,20 @@ export default tseslint.config(
     rules: { 'no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }] },
   },
   {
+    files: ['apps/web/public/**/*.js'],
+    languageOptions: { sourceType: 'script', globals: { localStorage: 'readonly', matchMedia: 'readonly', document: 'readonly', window: 'readonly' } },
+  },
+  {
+    files: [...freeToImport.map((project) => `${project}/**/*.{ts,tsx}`), 'libs/geometry/bench/**/*.ts'],
+    rules: { '@nx/enforce-module-boundaries': boundaries('^(\\.\\./)+tools/(services|setup|start)/[\\w-]+\\.mjs$', '^(\\.\\./)+demo/src/.*$') },
+  },
+  {
     // They run in a browser, in a worker thread and on a server alike.
     files: ['libs/{units,geometry,mechanics}/src/**/*.ts'],
-    ignores: ['**/*.spec.ts'],
+    ignores: ['**/*.spec.ts', '**/testing/**'],
     rules: {
       'no-restricted-imports': restrict(
-        forbid(nodeModules, 'units, geometry and mechanics use no Node API: they run in a browser too.'),
+        forbidNode('units, geometry and mechanics use no Node API: they run in a browser too.'),
         forbid(frameworks, 'units, geometry and mechanics use no framework.'),
       ),
       'no-restricted-globals': ['error', 'process', 'Buffer', 'require', '__dirname'],
@@ -82,7 +97,7 @@ export default tseslint.config(
   {
     // No rounding that differs between engines may reach a recorded bit.
     files: ['libs/{geometry,mechanics}/src/**/*.ts'],
-    ignores: ['**/*.spec.ts'],
+    ignores: ['**/*.spec.ts', '**/testing/**'],
     rules: {
       'no-restricted-properties': ['error', ...['hypot', 'pow', 'sin', 'cos', 'tan', 'asin', 'acos', 'atan', 'atan2', 'exp', 'log', 'cbrt', 'sinh', 'cosh', 'tanh'].map((property) => ({ object: 'Math', property, message: 'Engines may round it differently; only + - * / and Math.sqrt are exact to the last bit.' }))],
     },
@@ -92,7 +107,18 @@ export default tseslint.config(
     rules: {
       'no-restricted-imports': restrict(
         forbid(queueLibraries, 'The api never touches the queue: it writes to the outbox, the worker relays.'),
-        forbid(['@masswright/geometry', '@masswright/geometry/*', '**/libs/geometry/**'], 'The api never touches a mesh: the worker measures.'),
+        forbid(['@masswright/geometry'], 'The api never touches a mesh: the worker measures.'),
+      ),
+    },
+  },
+  {
+    // They are bundled into the pages.
+    files: ['libs/{contracts,client,pictures}/src/**/*.ts', 'apps/web/src/**/*.{ts,tsx}'],
+    ignores: ['**/*.spec.{ts,tsx}'],
+    rules: {
+      'no-restricted-imports': restrict(
+        forbidNode('This is bundled into the pages: there is no Node API.'),
+        forbid(serverPackages, 'This is bundled into the pages: there is no server package.'),
       ),
     },
   },
@@ -101,12 +127,8 @@ export default tseslint.config(
     ...reactHooks.configs.flat['recommended-latest'],
   },
   {
-    files: ['apps/web/src/features/**/*.{ts,tsx}'],
-    rules: {
-      'no-restricted-imports': restrict(
-        forbid(['../../*/**', '**/features/*/**', '**/routes/**', '**/app/**'], 'Features never import each other, routes or the app: routes compose them.'),
-        forbid(nodeModules, 'The web application has no Node API.'),
-      ),
-    },
+    files: ['apps/web/src/**/*.{ts,tsx}'],
+    plugins: { house: { rules: { 'page-layers': pageLayers } } },
+    rules: { 'house/page-layers': 'error' },
   },
 );

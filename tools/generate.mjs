@@ -23,11 +23,12 @@ try {
   run(['npx', 'vite', 'build', 'apps/api', '--outDir', path.join(root, 'node_modules/.cache/openapi')], { BUILD_DIR: '' });
   run(['node', path.join(root, 'node_modules/.cache/openapi/openapi.js'), document]);
   run(['npx', 'openapi-typescript', document, '--output', types]);
+  /** @type {[string, string][]} what was generated, and where it is kept */
   const pairs = [
     [document, path.join(client, 'openapi.json')],
     [types, path.join(client, 'schema.generated.ts')],
   ];
-  const read = (file) => {
+  const read = (/** @type {string} */ file) => {
     try {
       return readFileSync(file, 'utf8');
     } catch {

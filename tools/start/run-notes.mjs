@@ -16,13 +16,13 @@ export class RunNotes {
     this.own = path.join(folder, 'start.json');
   }
 
-  /** Refuses when another start of this checkout runs. @param {string} publicUrl */
-  claim(publicUrl) {
+  /** Refuses when another run of the kind goes on in this checkout. @param {string} what as people read it, such as its address */
+  claim(what) {
     if (existsSync(this.own)) {
       const other = JSON.parse(readFileSync(this.own, 'utf8'));
-      if (isAlive(other)) throw new Obstacle(`Masswright runs already from this checkout: ${other.publicUrl} (process ${other.pid}).`);
+      if (isAlive(other)) throw new Obstacle(`There is one running already in this checkout: ${other.what} (process ${other.pid}).`);
     }
-    writeFileSync(this.own, JSON.stringify({ ...findIdentity(process.pid), publicUrl }));
+    writeFileSync(this.own, JSON.stringify({ ...findIdentity(process.pid), what }));
   }
 
   /** @param {Ward} ward */
