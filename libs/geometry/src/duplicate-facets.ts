@@ -8,23 +8,43 @@ import type { WeldedMesh } from './weld-corners';
  */
 export function checkDuplicates(mesh: WeldedMesh): { count: number; facets: number[] } {
   const { starts, rows } = sortFacets(mesh);
+  const repeated: number[] = [];
   let count = 0;
-  const facets: number[] = [];
   for (let vertex = 0; vertex < mesh.vertexCount; vertex++) {
     const begin = starts[vertex] ?? 0;
     const end = starts[vertex + 1] ?? 0;
-    if (end - begin < 2) continue;
-    const row = Array.from(rows.subarray(begin, end), (facet) => ({ facet, ...findGreaterTwo(mesh, facet) }));
-    row.sort((one, two) => one.middle - two.middle || one.greatest - two.greatest || one.facet - two.facet);
-    for (let k = 1; k < row.length; k++) {
-      const one = row[k - 1];
-      const two = row[k];
-      if (one === undefined || two === undefined || one.middle !== two.middle || one.greatest !== two.greatest) continue;
-      count += 1;
-      if (facets.length < findingFacets) facets.push(two.facet);
+    if (end - begin < 2 || (end - begin <= shortRow && !hasRepetition(mesh, rows, begin, end))) continue;
+    const found = findRepetitions(mesh, rows.subarray(begin, end));
+    count += found.length;
+    if (repeated.length < findingFacets) repeated.push(...found.slice(0, findingFacets - repeated.length));
+  }
+  return { count, facets: repeated.sort((one, two) => one - two) };
+}
+
+/** Rows up to here are compared pair by pair, without sorting them. */
+const shortRow = 12;
+
+function hasRepetition({ corners }: WeldedMesh, rows: Uint32Array, begin: number, end: number): boolean {
+  for (let i = begin + 1; i < end; i++) {
+    const one = 3 * (rows[i] ?? 0);
+    const a = corners[one] ?? 0, b = corners[one + 1] ?? 0, c = corners[one + 2] ?? 0;
+    for (let j = begin; j < i; j++) {
+      const two = 3 * (rows[j] ?? 0);
+      const p = corners[two] ?? 0, q = corners[two + 1] ?? 0, r = corners[two + 2] ?? 0;
+      if ((p === a || p === b || p === c) && (q === a || q === b || q === c) && (r === a || r === b || r === c)) return true;
     }
   }
-  return { count, facets: facets.sort((one, two) => one - two) };
+  return false;
+}
+
+/** Facets of a row that repeat one before them in the file. */
+function findRepetitions(mesh: WeldedMesh, row: Uint32Array): number[] {
+  const sorted = Array.from(row, (facet) => ({ facet, ...findGreaterTwo(mesh, facet) }));
+  sorted.sort((one, two) => one.middle - two.middle || one.greatest - two.greatest || one.facet - two.facet);
+  return sorted.flatMap(({ facet, middle, greatest }, k) => {
+    const before = sorted[k - 1];
+    return before?.middle === middle && before.greatest === greatest ? [facet] : [];
+  });
 }
 
 function sortFacets({ corners, facetCount, vertexCount }: WeldedMesh): { starts: Uint32Array; rows: Uint32Array } {

@@ -36,14 +36,19 @@ export function createWelder(mostFacets: number): Welder {
   const key = new Float64Array(3);
   const keyBits = new Uint32Array(key.buffer);
 
+  /** Murmur3 (Appleby) over one word a coordinate: its upper half with the lower one turned by three, where binary32 has its last bits. */
   function hashKey(): number {
     let hash = 0x2545f491;
-    for (let k = 0; k < 6; k++) {
-      hash = Math.imul(hash ^ (keyBits[k] ?? 0), 0x85ebca6b);
-      hash = (hash << 13) | (hash >>> 19);
+    for (let k = 0; k < 6; k += 2) {
+      const low = keyBits[k] ?? 0;
+      let word = Math.imul((keyBits[k + 1] ?? 0) ^ ((low << 3) | (low >>> 29)), 0xcc9e2d51);
+      word = Math.imul((word << 15) | (word >>> 17), 0x1b873593);
+      hash ^= word;
+      hash = (Math.imul((hash << 13) | (hash >>> 19), 5) + 0xe6546b64) | 0;
     }
-    hash = Math.imul(hash ^ (hash >>> 16), 0xc2b2ae35);
-    return (hash ^ (hash >>> 13)) >>> 0;
+    hash = Math.imul(hash ^ (hash >>> 16), 0x85ebca6b);
+    hash = Math.imul(hash ^ (hash >>> 13), 0xc2b2ae35);
+    return hash ^ (hash >>> 16);
   }
 
   function findVertex(x: number, y: number, z: number): number {
@@ -60,14 +65,19 @@ export function createWelder(mostFacets: number): Welder {
     }
     slots[slot] = vertexCount + 1;
     if (3 * vertexCount === coordinates.length) coordinates = growArray(coordinates, 3 * vertexCount + 3, 9 * mostFacets);
-    coordinates.set(key, 3 * vertexCount);
+    coordinates[3 * vertexCount] = key[0];
+    coordinates[3 * vertexCount + 1] = key[1];
+    coordinates[3 * vertexCount + 2] = key[2];
     vertexCount += 1;
     if (vertexCount > fullest * slots.length) rehash();
     return vertexCount - 1;
   }
 
   function rehash(): void {
-    const length = 2 * slots.length;
+    // As many as all facets that can come would need at the present rate of new vertices, within what the facets received justify.
+    const expected = (vertexCount / facetCount) * mostFacets;
+    let length = 2 * slots.length;
+    while (length < 8 * slots.length && fullest * length < expected) length *= 2;
     slots = allocate(() => new Uint32Array(length));
     const mask = length - 1;
     for (let vertex = 0; vertex < vertexCount; vertex++) {
@@ -84,10 +94,13 @@ export function createWelder(mostFacets: number): Welder {
     add(batch) {
       const needed = 3 * (facetCount + batch.count);
       if (needed > corners.length) corners = growArray(corners, needed, 3 * mostFacets);
-      for (let corner = 0, at = 0; corner < 3 * batch.count; corner++, at += 3) {
-        corners[3 * facetCount + corner] = findVertex(batch.corners[at] ?? 0, batch.corners[at + 1] ?? 0, batch.corners[at + 2] ?? 0);
+      for (let at = 0; at < 9 * batch.count; at += 9) {
+        const facet = 3 * facetCount;
+        facetCount += 1;
+        corners[facet] = findVertex(batch.corners[at] ?? 0, batch.corners[at + 1] ?? 0, batch.corners[at + 2] ?? 0);
+        corners[facet + 1] = findVertex(batch.corners[at + 3] ?? 0, batch.corners[at + 4] ?? 0, batch.corners[at + 5] ?? 0);
+        corners[facet + 2] = findVertex(batch.corners[at + 6] ?? 0, batch.corners[at + 7] ?? 0, batch.corners[at + 8] ?? 0);
       }
-      facetCount += batch.count;
     },
     finish() {
       slots = new Uint32Array(0);
