@@ -145,6 +145,9 @@ create trigger announce_session_end after delete on sessions for each row execut
 -- What the application may do: no more than it does.
 revoke all on schema public from public;
 --> statement-breakpoint
+-- Said outright: a database that is cloned or restored may have another owner, and foreign keys are checked as the tables' one.
+grant usage, create on schema public to masswright_owner;
+--> statement-breakpoint
 grant usage on schema public to masswright_app;
 --> statement-breakpoint
 grant select, insert on organisations to masswright_app;
