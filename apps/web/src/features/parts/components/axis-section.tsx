@@ -1,0 +1,110 @@
+import type { StatementRecord } from '@masswright/contracts';
+import { computeAxisMoment, resolveAxis } from '@masswright/mechanics';
+import { fromSi, type Quantity } from '@masswright/units';
+import { ChoiceBar } from '../../../components/choice-bar';
+import { Figure } from '../../../components/figure';
+import { Notice } from '../../../components/notice';
+import { axisChoices, computeAxis, describeAxis, findChoice } from '../model/axis-choice';
+import { describeAxes, isAxisUnique } from '../model/axes-words';
+import { chooseDisplayUnit } from '../model/display-units';
+import type { SettingEditor, SettingEditorState } from '../model/setting-editor';
+import { DriveFields } from './drive-fields';
+import { Fact, Section, sectionNames } from './section';
+import { TypedAxisFields } from './typed-axis';
+
+function Shown({ quantity, value }: { quantity: Quantity; value: number }) {
+  const unit = chooseDisplayUnit(quantity, value);
+  return <Figure value={fromSi(value, unit)} unit={unit.symbol} />;
+}
+
+function Direction({ direction }: { direction: readonly number[] }) {
+  return <span className="figure">({direction.map((element) => Number(element.toFixed(5))).join(', ')})</span>;
+}
+
+/** Beyond rounding, an axis through the centre of mass has no arm. */
+const armThatCounts = 1e-9;
+
+function AxisFigures({ statement, state }: { statement: StatementRecord; state: SettingEditorState }) {
+  const { massKg, centreOfMassM, inertiaAtCentreOfMassKgM2, principalAxes } = statement;
+  const { axis } = state.draft;
+  const line = resolveAxis(axis, { centreOfMassM, principalAxes });
+  if (massKg === null || !centreOfMassM || !inertiaAtCentreOfMassKgM2 || !line) return null;
+  const moment = computeAxisMoment({ massKg, centreOfMassM, inertiaAtCentreOfMassKgM2 }, line);
+  const apart = moment.distanceM > armThatCounts * Math.max(moment.radiusOfGyrationM, moment.distanceM);
+  return (
+    <dl className="facts">
+      <Fact name="Moment">
+        <b className="axis-moment">
+          <Shown quantity="inertia" value={moment.inertiaKgM2} />
+        </b>{' '}
+        <span className="soft">
+          {describeAxis(axis)}, direction <Direction direction={line.direction} />
+        </span>
+      </Fact>
+      {axis.kind === 'typed' && (
+        <>
+          <Fact name="of which">
+            <Shown quantity="inertia" value={moment.throughCentreKgM2} /> <span className="soft">about the parallel axis through the centre of mass</span>
+          </Fact>
+          <Fact name="and">
+            <Shown quantity="inertia" value={apart ? moment.parallelAxisTermKgM2 : 0} />{' '}
+            <span className="soft">
+              by the parallel-axis theorem, m d²: the axis passes the centre of mass at <Shown quantity="length" value={apart ? moment.distanceM : 0} />
+            </span>
+          </Fact>
+        </>
+      )}
+      {axis.kind !== 'typed' && (
+        <Fact name="Parallel axis">
+          <span className="soft">nothing to add: this axis goes through the centre of mass</span>
+        </Fact>
+      )}
+      <Fact name="Gyration">
+        <Shown quantity="length" value={moment.radiusOfGyrationM} /> <span className="soft">radius of gyration about this axis</span>
+      </Fact>
+    </dl>
+  );
+}
+
+interface AxisSectionProps {
+  statement: StatementRecord;
+  canEdit: boolean;
+  editor: SettingEditor;
+  state: SettingEditorState;
+}
+
+export function AxisSection({ statement, canEdit, editor, state }: AxisSectionProps) {
+  const { axis, drive } = state.draft;
+  const { axes, aboutAxis } = statement;
+  const ambiguous = axis.kind === 'principal' && axes && !isAxisUnique(axes, axis.number);
+  return (
+    <Section name={sectionNames.axis}>
+      {canEdit && (
+        <div className="screen-only axis-choice">
+          <ChoiceBar
+            label="Axis"
+            choices={axisChoices}
+            value={findChoice(axis)}
+            onChange={(choice) => editor.change({ axis: computeAxis(choice, axis, statement) })}
+          />
+          {axis.kind === 'typed' && <TypedAxisFields axis={axis} onChange={(typed) => editor.change({ axis: typed })} />}
+        </div>
+      )}
+      <AxisFigures statement={statement} state={state} />
+      {ambiguous && <p className="soft">{describeAxes(axes)}</p>}
+      {aboutAxis && (
+        <div className="drive">
+          <h3>Drive</h3>
+          <DriveFields drive={drive} inertiaKgM2={aboutAxis.inertiaKgM2} canEdit={canEdit} onChange={(typed) => editor.change({ drive: typed })} />
+          <Notice tone="doubt">
+            <p>
+              What turns stores energy, and gives it back at once when it meets a hand. These figures size a drive; they do not make it safe. Assess the risk
+              (ISO 12100), guard what turns (ISO 14120) and interlock the guard (ISO 14119) before it runs. Local codes and the judgement of licensed engineers
+              decide.
+            </p>
+          </Notice>
+        </div>
+      )}
+    </Section>
+  );
+}

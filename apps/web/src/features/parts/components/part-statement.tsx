@@ -1,0 +1,68 @@
+import type { Part } from '@masswright/contracts';
+import { computeStatement } from '@masswright/mechanics';
+import { useMemo } from 'react';
+import type { SettingEditor, SettingEditorState } from '../model/setting-editor';
+import { AxisSection } from './axis-section';
+import { FiguresSection } from './figures-section';
+import { RunProgress } from './run-progress';
+import { SaveStatus } from './save-status';
+import { sectionNames, type SectionName } from './section';
+import { SoundnessSection } from './soundness-section';
+import { SourceSection } from './source-section';
+import './part-table.css';
+import './statement.css';
+
+interface PartStatementProps {
+  part: Part;
+  editor: SettingEditor;
+  state: SettingEditorState;
+}
+
+/**
+ * The statement of a part: what the worker measured, under the setting as the person has it now. Every change of the setting
+ * is computed here with the same function that the server records with.
+ */
+export function PartStatement({ part, editor, state }: PartStatementProps) {
+  const { revision, can } = part;
+  const { measurement, fileName, sha256, run } = revision;
+  const { draft } = state;
+  const statement = useMemo(
+    () => (measurement ? computeStatement(measurement, draft, { file: fileName, sha256: sha256 ?? '' }) : undefined),
+    [measurement, draft, fileName, sha256],
+  );
+  const hasAxis = statement?.massKg !== null && statement !== undefined;
+  const sections: SectionName[] = [
+    sectionNames.source,
+    ...(measurement ? [sectionNames.soundness, sectionNames.figures] : []),
+    ...(hasAxis ? [sectionNames.axis] : []),
+  ];
+  return (
+    <div className="statement-page">
+      <aside className="statement-rail screen-only">
+        <nav aria-label="Sections">
+          <ol>
+            {sections.map(({ number, id, title }) => (
+              <li key={id}>
+                <a href={`#${id}`}>
+                  <span className="figure soft">{number}</span> {title}
+                </a>
+              </li>
+            ))}
+          </ol>
+        </nav>
+        {can.edit && <SaveStatus editor={editor} state={state} />}
+      </aside>
+      <article className="statement" aria-label="Statement">
+        <SourceSection part={part} editor={editor} state={state} />
+        {!measurement && (
+          <div className="section section-run">
+            <RunProgress run={run} />
+          </div>
+        )}
+        {measurement && <SoundnessSection soundness={measurement.soundness} />}
+        {measurement && <FiguresSection soundness={measurement.soundness} statement={statement} canEdit={can.edit} />}
+        {statement && hasAxis && <AxisSection statement={statement} canEdit={can.edit} editor={editor} state={state} />}
+      </article>
+    </div>
+  );
+}

@@ -1,0 +1,27 @@
+import type { Axis } from '@masswright/contracts';
+import { describe, expect, it } from 'vitest';
+import { axisChoices, computeAxis, findChoice } from './axis-choice';
+
+const statement: Parameters<typeof computeAxis>[2] = {
+  centreOfMassM: [0.01, 0.02, 0.03],
+  principalAxes: [
+    [0, 1, 0],
+    [1, 0, 0],
+    [0, 0, -1],
+  ],
+};
+
+describe('choice of an axis', () => {
+  const before: Axis = { kind: 'principal', number: 1 };
+
+  it('leads back to the same choice', () => {
+    for (const { value } of axisChoices) expect(findChoice(computeAxis(value, before, statement))).toBe(value);
+  });
+  it('a typed axis begins where the one before it was', () => {
+    expect(computeAxis('typed', before, statement)).toEqual({ kind: 'typed', pointM: [0.01, 0.02, 0.03], direction: [0, 1, 0] });
+  });
+  it('a typed axis of a part without figures begins at the origin, along z', () => {
+    const none = { centreOfMassM: null, principalAxes: null };
+    expect(computeAxis('typed', before, none)).toEqual({ kind: 'typed', pointM: [0, 0, 0], direction: [0, 0, 1] });
+  });
+});

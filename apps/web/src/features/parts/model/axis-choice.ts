@@ -1,0 +1,58 @@
+import type { Axis, StatementRecord } from '@masswright/contracts';
+import { resolveAxis } from '@masswright/mechanics';
+import type { Choice } from '../../../components/choice-bar';
+
+export type AxisChoice = 'x' | 'y' | 'z' | '1' | '2' | '3' | 'typed';
+
+export const axisChoices: readonly Choice<AxisChoice>[] = [
+  { value: 'x', label: 'X', spoken: 'Mesh axis X' },
+  { value: 'y', label: 'Y', spoken: 'Mesh axis Y' },
+  { value: 'z', label: 'Z', spoken: 'Mesh axis Z' },
+  { value: '1', label: '1', spoken: 'Principal axis 1' },
+  { value: '2', label: '2', spoken: 'Principal axis 2' },
+  { value: '3', label: '3', spoken: 'Principal axis 3' },
+  { value: 'typed', label: 'Typed' },
+];
+
+export function findChoice(axis: Axis): AxisChoice {
+  switch (axis.kind) {
+    case 'mesh':
+      return axis.along;
+    case 'principal':
+      return (['1', '2', '3'] as const)[axis.number - 1] ?? '1';
+    case 'typed':
+      return 'typed';
+  }
+}
+
+/** The axis that a choice means. A typed one begins as the axis that was shown before, so that nothing jumps. */
+export function computeAxis(choice: AxisChoice, before: Axis, statement: Pick<StatementRecord, 'centreOfMassM' | 'principalAxes'>): Axis {
+  switch (choice) {
+    case 'x':
+    case 'y':
+    case 'z':
+      return { kind: 'mesh', along: choice };
+    case '1':
+      return { kind: 'principal', number: 1 };
+    case '2':
+      return { kind: 'principal', number: 2 };
+    case '3':
+      return { kind: 'principal', number: 3 };
+    case 'typed': {
+      const line = resolveAxis(before, statement);
+      return { kind: 'typed', pointM: line?.pointM ?? [0, 0, 0], direction: line?.direction ?? [0, 0, 1] };
+    }
+  }
+}
+
+/** An axis in words. */
+export function describeAxis(axis: Axis): string {
+  switch (axis.kind) {
+    case 'mesh':
+      return `through the centre of mass, along ${axis.along} of the mesh frame`;
+    case 'principal':
+      return `principal axis ${axis.number}, through the centre of mass`;
+    case 'typed':
+      return 'through a typed point, along a typed direction';
+  }
+}

@@ -1,0 +1,23 @@
+import type { MeasuringRun } from '@masswright/contracts';
+
+const stageWords: Record<MeasuringRun['stage'], string> = {
+  waiting: 'Waiting for its turn',
+  reading: 'Reading the file',
+  measuring: 'Measuring',
+  storing: 'Storing the figures',
+};
+
+/** How far a file is, in words that fit a row. */
+export function describeRun({ state, stage, progress }: Pick<MeasuringRun, 'state' | 'stage' | 'progress'>): string {
+  if (state === 'failed') return 'Not measured';
+  if (state === 'done') return 'Measured';
+  if (state === 'queued') return stageWords.waiting;
+  return progress > 0 && progress < 1 ? `${stageWords[stage]}, ${Math.floor(progress * 100)} %` : stageWords[stage];
+}
+
+/** Where in a file something went wrong; a person looks for it with a hex viewer or an editor. */
+export function describePlace(at: NonNullable<MeasuringRun['error']>['at']): string | undefined {
+  if (at?.line !== undefined) return `line ${at.line}`;
+  if (at?.byte !== undefined) return `byte ${at.byte}`;
+  return undefined;
+}

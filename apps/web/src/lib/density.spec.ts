@@ -1,0 +1,24 @@
+import { describe, expect, it } from 'vitest';
+import { readDensity, writeDensity } from './density';
+
+describe('a typed density', () => {
+  it('is read in the unit that is written with it', () => {
+    expect(readDensity('2.7 g/cm3')).toEqual({ densityKgM3: 2700 });
+    expect(readDensity('7850 kg/m³')).toEqual({ densityKgM3: 7850 });
+  });
+  it('left empty is stated later', () => {
+    expect(readDensity('  ')).toEqual({ densityKgM3: null });
+  });
+  it('without a unit is refused: 2.7 could be grams to the cubic centimetre or kilograms to the cubic metre', () => {
+    expect(readDensity('2.7').error).toBeTruthy();
+  });
+  it('of nothing or of more than any material has is refused', () => {
+    expect(readDensity('0 g/cm3').error).toContain('greater than 0');
+    expect(readDensity('2700 g/cm3').error).toContain('Check the unit');
+  });
+  it('is written so that it reads back as the same number', () => {
+    for (const density of [2700, 998.2, 0.163, 1234.5678]) {
+      expect(readDensity(writeDensity(density))).toEqual({ densityKgM3: density });
+    }
+  });
+});

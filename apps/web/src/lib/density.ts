@@ -1,0 +1,22 @@
+import { formatFigure, parseQuantity } from '@masswright/units';
+
+/** The contract's own limit; nothing on Earth comes near it. */
+const greatestKgM3 = 1e6;
+
+export type TypedDensity = { densityKgM3: number | null; error?: undefined } | { densityKgM3?: undefined; error: string };
+
+/** What a person typed as a density. Nothing typed is an answer too: it is stated later. */
+export function readDensity(text: string): TypedDensity {
+  if (text.trim() === '') return { densityKgM3: null };
+  const parsed = parseQuantity(text, 'density');
+  if ('error' in parsed) return { error: parsed.error };
+  if (!(parsed.value > 0)) return { error: 'A density is greater than 0.' };
+  if (parsed.value > greatestKgM3) return { error: `A density of ${formatFigure(parsed.value, { digits: 4 })} kg/m³ is more than any material has. Check the unit.` };
+  return { densityKgM3: parsed.value };
+}
+
+/** A density as it is typed and shown: all the digits that were given, none that were not. */
+export function writeDensity(densityKgM3: number | null): string {
+  if (densityKgM3 === null) return '';
+  return `${Number(densityKgM3.toPrecision(12))} kg/m³`;
+}

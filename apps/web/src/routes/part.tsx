@@ -1,0 +1,58 @@
+import { Button } from '@blueprintjs/core';
+import type { Part } from '@masswright/contracts';
+import { useState } from 'react';
+import { useParams } from 'react-router-dom';
+import { Loading } from '../components/loading';
+import { Crumbs, PageHeading } from '../components/page';
+import { ProblemNotice } from '../components/problem-notice';
+import { usePart } from '../features/parts/api/parts';
+import { PartStatement } from '../features/parts/components/part-statement';
+import { RenamePartDialog } from '../features/parts/components/rename-part-dialog';
+import { useSettingEditor } from '../features/parts/model/use-setting-editor';
+import { useSignedIn } from '../features/session/api/session';
+import { isWorthAnotherTry } from '../lib/problem';
+
+export function Component() {
+  const { partId = '' } = useParams();
+  const { data: part, error, refetch } = usePart(partId);
+  if (error && !part) {
+    if (!isWorthAnotherTry(error)) throw error;
+    return <ProblemNotice error={error} onRetry={() => void refetch()} />;
+  }
+  if (!part) return <Loading what="the part" />;
+  return <PartPage key={part.id} part={part} />;
+}
+
+function PartPage({ part }: { part: Part }) {
+  const session = useSignedIn();
+  const { editor, state } = useSettingEditor(part);
+  const [renaming, setRenaming] = useState(false);
+  return (
+    <>
+      <Crumbs
+        crumbs={[
+          { label: session.organisation.name, to: '/' },
+          { label: part.projectName, to: `/projects/${part.projectId}` },
+          { label: part.name },
+        ]}
+      />
+      <PageHeading
+        title={part.name}
+        documentTitle={`${part.name} – ${part.projectName}`}
+        above={
+          <>
+            Part <span className="figure">{part.number}</span> of {part.projectName}
+          </>
+        }
+        beside={
+          <span className="revision-tag">
+            Revision <b className="figure">{part.revision.letter}</b>
+          </span>
+        }
+        actions={part.can.edit && <Button onClick={() => setRenaming(true)}>Rename</Button>}
+      />
+      <PartStatement part={part} editor={editor} state={state} />
+      <RenamePartDialog part={part} isOpen={renaming} onClose={() => setRenaming(false)} />
+    </>
+  );
+}
