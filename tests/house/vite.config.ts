@@ -1,0 +1,4 @@
+import { defineConfig } from 'vitest/config';
+import { library } from '../../vite.shared';
+
+export default defineConfig(library('tests-house', { testTimeout: 60_000, hookTimeout: 120_000 }));

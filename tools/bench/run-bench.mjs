@@ -1,0 +1,72 @@
+import { rmSync } from 'node:fs';
+import { findFreePort, startProgram } from '../services/index.mjs';
+import { inCheckout, Obstacle, root } from '../setup/checkout.mjs';
+import { chooseDataFolder } from '../setup/data-folder.mjs';
+import { startTestServices } from '../test/services.mjs';
+import { runTargets } from '../test/workspace.mjs';
+
+const buildFolder = inCheckout('.test/bench/build');
+
+/** @param {NodeJS.ProcessEnv} services @param {number} apiPort @param {number} workerPort @returns {NodeJS.ProcessEnv} */
+function makeEnvironment(services, apiPort, workerPort) {
+  return {
+    PATH: process.env.PATH,
+    NODE_ENV: 'production',
+    DATABASE_URL: services.TEST_DATABASE_URL,
+    REDIS_URL: services.TEST_REDIS_URL,
+    S3_ENDPOINT: services.TEST_S3_ENDPOINT,
+    S3_REGION: services.TEST_S3_REGION,
+    S3_BUCKET: services.TEST_S3_BUCKET,
+    S3_ACCESS_KEY_ID: services.TEST_S3_ACCESS_KEY_ID,
+    S3_SECRET_ACCESS_KEY: services.TEST_S3_SECRET_ACCESS_KEY,
+    SMTP_URL: services.TEST_SMTP_URL,
+    MAIL_FROM: 'Masswright <no-reply@masswright.example>',
+    PUBLIC_URL: `http://127.0.0.1:${apiPort}`,
+    API_PORT: String(apiPort),
+    WORKER_PORT: String(workerPort),
+    LINK_SECRET: 'bc'.repeat(32),
+    LOG_LEVEL: 'warn',
+  };
+}
+
+/**
+ * Loads a benchmark, starts what it asks for, runs it and stops everything again.
+ * @param {string} file
+ * @param {(line: string) => void} print
+ */
+export async function runBench(file, print) {
+  // Not at the top: before `npm ci` there is no vite.
+  const { runnerImport } = await import('vite');
+  const { module } = await runnerImport(file, { root, configFile: false, resolve: { tsconfigPaths: true } });
+  const bench = /** @type {import('./context.d.ts').Bench} */ (module);
+  const needs = new Set(bench.needs ?? []);
+  /** @type {(() => Promise<void>)[]} */
+  const stops = [];
+  /** @type {Record<string, string>} */
+  let env = {};
+  /** @type {string | undefined} */
+  let apiUrl;
+  const { folder } = chooseDataFolder('.test/bench', needs.size > 0);
+  try {
+    if (needs.size > 0) {
+      const built = await runTargets({ ...process.env, BUILD_DIR: buildFolder }, ['build'], { cached: false });
+      if (built.code !== 0) throw new Obstacle(`The build failed:\n${built.output}`);
+      const [apiPort, workerPort] = [await findFreePort(), await findFreePort()];
+      const services = await startTestServices(`${folder}/data`, buildFolder, [apiPort]);
+      stops.unshift(services.stop);
+      env = services.env;
+      if (needs.has('programs')) {
+        const programEnv = makeEnvironment(services.env, apiPort, workerPort);
+        for (const [kind, port, path] of /** @type {const} */ ([['worker', workerPort, '/health/ready'], ['api', apiPort, '/api/health/ready']])) {
+          const program = await startProgram({ kind, file: `${buildFolder}/apps/${kind}/main.js`, env: programEnv, readyUrl: `http://127.0.0.1:${port}${path}`, logFile: `${folder}/data/${kind}.log`, readyTimeoutMs: 60_000 });
+          stops.unshift(() => program.stop());
+        }
+        apiUrl = `http://127.0.0.1:${apiPort}`;
+      }
+    }
+    await bench.run({ env, apiUrl, print });
+  } finally {
+    for (const stop of stops) await stop();
+    rmSync(`${folder}/data`, { recursive: true, force: true });
+  }
+}
