@@ -34,14 +34,14 @@ async function asAdmin(sql: string): Promise<void> {
 export async function createTestDatabase(): Promise<TestDatabase> {
   const name = `test_${randomUUID().replaceAll('-', '')}`;
   await asAdmin(`create database ${name} template ${environment.template}`);
-  const migrationUrl = inDatabase(environment.migrationUrl, name);
-  const pool = new pg.Pool({ connectionString: migrationUrl, max: 2 });
+  const adminUrl = inDatabase(environment.adminUrl, name);
+  const pool = new pg.Pool({ connectionString: adminUrl, max: 2 });
   pool.on('error', () => undefined);
   return {
     name,
-    migrationUrl,
+    migrationUrl: inDatabase(environment.migrationUrl, name),
     applicationUrl: inDatabase(environment.applicationUrl, name),
-    adminUrl: inDatabase(environment.adminUrl, name),
+    adminUrl,
     look: async <Row extends pg.QueryResultRow>(sql: string, values: unknown[] = []) => (await pool.query<Row>(sql, values)).rows,
     drop: async () => {
       await pool.end();

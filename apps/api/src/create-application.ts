@@ -1,18 +1,14 @@
+import { VersioningType } from '@nestjs/common';
 import { NestFactory } from '@nestjs/core';
 import type { NestExpressApplication } from '@nestjs/platform-express';
 import { FrameworkLogger, type Logger } from '@masswright/logs';
 import { AppModule } from './app.module';
 import { Metrics } from './health/metrics';
 import type { ApiSettings } from './platform/api-settings';
-
 import { ProblemFilter } from './platform/problem.filter';
 import { logRequests } from './platform/request-log';
 import { securityHeaders } from './platform/security-headers';
 import { serveWebPages } from './platform/web-pages';
-
-/** The routes of every noun are below this; health and metrics stand apart from the version. */
-export const apiPrefix = 'api/v1';
-const unversioned = ['api/health/live', 'api/health/ready', 'api/metrics'];
 
 /** The whole api, not yet listening. */
 export async function createApplication(settings: ApiSettings, logger: Logger): Promise<NestExpressApplication> {
@@ -28,7 +24,9 @@ export async function createApplication(settings: ApiSettings, logger: Logger): 
   application.use(securityHeaders(settings));
   if (settings.WEB_DIR !== undefined) application.use(...serveWebPages(settings.WEB_DIR));
   application.useBodyParser('json', { limit: '256kb', strict: true });
-  application.setGlobalPrefix(apiPrefix, { exclude: unversioned });
+  // /api/v1/… for every noun; health and metrics are of no version.
+  application.setGlobalPrefix('api');
+  application.enableVersioning({ type: VersioningType.URI, defaultVersion: '1' });
   application.useGlobalFilters(new ProblemFilter(logger));
   return application;
 }

@@ -1,4 +1,4 @@
-import { Controller, Get, Inject, Res } from '@nestjs/common';
+import { Controller, Get, Inject, Res, VERSION_NEUTRAL } from '@nestjs/common';
 import { ApiExcludeController } from '@nestjs/swagger';
 import { HealthCheckService, HealthIndicatorService, type HealthCheckResult, type HealthIndicatorResult } from '@nestjs/terminus';
 import type { Response } from 'express';
@@ -10,7 +10,7 @@ import { ShutdownState } from './shutdown-state';
 /** Live: the process runs; if not, restart it. Ready: it can serve; if not, send people elsewhere and wait. */
 @ApiExcludeController()
 @Public()
-@Controller('api/health')
+@Controller({ path: 'health', version: VERSION_NEUTRAL })
 export class HealthController {
   constructor(
     @Inject(HealthCheckService) private readonly health: HealthCheckService,

@@ -1,5 +1,5 @@
 import { timingSafeEqual } from 'node:crypto';
-import { Controller, Get, Headers, Inject, Res } from '@nestjs/common';
+import { Controller, Get, Headers, Inject, Res, VERSION_NEUTRAL } from '@nestjs/common';
 import { ApiExcludeController } from '@nestjs/swagger';
 import type { Response } from 'express';
 import { hashToken } from '@masswright/jobs';
@@ -11,7 +11,7 @@ import { Metrics } from './metrics';
 /** For the installation's own monitoring: whoever has METRICS_TOKEN, and nobody where it is not set. */
 @ApiExcludeController()
 @Public()
-@Controller('api/metrics')
+@Controller({ path: 'metrics', version: VERSION_NEUTRAL })
 export class MetricsController {
   constructor(
     @Inject(Metrics) private readonly metrics: Metrics,
