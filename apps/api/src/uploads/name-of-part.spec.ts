@@ -1,0 +1,17 @@
+import { describe, expect, it } from 'vitest';
+import { nameOfPart } from './name-of-part';
+
+describe('the first name of a part', () => {
+  it.each([
+    ['Drum flange.stl', 'Drum flange'],
+    ['C:\\parts\\drum.STL', 'drum'],
+    ['../../etc/passwd', 'passwd'],
+    ['bracket', 'bracket'],
+    ['.stl', 'Unnamed part'],
+    ['drum\u202Elts.stl', 'drumlts'],
+    ['line\nbreak\u0000.stl', 'linebreak'],
+    [`${'x'.repeat(300)}.stl`, 'x'.repeat(200)],
+  ])('of %j is %j', (fileName, name) => {
+    expect(nameOfPart(fileName)).toBe(name);
+  });
+});
