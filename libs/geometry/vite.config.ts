@@ -1,4 +1,4 @@
 import { defineConfig } from 'vitest/config';
 import { library } from '../../vite.shared';
 
-export default defineConfig(library('geometry'));
+export default defineConfig(library('geometry', { setupFiles: ['src/testing/seed-properties.ts'], testTimeout: 30_000 }));

@@ -91,6 +91,9 @@ function sortRow(entries: Uint32Array, begin: number, end: number): void {
   }
 }
 
+/** A facet has three edges, so that these name as many facets as a finding lists. */
+const keptEdges = 3 * findingFacets;
+
 /** A count of edges, the first few of them kept: as many as can name facets. */
 interface EdgeSet {
   count: number;
@@ -102,7 +105,7 @@ function createEdgeSet(): EdgeSet {
 }
 
 function addEdge(set: EdgeSet, lesser: number, greater: number): void {
-  if (set.count < findingFacets) set.kept.set(lesser, (set.kept.get(lesser) ?? new Set()).add(greater));
+  if (set.count < keptEdges) set.kept.set(lesser, (set.kept.get(lesser) ?? new Set()).add(greater));
   set.count += 1;
 }
 

@@ -16,8 +16,9 @@ const surfaceTolerance = 1e-12;
 /** A body whose box is smaller cannot be integrated: fifth powers would leave the range of binary64. */
 const leastExtent = 1e-45;
 
-const blockedUnit = blockedRoundings * 2 ** -53;
-const doubleDoubleUnit = doubleDoubleRoundings * 2 ** -100;
+/** 2⁻⁵³ and 2⁻¹⁰⁰. */
+const blockedUnit = blockedRoundings * 1.1102230246251565e-16;
+const doubleDoubleUnit = doubleDoubleRoundings * 7.888609052210118e-31;
 
 export interface ChosenSums {
   body: FacetSums;

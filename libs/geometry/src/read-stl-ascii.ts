@@ -7,23 +7,21 @@ import { createWordScanner } from './scan-words';
 /** Binary STL can hold no larger coordinate, and the fifth power of this one still fits binary64. */
 const largestCoordinate = 3.4028234663852886e38;
 
-/** What the reader waits for. In the three name states the words up to the end of the line are a name and mean nothing. */
-type Expected = 'solid' | 'solid-name' | 'normal-or-name' | 'facet' | 'normal' | 'normal-number' | 'outer' | 'loop' | 'vertex' | 'coordinate' | 'endloop' | 'endfacet' | 'end-name';
+/** What the reader waits for. In the name states the words up to the end of the line are a name and mean nothing. */
+type Expected = 'solid' | 'facet' | 'normal' | 'normal-number' | 'outer' | 'loop' | 'vertex' | 'coordinate' | 'endloop' | 'endfacet' | NameState;
+type NameState = 'solid-name' | 'normal-or-solid-name' | 'end-name' | 'normal-or-end-name';
 
-const wanted: Record<Expected, string> = {
+const wanted: Record<Exclude<Expected, NameState>, string> = {
   solid: '"solid"',
-  'solid-name': 'a name',
-  'normal-or-name': 'a name',
   facet: '"facet" or "endsolid"',
   normal: '"normal"',
   'normal-number': 'a number of the normal (three belong to it)',
   outer: '"outer loop"',
   loop: '"loop" after "outer"',
-  vertex: '"vertex": a facet has three corners, and this one has fewer',
+  vertex: 'another "vertex" (a facet has three corners)',
   coordinate: 'a coordinate (three belong to a vertex)',
   endloop: '"endloop" after three corners',
   endfacet: '"endfacet"',
-  'end-name': 'a name',
 };
 
 /**
@@ -36,11 +34,13 @@ export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): Fo
   let read = 0;
   let solids = 0;
   let numbers = 0;
+  // Whether the name after "endsolid" has the word "solid" in it: another solid may have begun on the same line.
+  let solidInName = false;
   const scanner = createWordScanner(takeWord, takeLineEnd);
 
   function takeLineEnd(): void {
     if (expected === 'solid-name') expected = 'facet';
-    else if (expected === 'end-name') expected = 'solid';
+    else if (expected === 'end-name' || expected === 'normal-or-end-name') expected = 'solid';
   }
 
   function takeWord(bytes: Uint8Array, start: number, end: number): void {
@@ -53,7 +53,7 @@ export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): Fo
         break;
       case 'facet':
         if (is('facet')) return expect('normal');
-        if (is('endsolid')) return expect('end-name');
+        if (is('endsolid')) return endSolid();
         break;
       case 'normal':
         if (is('normal')) return beginNumbers();
@@ -74,32 +74,49 @@ export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): Fo
         if (is('endfacet')) return endFacet();
         break;
       case 'solid':
-        if (is('solid')) {
-          solids += 1;
-          return expect('solid-name');
-        }
+        if (is('solid')) return beginSolid('solid-name');
+        if (is('facet') && solidInName) return beginSolid('normal');
         break;
-      // A whole file may stand on one line, so "facet normal" ends a name too, and "endsolid" does.
-      case 'solid-name':
-        if (is('facet')) expected = 'normal-or-name';
-        else if (is('endsolid')) expected = 'end-name';
-        return;
-      case 'normal-or-name':
-        if (is('normal')) return beginNumbers();
-        expected = is('facet') ? 'normal' : 'solid-name';
-        return;
-      case 'end-name':
-        if (is('solid')) {
-          solids += 1;
-          expected = 'solid-name';
-        }
-        return;
+      default:
+        return takeNameWord(expected, is);
     }
     refuseWord(bytes, start, end);
   }
 
+  /** A whole file may stand on one line, so "facet normal" ends a name too, and "endsolid" does. */
+  function takeNameWord(state: NameState, is: (keyword: string) => boolean): void {
+    switch (state) {
+      case 'solid-name':
+        if (is('facet')) expected = 'normal-or-solid-name';
+        else if (is('endsolid')) endSolid();
+        return;
+      case 'normal-or-solid-name':
+        if (is('normal')) return beginNumbers();
+        expected = is('facet') ? 'normal' : 'solid-name';
+        return;
+      case 'end-name':
+        if (is('solid')) solidInName = true;
+        else if (is('facet') && solidInName) expected = 'normal-or-end-name';
+        return;
+      case 'normal-or-end-name':
+        if (!is('normal')) return expect('end-name');
+        beginSolid('normal');
+        return beginNumbers();
+    }
+  }
+
   function expect(next: Expected): void {
     expected = next;
+  }
+
+  function beginSolid(next: Expected): void {
+    solids += 1;
+    expected = next;
+  }
+
+  function endSolid(): void {
+    solidInName = false;
+    expected = 'end-name';
   }
 
   function beginNumbers(): void {
@@ -145,7 +162,7 @@ export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): Fo
   }
 
   function refuseWord(bytes: Uint8Array, start: number, end: number): never {
-    refuse(`${quote(bytes, start, end)} stands where ${wanted[expected]} belongs. Export the mesh again.`);
+    refuse(`${quote(bytes, start, end)} stands where ${wanted[expected as keyof typeof wanted]} belongs. Export the mesh again.`);
   }
 
   function refuseNumber(bytes: Uint8Array, start: number, end: number): never {
@@ -165,7 +182,7 @@ export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): Fo
     push: (bytes) => scanner.push(bytes),
     finish() {
       scanner.finish();
-      if (expected !== 'solid' && expected !== 'end-name') {
+      if (expected !== 'solid' && expected !== 'end-name' && expected !== 'normal-or-end-name') {
         throw new MeshError('file-truncated', `The file ends in the middle of ${read > 0 ? `a solid, after ${spellCount(read)} whole facets` : 'its first solid'}; "endsolid" is missing. It was cut off: export it again.`, { line: scanner.line });
       }
       flushFacets(batch, sink);

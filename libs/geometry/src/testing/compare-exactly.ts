@@ -1,5 +1,5 @@
 import type { Integrals, Measurement, Vector3 } from '../measurement';
-import { finishExactly, integrateExactly } from './exact-integrals';
+import { finishExactly, integrateExactly, integrateSurfaceExactly } from './exact-integrals';
 import type { Corners } from './shapes';
 
 /** Largest errors against the exact values: volume relative to itself, centre to the box's diagonal, second moments to volume times diagonal². */
@@ -15,6 +15,11 @@ export function compareExactly(measurement: Measurement, corners: Corners): Erro
   const exact = finishExactly(integrateExactly(corners), measurement.origin);
   const sign = measurement.soundness.turned ? -1 : 1;
   return computeErrors(volume, { ...exact, content: sign * exact.content, second: scaleSecond(exact.second, sign) }, findDiagonal(measurement.boundingBox));
+}
+
+/** The same for the surface, relative to its area. */
+export function compareSurfaceExactly({ surface, origin, boundingBox }: Measurement, corners: Corners): Errors {
+  return computeErrors(surface, integrateSurfaceExactly(corners, origin), findDiagonal(boundingBox));
 }
 
 export function findDiagonal({ min, max }: { min: Vector3; max: Vector3 }): number {

@@ -122,3 +122,24 @@ export const rotate = (corners: Corners, rows: readonly [Point, Point, Point]): 
 
 /** The two boxes of an asymmetric housing as one closed surface each, touching in a rectangle that belongs to both. */
 export const makeHousing = (): Corners => join(makeBlock([0, 0, 0], [60, 40, 10]), makeBlock([0, 0, 10], [10, 30, 60]));
+
+/** A ball with dents and bumps, star-shaped about the origin: `bump` gives the radius for a place on the unit sphere. */
+export function makeStar(segments: number, bump: (i: number, j: number) => number): Corners {
+  const steps = Math.max(2, Math.ceil(segments / 2));
+  const points: Point[] = [];
+  const at = (i: number, j: number): Point => {
+    const polar = i === 0 || i === steps;
+    const radius = bump(i, polar ? 0 : j % segments);
+    if (polar) return [0, 0, i === 0 ? -radius : radius];
+    const height = -quarter + (Math.PI * i) / steps;
+    const angle = (2 * Math.PI * (j % segments)) / segments;
+    return [radius * Math.cos(height) * Math.cos(angle), radius * Math.cos(height) * Math.sin(angle), radius * Math.sin(height)];
+  };
+  for (let i = 0; i < steps; i++) {
+    for (let j = 0; j < segments; j++) {
+      if (i > 0) points.push(at(i, j), at(i, j + 1), at(i + 1, j + 1));
+      if (i + 1 < steps) points.push(at(i, j), at(i + 1, j + 1), at(i + 1, j));
+    }
+  }
+  return joinPoints(points);
+}
