@@ -1,4 +1,4 @@
-import { Button, Menu, MenuDivider, MenuItem, Popover } from '@blueprintjs/core';
+import { Button, Menu, MenuDivider, MenuItem, PopoverNext } from '@blueprintjs/core';
 import { useState } from 'react';
 import { useNavigate } from 'react-router-dom';
 import { ConfirmDialog } from '../components/confirm-dialog';
@@ -72,11 +72,11 @@ export function AccountMenu() {
 
   return (
     <>
-      <Popover content={menu} placement="bottom-end" minimal>
+      <PopoverNext content={menu} placement="bottom-end" animation="minimal" arrow={false}>
         <Button variant="minimal" className="band-who" aria-label={`Account of ${session.user.name}`}>
           {computeInitials(session.user.name)}
         </Button>
-      </Popover>
+      </PopoverNext>
       {error && !asked && (
         <span role="alert" className="band-problem">
           {error.message}

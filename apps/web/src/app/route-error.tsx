@@ -2,7 +2,7 @@ import { Button } from '@blueprintjs/core';
 import { isRouteErrorResponse, Link, useRouteError } from 'react-router-dom';
 import { MessagePage } from '../components/message-page';
 import { ConnectionError, isProblem, ProblemError } from '../lib/problem';
-import { Forbidden, NotFound } from '../routes/not-found';
+import { Forbidden, NotFound } from '../components/not-found';
 
 /** A new release takes away the files of the old one; loading the page again gets the new ones. */
 function isMissingChunk(error: unknown): boolean {

@@ -1,5 +1,6 @@
 import { createBrowserRouter } from 'react-router-dom';
 import { RouteError } from './route-error';
+import { NotFound } from '../components/not-found';
 import { Root } from './root';
 
 /** One file a route, each read when it is first opened; so the sign-in page needs none of what comes after it. */
@@ -32,7 +33,7 @@ export function createRouter() {
                 { path: 'projects/:projectId', lazy: () => import('../routes/project') },
                 { path: 'projects/:projectId/parts/:partId', lazy: () => import('../routes/part') },
                 { path: 'people', lazy: () => import('../routes/people') },
-                { path: '*', lazy: () => import('../routes/not-found') },
+                { path: '*', element: <NotFound /> },
               ],
             },
           ],

@@ -36,6 +36,9 @@ function createEventHandler(client: QueryClient, coalesce: (key: string, action:
       case 'part':
         readAgain(...partKey(event.partId));
         readAgain(...partsKey(event.projectId));
+        // They say how many parts there are.
+        readAgain(...projectKey(event.projectId));
+        readAgain(...projectsKey);
         return;
       case 'run':
         applyRun(client, event);

@@ -1,7 +1,6 @@
 import { FormGroup, InputGroup } from '@blueprintjs/core';
-import { formatFigure } from '@masswright/units';
 import { useId, type KeyboardEvent } from 'react';
-import { readDensity } from '../lib/density';
+import { describeDensity, readDensity } from '../lib/density';
 
 interface DensityFieldProps {
   text: string;
@@ -21,7 +20,7 @@ export function DensityField({ text, onChange, label = 'Density', ariaLabel, emp
   const id = useId();
   const typed = readDensity(text);
   const error = showError ? typed.error : undefined;
-  const understood = typed.densityKgM3 ? `= ${formatFigure(typed.densityKgM3, { digits: 6 })} kg/m³` : text.trim() === '' ? emptyHint : '…';
+  const understood = typed.densityKgM3 ? describeDensity(typed.densityKgM3, text) : text.trim() === '' ? emptyHint : '…';
   return (
     <FormGroup
       label={label}

@@ -1,29 +1,29 @@
-import { problem as problemSchema, type Problem } from '@masswright/contracts';
+import { createClient } from '@masswright/client';
+import type { Problem } from '@masswright/contracts';
 import { ConnectionError, ProblemError } from './problem';
 
-export type Method = 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE';
+/**
+ * Requests to the api, typed by its OpenAPI document; each is awaited through `unwrap`.
+ * `fetch` is looked up at each call, so that tests can put another in its place.
+ */
+export const api = createClient({ fetch: (request) => fetch(request) });
 
-export interface RequestOptions {
-  body?: unknown;
-  query?: Record<string, string | number | undefined>;
-  signal?: AbortSignal;
-  /** Lets the request outlive the page, for what is saved while a person leaves. */
-  keepalive?: boolean;
+interface Answer<Data> {
+  data?: Data;
+  error?: unknown;
+  response: Response;
 }
 
-const base = '/api/v1';
-
-function writeUrl(path: string, query: RequestOptions['query']): string {
-  const parameters = new URLSearchParams();
-  for (const [name, value] of Object.entries(query ?? {})) if (value !== undefined) parameters.set(name, String(value));
-  const search = parameters.toString();
-  return search ? `${base}${path}?${search}` : `${base}${path}`;
+/** Checked by hand: this file is read before the first page is seen, and a schema library would double what that takes. */
+function isProblem(body: unknown): body is Problem {
+  if (typeof body !== 'object' || body === null) return false;
+  const { code, detail, status, fields } = body as Record<string, unknown>;
+  return typeof code === 'string' && typeof detail === 'string' && typeof status === 'number' && Array.isArray(fields);
 }
 
 /** What a refusal says; an answer that isn't one of ours (a proxy's page, say) is put into the same words. */
-async function readProblem(response: Response): Promise<Problem> {
-  const parsed = problemSchema.safeParse(await response.json().catch(() => undefined));
-  if (parsed.success) return parsed.data;
+function readProblem(body: unknown, response: Response): Problem {
+  if (isProblem(body)) return body;
   return {
     type: 'about:blank',
     title: 'Unexpected answer',
@@ -35,24 +35,35 @@ async function readProblem(response: Response): Promise<Problem> {
   };
 }
 
-/** One request to the api: gives its answer, or throws a ProblemError or a ConnectionError. */
-export async function send<Answer>(method: Method, path: string, options: RequestOptions = {}): Promise<Answer> {
-  const { body, query, signal, keepalive } = options;
-  let response: Response;
+const isAbort = (error: unknown): boolean => error instanceof DOMException && error.name === 'AbortError';
+
+async function settle<Data>(answer: Promise<Answer<Data>>): Promise<Answer<Data>> {
+  let settled: Answer<Data>;
   try {
-    response = await fetch(writeUrl(path, query), {
-      method,
-      credentials: 'same-origin',
-      headers: body === undefined ? { accept: 'application/json' } : { accept: 'application/json', 'content-type': 'application/json' },
-      body: body === undefined ? undefined : JSON.stringify(body),
-      signal,
-      keepalive,
-    });
+    settled = await answer;
   } catch (error) {
-    if (error instanceof DOMException && error.name === 'AbortError') throw error;
-    throw new ConnectionError(error);
+    throw isAbort(error) ? error : new ConnectionError(error);
   }
-  if (!response.ok) throw new ProblemError(await readProblem(response));
-  if (response.status === 204) return undefined as Answer;
-  return (await response.json()) as Answer;
+  if (!settled.response.ok) throw new ProblemError(readProblem(settled.error, settled.response));
+  return settled;
+}
+
+/** What the api answered, or a ProblemError, or a ConnectionError. */
+export async function unwrap<Data>(answer: Promise<Answer<Data>>): Promise<Data> {
+  const { data, response } = await settle(answer);
+  if (data === undefined) throw new ProblemError(readProblem(undefined, response));
+  return data;
+}
+
+/** What the client makes of a type: it forgets how long tuples are. */
+type Loosened<Value> = Value extends readonly (infer Item)[] ? Loosened<Item>[] : Value extends object ? { [Key in keyof Value]: Loosened<Value[Key]> } : Value;
+
+/** The same for answers with vectors in them: the document agrees with the contract in all but the length of tuples, which the client's types lose. */
+export async function unwrapAs<Data>(answer: Promise<Answer<Loosened<Data>>>): Promise<Data> {
+  return (await unwrap(answer)) as Data;
+}
+
+/** For requests that are answered without a body. */
+export async function expectDone(answer: Promise<Answer<unknown>>): Promise<void> {
+  await settle(answer);
 }

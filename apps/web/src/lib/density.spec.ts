@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { readDensity, writeDensity } from './density';
+import { describeDensity, readDensity, writeDensity } from './density';
 
 describe('a typed density', () => {
   it('is read in the unit that is written with it', () => {
@@ -15,6 +15,10 @@ describe('a typed density', () => {
   it('of nothing or of more than any material has is refused', () => {
     expect(readDensity('0 g/cm3').error).toContain('greater than 0');
     expect(readDensity('2700 g/cm3').error).toContain('Check the unit');
+  });
+  it('is repeated in kg/m³ where it was typed otherwise, and only there', () => {
+    expect(describeDensity(2700, '2.7 g/cm3')).toBe('= 2700 kg/m³');
+    expect(describeDensity(2700, '2700 kg/m3')).toBe('');
   });
   it('is written so that it reads back as the same number', () => {
     for (const density of [2700, 998.2, 0.163, 1234.5678]) {

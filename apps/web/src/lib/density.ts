@@ -15,6 +15,13 @@ export function readDensity(text: string): TypedDensity {
   return { densityKgM3: parsed.value };
 }
 
+/** What was understood; nothing where the text says it in the same words already. */
+export function describeDensity(densityKgM3: number, text: string): string {
+  const plain = writeDensity(densityKgM3);
+  if (text.replace(/\s|\^/g, '').replace('m3', 'm³') === plain.replace(/\s/g, '')) return '';
+  return `= ${plain}`;
+}
+
 /** A density as it is typed and shown: all the digits that were given, none that were not. */
 export function writeDensity(densityKgM3: number | null): string {
   if (densityKgM3 === null) return '';

@@ -2,23 +2,19 @@ import { Button } from '@blueprintjs/core';
 import type { Part } from '@masswright/contracts';
 import { useState } from 'react';
 import { useParams } from 'react-router-dom';
+import { Failure } from '../components/failure';
 import { Loading } from '../components/loading';
 import { Crumbs, PageHeading } from '../components/page';
-import { ProblemNotice } from '../components/problem-notice';
 import { usePart } from '../features/parts/api/parts';
 import { PartStatement } from '../features/parts/components/part-statement';
 import { RenamePartDialog } from '../features/parts/components/rename-part-dialog';
 import { useSettingEditor } from '../features/parts/model/use-setting-editor';
 import { useSignedIn } from '../features/session/api/session';
-import { isWorthAnotherTry } from '../lib/problem';
 
 export function Component() {
   const { partId = '' } = useParams();
   const { data: part, error, refetch } = usePart(partId);
-  if (error && !part) {
-    if (!isWorthAnotherTry(error)) throw error;
-    return <ProblemNotice error={error} onRetry={() => void refetch()} />;
-  }
+  if (error && !part) return <Failure error={error} onRetry={() => void refetch()} />;
   if (!part) return <Loading what="the part" />;
   return <PartPage key={part.id} part={part} />;
 }

@@ -1,3 +1,4 @@
+import { Failure } from '../components/failure';
 import { Loading } from '../components/loading';
 import { Crumbs, PageHeading } from '../components/page';
 import { ProblemNotice } from '../components/problem-notice';
@@ -23,7 +24,7 @@ export function Component() {
       />
       <div className={`people ${session.can.managePeople ? 'people-with-invitations' : ''}`}>
         <div>
-          {members.error && !members.data && <ProblemNotice error={members.error} onRetry={() => void members.refetch()} />}
+          {members.error && !members.data && <Failure error={members.error} onRetry={() => void members.refetch()} />}
           {members.isPending && <Loading what="the people" />}
           {members.data && <MemberTable members={members.data} ownUserId={session.user.id} organisationName={session.organisation.name} />}
         </div>

@@ -1,10 +1,10 @@
 import { Button } from '@blueprintjs/core';
 import { useState } from 'react';
 import { useParams } from 'react-router-dom';
+import { Failure } from '../components/failure';
 import { Loading } from '../components/loading';
 import { Crumbs, PageHeading } from '../components/page';
 import { PageDrop } from '../components/page-drop';
-import { ProblemNotice } from '../components/problem-notice';
 import { useParts } from '../features/parts/api/parts';
 import { PartTable } from '../features/parts/components/part-table';
 import { useProject, useRenameProject } from '../features/projects/api/projects';
@@ -13,7 +13,6 @@ import { useSignedIn } from '../features/session/api/session';
 import { AddMeshesDialog } from '../features/uploads/components/add-meshes-dialog';
 import { openUploadDialog } from '../features/uploads/model/dialog-state';
 import { countOf } from '../lib/plural';
-import { isWorthAnotherTry } from '../lib/problem';
 
 export function Component() {
   const { projectId = '' } = useParams();
@@ -25,10 +24,7 @@ function ProjectPage({ projectId }: { projectId: string }) {
   const { data: project, error, refetch } = useProject(projectId);
   const rename = useRenameProject(projectId);
   const [renaming, setRenaming] = useState(false);
-  if (error && !project) {
-    if (!isWorthAnotherTry(error)) throw error;
-    return <ProblemNotice error={error} onRetry={() => void refetch()} />;
-  }
+  if (error && !project) return <Failure error={error} onRetry={() => void refetch()} />;
   if (!project) return <Loading what="the project" />;
   const { can } = project;
   const add = can.addMeshes ? (
@@ -67,7 +63,7 @@ function ProjectPage({ projectId }: { projectId: string }) {
 
 function Parts({ projectId, add }: { projectId: string; add: React.ReactNode }) {
   const { data, error, refetch, hasNextPage, fetchNextPage, isFetchingNextPage } = useParts(projectId);
-  if (error && !data) return <ProblemNotice error={error} onRetry={() => void refetch()} />;
+  if (error && !data) return <Failure error={error} onRetry={() => void refetch()} />;
   if (!data) return <Loading what="the parts" />;
   const rows = data.pages.flatMap((page) => page.items);
   if (rows.length === 0) {

@@ -1,9 +1,9 @@
 import { Button } from '@blueprintjs/core';
 import { useState } from 'react';
 import { useNavigate } from 'react-router-dom';
+import { Failure } from '../components/failure';
 import { Loading } from '../components/loading';
 import { Crumbs, PageHeading } from '../components/page';
-import { ProblemNotice } from '../components/problem-notice';
 import { useCreateProject, useProjects } from '../features/projects/api/projects';
 import { FirstProject } from '../features/projects/components/first-project';
 import { ProjectList } from '../features/projects/components/project-list';
@@ -33,7 +33,7 @@ export function Component() {
         beside={projects && !empty && <span className="soft">{countOf(projects.length, 'project')}</span>}
         actions={empty ? undefined : ask}
       />
-      {error && !projects && <ProblemNotice error={error} onRetry={() => void refetch()} />}
+      {error && !projects && <Failure error={error} onRetry={() => void refetch()} />}
       {!projects && !error && <Loading what="the projects" />}
       {empty && <FirstProject action={ask} />}
       {projects && !empty && <ProjectList projects={projects} />}

@@ -1,6 +1,6 @@
 import type { ChangeSettingRequest, MeasuringRun, Page, Part, PartRow, RenamePartRequest, ServerEvent } from '@masswright/contracts';
 import { useInfiniteQuery, useMutation, useQuery, useQueryClient, type InfiniteData, type QueryClient } from '@tanstack/react-query';
-import { send } from '../../../lib/api';
+import { api, unwrapAs } from '../../../lib/api';
 
 export const partsKey = (projectId: string) => ['parts', projectId] as const;
 export const partKey = (partId: string) => ['part', partId] as const;
@@ -13,12 +13,12 @@ export function useParts(projectId: string) {
     initialPageParam: undefined as string | undefined,
     getNextPageParam: (page: Page<PartRow>) => page.next ?? undefined,
     queryFn: ({ pageParam, signal }) =>
-      send<Page<PartRow>>('GET', `/projects/${projectId}/parts`, { query: { after: pageParam, limit: pageSize }, signal }),
+      unwrapAs<Page<PartRow>>(api.GET('/api/v1/projects/{projectId}/parts', { params: { path: { projectId }, query: { after: pageParam, limit: pageSize } }, signal })),
   });
 }
 
 export function readPart(partId: string, signal?: AbortSignal): Promise<Part> {
-  return send<Part>('GET', `/parts/${partId}`, { signal });
+  return unwrapAs<Part>(api.GET('/api/v1/parts/{partId}', { params: { path: { partId } }, signal }));
 }
 
 export function usePart(partId: string) {
@@ -27,7 +27,7 @@ export function usePart(partId: string) {
 
 /** Saved also while the page is being left, so it must not depend on a component that is still there. */
 export function changeSetting(partId: string, body: ChangeSettingRequest): Promise<Part> {
-  return send<Part>('PATCH', `/parts/${partId}/setting`, { body, keepalive: true });
+  return unwrapAs<Part>(api.PATCH('/api/v1/parts/{partId}/setting', { params: { path: { partId } }, body, keepalive: true }));
 }
 
 /** Puts an answer where the page reads it; the list is read again, since its figures follow. */
@@ -39,7 +39,7 @@ export function keepPart(client: QueryClient, part: Part): void {
 export function useRenamePart(partId: string) {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: (body: RenamePartRequest) => send<Part>('PATCH', `/parts/${partId}`, { body }),
+    mutationFn: (body: RenamePartRequest) => unwrapAs<Part>(api.PATCH('/api/v1/parts/{partId}', { params: { path: { partId } }, body })),
     onSuccess: (part) => keepPart(client, part),
   });
 }

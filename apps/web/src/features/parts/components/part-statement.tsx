@@ -50,7 +50,7 @@ export function PartStatement({ part, editor, state }: PartStatementProps) {
             ))}
           </ol>
         </nav>
-        {can.edit && <SaveStatus editor={editor} state={state} />}
+        {can.edit && run.state !== 'failed' && <SaveStatus editor={editor} state={state} />}
       </aside>
       <article className="statement" aria-label="Statement">
         <SourceSection part={part} editor={editor} state={state} />

@@ -1,12 +1,12 @@
 import { Button, Dialog, DialogFooter } from '@blueprintjs/core';
-import { renamePartRequest, type Part, type RenamePartRequest } from '@masswright/contracts';
+import type { Part, RenamePartRequest } from '@masswright/contracts';
 import { useForm } from 'react-hook-form';
 import { FormField } from '../../../components/form-field';
 import { ProblemNotice } from '../../../components/problem-notice';
 import { createZodResolver } from '../../../lib/zod-resolver';
 import { useRenamePart } from '../api/parts';
 
-const resolver = createZodResolver<RenamePartRequest>(renamePartRequest);
+const resolver = createZodResolver<RenamePartRequest>(() => import('@masswright/contracts').then(({ renamePartRequest }) => renamePartRequest));
 
 export function RenamePartDialog({ part, isOpen, onClose }: { part: Part; isOpen: boolean; onClose: () => void }) {
   return (

@@ -23,10 +23,15 @@ function UnitSetting({ editor, state }: { editor: SettingEditor; state: SettingE
   );
 }
 
-export function SourceSection({ part, editor, state }: { part: Part; editor: SettingEditor; state: SettingEditorState }) {
-  const { revision, can } = part;
+interface SourceSectionProps {
+  part: Part;
+  editor: SettingEditor;
+  state: SettingEditorState;
+}
+
+export function SourceSection({ part, editor, state }: SourceSectionProps) {
+  const { revision } = part;
   const { run, sha256, measurement, format } = revision;
-  const { draft, saved } = state;
   const measured = run.finishedAt && run.state === 'done';
   return (
     <Section
@@ -58,22 +63,33 @@ export function SourceSection({ part, editor, state }: { part: Part; editor: Set
             <span className="figure">{measurement.measuringVersion}</span>
           </Fact>
         )}
-        <Fact name="Unit">
-          {can.edit ? <UnitSetting editor={editor} state={state} /> : draft.lengthUnit ? unitTexts[draft.lengthUnit].name : 'not stated'}
-        </Fact>
-        <Fact name="Density">
-          {can.edit ? (
-            <DensitySetting densityKgM3={draft.densityKgM3} onChange={(densityKgM3) => editor.change({ densityKgM3 })} />
-          ) : (
-            <span className="figure">{writeDensity(draft.densityKgM3) || 'not stated'}</span>
-          )}
-        </Fact>
-        <Fact name="Setting">
-          <span className="soft">
-            version {saved.version}, last changed {formatMoment(saved.changedAt)} by {saved.changedBy}
-          </span>
-        </Fact>
+        {run.state !== 'failed' && <SettingFacts part={part} editor={editor} state={state} />}
       </dl>
     </Section>
+  );
+}
+
+/** What a person states about the file: unit and density, and who did. */
+function SettingFacts({ part, editor, state }: SourceSectionProps) {
+  const { can } = part;
+  const { draft, saved } = state;
+  return (
+    <>
+      <Fact name="Unit">
+        {can.edit ? <UnitSetting editor={editor} state={state} /> : draft.lengthUnit ? unitTexts[draft.lengthUnit].name : 'not stated'}
+      </Fact>
+      <Fact name="Density">
+        {can.edit ? (
+          <DensitySetting densityKgM3={draft.densityKgM3} onChange={(densityKgM3) => editor.change({ densityKgM3 })} />
+        ) : (
+          <span className="figure">{writeDensity(draft.densityKgM3) || 'not stated'}</span>
+        )}
+      </Fact>
+      <Fact name="Setting">
+        <span className="soft">
+          version {saved.version}, last changed {formatMoment(saved.changedAt)} by {saved.changedBy}
+        </span>
+      </Fact>
+    </>
   );
 }

@@ -1,7 +1,7 @@
-import type { ChangeRoleRequest, CreateInvitationRequest, Invitation, Member, Page } from '@masswright/contracts';
+import type { ChangeRoleRequest, CreateInvitationRequest } from '@masswright/contracts';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { readAllPages } from '../../../lib/pages';
-import { send } from '../../../lib/api';
+import { api, expectDone, unwrap } from '../../../lib/api';
 
 /** Everything about people lies below this key, so that one event reads it again. */
 export const peopleKey = ['people'] as const;
@@ -11,7 +11,7 @@ const invitationsKey = [...peopleKey, 'invitations'] as const;
 export function useMembers() {
   return useQuery({
     queryKey: membersKey,
-    queryFn: ({ signal }) => readAllPages((after) => send<Page<Member>>('GET', '/members', { query: { after, limit: 200 }, signal })),
+    queryFn: ({ signal }) => readAllPages((after) => unwrap(api.GET('/api/v1/members', { params: { query: { after, limit: 200 } }, signal }))),
   });
 }
 
@@ -19,7 +19,7 @@ export function useInvitations(enabled: boolean) {
   return useQuery({
     queryKey: invitationsKey,
     enabled,
-    queryFn: ({ signal }) => readAllPages((after) => send<Page<Invitation>>('GET', '/invitations', { query: { after, limit: 200 }, signal })),
+    queryFn: ({ signal }) => readAllPages((after) => unwrap(api.GET('/api/v1/invitations', { params: { query: { after, limit: 200 } }, signal }))),
   });
 }
 
@@ -28,8 +28,8 @@ function usePeopleChange<Request, Answer>(change: (request: Request) => Promise<
   return useMutation({ mutationFn: change, onSettled: () => client.invalidateQueries({ queryKey: peopleKey }) });
 }
 
-export const useInvite = () => usePeopleChange((body: CreateInvitationRequest) => send<Invitation>('POST', '/invitations', { body }));
-export const useWithdrawInvitation = () => usePeopleChange((invitationId: string) => send<void>('DELETE', `/invitations/${invitationId}`));
-export const useRemoveMember = () => usePeopleChange((userId: string) => send<void>('DELETE', `/members/${userId}`));
+export const useInvite = () => usePeopleChange((body: CreateInvitationRequest) => unwrap(api.POST('/api/v1/invitations', { body })));
+export const useWithdrawInvitation = () => usePeopleChange((invitationId: string) => expectDone(api.DELETE('/api/v1/invitations/{invitationId}', { params: { path: { invitationId } } })));
+export const useRemoveMember = () => usePeopleChange((userId: string) => expectDone(api.DELETE('/api/v1/members/{userId}', { params: { path: { userId } } })));
 export const useChangeRole = () =>
-  usePeopleChange(({ userId, ...body }: ChangeRoleRequest & { userId: string }) => send<Member>('PATCH', `/members/${userId}`, { body }));
+  usePeopleChange(({ userId, ...body }: ChangeRoleRequest & { userId: string }) => unwrap(api.PATCH('/api/v1/members/{userId}', { params: { path: { userId } }, body })));

@@ -1,5 +1,5 @@
 import { Button, FormGroup, HTMLSelect } from '@blueprintjs/core';
-import { createInvitationRequest, role as roleSchema, type CreateInvitationRequest } from '@masswright/contracts';
+import { role as roleSchema, type CreateInvitationRequest } from '@masswright/contracts';
 import { useId } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
 import { FormField } from '../../../components/form-field';
@@ -9,7 +9,7 @@ import { roleTexts } from '../../../lib/role-texts';
 import { createZodResolver } from '../../../lib/zod-resolver';
 import { useInvite } from '../api/people';
 
-const resolver = createZodResolver<CreateInvitationRequest>(createInvitationRequest);
+const resolver = createZodResolver<CreateInvitationRequest>(() => import('@masswright/contracts').then(({ createInvitationRequest }) => createInvitationRequest));
 
 export function InviteForm() {
   const invite = useInvite();

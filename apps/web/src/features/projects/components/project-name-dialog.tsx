@@ -1,11 +1,11 @@
 import { Button, Dialog, DialogFooter } from '@blueprintjs/core';
-import { createProjectRequest, type CreateProjectRequest } from '@masswright/contracts';
+import type { CreateProjectRequest } from '@masswright/contracts';
 import { useForm } from 'react-hook-form';
 import { FormField } from '../../../components/form-field';
 import { ProblemNotice } from '../../../components/problem-notice';
 import { createZodResolver } from '../../../lib/zod-resolver';
 
-const resolver = createZodResolver<CreateProjectRequest>(createProjectRequest);
+const resolver = createZodResolver<CreateProjectRequest>(() => import('@masswright/contracts').then(({ createProjectRequest }) => createProjectRequest));
 
 interface ProjectNameDialogProps {
   title: string;

@@ -1,15 +1,13 @@
 import type {
-  Accepted,
   AcceptInvitationRequest,
-  OpenInvitation,
   PasswordResetCompletionRequest,
   PasswordResetRequest,
   Session,
   SignInRequest,
   SignUpRequest,
 } from '@masswright/contracts';
-import { queryOptions, useMutation, useQuery, useQueryClient, type QueryClient } from '@tanstack/react-query';
-import { send } from '../../../lib/api';
+import { queryOptions, skipToken, useMutation, useQuery, useQueryClient, type QueryClient } from '@tanstack/react-query';
+import { api, expectDone, unwrap } from '../../../lib/api';
 import { isProblem } from '../../../lib/problem';
 import { announceSessionChange } from '../model/session-channel';
 
@@ -21,7 +19,7 @@ export const sessionQuery = queryOptions<Session | null>({
   staleTime: Infinity,
   queryFn: async ({ signal }) => {
     try {
-      return await send<Session>('GET', '/session', { signal });
+      return await unwrap(api.GET('/api/v1/session', { signal }));
     } catch (error) {
       if (isProblem(error, 'not-signed-in')) return null;
       throw error;
@@ -58,17 +56,17 @@ function useBeginSession<Request>(begin: (request: Request) => Promise<Session>)
   });
 }
 
-export const useSignIn = () => useBeginSession((body: SignInRequest) => send<Session>('POST', '/sign-in', { body }));
-export const useSignUp = () => useBeginSession((body: SignUpRequest) => send<Session>('POST', '/sign-up', { body }));
+export const useSignIn = () => useBeginSession((body: SignInRequest) => unwrap(api.POST('/api/v1/sign-in', { body })));
+export const useSignUp = () => useBeginSession((body: SignUpRequest) => unwrap(api.POST('/api/v1/sign-up', { body })));
 export const useAcceptInvitation = () =>
-  useBeginSession((body: AcceptInvitationRequest) => send<Session>('POST', '/invitations/acceptance', { body }));
+  useBeginSession((body: AcceptInvitationRequest) => unwrap(api.POST('/api/v1/invitations/acceptance', { body })));
 export const useSwitchOrganisation = () =>
-  useBeginSession((organisationId: string) => send<Session>('PUT', '/session/organisation', { body: { organisationId } }));
+  useBeginSession((organisationId: string) => unwrap(api.PUT('/api/v1/session/organisation', { body: { organisationId } })));
 
 export function useSignOut() {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: () => send<void>('POST', '/sign-out'),
+    mutationFn: () => expectDone(api.POST('/api/v1/sign-out')),
     onSuccess: () => {
       enterSession(client, null);
       announceSessionChange();
@@ -77,18 +75,17 @@ export function useSignOut() {
 }
 
 export const useRequestPasswordReset = () =>
-  useMutation({ mutationFn: (body: PasswordResetRequest) => send<Accepted>('POST', '/password-resets', { body }) });
+  useMutation({ mutationFn: (body: PasswordResetRequest) => unwrap(api.POST('/api/v1/password-resets', { body })) });
 export const useCompletePasswordReset = () =>
   useMutation({
-    mutationFn: (body: PasswordResetCompletionRequest) => send<void>('POST', '/password-resets/completion', { body }),
+    mutationFn: (body: PasswordResetCompletionRequest) => expectDone(api.POST('/api/v1/password-resets/completion', { body })),
   });
 
 /** What an invitation's link stands for; the token travels in the body, never in a URL. */
 export function useInvitation(token: string | undefined) {
   return useQuery({
     queryKey: ['invitation', token],
-    enabled: token !== undefined,
     staleTime: Infinity,
-    queryFn: ({ signal }) => send<OpenInvitation>('POST', '/invitations/lookup', { body: { token }, signal }),
+    queryFn: token === undefined ? skipToken : ({ signal }) => unwrap(api.POST('/api/v1/invitations/lookup', { body: { token }, signal })),
   });
 }

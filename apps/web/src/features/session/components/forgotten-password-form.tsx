@@ -1,5 +1,5 @@
 import { Button } from '@blueprintjs/core';
-import { passwordResetRequest, type PasswordResetRequest } from '@masswright/contracts';
+import type { PasswordResetRequest } from '@masswright/contracts';
 import { useForm } from 'react-hook-form';
 import { FormField } from '../../../components/form-field';
 import { Notice } from '../../../components/notice';
@@ -7,7 +7,7 @@ import { ProblemNotice } from '../../../components/problem-notice';
 import { createZodResolver } from '../../../lib/zod-resolver';
 import { useRequestPasswordReset } from '../api/session';
 
-const resolver = createZodResolver<PasswordResetRequest>(passwordResetRequest);
+const resolver = createZodResolver<PasswordResetRequest>(() => import('@masswright/contracts').then(({ passwordResetRequest }) => passwordResetRequest));
 
 export function ForgottenPasswordForm() {
   const request = useRequestPasswordReset();

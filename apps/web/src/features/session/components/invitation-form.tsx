@@ -1,19 +1,18 @@
 import { Button } from '@blueprintjs/core';
-import { acceptInvitationRequest, type AcceptInvitationRequest, type OpenInvitation } from '@masswright/contracts';
+import type { AcceptInvitationRequest, OpenInvitation } from '@masswright/contracts';
 import { useForm } from 'react-hook-form';
-import { z } from 'zod';
 import { FormField } from '../../../components/form-field';
 import { ProblemNotice } from '../../../components/problem-notice';
 import { createZodResolver } from '../../../lib/zod-resolver';
 import { useAcceptInvitation } from '../api/session';
 
-const [newPerson, knownPerson] = acceptInvitationRequest.options;
-const newPersonForm = newPerson.pick({ name: true, password: true });
-/** One form for both; the name of a person who has an account is known already. */
-const knownPersonForm = knownPerson.pick({ password: true }).extend({ name: z.string() });
-type Form = z.infer<typeof newPersonForm>;
-const newPersonResolver = createZodResolver<Form>(newPersonForm);
-const knownPersonResolver = createZodResolver<Form>(knownPersonForm);
+interface Form {
+  name: string;
+  password: string;
+}
+
+const newPersonResolver = createZodResolver<Form>(() => import('./invitation-schemas').then(({ newPersonForm }) => newPersonForm));
+const knownPersonResolver = createZodResolver<Form>(() => import('./invitation-schemas').then(({ knownPersonForm }) => knownPersonForm));
 
 interface InvitationFormProps {
   token: string;

@@ -1,15 +1,15 @@
 import { Button } from '@blueprintjs/core';
-import { newPassword } from '@masswright/contracts';
+import type { PasswordResetCompletionRequest } from '@masswright/contracts';
 import { useForm } from 'react-hook-form';
-import { z } from 'zod';
 import { FormField } from '../../../components/form-field';
 import { ProblemNotice } from '../../../components/problem-notice';
 import { createZodResolver } from '../../../lib/zod-resolver';
 import { useCompletePasswordReset } from '../api/session';
 
-const form = z.object({ password: newPassword });
-type Form = z.infer<typeof form>;
-const resolver = createZodResolver<Form>(form);
+type Form = Pick<PasswordResetCompletionRequest, 'password'>;
+const resolver = createZodResolver<Form>(() =>
+  import('@masswright/contracts').then(({ passwordResetCompletionRequest }) => passwordResetCompletionRequest.pick({ password: true })),
+);
 
 export function NewPasswordForm({ token, onDone }: { token: string; onDone: () => void }) {
   const complete = useCompletePasswordReset();

@@ -1,12 +1,12 @@
 import { Button } from '@blueprintjs/core';
-import { signInRequest, type SignInRequest } from '@masswright/contracts';
+import type { SignInRequest } from '@masswright/contracts';
 import { useForm } from 'react-hook-form';
 import { FormField } from '../../../components/form-field';
 import { ProblemNotice } from '../../../components/problem-notice';
 import { createZodResolver } from '../../../lib/zod-resolver';
 import { useSignIn } from '../api/session';
 
-const resolver = createZodResolver<SignInRequest>(signInRequest);
+const resolver = createZodResolver<SignInRequest>(() => import('@masswright/contracts').then(({ signInRequest }) => signInRequest));
 
 export function SignInForm({ onDone }: { onDone: () => void }) {
   const signIn = useSignIn();

@@ -1,12 +1,12 @@
 import { Button } from '@blueprintjs/core';
-import { signUpRequest, type SignUpRequest } from '@masswright/contracts';
+import type { SignUpRequest } from '@masswright/contracts';
 import { useForm } from 'react-hook-form';
 import { FormField } from '../../../components/form-field';
 import { ProblemNotice } from '../../../components/problem-notice';
 import { createZodResolver } from '../../../lib/zod-resolver';
 import { useSignUp } from '../api/session';
 
-const resolver = createZodResolver<SignUpRequest>(signUpRequest);
+const resolver = createZodResolver<SignUpRequest>(() => import('@masswright/contracts').then(({ signUpRequest }) => signUpRequest));
 
 export function SignUpForm({ onDone }: { onDone: () => void }) {
   const signUp = useSignUp();

@@ -1,15 +1,15 @@
 import type { CompleteUploadRequest, CreateUploadRequest, Part, PartGrants, Upload } from '@masswright/contracts';
-import { send } from '../../../lib/api';
+import { api, expectDone, unwrap, unwrapAs } from '../../../lib/api';
 
 export const createUpload = (projectId: string, body: CreateUploadRequest): Promise<Upload> =>
-  send<Upload>('POST', `/projects/${projectId}/uploads`, { body });
+  unwrap(api.POST('/api/v1/projects/{projectId}/uploads', { params: { path: { projectId } }, body }));
 
-export const readUpload = (uploadId: string): Promise<Upload> => send<Upload>('GET', `/uploads/${uploadId}`);
+export const readUpload = (uploadId: string): Promise<Upload> => unwrap(api.GET('/api/v1/uploads/{uploadId}', { params: { path: { uploadId } } }));
 
 export const grantPart = (uploadId: string, partNumber: number, signal?: AbortSignal): Promise<PartGrants> =>
-  send<PartGrants>('POST', `/uploads/${uploadId}/part-grants`, { body: { partNumbers: [partNumber] }, signal });
+  unwrap(api.POST('/api/v1/uploads/{uploadId}/part-grants', { params: { path: { uploadId } }, body: { partNumbers: [partNumber] }, signal }));
 
 export const completeUpload = (uploadId: string, body: CompleteUploadRequest, signal?: AbortSignal): Promise<Part> =>
-  send<Part>('POST', `/uploads/${uploadId}/completion`, { body, signal });
+  unwrapAs<Part>(api.POST('/api/v1/uploads/{uploadId}/completion', { params: { path: { uploadId } }, body, signal }));
 
-export const cancelUpload = (uploadId: string): Promise<void> => send<void>('DELETE', `/uploads/${uploadId}`, { keepalive: true });
+export const cancelUpload = (uploadId: string): Promise<void> => expectDone(api.DELETE('/api/v1/uploads/{uploadId}', { params: { path: { uploadId } }, keepalive: true }));

@@ -97,9 +97,7 @@ function Progress({ projectId, onMore }: { projectId: string; onMore: () => void
         actions={
           <>
             <Button onClick={onMore}>Add more</Button>
-            <Button intent="primary" onClick={closeUploadDialog}>
-              Close
-            </Button>
+            <Button onClick={closeUploadDialog}>Close</Button>
           </>
         }
       >

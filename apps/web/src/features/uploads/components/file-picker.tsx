@@ -1,15 +1,12 @@
 import { Button } from '@blueprintjs/core';
 import { useRef, useState, type DragEvent } from 'react';
 import { formatBytes } from '../../../lib/format-bytes';
-import { countOf } from '../../../lib/plural';
 
 interface FilePickerProps {
   files: readonly File[];
   onAdd: (files: readonly File[]) => void;
   onRemove: (file: File) => void;
 }
-
-const shownAtMost = 6;
 
 export function FilePicker({ files, onAdd, onRemove }: FilePickerProps) {
   const input = useRef<HTMLInputElement>(null);
@@ -19,7 +16,6 @@ export function FilePicker({ files, onAdd, onRemove }: FilePickerProps) {
     setOver(false);
     onAdd([...event.dataTransfer.files]);
   };
-  const shown = files.slice(0, shownAtMost);
   return (
     <div>
       <div
@@ -53,8 +49,8 @@ export function FilePicker({ files, onAdd, onRemove }: FilePickerProps) {
         />
       </div>
       {files.length > 0 && (
-        <ul className="file-list" aria-label="Chosen files">
-          {shown.map((file, index) => (
+        <ul className="file-list" aria-label="Chosen files" tabIndex={0}>
+          {files.map((file, index) => (
             <li key={`${file.name} ${file.size} ${index}`}>
               <span className="figure file-name">{file.name}</span>
               <span className="figure soft">{formatBytes(file.size)}</span>
@@ -63,7 +59,6 @@ export function FilePicker({ files, onAdd, onRemove }: FilePickerProps) {
               </Button>
             </li>
           ))}
-          {files.length > shown.length && <li className="soft">and {countOf(files.length - shown.length, 'more file')}</li>}
         </ul>
       )}
     </div>

@@ -1,6 +1,6 @@
 import { Link } from 'react-router-dom';
-import { Crumbs } from '../components/page';
-import { MessagePage } from '../components/message-page';
+import { Crumbs } from './page';
+import { MessagePage } from './message-page';
 
 export function NotFound() {
   return (
@@ -25,4 +25,3 @@ export function Forbidden({ sentence }: { sentence: string }) {
   );
 }
 
-export const Component = NotFound;
