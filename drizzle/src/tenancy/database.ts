@@ -30,11 +30,15 @@ export interface DatabaseOptions {
   onConnectionError?: (error: Error) => void;
 }
 
-/** SQLSTATE classes 08 (connection) and 57P (shut down, crashed, starting up), and 53300 (too many connections). */
+const idleInTransactionMs = 5_000;
+const lockWaitMs = 15_000;
+const statementMs = 60_000;
+
+/** SQLSTATE class 08 (connection), 57P (shut down, crashed, starting up), 25P03 (held too long in a transaction), 53300 (too many connections). */
 function isConnectionLoss(error: unknown): boolean {
   if (!(error instanceof Error)) return false;
   const code = 'code' in error && typeof error.code === 'string' ? error.code : '';
-  if (/^(08|57P0[1-3]|53300)/.test(code)) return true;
+  if (/^(08|57P0[1-3]|25P03|53300)/.test(code)) return true;
   if (/^(ECONNREFUSED|ECONNRESET|EPIPE|ETIMEDOUT|ENOTFOUND)$/.test(code)) return true;
   if (/connection terminated|timeout exceeded when trying to connect|not queryable|connection error|client has encountered/i.test(error.message)) return true;
   return error.cause !== undefined && isConnectionLoss(error.cause);
@@ -54,6 +58,10 @@ export class Database {
       application_name: options.applicationName,
       connectionTimeoutMillis: options.connectionTimeoutMs ?? 10_000,
       keepAlive: true,
+      // A process that is held (SIGSTOP, a lost network) in the midst of a transaction must not hold its row locks against the others.
+      idle_in_transaction_session_timeout: idleInTransactionMs,
+      lock_timeout: lockWaitMs,
+      statement_timeout: statementMs,
     });
     // Without a listener, an idle connection that PostgreSQL drops would take the process down.
     this.pool.on('error', (error) => options.onConnectionError?.(error));

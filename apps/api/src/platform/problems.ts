@@ -21,19 +21,26 @@ const problemsByCode: Record<ProblemCode, { status: number; title: string }> = {
   internal: { status: 500, title: 'Something went wrong here' },
 };
 
-/** Two requests at once can both find a name free; the index lets one through (SQLSTATE 23505). */
-function isUniqueViolation(error: unknown): boolean {
+/** PostgreSQL's SQLSTATE, wherever in the chain of causes it stands. */
+function hasSqlState(error: unknown, states: readonly string[]): boolean {
   if (!(error instanceof Error)) return false;
-  return ('code' in error && error.code === '23505') || isUniqueViolation(error.cause);
+  return ('code' in error && typeof error.code === 'string' && states.includes(error.code)) || hasSqlState(error.cause, states);
 }
+/** Two requests at once can both find a name free; the index lets one through. */
+const uniqueViolation = ['23505'];
+/** Waited too long for a lock or a statement, or chosen as the victim of a deadlock. */
+const busy = ['55P03', '57014', '40P01', '40001'];
 
 function toAppError(error: unknown): AppError {
   if (error instanceof AppError) return error;
   if (error instanceof DatabaseUnavailableError) {
     return new AppError('unavailable', 'The database cannot be reached just now. Try again in a moment.', { retryAfterSeconds: 2 }, { cause: error });
   }
-  if (isUniqueViolation(error)) {
+  if (hasSqlState(error, uniqueViolation)) {
     return new AppError('conflict', 'Somebody made the same just before you. Look again, then decide.', {}, { cause: error });
+  }
+  if (hasSqlState(error, busy)) {
+    return new AppError('unavailable', 'The database is busy just now. Try again in a moment.', { retryAfterSeconds: 2 }, { cause: error });
   }
   if (error instanceof ObjectStorageError && error.retryable) {
     return new AppError('unavailable', 'The file storage cannot be reached just now. Try again in a moment.', { retryAfterSeconds: 2 }, { cause: error });
