@@ -1,16 +1,20 @@
-import { Button, Menu, MenuDivider, MenuItem, PopoverNext } from '@blueprintjs/core';
+import { Button, PopoverNext } from '@blueprintjs/core';
 import { useState } from 'react';
 import { useNavigate } from 'react-router-dom';
+import { ChoiceBar, type Choice } from '../components/choice-bar';
 import { ConfirmDialog } from '../components/confirm-dialog';
 import { countOf } from '../lib/plural';
 import { useSignedIn, useSignOut, useSwitchOrganisation } from '../features/session/api/session';
 import { computeInitials } from '../features/session/model/initials';
 import { useUnfinishedUploads, stopUploads } from '../features/uploads/model/upload-queue';
 import { noteSignOut } from './sign-out';
-import { chooseTheme, themeChoices, useThemeChoice, type ThemeChoice } from './theme';
+import { chooseTheme, useThemeChoice, type ThemeChoice } from './theme';
 
-const themeNames: Record<ThemeChoice, string> = { day: 'Day', night: 'Night', system: 'As the system' };
-const roleNames = { administrator: 'administrator', engineer: 'engineer', reviewer: 'reviewer', reader: 'reader' } as const;
+const themeChoices: readonly Choice<ThemeChoice>[] = [
+  { value: 'day', label: 'Day' },
+  { value: 'night', label: 'Night' },
+  { value: 'system', label: 'System' },
+];
 
 /** A leave-taking that would cut off files that are still being sent: it is asked about first. */
 type Leaving = { kind: 'sign-out' } | { kind: 'switch'; organisationId: string };
@@ -37,44 +41,53 @@ export function AccountMenu() {
   const ask = (leaving: Leaving): void => (unfinished > 0 ? setAsked(leaving) : leave(leaving));
   const error = signOut.error ?? switchOrganisation.error;
 
-  const menu = (
-    <Menu className="account-menu">
-      <li className="account-menu-who" role="none">
+  const panel = (
+    <div className="account" aria-label="Account" role="group">
+      <p className="account-who">
         <b>{session.user.name}</b>
         <span className="soft">{session.user.email}</span>
         <span className="soft">
-          {roleNames[session.role]} at {session.organisation.name}
+          {session.role} at {session.organisation.name}
         </span>
-      </li>
+      </p>
       {session.organisations.length > 1 && (
-        <>
-          <MenuDivider title="Organisation" />
-          {session.organisations.map((organisation) => (
-            <MenuItem
-              key={organisation.id}
-              text={organisation.name}
-              label={organisation.role}
-              roleStructure="listoption"
-              selected={organisation.id === session.organisation.id}
-              onClick={() => organisation.id !== session.organisation.id && ask({ kind: 'switch', organisationId: organisation.id })}
-            />
-          ))}
-        </>
+        <section aria-labelledby="account-organisations">
+          <p className="caption" id="account-organisations">
+            Organisation
+          </p>
+          <ul>
+            {session.organisations.map(({ id, name, role }) => (
+              <li key={id}>
+                {id === session.organisation.id ? (
+                  <span className="account-organisation" aria-current="true">
+                    <span>{name}</span> <span className="soft">here</span>
+                  </span>
+                ) : (
+                  <button type="button" className="account-organisation" onClick={() => ask({ kind: 'switch', organisationId: id })}>
+                    <span>{name}</span> <span className="soft">{role}</span>
+                  </button>
+                )}
+              </li>
+            ))}
+          </ul>
+        </section>
       )}
-      <MenuDivider title="Theme" />
-      {themeChoices.map((choice) => (
-        <MenuItem key={choice} text={themeNames[choice]} roleStructure="listoption" selected={theme === choice} shouldDismissPopover={false} onClick={() => chooseTheme(choice)} />
-      ))}
-      <MenuDivider />
-      <MenuItem text="Sign out" onClick={() => ask({ kind: 'sign-out' })} />
-    </Menu>
+      <section aria-labelledby="account-theme">
+        <p className="caption" id="account-theme">
+          Theme
+        </p>
+        <ChoiceBar label="Theme" choices={themeChoices} value={theme} onChange={chooseTheme} />
+      </section>
+      <Button onClick={() => ask({ kind: 'sign-out' })}>Sign out</Button>
+    </div>
   );
+  const initials = computeInitials(session.user.name);
 
   return (
     <>
-      <PopoverNext content={menu} placement="bottom-end" animation="minimal" arrow={false}>
-        <Button variant="minimal" className="band-who" aria-label={`Account of ${session.user.name}`}>
-          {computeInitials(session.user.name)}
+      <PopoverNext content={panel} placement="bottom-end" animation="minimal" arrow={false}>
+        <Button variant="minimal" className="band-who" aria-label={`${initials}: account of ${session.user.name}`}>
+          {initials}
         </Button>
       </PopoverNext>
       {error && !asked && (

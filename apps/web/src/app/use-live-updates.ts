@@ -7,7 +7,7 @@ import { applyRun, partKey, partsKey } from '../features/parts/api/parts';
 import { peopleKey } from '../features/people/api/people';
 import { projectKey, projectsKey } from '../features/projects/api/projects';
 import { sessionKey } from '../features/session/api/session';
-import { applyRunToUploads } from '../features/uploads/model/upload-queue';
+import { applyRunToUploads, readUploadsAgain } from '../features/uploads/model/upload-queue';
 
 const gatherMs = 300;
 
@@ -20,7 +20,10 @@ function createEventHandler(client: QueryClient, coalesce: (key: string, action:
     switch (event.type) {
       case 'hello':
       case 'resync':
-        coalesce('everything', () => void client.invalidateQueries());
+        coalesce('everything', () => {
+          void client.invalidateQueries();
+          readUploadsAgain();
+        });
         return;
       case 'signed-out':
         client.setQueryData(sessionKey, null);

@@ -1,9 +1,8 @@
 import type { PartRow } from '@masswright/contracts';
-import { formatFigure } from '@masswright/units';
+import { formatFigure, getLengthUnit } from '@masswright/units';
 import { Link } from 'react-router-dom';
 import { AlignedFigure } from '../../../components/figure';
 import { StatusTag } from '../../../components/status-tag';
-import { unitTexts } from '../../../lib/unit-texts';
 import { computeColumnFractions, computeRowFigures, listDigits, listUnits, type ColumnFractions, type RowFigures } from '../model/row-figures';
 import { describeRun } from '../model/run-words';
 import { describeVerdict } from '../model/soundness-words';
@@ -110,7 +109,13 @@ export function PartTable({ rows }: { rows: readonly PartRow[] }) {
                 <Link to={`/projects/${row.projectId}/parts/${row.id}`}>{row.name}</Link>
               </th>
               <td className="figure">{row.revision.letter}</td>
-              <td>{row.revision.setting.lengthUnit ? unitTexts[row.revision.setting.lengthUnit].name : <span className="soft">not stated</span>}</td>
+              <td>
+                {row.revision.setting.lengthUnit ? (
+                  <span className="figure">{getLengthUnit(row.revision.setting.lengthUnit).symbol}</span>
+                ) : (
+                  <span className="soft">not stated</span>
+                )}
+              </td>
               <FigureCells row={row} figures={figures[index] ?? computeRowFigures(row)} fractions={fractions} />
               <td>
                 <SoundnessCell row={row} />

@@ -13,3 +13,5 @@ export const completeUpload = (uploadId: string, body: CompleteUploadRequest, si
   unwrapAs<Part>(api.POST('/api/v1/uploads/{uploadId}/completion', { params: { path: { uploadId } }, body, signal }));
 
 export const cancelUpload = (uploadId: string): Promise<void> => expectDone(api.DELETE('/api/v1/uploads/{uploadId}', { params: { path: { uploadId } }, keepalive: true }));
+
+export const readPartOfUpload = (partId: string): Promise<Part> => unwrapAs<Part>(api.GET('/api/v1/parts/{partId}', { params: { path: { partId } } }));

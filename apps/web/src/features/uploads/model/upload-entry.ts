@@ -28,7 +28,7 @@ export type UploadEvent =
   | { type: 'cancelled'; key: string }
   | { type: 'tried-again'; key: string }
   | { type: 'run'; partId: string; run: Pick<MeasuringRun, 'state' | 'stage' | 'progress'> }
-  | { type: 'run-failed'; partId: string; problem: string };
+  | { type: 'read'; part: Part };
 
 const running: readonly UploadPhase[] = ['waiting', 'sending', 'storing'];
 
@@ -43,6 +43,11 @@ export function isSettled(entry: UploadEntry): boolean {
   return entry.phase !== 'stored' || entry.part?.run.state === 'done' || entry.part?.run.state === 'failed';
 }
 
+function takePart({ id, revision }: Part): NonNullable<UploadEntry['part']> {
+  const { state, stage, progress, error } = revision.run;
+  return { id, run: { state, stage, progress }, problem: error?.message };
+}
+
 /** What an event makes of an entry. What comes too late (progress of a cancelled file, say) changes nothing. */
 function changeEntry(entry: UploadEntry, event: UploadEvent): UploadEntry {
   switch (event.type) {
@@ -54,9 +59,7 @@ function changeEntry(entry: UploadEntry, event: UploadEvent): UploadEntry {
       return entry.phase === 'sending' ? { ...entry, phase: 'storing', sentBytes: entry.sizeBytes } : entry;
     case 'stored': {
       // Even after a cancel that came too late: the part exists, and the person must see it.
-      const { id, revision } = event.part;
-      const { state, stage, progress, error } = revision.run;
-      return { ...entry, phase: 'stored', sentBytes: entry.sizeBytes, problem: undefined, part: { id, run: { state, stage, progress }, problem: error?.message } };
+      return { ...entry, phase: 'stored', sentBytes: entry.sizeBytes, problem: undefined, part: takePart(event.part) };
     }
     case 'failed':
       return isUnfinished(entry) ? { ...entry, phase: 'failed', problem: event.problem } : entry;
@@ -66,8 +69,8 @@ function changeEntry(entry: UploadEntry, event: UploadEvent): UploadEntry {
       return entry.phase === 'failed' || entry.phase === 'cancelled' ? { ...entry, phase: 'waiting', sentBytes: 0, problem: undefined } : entry;
     case 'run':
       return entry.part?.id === event.partId ? { ...entry, part: { ...entry.part, run: event.run } } : entry;
-    case 'run-failed':
-      return entry.part?.id === event.partId ? { ...entry, part: { ...entry.part, problem: event.problem } } : entry;
+    case 'read':
+      return entry.part?.id === event.part.id ? { ...entry, part: takePart(event.part) } : entry;
   }
 }
 

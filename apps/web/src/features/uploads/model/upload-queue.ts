@@ -1,5 +1,6 @@
 import type { CompleteUploadRequest, ServerEvent } from '@masswright/contracts';
 import { createStore, useStore } from '../../../lib/store';
+import { readPartOfUpload } from '../api/uploads';
 import { changeEntries, isSettled, isUnfinished, type UploadEntry, type UploadEvent } from './upload-entry';
 import type { Transport } from './transport';
 
@@ -10,6 +11,14 @@ let transport: Promise<Transport> | undefined;
 
 const apply = (event: UploadEvent): void => entries.set((list) => changeEntries(list, event));
 
+function readAgain(partId: string): void {
+  readPartOfUpload(partId).then(
+    (part) => apply({ type: 'read', part }),
+    // The list of parts says the same, and the next event asks again.
+    () => undefined,
+  );
+}
+
 /** Read only when the first file is sent: most visits send none. */
 function getTransport(): Promise<Transport> {
   transport ??= import('./transport').then(
@@ -18,7 +27,11 @@ function getTransport(): Promise<Transport> {
         onBegun: (key) => apply({ type: 'begun', key }),
         onSent: (key, bytes) => apply({ type: 'sent', key, bytes }),
         onAllSent: (key) => apply({ type: 'all-sent', key }),
-        onStored: (key, part) => apply({ type: 'stored', key, part }),
+        onStored: (key, part) => {
+          apply({ type: 'stored', key, part });
+          // A small mesh is measured before this answer has arrived: what was said about it meanwhile found nobody here to hear it.
+          readAgain(part.id);
+        },
         onFailed: (key, problem) => apply({ type: 'failed', key, problem }),
       }),
   );
@@ -73,15 +86,17 @@ export function stopUploads(): void {
   files.clear();
 }
 
-export function applyRunToUploads(event: Extract<ServerEvent, { type: 'run' }>): void {
-  apply({ type: 'run', partId: event.partId, run: { state: event.state, stage: event.stage, progress: event.progress } });
+export function applyRunToUploads({ partId, state, stage, progress }: Extract<ServerEvent, { type: 'run' }>): void {
+  if (!entries.get().some((entry) => entry.part?.id === partId)) return;
+  apply({ type: 'run', partId, run: { state, stage, progress } });
+  // The event says that it failed, the part says why.
+  if (state === 'failed') readAgain(partId);
 }
 
-export function applyRunFailureToUploads(partId: string, problem: string): void {
-  apply({ type: 'run-failed', partId, problem });
+/** After a gap in the event stream: asks about all that may have gone on meanwhile. */
+export function readUploadsAgain(): void {
+  for (const entry of entries.get()) if (entry.part && !isSettled(entry)) readAgain(entry.part.id);
 }
-
-export const isUploadOfPart = (partId: string): boolean => entries.get().some((entry) => entry.part?.id === partId);
 
 const askBeforeLeaving = (event: BeforeUnloadEvent): void => event.preventDefault();
 

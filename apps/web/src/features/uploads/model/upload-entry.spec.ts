@@ -1,0 +1,108 @@
+import type { Part } from '@masswright/contracts';
+import { describe, expect, it } from 'vitest';
+import { changeEntries, computeShareDone, describeEntry, isSettled, isUnfinished, type UploadEntry, type UploadEvent } from './upload-entry';
+import { summariseUploads } from './upload-summary';
+
+const entry = (key = 'a'): UploadEntry => ({
+  key,
+  projectId: 'p',
+  fileName: `${key}.stl`,
+  sizeBytes: 1000,
+  setting: { lengthUnit: 'mm', densityKgM3: 2700 },
+  phase: 'waiting',
+  sentBytes: 0,
+});
+
+const part = (id: string): Part => ({
+  id,
+  projectId: 'p',
+  projectName: 'Reel',
+  number: 1,
+  name: 'a',
+  can: { edit: true },
+  revision: {
+    id: 'r',
+    letter: 'A',
+    fileName: 'a.stl',
+    sizeBytes: 1000,
+    createdAt: '2026-11-28T14:06:00Z',
+    createdBy: 'Ines Marsh',
+    run: { state: 'queued', stage: 'waiting', progress: 0, error: null, finishedAt: null, durationMs: null },
+    setting: { lengthUnit: 'mm', densityKgM3: 2700, axis: { kind: 'mesh', along: 'z' }, drive: null, version: 1, changedAt: '2026-11-28T14:06:00Z', changedBy: 'Ines Marsh' },
+    sha256: null,
+    format: null,
+    measurement: null,
+  },
+});
+
+/** What becomes of one entry through some events. */
+function pass(...events: UploadEvent[]): UploadEntry {
+  const [result] = events.reduce<readonly UploadEntry[]>(changeEntries, [entry()]);
+  if (!result) throw new Error('the entry was lost');
+  return result;
+}
+
+const stored: UploadEvent = { type: 'stored', key: 'a', part: part('part-1') };
+
+describe('an upload', () => {
+  it('goes from waiting through sending and storing to a part that is measured', () => {
+    expect(describeEntry(pass())).toBe('Waiting');
+    const sending = pass({ type: 'begun', key: 'a' }, { type: 'sent', key: 'a', bytes: 400 });
+    expect(sending).toMatchObject({ phase: 'sending', sentBytes: 400 });
+    expect(computeShareDone(sending)).toBeCloseTo(0.2);
+    const measuring = pass({ type: 'begun', key: 'a' }, { type: 'all-sent', key: 'a' }, stored, {
+      type: 'run',
+      partId: 'part-1',
+      run: { state: 'running', stage: 'measuring', progress: 0.5 },
+    });
+    expect(describeEntry(measuring)).toBe('Measuring');
+    expect(isUnfinished(measuring)).toBe(false);
+    expect(isSettled(measuring)).toBe(false);
+    const done = pass({ type: 'begun', key: 'a' }, stored, { type: 'run', partId: 'part-1', run: { state: 'done', stage: 'storing', progress: 1 } });
+    expect(isSettled(done)).toBe(true);
+    expect(computeShareDone(done)).toBe(1);
+  });
+  it('that is cancelled stays cancelled, whatever arrives late', () => {
+    const late = pass({ type: 'begun', key: 'a' }, { type: 'cancelled', key: 'a' }, { type: 'sent', key: 'a', bytes: 900 }, { type: 'failed', key: 'a', problem: 'x' });
+    expect(late).toMatchObject({ phase: 'cancelled', sentBytes: 0 });
+    expect(late.problem).toBeUndefined();
+  });
+  it('that was stored before the cancel arrived is shown as the part that it is', () => {
+    expect(pass({ type: 'begun', key: 'a' }, { type: 'cancelled', key: 'a' }, stored)).toMatchObject({ phase: 'stored', part: { id: 'part-1' } });
+  });
+  it('that failed says why and can be tried again from the beginning', () => {
+    const failed = pass({ type: 'begun', key: 'a' }, { type: 'failed', key: 'a', problem: 'The storage did not take the file.' });
+    expect(failed).toMatchObject({ phase: 'failed', problem: 'The storage did not take the file.' });
+    expect(isSettled(failed)).toBe(true);
+    expect(changeEntries([failed], { type: 'tried-again', key: 'a' })[0]).toMatchObject({ phase: 'waiting', sentBytes: 0, problem: undefined });
+  });
+  it('is not tried again while it is being sent', () => {
+    expect(pass({ type: 'begun', key: 'a' }, { type: 'tried-again', key: 'a' }).phase).toBe('sending');
+  });
+  it('of nothing has a share all the same', () => {
+    expect(computeShareDone({ ...entry(), sizeBytes: 0 })).toBe(0);
+  });
+  it('whose mesh could not be measured gives the reason', () => {
+    const read = part('part-1');
+    read.revision.run = { ...read.revision.run, state: 'failed', error: { code: 'file-truncated', message: 'It was cut off.', at: null } };
+    const failed = pass(stored, { type: 'read', part: read });
+    expect(describeEntry(failed)).toBe('Could not be measured');
+    expect(failed.part?.problem).toBe('It was cut off.');
+  });
+  it('leaves the others, and their list, alone', () => {
+    const list = [entry('a'), entry('b')];
+    const next = changeEntries(list, { type: 'begun', key: 'b' });
+    expect(next[0]).toBe(list[0]);
+    expect(changeEntries(list, { type: 'run', partId: 'none', run: { state: 'done', stage: 'storing', progress: 1 } })).toBe(list);
+  });
+});
+
+describe('all uploads in one line', () => {
+  it('count what is under way and what became of the others', () => {
+    const list = [entry('a'), { ...entry('b'), phase: 'failed' as const }, pass(stored)];
+    expect(summariseUploads(list)).toMatchObject({ sentence: '3 meshes: 1 being sent, 1 being measured, 1 with a problem', settled: false, wrong: true });
+  });
+  it('are settled once nothing happens any more', () => {
+    expect(summariseUploads([{ ...entry(), phase: 'cancelled' }])).toMatchObject({ settled: true, share: 1 });
+  });
+});
