@@ -53,6 +53,13 @@ describe('integrals against exact rational arithmetic', () => {
     expectWithin(compareSurfaceExactly(measurement, rounded), 1e-12);
   });
 
+  it('the surface of an open tilted tube of long thin facets, too', () => {
+    const tube = shapes.rotate(shapes.makeTube(0.5, 0.4, 1e5, 24), tilt).slice(9);
+    const measurement = measureMesh(writeAsciiStl(tube));
+    expect(measurement.soundness.closed).toBe(false);
+    expectWithin(compareSurfaceExactly(measurement, tube), 1e-12);
+  });
+
   it('any dented ball, stretched and turned, near and far: body within 1e-13, surface within 1e-12', () => {
     fc.assert(
       fc.property(anyMesh, fc.integer({ min: -30, max: 30 }), fc.boolean(), (mesh, far, inBinary32) => {

@@ -12,6 +12,14 @@ const facetsOf = (measurement: Measurement, kind: FindingKind): number[] => meas
 const facet = (corners: shapes.Corners, index: number): shapes.Corners => corners.slice(9 * index, 9 * index + 9);
 const without = (corners: shapes.Corners, index: number): shapes.Corners => shapes.join(corners.slice(0, 9 * index), corners.slice(9 * index + 9));
 
+/** A dented sheet of 150 facets, tilted so that no coordinate is a round number. */
+const sheet = shapes.rotate(shapes.makeStar(20, (i, j) => 1 + 0.3 * Math.sin(3 * i + 5 * j)), shapes.makeRotation(0.3, 0.7, 1.1)).slice(0, 9 * 150);
+
+/** The same facets from the last to the first, beginning with another corner each: a sum over them rounds otherwise. */
+function reorder(corners: shapes.Corners): shapes.Corners {
+  return shapes.join(...Array.from({ length: corners.length / 9 }, (_, k) => facet(corners, corners.length / 9 - 1 - k)).map((one, k) => shapes.join(one.slice(3 * (k % 3)), one.slice(0, 3 * (k % 3)))));
+}
+
 /** A sound mesh and one of its facets. */
 const meshAndFacet = fc.tuple(anyMesh, fc.nat()).map(([corners, pick]) => ({ corners, index: pick % (corners.length / 9) }));
 
@@ -135,6 +143,7 @@ describe('single cases of soundness', () => {
   it.each([
     ['a sheet closed on its other side', shapes.join(Float64Array.of(0, 0, 0, 1, 0, 0, 0.3, 1, 0.2), shapes.turn(Float64Array.of(0, 0, 0, 1, 0, 0, 0.3, 1, 0.2)))],
     ['a crumpled sheet closed on its other side', shapes.join(shapes.makeStar(7, () => 1).slice(0, 90), shapes.turn(shapes.makeStar(7, () => 1).slice(0, 90)))],
+    ['a crumpled sheet closed on its other side in another order', shapes.join(sheet, reorder(shapes.turn(sheet)))],
     ['a ball and the same ball inside out beside it', shapes.join(shapes.makeBlock([0, 0, 0], [1, 2, 3]), shapes.turn(shapes.makeBlock([8, 0, 0], [9, 2, 3])))],
   ])('%s has no volume', (_name, corners) => {
     const measurement = measure(corners);
