@@ -17,10 +17,6 @@ function Shown({ quantity, value }: { quantity: Quantity; value: number }) {
   return <Figure value={fromSi(value, unit)} unit={unit.symbol} />;
 }
 
-function Direction({ direction }: { direction: readonly number[] }) {
-  return <span className="figure">({direction.map((element) => Number(element.toFixed(5))).join(', ')})</span>;
-}
-
 /** Beyond rounding, an axis through the centre of mass has no arm. */
 const armThatCounts = 1e-9;
 
@@ -37,9 +33,7 @@ function AxisFigures({ statement, state }: { statement: StatementRecord; state: 
         <b className="axis-moment">
           <Shown quantity="inertia" value={moment.inertiaKgM2} />
         </b>{' '}
-        <span className="soft">
-          {describeAxis(axis)}, direction <Direction direction={line.direction} />
-        </span>
+        <span className="soft">{describeAxis(axis, line)}</span>
       </Fact>
       {axis.kind === 'typed' && (
         <>

@@ -1,6 +1,6 @@
 import type { Axis } from '@masswright/contracts';
 import { describe, expect, it } from 'vitest';
-import { axisChoices, computeAxis, findChoice } from './axis-choice';
+import { axisChoices, computeAxis, describeAxis, findChoice } from './axis-choice';
 
 const statement: Parameters<typeof computeAxis>[2] = {
   centreOfMassM: [0.01, 0.02, 0.03],
@@ -19,6 +19,11 @@ describe('choice of an axis', () => {
   });
   it('a typed axis begins where the one before it was', () => {
     expect(computeAxis('typed', before, statement)).toEqual({ kind: 'typed', pointM: [0.01, 0.02, 0.03], direction: [0, 1, 0] });
+  });
+  it('is said with the point and the direction that place it', () => {
+    const typed: Axis = { kind: 'typed', pointM: [0.0125, 0, -0.003], direction: [0, 0, 2] };
+    expect(describeAxis(typed, { pointM: typed.pointM, direction: [0, 0, 1] })).toBe('through (12.5, 0, -3) mm, along (0, 0, 1) of the mesh frame');
+    expect(describeAxis({ kind: 'mesh', along: 'x' }, { pointM: [0, 0, 0], direction: [1, 0, 0] })).toContain('along x of the mesh frame');
   });
   it('a typed axis of a part without figures begins at the origin, along z', () => {
     const none = { centreOfMassM: null, principalAxes: null };

@@ -1,5 +1,5 @@
 import type { Axis, StatementRecord } from '@masswright/contracts';
-import { resolveAxis } from '@masswright/mechanics';
+import { resolveAxis, type Line } from '@masswright/mechanics';
 import type { Choice } from '../../../components/choice-bar';
 
 export type AxisChoice = 'x' | 'y' | 'z' | '1' | '2' | '3' | 'typed';
@@ -45,14 +45,17 @@ export function computeAxis(choice: AxisChoice, before: Axis, statement: Pick<St
   }
 }
 
-/** An axis in words. */
-export function describeAxis(axis: Axis): string {
+const writeTriple = (vector: readonly number[], decimals: number): string => `(${vector.map((element) => Number(element.toFixed(decimals))).join(', ')})`;
+
+/** An axis in words, with what places it: every moment needs it beside it. */
+export function describeAxis(axis: Axis, line: Line): string {
+  const direction = writeTriple(line.direction, 5);
   switch (axis.kind) {
     case 'mesh':
       return `through the centre of mass, along ${axis.along} of the mesh frame`;
     case 'principal':
-      return `principal axis ${axis.number}, through the centre of mass`;
+      return `principal axis ${axis.number}, through the centre of mass, along ${direction} of the mesh frame`;
     case 'typed':
-      return 'through a typed point, along a typed direction';
+      return `through ${writeTriple(line.pointM.map((element) => element * 1000), 4)} mm, along ${direction} of the mesh frame`;
   }
 }

@@ -22,9 +22,13 @@ const steps: Partial<Record<Quantity, readonly Step[]>> = {
     { from: 1e-4, symbol: 'cm²' },
     { from: 1, symbol: 'm²' },
   ],
-  torque: [{ from: 0, symbol: 'N·m' }],
+  torque: [
+    { from: 0, symbol: 'N·mm' },
+    { from: 0.01, symbol: 'N·m' },
+  ],
   energy: [
-    { from: 0, symbol: 'J' },
+    { from: 0, symbol: 'mJ' },
+    { from: 0.01, symbol: 'J' },
     { from: 1e4, symbol: 'kJ' },
   ],
   length: [{ from: 0, symbol: 'mm' }],

@@ -1,0 +1,185 @@
+import type { Measurement, Part, Setting } from '@masswright/contracts';
+import { cleanup, fireEvent, render, screen, within } from '@testing-library/react';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import { useStore } from '../../../lib/store';
+import { createSettingEditor, type SettingEditor } from '../model/setting-editor';
+import { PartStatement } from './part-statement';
+
+/** A block of 30 × 20 × 10 units with a corner at the origin, measured: volume 6000, second moments V·a²/12. */
+const block: Measurement = {
+  measuringVersion: 'm1',
+  format: 'stl-binary',
+  facets: 12,
+  origin: [0, 0, 0],
+  boundingBox: { min: [0, 0, 0], max: [30, 20, 10] },
+  volume: { content: 6000, centreFromOrigin: [15, 10, 5], second: { xx: 6000 * 75, yy: (6000 * 400) / 12, zz: (6000 * 100) / 12, xy: 0, yz: 0, zx: 0 } },
+  surface: { content: 2200, centreFromOrigin: [15, 10, 5], second: { xx: 1, yy: 1, zz: 1, xy: 0, yz: 0, zx: 0 } },
+  soundness: {
+    closed: true,
+    oriented: true,
+    outward: true,
+    turned: false,
+    boundaryEdges: 0,
+    nonManifoldEdges: 0,
+    degenerateFacets: 0,
+    duplicateFacets: 0,
+    defensible: true,
+    findings: [],
+  },
+};
+
+const openBlock: Measurement = {
+  ...block,
+  volume: null,
+  soundness: { ...block.soundness, closed: false, oriented: false, defensible: false, boundaryEdges: 4, findings: [{ kind: 'boundary-edges', count: 4, facets: [2, 3] }] },
+};
+
+const metal: Setting = { lengthUnit: 'mm', densityKgM3: 2700, axis: { kind: 'mesh', along: 'z' }, drive: null };
+
+function makePart(measurement: Measurement | null, setting: Setting, edit: boolean): Part {
+  return {
+    id: 'part',
+    projectId: 'project',
+    projectName: 'Reel',
+    number: 4,
+    name: 'Block',
+    can: { edit },
+    revision: {
+      id: 'revision',
+      letter: 'A',
+      fileName: 'block.stl',
+      sizeBytes: 684,
+      createdAt: '2026-11-28T14:06:00Z',
+      createdBy: 'Ines Marsh',
+      run: { state: measurement ? 'done' : 'running', stage: measurement ? 'storing' : 'measuring', progress: measurement ? 1 : 0.4, error: null, finishedAt: measurement ? '2026-11-28T14:06:02Z' : null, durationMs: measurement ? 41 : null },
+      setting: { ...setting, version: 1, changedAt: '2026-11-28T14:06:00Z', changedBy: 'Ines Marsh' },
+      sha256: measurement ? 'ab'.repeat(32) : null,
+      format: measurement?.format ?? null,
+      measurement,
+    },
+  };
+}
+
+function Page({ part, editor }: { part: Part; editor: SettingEditor }) {
+  return <PartStatement part={part} editor={editor} state={useStore(editor)} />;
+}
+
+function open(measurement: Measurement | null, { setting = metal, edit = true }: { setting?: Setting; edit?: boolean } = {}): SettingEditor {
+  const part = makePart(measurement, setting, edit);
+  const { setting: stored } = part.revision;
+  const editor = createSettingEditor(stored, {
+    save: ({ version, ...change }) => Promise.resolve({ ...stored, ...change, version: version + 1 }),
+    reload: () => Promise.resolve(stored),
+    isStale: () => false,
+    describe: String,
+  });
+  render(<Page part={part} editor={editor} />);
+  return editor;
+}
+
+const section = (name: string): HTMLElement => screen.getByRole('region', { name });
+const text = (element: HTMLElement): string => element.textContent.replace(/\u2009/g, '');
+
+describe('the statement of a part', () => {
+  beforeEach(() => void vi.useFakeTimers());
+  afterEach(() => {
+    cleanup();
+    vi.useRealTimers();
+  });
+
+  it('gives the figures of a block as the handbook does', () => {
+    open(block);
+    const figures = text(section('Figures'));
+    // m = 2700 · 6e-6 = 16.2 g; I about z = m (30² + 20²)/12 = 1.755 kg·mm².
+    expect(figures).toContain('16.2000 g');
+    expect(figures).toContain('6.00000 cm³');
+    expect(figures).toContain('22.0000 cm²');
+    expect(figures).toContain('1.75500');
+    expect(text(section('Axis and torque'))).toContain('1.75500 kg·mm²');
+  });
+
+  it('captions its tensor with unit, point, axes and sign convention', () => {
+    open(block);
+    expect(section('Figures').querySelector('figcaption')?.textContent).toBe(
+      'kg·mm² about the centre of mass, axes of the mesh frame; off-diagonals are matrix elements, -∫xy dm.',
+    );
+  });
+
+  it('answers a typed density at once, and leaves half a word alone', () => {
+    const editor = open(block);
+    const density = screen.getByLabelText('Density');
+    fireEvent.change(density, { target: { value: '7.85 g' } });
+    expect(text(section('Figures'))).toContain('16.2000 g');
+    fireEvent.change(density, { target: { value: '7.85 g/cm3' } });
+    expect(text(section('Figures'))).toContain('47.1000 g');
+    expect(editor.get().draft.densityKgM3).toBe(7850);
+  });
+
+  it('takes an undone density back into its field', () => {
+    open(block);
+    fireEvent.change(screen.getByLabelText('Density'), { target: { value: '7.85 g/cm3' } });
+    fireEvent.click(screen.getByRole('button', { name: /Undo/ }));
+    expect(screen.getByLabelText<HTMLInputElement>('Density').value).toBe('2700 kg/m³');
+    expect(text(section('Figures'))).toContain('16.2000 g');
+  });
+
+  it('tells the parallel-axis term apart for a typed axis', () => {
+    open(block, { setting: { ...metal, axis: { kind: 'typed', pointM: [0, 0, 0], direction: [0, 0, 2] } } });
+    const axis = text(section('Axis and torque'));
+    // About the corner: m (30² + 20²)/3 = 7.02; through the centre 1.755; the rest is m d².
+    expect(axis).toContain('7.02000 kg·mm²');
+    expect(axis).toContain('1.75500 kg·mm²');
+    expect(axis).toContain('5.26500 kg·mm²');
+  });
+
+  it('gives torque and energy for a drive, with the caution that belongs to them', () => {
+    open(block);
+    fireEvent.change(screen.getByLabelText('Speed in r/min'), { target: { value: '300' } });
+    fireEvent.change(screen.getByLabelText('Time in s'), { target: { value: '0.5' } });
+    const axis = text(section('Axis and torque'));
+    // τ = 1.755e-6 · 31.4159/0.5, E = ½ · 1.755e-6 · 31.4159².
+    expect(axis).toContain('0.11027 N·mm');
+    expect(axis).toContain('0.86606 mJ');
+    for (const standard of ['ISO 12100', 'ISO 14120', 'ISO 14119']) expect(axis).toContain(standard);
+  });
+
+  it('shows no figure of an open mesh, and says why and what to do', () => {
+    open(openBlock);
+    expect(text(section('Soundness'))).toContain('Open: not defensible');
+    const figures = text(section('Figures'));
+    expect(figures).toContain('No figures.');
+    expect(figures).toContain('open at 4 edges');
+    expect(figures).not.toMatch(/\d (g|kg|cm³|mm³|cm²|mm²)/);
+    expect(screen.queryByRole('region', { name: 'Axis and torque' })).toBeNull();
+  });
+
+  it('states no size and no mass before the unit is stated', () => {
+    open(block, { setting: { ...metal, lengthUnit: null } });
+    expect(text(section('Figures'))).toContain('No figures yet.');
+    fireEvent.change(screen.getByLabelText('Unit'), { target: { value: 'inch' } });
+    // 6000 cubic inches at 2700 kg/m³.
+    expect(text(section('Figures'))).toContain('265.470 kg');
+  });
+
+  it('gives volume and centre, but no mass, before the density is stated', () => {
+    open(block, { setting: { ...metal, densityKgM3: null } });
+    const figures = text(section('Figures'));
+    expect(figures).toContain('No mass yet.');
+    expect(figures).toContain('6.00000 cm³');
+    expect(within(section('Figures')).getByRole('img', { name: /Along x .* centre of mass is at 15\.0000 mm/ })).toBeTruthy();
+  });
+
+  it('has no control that a reader may not use', () => {
+    open(block, { edit: false });
+    for (const role of ['textbox', 'combobox', 'radio'] as const) expect(screen.queryAllByRole(role)).toEqual([]);
+    expect(screen.queryByText('Saved')).toBeNull();
+    expect(text(section('Source'))).toContain('2700 kg/m³');
+    expect(text(section('Figures'))).toContain('16.2000 g');
+  });
+
+  it('shows how far a mesh is that is still being measured', () => {
+    open(null);
+    expect(screen.getByRole('progressbar', { name: 'Measuring, 40 %' })).toBeTruthy();
+    expect(screen.queryByRole('region', { name: 'Figures' })).toBeNull();
+  });
+});
