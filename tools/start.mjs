@@ -65,7 +65,7 @@ async function start() {
     (installed) => (installed.length > 0 ? `installed ${installed.join(', ')}` : 'all there'),
   );
   await stage('Node packages', ensureNodePackages, (ran) => (ran ? 'installed from the lock file' : 'as in the lock file'));
-  const { folder, fallback } = chooseDataFolder('.data', local.postgres);
+  const { folder, fallback } = chooseDataFolder(process.env.DATA_FOLDER ?? '.data', local.postgres);
   if (fallback) note(describeFallback(folder));
   const settings = readSettings(process.env, folder, dev);
   const runNotes = new RunNotes(settings.runFolder);
@@ -79,7 +79,7 @@ async function start() {
   }, (left) => (left.length > 0 ? `free; stopped what an earlier start left running: ${left.join(', ')}` : 'free'));
   rotateLogs(settings.logFolder);
 
-  const [services] = await Promise.all([stage('Services', () => startServices(settings, runNotes), describeServices), stage('Build', () => build(settings))]);
+  const [services] = await Promise.all([stage('Services', () => startServices(settings, runNotes), describeServices), settings.buildsAreGiven ? undefined : stage('Build', () => build(settings))]);
   const env = makeProgramEnvironment(settings, {
     postgresUrl: services.postgres?.url,
     redisUrl: services.redis?.url,

@@ -15,11 +15,11 @@ import { add, countTasks, describeTally, emptyTally, readReport } from './test/r
 import { startTestServices } from './test/services.mjs';
 import { listProjects, runTargets } from './test/workspace.mjs';
 
-const kinds = ['lint', 'unit', 'integration', 'resilience', 'browser'];
+const kinds = ['lint', 'unit', 'integration', 'start', 'resilience', 'browser'];
 const { values } = parseArgs({ options: { only: { type: 'string', multiple: true }, filter: { type: 'string' } } });
 const wanted = values.only ?? kinds;
 const unknown = wanted.find((kind) => !kinds.includes(kind));
-const suites = ['integration', 'resilience', 'browser'].filter((kind) => wanted.includes(kind));
+const suites = ['integration', 'start', 'resilience', 'browser'].filter((kind) => wanted.includes(kind));
 
 const reports = inCheckout('.test/reports');
 const buildFolder = inCheckout('.test/build');
@@ -128,11 +128,13 @@ async function main() {
   }
   notes.clear(false);
   console.log(`\n${describeTally(total)}`);
-  process.exitCode = total.failed > 0 || total.passed === 0 ? 1 : 0;
+  return total.failed > 0 || total.passed === 0 ? 1 : 0;
 }
 
-main().catch(async (error) => {
-  await stopServices?.();
-  console.error(error instanceof Obstacle ? error.message : error);
-  process.exitCode = 1;
-});
+main()
+  .catch(async (error) => {
+    await stopServices?.();
+    console.error(error instanceof Obstacle ? error.message : error);
+    return 1;
+  })
+  .then((code) => process.exit(code));

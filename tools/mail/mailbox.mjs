@@ -41,6 +41,7 @@ export class Mailbox {
   /** @param {string} folder */
   constructor(folder) {
     this.folder = folder;
+    mkdirSync(path.dirname(folder), { recursive: true });
     mkdirSync(folder, { recursive: true, mode: 0o700 });
   }
 

@@ -74,6 +74,8 @@ export async function preparePostgres({ directory, port: wanted, logFile = path.
   const user = getPostgresUser();
   const passwordFile = path.join(directory, 'superuser-password');
   const env = { PATH: process.env.PATH, HOME: directory, LC_ALL: 'C.UTF-8' };
+  // The mode is for this folder alone: those above it must stay open to the user that PostgreSQL runs as.
+  mkdirSync(path.dirname(directory), { recursive: true });
   mkdirSync(directory, { recursive: true, mode: 0o700 });
   if (user.uid !== undefined && user.gid !== undefined) chownSync(directory, user.uid, user.gid);
   if (!existsSync(versionFile)) {

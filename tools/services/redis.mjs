@@ -36,6 +36,7 @@ function ping(port, password) {
 /** A Redis server on loopback that writes every change to its log and never evicts a key, not started yet. @param {RedisOptions} options */
 export async function prepareRedis({ directory, port: wanted, password = randomBytes(24).toString('hex'), logFile = path.join(directory, 'redis.log') }) {
   const port = wanted ?? (await findFreePort());
+  mkdirSync(path.dirname(directory), { recursive: true });
   mkdirSync(directory, { recursive: true, mode: 0o700 });
   const settings = path.join(directory, 'redis.conf');
   const lines = ['bind 127.0.0.1', `port ${port}`, `requirepass ${password}`, `dir "${directory}"`, 'appendonly yes', 'appendfsync everysec', 'save ""', 'maxmemory-policy noeviction', 'daemonize no', 'logfile ""'];

@@ -39,8 +39,8 @@ export function preparePrograms(settings, env) {
   const log = (/** @type {string} */ name) => path.join(settings.logFolder, `${name}.log`);
   const host = (/** @type {string | undefined} */ listens) => (listens === undefined || listens === '0.0.0.0' || listens === '::' ? '127.0.0.1' : listens);
   return {
-    worker: prepareProgram({ kind: 'worker', file: inCheckout('apps/worker/dist/main.js'), env, readyUrl: `http://${host(env.WORKER_HOST)}:${settings.ports.worker}/health/ready`, logFile: log('worker'), readyTimeoutMs: 60_000 }),
-    api: prepareProgram({ kind: 'api', file: inCheckout('apps/api/dist/main.js'), env, readyUrl: `http://${host(env.API_HOST)}:${settings.ports.api}/api/health/ready`, logFile: log('api'), readyTimeoutMs: 60_000 }),
+    worker: prepareProgram({ kind: 'worker', file: settings.built('apps/worker', 'main.js'), env, readyUrl: `http://${host(env.WORKER_HOST)}:${settings.ports.worker}/health/ready`, logFile: log('worker'), readyTimeoutMs: 60_000 }),
+    api: prepareProgram({ kind: 'api', file: settings.built('apps/api', 'main.js'), env, readyUrl: `http://${host(env.API_HOST)}:${settings.ports.api}/api/health/ready`, logFile: log('api'), readyTimeoutMs: 60_000 }),
   };
 }
 
@@ -56,7 +56,7 @@ export async function build(settings) {
 
 /** @param {Settings} settings @param {NodeJS.ProcessEnv} env */
 export async function migrate(settings, env) {
-  const done = await runTask(process.execPath, ['--enable-source-maps', inCheckout('drizzle/dist/migrate.js')], { cwd: root, env, logFile: path.join(settings.logFolder, 'migrate.log') });
+  const done = await runTask(process.execPath, ['--enable-source-maps', settings.built('drizzle', 'migrate.js')], { cwd: root, env, logFile: path.join(settings.logFolder, 'migrate.log') });
   if (done.code === wrongEnvironment) throw new Obstacle(`The environment is wrong:\n${done.output.trimEnd()}`);
   if (done.code !== 0) throw new Obstacle(`The database could not be migrated:\n${done.output.trimEnd()}`);
 }
@@ -68,7 +68,7 @@ export async function migrate(settings, env) {
 /** Fills an empty installation through the api. The sign-ins are the last line that the program prints. @param {Settings} settings @param {NodeJS.ProcessEnv} env @returns {Promise<SignIn[]>} */
 export async function seed(settings, env) {
   const kept = path.join(settings.dataFolder, 'sign-ins.json');
-  const done = await runTask(process.execPath, ['--enable-source-maps', inCheckout('demo/dist/seed.js')], { cwd: root, env, logFile: path.join(settings.logFolder, 'seed.log') });
+  const done = await runTask(process.execPath, ['--enable-source-maps', settings.built('demo', 'seed.js')], { cwd: root, env, logFile: path.join(settings.logFolder, 'seed.log') });
   if (done.code !== 0) throw new Obstacle(`The demonstration could not be set up:\n${done.output.trimEnd()}`);
   const last = done.stdout.trimEnd().split('\n').at(-1) ?? '';
   /** @type {{ signIns?: SignIn[] } | undefined} */

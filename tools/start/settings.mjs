@@ -1,5 +1,6 @@
+import path from 'node:path';
+import { inCheckout, root } from '../setup/checkout.mjs';
 import { getSecrets } from '../setup/secrets.mjs';
-import { inCheckout } from '../setup/checkout.mjs';
 
 /**
  * Everything a start needs to know, from the environment and the secrets of this installation.
@@ -20,6 +21,9 @@ export function readSettings(environment, dataFolder, dev) {
     inbox: port('INBOX_PORT', 6),
     web: port('WEB_PORT', 7),
   };
+  const builds = environment.BUILD_DIR;
+  /** Where the build of a project is. @param {string} project its folder @param {string} [file] */
+  const built = (project, file = '') => (builds ? path.resolve(root, builds, project, file) : inCheckout(project, 'dist', file));
   const origin = `http://127.0.0.1:${dev ? ports.web : ports.api}`;
   return {
     dev,
@@ -36,7 +40,9 @@ export function readSettings(environment, dataFolder, dev) {
       objectStorage: !environment.S3_ENDPOINT,
       mail: !environment.SMTP_URL,
     },
-    webFolder: inCheckout('apps/web/dist'),
+    built,
+    /** With BUILD_DIR the builds are there already: the tests make them once. */
+    buildsAreGiven: Boolean(builds),
   };
 }
 
@@ -76,7 +82,7 @@ export function makeProgramEnvironment(settings, { postgresUrl, redisUrl, object
     API_PORT: String(ports.api),
     WORKER_HOST: process.env.WORKER_HOST ?? '127.0.0.1',
     WORKER_PORT: String(ports.worker),
-    WEB_DIR: settings.webFolder,
+    WEB_DIR: settings.built('apps/web'),
     ...(postgresUrl === undefined
       ? {}
       : {

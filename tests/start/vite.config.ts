@@ -1,0 +1,4 @@
+import { defineConfig } from 'vitest/config';
+import { library } from '../../vite.shared';
+
+export default defineConfig(library('tests-start', { include: ['src/**/*.int.spec.ts'], testTimeout: 120_000, hookTimeout: 120_000 }));
