@@ -1,4 +1,4 @@
 import { defineConfig } from 'vitest/config';
 import { library } from '../../vite.shared';
 
-export default defineConfig(library('units'));
+export default defineConfig(library('units', { setupFiles: ['src/testing/seed-properties.ts'] }));

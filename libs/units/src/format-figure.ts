@@ -37,7 +37,7 @@ export function splitFigure(value: number, { digits = 6 }: FigureOptions = {}): 
   const [mantissa = '', powerText = '0'] = size.toExponential(digits - 1).split('e');
   const power = Number(powerText);
   const rounded = Number(`${mantissa}e${powerText}`);
-  if (rounded < plainFrom || rounded >= plainBelow) {
+  if (rounded < plainFrom || size >= plainBelow) {
     const [integer = '', fraction = ''] = mantissa.split('.');
     return { sign, integer, fraction, exponent: power === 0 ? '' : `×10${raise(power)}` };
   }

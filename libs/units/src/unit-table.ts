@@ -53,7 +53,8 @@ export const unitTable: Record<Quantity, readonly Unit[]> = {
   inertia: [
     unit('kg·m²', 1, 1, ['N·m·s²']),
     unit('kg·cm²', 1, 1e4),
-    unit('kg·mm²', 1, 1e6, ['g·m²']),
+    unit('g·m²', 1, 1000),
+    unit('kg·mm²', 1, 1e6),
     unit('g·cm²', 1, 1e7),
     unit('g·mm²', 1, 1e9),
     unit('t·mm²', 1, 1000, ['tonne·mm²', 'N·mm·s²']),
