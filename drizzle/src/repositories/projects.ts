@@ -1,6 +1,6 @@
 import { sql } from 'drizzle-orm';
 import { and, asc, eq } from 'drizzle-orm';
-import { parts, projects } from '../schema';
+import { projects } from '../schema';
 import type { Transaction } from '../tenancy/database';
 
 export interface ProjectRow {
@@ -13,7 +13,8 @@ export interface ProjectRow {
 const columns = {
   id: projects.id,
   name: projects.name,
-  parts: sql<number>`(select count(*)::int from ${parts} where ${parts.projectId} = ${projects.id} and ${parts.organisationId} = ${projects.organisationId})`,
+  // Written out: in a query of one table drizzle leaves the tables' names away, and then `id` would be the part's.
+  parts: sql<number>`(select count(*)::int from parts where parts.organisation_id = projects.organisation_id and parts.project_id = projects.id)`,
   createdAt: projects.createdAt,
 };
 

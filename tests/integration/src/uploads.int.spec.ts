@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import type { FailedRecord, Page, Part, PartRow, Problem, ServerEvent, Upload } from '@masswright/contracts';
+import type { FailedRecord, Page, Part, PartRow, Problem, Project, ServerEvent, Upload } from '@masswright/contracts';
 import { createObjectStorage, type ObjectStorage } from '@masswright/storage';
 import { programEnvironment, startTestApi, type TestApi } from '../../support/api';
 import type { ApiUser } from '../../support/api-user';
@@ -213,6 +213,8 @@ describe('the list of parts', () => {
       after = page.next;
     }
     expect(rows.map(({ number }) => number)).toEqual([1, 2, 3, 4, 5, 6, 7, 8, 9, 10]);
+    expect((await engineer.get<Project>(`/projects/${id}`)).parts).toBe(10);
+    expect((await engineer.get<Page<Project>>('/projects')).items.find((one) => one.id === id)?.parts).toBe(10);
   });
 
   it('the same file in two organisations is measured in each, and neither can tell', async () => {
