@@ -24,8 +24,9 @@ export function findFrame(originM: Vector3, x: Vector3, towardsY: Vector3): Fram
   if (axisX === undefined || side === undefined) return undefined;
   const normal = cross(axisX, side);
   if (dot(normal, normal) < leastSine * leastSine) return undefined;
-  const axisZ = findDirection(normal) ?? normal;
-  return { originM, axes: [axisX, cross(axisZ, axisX), axisZ] };
+  // Anew from y, so that the axes are at right angles to the last digit even where the given directions are all but parallel.
+  const axisY = findDirection(cross(normal, axisX)) ?? normal;
+  return { originM, axes: [axisX, axisY, cross(axisX, axisY)] };
 }
 
 /** A direction of the mesh frame as the frame sees it. */

@@ -24,7 +24,7 @@ export function getLength(a: Vector3): number {
   const largest = Math.max(Math.abs(a[0]), Math.abs(a[1]), Math.abs(a[2]));
   if (largest === 0) return 0;
   // Scaled, so that squares neither over- nor underflow.
-  const [x, y, z] = scale(a, 1 / largest);
+  const [x, y, z] = [a[0] / largest, a[1] / largest, a[2] / largest];
   return largest * Math.sqrt(x * x + y * y + z * z);
 }
 
