@@ -1,6 +1,7 @@
 import react from '@vitejs/plugin-react';
 import { defineConfig } from 'vitest/config';
 import { buildDir, tests } from '../../vite.shared';
+import { dropUnusedBlueprint } from './src/styles/drop-unused-blueprint';
 
 const apiPort = process.env['API_PORT'] ?? '4600';
 const webPort = process.env['WEB_PORT'];
@@ -8,6 +9,7 @@ const webPort = process.env['WEB_PORT'];
 export default defineConfig({
   plugins: [react()],
   resolve: { tsconfigPaths: true },
+  css: { postcss: { plugins: [dropUnusedBlueprint] } },
   build: {
     outDir: buildDir('apps/web'),
     emptyOutDir: true,

@@ -6,7 +6,7 @@ export function WordMark({ size = 20 }: { size?: number }) {
         <rect x="1" y="2" width="24" height="2.6" fill="currentColor" />
         <path d="M16 6.6 20.6 14.4H11.4Z" className="word-mark-fulcrum" />
       </svg>
-      Masswright
+      <span className="word-mark-name">Masswright</span>
     </span>
   );
 }

@@ -23,7 +23,7 @@ export function PrincipalTable({ principal }: { principal: Principal }) {
   const formatMoment = createGroupFormat(shownMoments, digits);
   const formatRadius = createGroupFormat(shownRadii, digits);
   return (
-    <div>
+    <div className="principal" role="group" aria-label="Principal moments" tabIndex={0}>
       <table className="principal-table">
         <caption className="caption">
           Principal moments <span className="unit">about the centre of mass</span>

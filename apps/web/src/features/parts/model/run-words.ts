@@ -10,7 +10,8 @@ const stageWords: Record<MeasuringRun['stage'], string> = {
 /** How far a file is, in words that fit a row. */
 export function describeRun({ state, stage, progress }: Pick<MeasuringRun, 'state' | 'stage' | 'progress'>): string {
   if (state === 'failed') return 'Not measured';
-  if (state === 'done') return 'Measured';
+  // The figures themselves are on their way to the page.
+  if (state === 'done') return 'Measured, reading the figures';
   if (state === 'queued') return stageWords.waiting;
   return progress > 0 && progress < 1 ? `${stageWords[stage]}, ${Math.floor(progress * 100)} %` : stageWords[stage];
 }

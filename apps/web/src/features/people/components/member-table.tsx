@@ -22,7 +22,7 @@ export function MemberTable({ members, ownUserId, organisationName }: MemberTabl
   return (
     <>
       {changeRole.error && <ProblemNotice error={changeRole.error} />}
-      <div className="table-frame">
+      <div className="table-frame" role="region" aria-label="Members" tabIndex={0}>
         <table className="table people-table">
           <thead>
             <tr>
