@@ -10,7 +10,9 @@ export function CopyButton({ text, what }: { text: string; what: string }) {
     return () => clearTimeout(timer);
   }, [state]);
   const copy = (): void => {
-    navigator.clipboard.writeText(text).then(
+    // Missing on a plain-http page of another host.
+    const clipboard: Clipboard | undefined = 'clipboard' in navigator ? navigator.clipboard : undefined;
+    (clipboard ? clipboard.writeText(text) : Promise.reject(new Error('no clipboard'))).then(
       () => setState('copied'),
       () => setState('refused'),
     );

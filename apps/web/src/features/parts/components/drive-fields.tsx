@@ -79,11 +79,15 @@ export function DriveFields({ drive, inertiaKgM2, canEdit, onChange }: DriveFiel
     <>
       <div className="drive-fields">
         <span>From rest to</span>
-        <NumberInput label="Speed in r/min" text={texts.speed} error={texts.speed.trim() === '' ? undefined : read.speedError} onChange={(speed) => commit({ ...texts, speed })} />
-        <span className="unit">r/min</span>
+        <span className="drive-field">
+          <NumberInput label="Speed in r/min" text={texts.speed} error={texts.speed.trim() === '' ? undefined : read.speedError} onChange={(speed) => commit({ ...texts, speed })} />
+          <span className="unit">r/min</span>
+        </span>
         <span>in</span>
-        <NumberInput label="Time in s" text={texts.time} error={texts.time.trim() === '' ? undefined : read.timeError} width={84} onChange={(time) => commit({ ...texts, time })} />
-        <span className="unit">s</span>
+        <span className="drive-field">
+          <NumberInput label="Time in s" text={texts.time} error={texts.time.trim() === '' ? undefined : read.timeError} width={84} onChange={(time) => commit({ ...texts, time })} />
+          <span className="unit">s</span>
+        </span>
       </div>
       {error && (
         <p role="status" className="field-error">

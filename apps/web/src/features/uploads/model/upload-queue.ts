@@ -7,6 +7,7 @@ import type { Transport } from './transport';
 /** Lives outside of React: files go on being sent while a person moves about in the application. */
 const entries = createStore<readonly UploadEntry[]>([]);
 const files = new Map<string, File>();
+let lastKey = 0;
 let transport: Promise<Transport> | undefined;
 
 const apply = (event: UploadEvent): void => entries.set((list) => changeEntries(list, event));
@@ -53,7 +54,7 @@ function ship(key: string, how: 'send' | 'retry'): void {
 
 export function addUploads(projectId: string, chosen: readonly File[], setting: CompleteUploadRequest['setting']): void {
   const added = chosen.map((file): UploadEntry => {
-    const key = crypto.randomUUID();
+    const key = `upload-${(lastKey += 1)}`;
     files.set(key, file);
     return { key, projectId, fileName: file.name, sizeBytes: file.size, setting, phase: 'waiting', sentBytes: 0 };
   });
