@@ -24,6 +24,16 @@ describe('decimal numbers', () => {
       { numRuns: 3000 },
     );
   });
+  it('are read to the last bit half-way between two numbers, and next to it', () => {
+    fc.assert(
+      fc.property(fc.integer({ min: 2 ** 52, max: 2 ** 53 - 1 }), fc.integer({ min: 0, max: 3 }), fc.integer({ min: -1, max: 1 }), fc.integer({ min: -22, max: 22 }), (mantissa, power, step, scale) => {
+        // (mantissa + 1/2) · 2^power has up to 19 digits; one unit of its last digit to either side rounds away from the middle.
+        const middle = (2n * BigInt(mantissa) + 1n) * 2n ** BigInt(power) + BigInt(step);
+        for (const text of [String(middle), `${middle}e${scale}`]) expect(Object.is(parse(text), Number(text))).toBe(true);
+      }),
+      { numRuns: 3000 },
+    );
+  });
   it.each(['.5', '5.', '-.5e1', '+0', '-0', '1e400', '1e-400', '0e999999999999', '000000000000000000000000.1', '123456789012345678901234567890', '9007199254740993', '2.2250738585072011e-308'])('%s means what the language says it means', (text) => {
     expect(Object.is(parse(text), Number(text))).toBe(true);
   });

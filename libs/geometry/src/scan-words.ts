@@ -52,7 +52,10 @@ export function createWordScanner(takeWord: (bytes: Uint8Array, start: number, e
     if (end > from) takeWord(bytes, from, end);
   }
 
-  function takeSpace(code: number): void {
+  function takeControl(code: number): void {
+    if (code < 9 || code > 13) {
+      throw new MeshError('syntax-invalid', `Line ${spellCount(line)} has a control character (code ${code}): the file is damaged, or not text. Export it again.`, { line });
+    }
     if (code === 13 || (code === 10 && !afterReturn)) {
       takeLineEnd();
       line += 1;
@@ -65,11 +68,9 @@ export function createWordScanner(takeWord: (bytes: Uint8Array, start: number, e
     for (let at = 0; at < bytes.length; at++) {
       const code = bytes[at] ?? 0;
       if (code > 32) continue;
-      if (code !== 32 && (code < 9 || code > 13)) {
-        throw new MeshError('syntax-invalid', `Line ${spellCount(line)} has a control character (code ${code}): the file is damaged, or not text. Export it again.`, { line });
-      }
-      endWord(bytes, start, at);
-      takeSpace(code);
+      if (at > start || carried > 0) endWord(bytes, start, at);
+      if (code === 32) afterReturn = false;
+      else takeControl(code);
       start = at + 1;
     }
     if (start < bytes.length) keep(bytes, start, bytes.length);
