@@ -15,7 +15,7 @@ const names = process.argv.slice(2).length > 0 ? process.argv.slice(2) : all;
 async function main() {
   const unknown = names.filter((name) => !all.includes(name));
   if (unknown.length > 0) throw new Obstacle(`There is no benchmark ${unknown.join(', ')}. There is: ${all.join(', ') || 'none'}.`);
-  ensureDebianPackages(['postgresql', 'redis-server']);
+  ensureDebianPackages(['postgresql', 'redis-server', 'chromium']);
   ensureNodePackages();
   console.log(`${os.availableParallelism()} cores, ${os.cpus()[0]?.model ?? 'unknown processor'}, Node.js ${process.version}`);
   for (const name of names) {

@@ -22,6 +22,7 @@ function makeEnvironment(services, apiPort, workerPort) {
     SMTP_URL: services.TEST_SMTP_URL,
     MAIL_FROM: 'Masswright <no-reply@masswright.example>',
     PUBLIC_URL: `http://127.0.0.1:${apiPort}`,
+    WEB_DIR: `${buildFolder}/apps/web`,
     API_PORT: String(apiPort),
     WORKER_PORT: String(workerPort),
     LINK_SECRET: 'bc'.repeat(32),
