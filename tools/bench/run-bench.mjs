@@ -1,4 +1,4 @@
-import { rmSync } from 'node:fs';
+import { readFileSync, rmSync } from 'node:fs';
 import { findFreePort, startProgram } from '../services/index.mjs';
 import { inCheckout, Obstacle, root } from '../setup/checkout.mjs';
 import { chooseDataFolder } from '../setup/data-folder.mjs';
@@ -30,6 +30,13 @@ function makeEnvironment(services, apiPort, workerPort) {
   };
 }
 
+/** Our libraries by name, as the compiler knows them. @returns {Record<string, string>} */
+function readAliases() {
+  /** @type {{ compilerOptions: { paths: Record<string, string[]> } }} */
+  const { compilerOptions } = JSON.parse(readFileSync(inCheckout('tsconfig.base.json'), 'utf8'));
+  return Object.fromEntries(Object.entries(compilerOptions.paths).map(([name, [place = '']]) => [name, inCheckout(place)]));
+}
+
 /**
  * Loads a benchmark, starts what it asks for, runs it and stops everything again.
  * @param {string} file
@@ -38,7 +45,7 @@ function makeEnvironment(services, apiPort, workerPort) {
 export async function runBench(file, print) {
   // Not at the top: before `npm ci` there is no vite.
   const { runnerImport } = await import('vite');
-  const { module } = await runnerImport(file, { root, configFile: false, resolve: { tsconfigPaths: true } });
+  const { module } = await runnerImport(file, { root, configFile: false, resolve: { alias: readAliases() } });
   const bench = /** @type {import('./context.d.ts').Bench} */ (module);
   const needs = new Set(bench.needs ?? []);
   /** @type {(() => Promise<void>)[]} */
