@@ -27,8 +27,11 @@ export type Finding = z.infer<typeof finding>;
 
 /**
  * The verdict on a whole mesh.
- * closed: every undirected edge has an even number of facets. oriented: as many facets run along each edge one way as the other.
- * outward: the signed volume of the file as stored is positive. turned: it is negative, so every facet was read the other way round.
+ * closed: every undirected edge has an even number of facets.
+ * oriented: as many facets run along every edge one way as the other. An edge with an odd number cannot balance, so a mesh that is not closed
+ * is not oriented either; whether its other edges balance is told by the finding `unbalanced-edges`.
+ * outward: the signed volume of the file as stored is positive (of a mesh that is not closed: its volume about the middle of the box).
+ * turned: closed, oriented and of negative volume, so every facet was read the other way round.
  */
 export const soundness = z.object({
   closed: z.boolean(),

@@ -1,6 +1,6 @@
 export { createMeasurer, defaultMaximumFacets, measureMesh, type Measurer, type MeasurerOptions } from './measurer';
 export { findingKinds, measuringVersion } from './measurement';
-export type { Finding, FindingKind, Integrals, MeasuringError, Measurement, MeshFormat, Soundness, Symmetric3, Vector3 } from './measurement';
+export type { Finding, FindingKind, Integrals, Measurement, MeshFormat, Soundness, Symmetric3, Vector3 } from './measurement';
 export { MeshError, meshErrorCodes, type MeshErrorCode, type MeshPlace } from './mesh-error';
 export { createMeshReader, type MeshReader, type MeshReaderOptions, type MeshSummary } from './mesh-reader';
 export type { FacetBatch, FacetSink } from './facet-batch';

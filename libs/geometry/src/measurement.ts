@@ -1,5 +1,3 @@
-import type { MeshErrorCode } from './mesh-error';
-
 /**
  * Names the way in which a file is read and integrated. The same bytes and the same version give the same bits;
  * whatever could change a bit of a measurement needs a new version.
@@ -93,11 +91,4 @@ export interface Measurement {
   volume: Integrals | null;
   surface: Integrals;
   soundness: Soundness;
-}
-
-/** What stands in a measurement's place for a file that could not be measured. */
-export interface MeasuringError {
-  code: MeshErrorCode;
-  message: string;
-  at: { byte?: number; line?: number } | null;
 }

@@ -10,7 +10,6 @@ export const meshErrorCodes = [
   'facets-none',
   'size-differs',
   'too-many-facets',
-  'gave-up',
 ] as const;
 export type MeshErrorCode = (typeof meshErrorCodes)[number];
 
