@@ -152,7 +152,7 @@ export async function keepMeasurement(
 }
 
 /** The id of the organisation's measurement of a file, if there is one. */
-export async function findMeasurement(tx: Transaction, sha256: Buffer, measuringVersion: string): Promise<string | undefined> {
+async function findMeasurement(tx: Transaction, sha256: Buffer, measuringVersion: string): Promise<string | undefined> {
   const [row] = await tx
     .select({ id: measurements.id })
     .from(measurements)

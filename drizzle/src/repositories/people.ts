@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm';
-import { and, asc, count, eq, gt, isNull, or } from 'drizzle-orm';
+import { and, asc, eq, gt, isNull, or } from 'drizzle-orm';
 import type { Role } from '@masswright/contracts';
 import { invitations, memberships, organisations, passwordResets, users } from '../schema';
 import type { Transaction } from '../tenancy/database';
@@ -249,9 +249,4 @@ export async function usePasswordReset(tx: Transaction, reset: { id: string; use
     .where(and(eq(passwordResets.userId, reset.userId), isNull(passwordResets.usedAt)))
     .returning({ id: passwordResets.id });
   return rows.some((row) => row.id === reset.id);
-}
-
-export async function countMembers(tx: Transaction, organisationId: string): Promise<number> {
-  const rows = await tx.select({ members: count() }).from(memberships).where(eq(memberships.organisationId, organisationId));
-  return rows[0]?.members ?? 0;
 }

@@ -19,6 +19,7 @@ import {
   publishEvent,
   recordAudit,
   withdrawInvitations,
+  type Transaction,
   type User,
 } from '@masswright/drizzle';
 import { deriveLinkToken, hashToken } from '@masswright/jobs';
@@ -28,7 +29,7 @@ import { AppError, notFound } from '../platform/app-error';
 import { attemptLimits, AttemptLimits } from '../platform/attempt-limits';
 import { decodeCursor, toPage } from '../platform/cursor';
 import type { RequestContext, SignedInContext } from '../platform/request-context';
-import { audit, Work } from '../platform/work';
+import { audit, Work, type Actor } from '../platform/work';
 import { Passwords } from '../session/passwords';
 import { SessionService } from '../session/session.service';
 import { presentInvitation } from './invitations.presenter';
@@ -57,34 +58,26 @@ export class InvitationsService {
   }
 
   /** Inviting an address again replaces its open invitation: the older link stops working. */
-  create(context: SignedInContext, request: CreateInvitationRequest): Promise<Invitation> {
+  create(context: SignedInContext, { email, role }: CreateInvitationRequest): Promise<Invitation> {
+    const { organisationId, userId, requestId } = context;
     const id = randomUUID();
-    const { organisationId } = context;
-    return this.database.transaction({ organisationId, userId: context.userId, email: request.email }, async (tx) => {
-      const actor = await findMember(tx, organisationId, context.userId);
-      if (actor === undefined) throw new AppError('not-signed-in', 'You are no longer in this organisation.');
+    const create = async (tx: Transaction, actor: Actor) => {
       requireManagePeople(actor);
-      const invited = await findUserByEmail(tx, request.email);
+      const invited = await findUserByEmail(tx, email);
       if (invited !== undefined && (await findMember(tx, organisationId, invited.id)) !== undefined) {
         throw new AppError('conflict', 'This person is in the organisation already.', { fields: [{ path: 'email', message: 'This person is in the organisation already.' }] });
       }
-      await withdrawInvitations(tx, { email: request.email });
-      await insertInvitation(tx, {
-        id,
-        organisationId,
-        email: request.email,
-        role: request.role,
-        tokenHash: hashToken(deriveLinkToken(this.settings.LINK_SECRET, 'invitation', id)),
-        invitedBy: context.userId,
-        expiresAt: new Date(Date.now() + daysOpen * 86_400_000),
-      });
-      await addToOutbox(tx, { organisationId, job: 'mail.send', payload: { mail: 'invitation', organisationId, invitationId: id }, requestId: context.requestId });
-      await audit(tx, context, { action: 'invitation.create', subject: { type: 'invitation', id }, after: { email: request.email, role: request.role } });
+      await withdrawInvitations(tx, { email });
+      const tokenHash = hashToken(deriveLinkToken(this.settings.LINK_SECRET, 'invitation', id));
+      await insertInvitation(tx, { id, organisationId, email, role, tokenHash, invitedBy: userId, expiresAt: new Date(Date.now() + daysOpen * 86_400_000) });
+      await addToOutbox(tx, { organisationId, job: 'mail.send', payload: { mail: 'invitation', organisationId, invitationId: id }, requestId });
+      await audit(tx, context, { action: 'invitation.create', subject: { type: 'invitation', id }, after: { email, role } });
       await publishEvent(tx, { organisationId, event: { type: 'people' } });
       const row = await findOpenInvitation(tx, id);
       if (row === undefined) throw new Error('An invitation vanished while it was made.');
       return presentInvitation(row);
-    });
+    };
+    return this.work.run(context, create, email);
   }
 
   withdraw(context: SignedInContext, invitationId: string): Promise<void> {

@@ -17,9 +17,10 @@ export interface Actor {
 export class Work {
   constructor(@Inject(Database) private readonly database: Database) {}
 
-  run<Result>(context: SignedInContext, work: (tx: Transaction, actor: Actor) => Promise<Result>): Promise<Result> {
+  /** `email` opens the account of that address too, for work that concerns somebody who may not be in the organisation. */
+  run<Result>(context: SignedInContext, work: (tx: Transaction, actor: Actor) => Promise<Result>, email?: string): Promise<Result> {
     const { organisationId, userId } = context;
-    return this.database.transaction({ organisationId, userId }, async (tx) => {
+    return this.database.transaction({ organisationId, userId, email }, async (tx) => {
       const member = await findMember(tx, organisationId, userId);
       if (member === undefined) throw new AppError('not-signed-in', 'You are no longer in this organisation.');
       return work(tx, { organisationId, userId, role: member.role, name: member.name });
