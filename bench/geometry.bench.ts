@@ -3,7 +3,6 @@ import { closeSync, mkdtempSync, openSync, readSync, rmSync, statSync, writeFile
 import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { createMeasurer, createMeshReader, writeAsciiStl, writeBinaryStl } from '@masswright/geometry';
-import type { BenchContext } from '../tools/bench/context';
 
 /** Each figure is the median of so many rounds; in a round every task has its turn, so that a slow spell hits all alike. */
 const rounds = 7;
@@ -68,7 +67,7 @@ function time(task: () => void): number {
 }
 
 /** What measuring costs beside reading and hashing the file, which has to be done in any case. */
-export function run(context: BenchContext): Promise<void> {
+export function run(context: { print: (line: string) => void }): Promise<void> {
   const folder = mkdtempSync(path.join(tmpdir(), 'masswright-bench-'));
   try {
     for (const rings of [50, 707]) {
