@@ -48,7 +48,8 @@ async function runUnit() {
   const tally = emptyTally();
   const bad = [];
   for (const project of projects) {
-    const report = readReport(`${reports}/${project}.json`);
+    // An application is known to Vite by its folder, a library by its name.
+    const report = readReport([`${reports}/${project}.json`, `${reports}/apps/${project}.json`].find((file) => existsSync(file)) ?? '');
     add(tally, report);
     if (report.failed > 0) bad.push(report.missing ? `${project} (no report)` : project);
   }
