@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm';
-import { and, asc, eq, gt, isNull, or } from 'drizzle-orm';
+import { and, asc, count, eq, gt, isNull, or } from 'drizzle-orm';
 import type { Role } from '@masswright/contracts';
 import { invitations, memberships, organisations, passwordResets, users } from '../schema';
 import type { Transaction } from '../tenancy/database';
@@ -103,6 +103,14 @@ export async function lockAdministrators(tx: Transaction, organisationId: string
     .orderBy(asc(memberships.userId))
     .for('update');
   return rows.length;
+}
+
+export async function countAdministrators(tx: Transaction, organisationId: string): Promise<number> {
+  const rows = await tx
+    .select({ administrators: count() })
+    .from(memberships)
+    .where(and(eq(memberships.organisationId, organisationId), eq(memberships.role, 'administrator')));
+  return rows[0]?.administrators ?? 0;
 }
 
 export async function setRole(tx: Transaction, organisationId: string, userId: string, role: Role): Promise<void> {

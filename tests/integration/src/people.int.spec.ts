@@ -198,6 +198,9 @@ describe('members', () => {
       expect(answer.status).toBe(409);
       expect(answer.body.detail).toContain('last administrator');
     }
+    // What would be refused is not offered.
+    const { items } = await administrator.get<Page<Member>>('/members');
+    expect(items.find(({ userId }) => userId === me)?.can).toEqual({ changeRole: false, remove: false });
   });
 
   it('two administrators who remove each other at once: one stays', async () => {

@@ -11,8 +11,10 @@ export function requireManagePeople(actor: Anyone): void {
 }
 
 /** An organisation without an administrator could never have one again. */
-export function requireAnotherAdministrator(administrators: number): void {
-  if (administrators <= 1) {
+export const isLastAdministrator = (member: Anyone, administrators: number): boolean => member.role === 'administrator' && administrators <= 1;
+
+export function requireNotLastAdministrator(member: Anyone, administrators: number): void {
+  if (isLastAdministrator(member, administrators)) {
     throw new AppError('conflict', 'This is the last administrator. Make another person administrator first.');
   }
 }

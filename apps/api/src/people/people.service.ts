@@ -1,12 +1,12 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { z } from 'zod';
 import type { Member, Page, PageQuery, Role } from '@masswright/contracts';
-import { deleteMembership, findMember, listMembers, lockAdministrators, publishEvent, setRole } from '@masswright/drizzle';
+import { countAdministrators, deleteMembership, findMember, listMembers, lockAdministrators, publishEvent, setRole } from '@masswright/drizzle';
 import { notFound } from '../platform/app-error';
 import { decodeCursor, toPage } from '../platform/cursor';
 import type { SignedInContext } from '../platform/request-context';
 import { audit, Work } from '../platform/work';
-import { requireAnotherAdministrator, requireManagePeople } from './people.policy';
+import { requireNotLastAdministrator, requireManagePeople } from './people.policy';
 import { presentMember } from './people.presenter';
 
 @Injectable()
@@ -17,7 +17,8 @@ export class PeopleService {
     const after = decodeCursor(z.tuple([z.string()]), query.after);
     return this.work.run(context, async (tx, actor) => {
       const rows = await listMembers(tx, { afterEmail: after?.[0], limit: query.limit + 1 });
-      return toPage(rows, query.limit, (row) => presentMember(row, actor), (row) => [row.email]);
+      const administrators = await countAdministrators(tx, context.organisationId);
+      return toPage(rows, query.limit, (row) => presentMember(row, actor, administrators), (row) => [row.email]);
     });
   }
 
@@ -28,14 +29,14 @@ export class PeopleService {
       const administrators = await lockAdministrators(tx, organisationId);
       const member = await findMember(tx, organisationId, userId);
       if (member === undefined) throw notFound('person');
-      if (member.role === 'administrator' && role !== 'administrator') requireAnotherAdministrator(administrators);
+      if (role !== 'administrator') requireNotLastAdministrator(member, administrators);
       if (member.role !== role) {
         await setRole(tx, organisationId, userId, role);
         await audit(tx, context, { action: 'member.change-role', subject: { type: 'user', id: userId }, before: { role: member.role }, after: { role } });
         await publishEvent(tx, { organisationId, event: { type: 'people' } });
       }
       // Who lowers their own role sees at once what they may still do.
-      return presentMember({ ...member, role }, userId === actor.userId ? { ...actor, role } : actor);
+      return presentMember({ ...member, role }, userId === actor.userId ? { ...actor, role } : actor, await countAdministrators(tx, organisationId));
     });
   }
 
@@ -46,7 +47,7 @@ export class PeopleService {
       const administrators = await lockAdministrators(tx, organisationId);
       const member = await findMember(tx, organisationId, userId);
       if (member === undefined) throw notFound('person');
-      if (member.role === 'administrator') requireAnotherAdministrator(administrators);
+      requireNotLastAdministrator(member, administrators);
       await deleteMembership(tx, organisationId, userId);
       await audit(tx, context, { action: 'member.remove', subject: { type: 'user', id: userId }, before: { role: member.role } });
       await publishEvent(tx, { organisationId, event: { type: 'people' } });
