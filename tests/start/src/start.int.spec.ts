@@ -44,7 +44,7 @@ describe('npm start', () => {
       expect(house.output).toMatch(new RegExp(`^ +\\d+\\.\\d s  ${stage}`, 'm'));
     }
     expect(house.output).toContain(`\n  ${house.url}\n`);
-    expect(house.output).toMatch(/^ {2}administrator +\S+@\S+ +\S+$/m);
+    expect(house.output).toMatch(/^ {2}administrator +\S+@\S+ +\S.*$/m);
     expect(house.output).toContain(`http://127.0.0.1:${portBase + 6}`);
     const page = await fetch(house.url);
     expect(page.status).toBe(200);
