@@ -80,7 +80,7 @@ export default tseslint.config(
   },
   {
     files: [...freeToImport.map((project) => `${project}/**/*.{ts,tsx}`), 'libs/geometry/bench/**/*.ts'],
-    rules: { '@nx/enforce-module-boundaries': boundaries('^(\\.\\./)+tools/(services|setup|start)/[\\w-]+\\.mjs$', '^(\\.\\./)+demo/src/.*$') },
+    rules: { '@nx/enforce-module-boundaries': boundaries('^(\\.\\./)+tools/[\\w./-]+$', '^(\\.\\./)+demo/src/.*$', '^(\\.\\./)+(tests/)?support/[\\w-]+$', '^(\\.\\./)+eslint\\.config\\.mjs$', '^(\\.\\./)+libs/client/src/openapi\\.json$') },
   },
   {
     // They run in a browser, in a worker thread and on a server alike.

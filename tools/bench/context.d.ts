@@ -13,5 +13,5 @@ export interface BenchContext {
   /** Where the api answers; only with "programs". */
   apiUrl: string | undefined;
   /** One line of the result. */
-  print(line: string): void;
+  print: (line: string) => void;
 }

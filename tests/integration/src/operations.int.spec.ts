@@ -5,7 +5,7 @@ import pg from 'pg';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { createRolesAndDatabase, migrateSchema } from '@masswright/drizzle';
 import { metricsToken, programEnvironment, startTestApi, type TestApi } from '../../support/api';
-import type { ApiUser } from '../../support/api-user';
+import { ApiUser } from '../../support/api-user';
 import { environment } from '../../support/environment';
 import { block } from '../../support/meshes';
 import { createTestDatabase, type TestDatabase } from '../../support/test-database';
@@ -100,7 +100,6 @@ describe('logs', () => {
       if ((await fetch(`${process.url}/api/health/live`).catch(() => undefined))?.ok === true) break;
       await new Promise((resolve) => setTimeout(resolve, 50));
     }
-    const { ApiUser } = await import('../../support/api-user');
     const person = new ApiUser(process.url, process.url);
     await person.signUp();
     const { id } = await person.createProject();
@@ -170,7 +169,7 @@ describe('migrations', () => {
     }
   });
 
-  it('can be backed up and restored by the role that is for it', async () => {
+  it('can be backed up by the role that is for it', () => {
     const { stdout, status, stderr } = spawnSync('pg_dump', ['--data-only', '--table=users', '--dbname', database.migrationUrl], { encoding: 'utf8' });
     expect(stderr).toBe('');
     expect(status).toBe(0);

@@ -165,7 +165,7 @@ describe('writes from elsewhere', () => {
   ])('from %s are refused', async (_, headers) => {
     const user = api.visit();
     await user.signUp();
-    const { status, body } = await user.ask<Problem>('POST', '/projects', { name: 'Planted' }, headers as Record<string, string>);
+    const { status, body } = await user.ask<Problem>('POST', '/projects', { name: 'Planted' }, headers);
     expect(status).toBe(403);
     expect(body.code).toBe('cross-site');
     expect((await user.get<{ items: unknown[] }>('/projects')).items).toEqual([]);

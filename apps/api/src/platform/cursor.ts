@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import type { z } from 'zod';
 import type { Page } from '@masswright/contracts';
 import { AppError } from './app-error';
 

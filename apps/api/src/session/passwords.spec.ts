@@ -1,9 +1,10 @@
+import type * as argon2 from '@node-rs/argon2';
 import { beforeEach, describe, expect, it, vi } from 'vitest';
 import { Passwords } from './passwords';
 
 const library = vi.hoisted(() => ({ verifications: [] as string[], running: 0, mostRunning: 0 }));
 vi.mock('@node-rs/argon2', async (original) => {
-  const real = await original<typeof import('@node-rs/argon2')>();
+  const real = await original<typeof argon2>();
   return {
     ...real,
     verify: async (hash: string, password: string) => {

@@ -1,5 +1,5 @@
 import { Worker, type Job } from 'bullmq';
-import { Database, isWorkOpen, makeWorkDue, markWorkDone } from '@masswright/drizzle';
+import { isWorkOpen, makeWorkDue, markWorkDone, type Database } from '@masswright/drizzle';
 import { isJobName, parseJobPayload, queuedJob, UnknownJobError, type JobName, type QueuedJob, type QueueName } from '@masswright/jobs';
 import type { Logger } from '@masswright/logs';
 import type { WorkerSettings } from '../platform/worker-settings';

@@ -1,4 +1,4 @@
-import { Inject, Injectable, type OnModuleDestroy } from '@nestjs/common';
+import { Injectable, type OnModuleDestroy } from '@nestjs/common';
 import { Queue } from 'bullmq';
 import { queueNames, queueOfJob, type JobName, type QueuedJob, type QueueName } from '@masswright/jobs';
 import type { Logger } from '@masswright/logs';
