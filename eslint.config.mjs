@@ -41,7 +41,7 @@ const depConstraints = [
 ];
 
 /** What is imported by a relative path from outside its project: the shared Vite settings by all, the services and meshes by tests. */
-const boundaries = (...allow) => ['error', { allow: ['^.*/vite\\.shared$', ...allow], depConstraints }];
+const boundaries = (...allow) => ['error', { allow: ['^.*/vite\\.shared\\.ts$', ...allow], depConstraints }];
 
 const frameworks = ['react', 'react-dom', '@nestjs/*', 'three', '@react-three/*', 'drizzle-orm'];
 const queueLibraries = ['bullmq', '@nestjs/bullmq', 'ioredis'];

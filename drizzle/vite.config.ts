@@ -1,5 +1,5 @@
 import { defineConfig, mergeConfig } from 'vitest/config';
-import { nodeProgram } from '../vite.shared';
+import { nodeProgram } from '../vite.shared.ts';
 
 // The migration program finds its SQL files beside it.
 export default defineConfig(

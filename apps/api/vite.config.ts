@@ -1,4 +1,4 @@
 import { defineConfig } from 'vitest/config';
-import { nodeProgram } from '../../vite.shared';
+import { nodeProgram } from '../../vite.shared.ts';
 
 export default defineConfig(nodeProgram('apps/api', { main: 'src/main.ts', openapi: 'src/openapi/main.ts' }));

@@ -1,6 +1,6 @@
 import react from '@vitejs/plugin-react';
 import { defineConfig } from 'vitest/config';
-import { buildDir, tests } from '../../vite.shared';
+import { buildDir, tests } from '../../vite.shared.ts';
 import { dropUnusedBlueprint } from './src/styles/drop-unused-blueprint';
 
 const apiPort = process.env['API_PORT'] ?? '4600';

@@ -1,5 +1,5 @@
 import { defineConfig } from 'vitest/config';
-import { library } from '../../vite.shared';
+import { library } from '../../vite.shared.ts';
 
 export default defineConfig(
   library('tests-browser', {
