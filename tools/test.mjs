@@ -11,7 +11,7 @@ import { checkDisk } from './setup/room.mjs';
 import { note, stage } from './setup/stages.mjs';
 import { endTasks, runTask } from './setup/tasks.mjs';
 import { RunNotes } from './start/run-notes.mjs';
-import { add, countTasks, describeTally, emptyTally, readReport } from './test/reports.mjs';
+import { add, countTasks, describeTally, emptyTally, pickTasks, readReport } from './test/reports.mjs';
 import { startTestServices } from './test/services.mjs';
 import { listProjects, runTargets } from './test/workspace.mjs';
 
@@ -37,7 +37,7 @@ async function checkLint() {
   const expected = (await Promise.all(['lint', 'typecheck'].map(async (target) => (await listProjects(env, target)).map((project) => `${project}:${target}`)))).flat();
   const { output } = await runTargets(env, ['lint', 'typecheck'], { cached: useCache });
   const tally = countTasks(output, expected);
-  if (tally.bad.length > 0) show(`${output}\nLint or types failed: ${tally.bad.join(', ')}`);
+  if (tally.bad.length > 0) show(`${pickTasks(output, tally.bad)}\nLint or types failed: ${tally.bad.join(', ')}`);
   return tally;
 }
 
@@ -51,9 +51,10 @@ async function runUnit() {
     // An application is known to Vite by its folder, a library by its name.
     const report = readReport([`${reports}/${project}.json`, `${reports}/apps/${project}.json`].find((file) => existsSync(file)) ?? '');
     add(tally, report);
-    if (report.failed > 0) bad.push(report.missing ? `${project} (no report)` : project);
+    if (report.failed > 0) bad.push(project);
+    if (report.missing) note(`${project} left no report.`);
   }
-  if (bad.length > 0) show(`${output}\nUnit tests failed: ${bad.join(', ')}`);
+  if (bad.length > 0) show(`${pickTasks(output, bad.map((project) => `${project}:test`))}\nUnit tests failed: ${bad.join(', ')}`);
   return tally;
 }
 

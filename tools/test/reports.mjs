@@ -4,6 +4,9 @@ import { existsSync, readFileSync } from 'node:fs';
 /** @typedef {{ status: string, assertionResults: { status: string }[] }} FileReport */
 /** @typedef {{ success: boolean, numPassedTests: number, numFailedTests: number, numPendingTests: number, numTodoTests?: number, testResults: FileReport[] }} Report */
 
+/** What a terminal takes for a colour. */
+const colour = `${String.fromCharCode(27)}\\[[0-9;]*m`;
+
 /** @returns {Tally} */
 export const emptyTally = () => ({ passed: 0, failed: 0, skipped: 0 });
 
@@ -48,15 +51,30 @@ export function readReport(file) {
 }
 
 /**
- * Which of the expected tasks nx says it finished well. What it does not mention failed.
+ * Which of the expected tasks nx says it finished well: those it printed and does not list as failed.
+ * What it does not mention failed, and so does everything when it did not come to its summary.
  * @param {string} output
  * @param {string[]} expected such as `units:lint`
  * @returns {Tally & { bad: string[] }}
  */
 export function countTasks(output, expected) {
-  const plain = output.replaceAll(new RegExp(`${String.fromCharCode(27)}\\[[0-9;]*m`, 'g'), '');
-  const done = new Set([...plain.matchAll(/✔\s+nx run ([\w-]+:[\w-]+)/g)].map((match) => match[1]));
-  const failed = new Set([...plain.matchAll(/✖\s+nx run ([\w-]+:[\w-]+)/g)].map((match) => match[1]));
-  const bad = expected.filter((task) => failed.has(task) || !done.has(task));
+  const plain = output.replaceAll(new RegExp(colour, 'g'), '');
+  const printed = new Set([...plain.matchAll(/^> nx run ([\w-]+:[\w-]+)/gm)].map((match) => match[1]));
+  const [, listed] = /^Failed tasks:\s*\n((?:\s*- .*\n)+)/m.exec(plain) ?? [];
+  const failed = new Set([...(listed ?? '').matchAll(/^\s*- ([\w-]+:[\w-]+)/gm)].map((match) => match[1]));
+  const concluded = listed !== undefined || /^ NX\s+Successfully ran targets? /m.test(plain);
+  const bad = expected.filter((task) => !concluded || failed.has(task) || !printed.has(task));
   return { passed: expected.length - bad.length, failed: bad.length, skipped: 0, bad };
+}
+
+/**
+ * What nx printed for some tasks, without that of all the others.
+ * @param {string} output
+ * @param {string[]} tasks
+ */
+export function pickTasks(output, tasks) {
+  const sections = output.split(new RegExp(`(?=^(?:${colour})*> (?:${colour})*nx run )`, 'm'));
+  const picked = sections.filter((section) => tasks.some((task) => section.slice(0, 200).includes(`nx run ${task}`)));
+  // What it says before the first task and after none, where there is nothing else to show.
+  return picked.length > 0 ? picked.join('').trimEnd() : output;
 }

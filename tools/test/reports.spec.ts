@@ -22,9 +22,16 @@ describe('the tally', () => {
     expect(readReport('/nowhere/at-all.json')).toEqual({ passed: 0, failed: 1, skipped: 0, missing: true });
   });
 
-  it('takes from nx only the tasks that it says went well', () => {
-    const output = '✔  nx run units:lint  [local cache]\n\u001b[32m✔\u001b[39m  nx run units:typecheck (2s)\n✖  nx run geometry:lint\n';
-    const tally = countTasks(output, ['units:lint', 'units:typecheck', 'geometry:lint', 'geometry:typecheck']);
-    expect(tally).toEqual({ passed: 2, failed: 2, skipped: 0, bad: ['geometry:lint', 'geometry:typecheck'] });
+  const printed = '\n> nx run units:lint  [local cache]\n\n> eslint .\n\n\u001b[2m> \u001b[22mnx run units:typecheck\n\n> nx run geometry:lint\n';
+  const expected = ['units:lint', 'units:typecheck', 'geometry:lint', 'geometry:typecheck'];
+
+  it('takes from nx only the tasks that it ran and does not list as failed', () => {
+    const output = `${printed}\n NX   Running targets lint, typecheck for 2 projects failed\n\nFailed tasks:\n\n- geometry:lint\n\n  Run duration: 1s\n`;
+    expect(countTasks(output, expected)).toEqual({ passed: 2, failed: 2, skipped: 0, bad: ['geometry:lint', 'geometry:typecheck'] });
+    expect(countTasks(`${printed}\n NX   Successfully ran targets lint, typecheck for 2 projects\n`, expected.slice(0, 3)).failed).toBe(0);
+  });
+
+  it('takes nothing from an nx that did not come to its end', () => {
+    expect(countTasks(printed, expected).failed).toBe(4);
   });
 });

@@ -2,7 +2,7 @@ import { execFileSync } from 'node:child_process';
 import { existsSync, readFileSync } from 'node:fs';
 import path from 'node:path';
 import { describe, expect, it } from 'vitest';
-import { workspaceRoot } from '../../../vite.shared';
+import { workspaceRoot } from '../../../vite.shared.ts';
 
 const files = execFileSync('git', ['ls-files', '-z'], { cwd: workspaceRoot, encoding: 'utf8' })
   .split('\0')

@@ -1,7 +1,7 @@
 import { spawnSync } from 'node:child_process';
 import { describe, expect, it } from 'vitest';
 import { isAllowed } from '../../../tools/licences/allow-list.mjs';
-import { workspaceRoot } from '../../../vite.shared';
+import { workspaceRoot } from '../../../vite.shared.ts';
 
 describe('third-party licences', () => {
   it('are all on the allow-list, and the committed file lists them as they are', () => {

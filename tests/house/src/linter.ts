@@ -3,7 +3,7 @@ import { readFileSync } from 'node:fs';
 import path from 'node:path';
 import { ESLint } from 'eslint';
 import tseslint from 'typescript-eslint';
-import { workspaceRoot } from '../../../vite.shared';
+import { workspaceRoot } from '../../../vite.shared.ts';
 
 export interface Project {
   name: string;

@@ -5,7 +5,7 @@ import path from 'node:path';
 import { vi } from 'vitest';
 import { findFreePort, isPortFree } from '../../../tools/services/ports.mjs';
 import { isAlive, type ProcessIdentity } from '../../../tools/services/process-identity.mjs';
-import { workspaceRoot } from '../../../vite.shared';
+import { workspaceRoot } from '../../../vite.shared.ts';
 
 /** The first of ten ports in a row that are all free. */
 export async function findPortBase(): Promise<number> {
