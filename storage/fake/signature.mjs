@@ -126,7 +126,10 @@ function computeCanonicalRequest(request, pathname, query, claim) {
  * @returns {Refusal | { payload: string }} the S3 error to answer with, or the declared hash of the body
  */
 export function checkSignature(request, key, nowMs = Date.now()) {
-  const [pathname = '/', queryText = ''] = (request.url ?? '/').split('?', 2);
+  const address = request.url ?? '/';
+  const mark = address.indexOf('?');
+  const pathname = mark < 0 ? address : address.slice(0, mark);
+  const queryText = mark < 0 ? '' : address.slice(mark + 1);
   let query;
   try {
     query = decodeQuery(queryText);

@@ -1,7 +1,7 @@
 export { createObjectStorage, ObjectStorage } from './object-storage';
 export { ObjectStorageError, type ObjectStorageErrorCode } from './object-storage-error';
 export { type ObjectContent, type ObjectRange } from './object-reader';
-export { type ObjectStorageOptions } from './object-storage-options';
+export { findPublicOrigin, type ObjectStorageOptions } from './object-storage-options';
 export {
   largestPartNumber,
   smallestPartBytes,

@@ -42,7 +42,8 @@ export class ObjectStorageError extends Error {
 const codes: Readonly<Record<string, ObjectStorageErrorCode>> = {
   NoSuchKey: 'not-found',
   NotFound: 'not-found',
-  NoSuchBucket: 'not-found',
+  // A wrong name in our own settings, not a lost object.
+  NoSuchBucket: 'denied',
   NoSuchUpload: 'no-such-upload',
   InvalidPart: 'invalid-parts',
   InvalidPartOrder: 'invalid-parts',

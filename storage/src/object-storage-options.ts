@@ -15,6 +15,12 @@ export interface ObjectStorageOptions {
   maxAttempts?: number;
 }
 
+/** Where the addresses of parts lead: the origin that a page's policy must let through. */
+export function findPublicOrigin({ endpoint, publicEndpoint, bucket, forcePathStyle }: Pick<ObjectStorageOptions, 'endpoint' | 'publicEndpoint' | 'bucket' | 'forcePathStyle'>): string {
+  const { protocol, host, origin } = new URL(publicEndpoint ?? endpoint);
+  return forcePathStyle ? origin : `${protocol}//${bucket}.${host}`;
+}
+
 // The SDK prints a notice about the age of the Node.js line into our logs unless told not to.
 process.env['AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED'] ??= 'true';
 

@@ -2,6 +2,7 @@ import { readFileSync, existsSync, mkdirSync, readdirSync, renameSync, writeFile
 import path from 'node:path';
 import { prepareMail, prepareObjectStorage, preparePostgres, prepareProgram, prepareRedis, wrongEnvironment } from '../services/index.mjs';
 import { inCheckout, Obstacle, root } from '../setup/checkout.mjs';
+import { note } from '../setup/stages.mjs';
 import { runTask } from '../setup/tasks.mjs';
 
 /** @typedef {import('./settings.mjs').Settings} Settings */
@@ -65,22 +66,22 @@ export async function migrate(settings, env) {
  * @typedef {{ email: string, password: string, role: string }} SignIn
  */
 
-/** Fills an empty installation through the api. The sign-ins are the last line that the program prints. @param {Settings} settings @param {NodeJS.ProcessEnv} env @returns {Promise<SignIn[]>} */
+/**
+ * Fills an empty installation through the api, once: people may change what is in it as they like. The sign-ins are the last line that the
+ * program prints. A demonstration that can't be set up is a pity, not a reason to stop.
+ * @param {Settings} settings @param {NodeJS.ProcessEnv} env @returns {Promise<SignIn[]>}
+ */
 export async function seed(settings, env) {
   const kept = path.join(settings.dataFolder, 'sign-ins.json');
-  const done = await runTask(process.execPath, ['--enable-source-maps', settings.built('demo', 'seed.js')], { cwd: root, env, logFile: path.join(settings.logFolder, 'seed.log') });
-  if (done.code !== 0) throw new Obstacle(`The demonstration could not be set up:\n${done.output.trimEnd()}`);
-  const last = done.stdout.trimEnd().split('\n').at(-1) ?? '';
-  /** @type {{ signIns?: SignIn[] } | undefined} */
-  let printed;
-  try {
-    printed = JSON.parse(last);
-  } catch {
-    printed = undefined;
+  if (existsSync(kept)) return JSON.parse(readFileSync(kept, 'utf8'));
+  const log = path.join(settings.logFolder, 'seed.log');
+  const done = await runTask(process.execPath, ['--enable-source-maps', settings.built('demo', 'seed.js')], { cwd: root, env, logFile: log });
+  if (done.code !== 0) {
+    note(`The demonstration could not be set up; the next start tries again. What went wrong stands in ${log}.`);
+    return [];
   }
-  if (printed?.signIns !== undefined && printed.signIns.length > 0) {
-    writeFileSync(kept, JSON.stringify(printed.signIns), { mode: 0o600 });
-    return printed.signIns;
-  }
-  return existsSync(kept) ? JSON.parse(readFileSync(kept, 'utf8')) : [];
+  /** @type {{ signIns: SignIn[] }} */
+  const printed = JSON.parse(done.stdout.trimEnd().split('\n').at(-1) ?? '{ "signIns": [] }');
+  writeFileSync(kept, JSON.stringify(printed.signIns), { mode: 0o600 });
+  return printed.signIns;
 }

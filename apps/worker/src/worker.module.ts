@@ -12,6 +12,7 @@ import type { WorkerSettings } from './platform/worker-settings';
 import { QueueConsumers } from './queue/queue-consumers';
 import { WorkQueues } from './queue/work-queues';
 import { OutboxRelay } from './relay/outbox-relay';
+import { AbandonedUploads } from './schedules/abandoned-uploads';
 import { Housekeeping } from './schedules/housekeeping';
 
 @Module({})
@@ -21,7 +22,7 @@ export class WorkerModule {
       module: WorkerModule,
       imports: [PlatformModule.with(settings, logger)],
       controllers: [HealthController],
-      providers: [WorkQueues, MeasuringThreads, MeasuringHandler, Mailer, MailHandler, ObjectDeletionHandler, QueueConsumers, OutboxRelay, Housekeeping, Metrics],
+      providers: [WorkQueues, MeasuringThreads, MeasuringHandler, Mailer, MailHandler, ObjectDeletionHandler, QueueConsumers, OutboxRelay, AbandonedUploads, Housekeeping, Metrics],
     };
   }
 }

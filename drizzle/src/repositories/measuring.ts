@@ -8,6 +8,7 @@ import type { Transaction } from '../tenancy/database';
 export interface TakenRun {
   runId: string;
   fence: number;
+  unendedTakeUps: number;
   revisionId: string;
   projectId: string;
   partId: string;
@@ -20,9 +21,9 @@ export interface TakenRun {
 export async function takeRun(tx: Transaction, runId: string): Promise<TakenRun | undefined> {
   const [taken] = await tx
     .update(measuringRuns)
-    .set({ fence: sql`${measuringRuns.fence} + 1`, state: 'running', stage: 'reading', progress: 0, startedAt: sql`now()` })
+    .set({ fence: sql`${measuringRuns.fence} + 1`, unendedTakeUps: sql`${measuringRuns.unendedTakeUps} + 1`, state: 'running', stage: 'reading', progress: 0, startedAt: sql`now()` })
     .where(and(eq(measuringRuns.id, runId), inArray(measuringRuns.state, ['queued', 'running'])))
-    .returning({ fence: measuringRuns.fence, revisionId: measuringRuns.revisionId });
+    .returning({ fence: measuringRuns.fence, unendedTakeUps: measuringRuns.unendedTakeUps, revisionId: measuringRuns.revisionId });
   if (taken === undefined) return undefined;
   const [found] = await tx
     .select({
@@ -53,11 +54,11 @@ export async function noteProgress(
   return rows.length > 0;
 }
 
-/** Puts a run back to wait, for a worker that shuts down; false when another has it. */
+/** Puts a run back to wait, for a worker that shuts down or can't go on just now; false when another has it. */
 export async function handBackRun(tx: Transaction, run: Pick<TakenRun, 'runId' | 'fence'>): Promise<boolean> {
   const rows = await tx
     .update(measuringRuns)
-    .set({ state: 'queued', stage: 'waiting', progress: 0, startedAt: null })
+    .set({ state: 'queued', stage: 'waiting', progress: 0, startedAt: null, unendedTakeUps: 0 })
     .where(held(run))
     .returning({ id: measuringRuns.id });
   return rows.length > 0;

@@ -209,12 +209,13 @@ export async function markInvitationAccepted(tx: Transaction, invitationId: stri
   return rows.length > 0;
 }
 
-/** Withdraws open invitations to an address, or one by id. Gives the ids withdrawn. */
-export async function withdrawInvitations(tx: Transaction, which: { email: string } | { id: string }): Promise<string[]> {
+/** Withdraws open invitations: to an address, by a person, or one by id. Gives the ids withdrawn. */
+export async function withdrawInvitations(tx: Transaction, which: { email: string } | { invitedBy: string } | { id: string }): Promise<string[]> {
+  const chosen = 'email' in which ? eq(invitations.email, which.email) : 'invitedBy' in which ? eq(invitations.invitedBy, which.invitedBy) : eq(invitations.id, which.id);
   const rows = await tx
     .update(invitations)
     .set({ withdrawnAt: sql`now()` })
-    .where(and(isOpen, 'email' in which ? eq(invitations.email, which.email) : eq(invitations.id, which.id)))
+    .where(and(isOpen, chosen))
     .returning({ id: invitations.id });
   return rows.map((row) => row.id);
 }
@@ -225,11 +226,13 @@ export async function findOrganisationName(tx: Transaction, organisationId: stri
   return rows[0]?.name;
 }
 
+/** Keeps a reset; false when it was there already. */
 export async function insertPasswordReset(
   tx: Transaction,
   reset: { id: string; userId: string; tokenHash: Buffer; expiresAt: Date },
-): Promise<void> {
-  await tx.insert(passwordResets).values(reset);
+): Promise<boolean> {
+  const rows = await tx.insert(passwordResets).values(reset).onConflictDoNothing({ target: passwordResets.id }).returning({ id: passwordResets.id });
+  return rows.length > 0;
 }
 
 export async function findPasswordReset(tx: Transaction, resetId: string): Promise<{ id: string; userId: string; expiresAt: Date } | undefined> {

@@ -35,6 +35,9 @@ export const workChannel = 'masswright_work';
 /** Channel on which PostgreSQL itself says that a session ended; its payload is the session's id. */
 export const sessionChannel = 'masswright_sessions';
 
+/** Channel on which PostgreSQL itself says that a session moved to another organisation; its payload is the session's id. */
+export const sessionMoveChannel = 'masswright_session_moves';
+
 export interface PublishedEvent {
   organisationId: string;
   event: ServerEvent;

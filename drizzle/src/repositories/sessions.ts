@@ -38,10 +38,10 @@ export async function findSessionByToken(tx: Transaction, tokenHash: Buffer): Pr
   return rows[0];
 }
 
-/** Whether a session still stands. Needs the scope of its person. */
-export async function doesSessionStand(tx: Transaction, sessionId: string): Promise<boolean> {
-  const rows = await tx.select({ id: sessions.id }).from(sessions).where(and(eq(sessions.id, sessionId), stands));
-  return rows.length > 0;
+/** The organisation that a session is in, if it still stands. Needs the scope of its person. */
+export async function findOrganisationOfSession(tx: Transaction, sessionId: string): Promise<string | undefined> {
+  const rows = await tx.select({ organisationId: sessions.organisationId }).from(sessions).where(and(eq(sessions.id, sessionId), stands));
+  return rows[0]?.organisationId;
 }
 
 /** Moves the idle limit on. Needs the scope of the token. */

@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm';
-import { and, eq } from 'drizzle-orm';
+import { and, eq, inArray, lt } from 'drizzle-orm';
 import { revisions, uploads } from '../schema';
 import type { Transaction } from '../tenancy/database';
 
@@ -49,6 +49,22 @@ export async function closeUpload(tx: Transaction, uploadId: string, state: 'sto
 
 export async function setUploadHash(tx: Transaction, uploadId: string, sha256: Buffer): Promise<void> {
   await tx.update(uploads).set({ sha256 }).where(eq(uploads.id, uploadId));
+}
+
+/** Uploads of every organisation that were begun so long ago and never completed. Needs the relay's scope. */
+export async function findAbandonedUploads(tx: Transaction, olderThanHours: number): Promise<{ id: string; organisationId: string; objectKey: string; multipartId: string }[]> {
+  return tx
+    .select({ id: uploads.id, organisationId: uploads.organisationId, objectKey: uploads.objectKey, multipartId: uploads.multipartId })
+    .from(uploads)
+    .where(and(eq(uploads.state, 'open'), lt(uploads.createdAt, sql`now() - ${`${olderThanHours} hours`}::interval`)))
+    .limit(200);
+}
+
+/** Which of the keys no upload knows. Needs the relay's scope. */
+export async function findUnknownKeys(tx: Transaction, keys: readonly string[]): Promise<string[]> {
+  const known = await tx.select({ key: uploads.objectKey }).from(uploads).where(inArray(uploads.objectKey, [...keys]));
+  const names = new Set(known.map(({ key }) => key));
+  return keys.filter((key) => !names.has(key));
 }
 
 /** The part that an upload became, if it did. */

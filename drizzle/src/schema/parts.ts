@@ -199,6 +199,8 @@ export const measuringRuns = pgTable(
     stage: text('stage').$type<MeasuringRun['stage']>().notNull().default('waiting'),
     progress: doublePrecision('progress').notNull().default(0),
     fence: integer('fence').notNull().default(0),
+    /** Take-ups since the last that had an orderly end: many in a row mean that the file kills whoever reads it. */
+    unendedTakeUps: integer('unended_take_ups').notNull().default(0),
     measurementId: uuid('measurement_id'),
     errorCode: text('error_code'),
     errorMessage: text('error_message'),

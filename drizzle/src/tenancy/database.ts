@@ -81,7 +81,9 @@ export class Database {
     client.on('error', onError);
     try {
       const result = await work(drizzle({ client, schema }));
-      await client.query('commit');
+      const { command } = await client.query('commit');
+      // PostgreSQL answers the commit of a failed transaction with a rollback, and without an error.
+      if (command !== 'COMMIT') throw new Error('The transaction had failed before its commit.');
       client.off('error', onError);
       client.release();
       return result;

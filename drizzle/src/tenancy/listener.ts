@@ -10,6 +10,9 @@ export interface ListenerOptions {
   onError?: (error: Error) => void;
 }
 
+/** A connection that a firewall or a failover has silently taken away looks well until it is asked. */
+const askEveryMs = 15_000;
+const answerWithinMs = 5_000;
 const firstPauseMs = 50;
 const longestPauseMs = 2_000;
 
@@ -39,12 +42,15 @@ export class Listener {
       application_name: this.options.applicationName,
       keepAlive: true,
       connectionTimeoutMillis: 5_000,
+      query_timeout: answerWithinMs,
     });
     this.client = client;
     let ended = false;
+    let asking: NodeJS.Timeout | undefined;
     const again = (error?: Error) => {
       if (ended) return;
       ended = true;
+      clearInterval(asking);
       if (error !== undefined) this.options.onError?.(error);
       client.end().catch(() => undefined);
       if (this.stopped) return;
@@ -58,6 +64,10 @@ export class Listener {
       await client.connect();
       for (const channel of this.options.channels) await client.query(`listen ${client.escapeIdentifier(channel)}`);
       this.pauseMs = firstPauseMs;
+      asking = setInterval(() => {
+        client.query('select 1').catch((error: unknown) => again(error instanceof Error ? error : new Error(String(error))));
+      }, askEveryMs);
+      asking.unref();
       this.options.onConnected();
     } catch (error) {
       again(error instanceof Error ? error : new Error(String(error)));

@@ -7,7 +7,7 @@ export const jobPayloads = {
   /** Send one mail; its link's token is derived, so neither the queue nor the outbox holds it. */
   'mail.send': z.discriminatedUnion('mail', [
     z.object({ mail: z.literal('invitation'), organisationId: z.uuid(), invitationId: z.uuid() }),
-    z.object({ mail: z.literal('password-reset'), userId: z.uuid(), passwordResetId: z.uuid() }),
+    z.object({ mail: z.literal('password-reset'), email: z.string(), passwordResetId: z.uuid() }),
   ]),
   /** Delete an object that nothing refers to any more, or give up an unfinished upload of it. */
   'object.delete': z.object({ objectKey: z.string(), multipartId: z.string().optional() }),

@@ -129,7 +129,7 @@ describe('mail', () => {
     const mails = await readInbox(email);
     expect(mails).toHaveLength(2);
     expect(mails[1]?.messageId).toBe(mails[0]?.messageId);
-    expect(first.messageId).toMatch(/^<outbox-\d+@127\.0\.0\.1>$/);
+    expect(first.messageId).toMatch(/^<invitation-[0-9a-f-]{36}@127\.0\.0\.1>$/);
     expect(mails.map(tokenIn)).toEqual([tokenIn(first), tokenIn(first)]);
   });
 
@@ -219,6 +219,34 @@ describe('members', () => {
       expect(left).toHaveLength(1);
       expect(answers.filter(({ status }) => status === 204)).toHaveLength(1);
     }
+  });
+
+  it('an administrator who was removed while they waited removes nobody any more', async () => {
+    const [first, second, third] = [api.visit(), api.visit(), api.visit()];
+    await first.signUp();
+    for (const person of [second, third]) {
+      const email = newAddress();
+      await first.expect('POST', '/invitations', { email, role: 'administrator' });
+      person.session = await person.expect<Session>('POST', '/invitations/acceptance', { as: 'new-person', token: tokenIn(await waitForMail(email)), name: 'P', password });
+    }
+    const id = (person: ApiUser) => person.session?.user.id ?? '';
+    const answers = await Promise.all([second.ask('DELETE', `/members/${id(first)}`), first.ask('DELETE', `/members/${id(second)}`), first.ask('DELETE', `/members/${id(third)}`)]);
+    const left = (await database.look<{ user_id: string }>('select user_id from memberships where organisation_id = $1', [first.session?.organisation.id])).map((row) => row.user_id);
+    if (answers[0]?.status === 204) {
+      // Whatever the first did before it was removed counts; after that nothing.
+      expect(left).toContain(id(second));
+      expect(left).not.toContain(id(first));
+    } else expect(left).toContain(id(first));
+    expect(left.length).toBe(3 - answers.filter(({ status }) => status === 204).length);
+  });
+
+  it('removed lose the invitations that they had sent', async () => {
+    const person = await join('administrator');
+    const second = newAddress();
+    await person.expect('POST', '/invitations', { email: second, role: 'administrator' });
+    const token = tokenIn(await waitForMail(second));
+    await administrator.expect('DELETE', `/members/${person.session?.user.id}`);
+    expect((await api.visit().ask('POST', '/invitations/lookup', { token })).status).toBe(410);
   });
 
   it('every change of people has its audit row', async () => {

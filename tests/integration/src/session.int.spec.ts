@@ -208,4 +208,18 @@ describe('switching organisation', () => {
     expect(moved.organisations.map(({ id }) => id).sort()).toEqual([home.id, foreign.id].sort());
     expect((await first.ask('POST', '/projects', { name: 'Mine' })).status).toBe(403);
   });
+
+  it('ends the event stream of the organisation that is left, and nothing of it is heard any more', async () => {
+    const [first, second] = [api.visit(), api.visit()];
+    await first.signUp();
+    const { organisation: other } = await second.signUp();
+    const project = await second.createProject();
+    await database.look(`insert into memberships (organisation_id, user_id, role) values ($1, $2, 'reader')`, [other.id, first.session?.user.id]);
+    await first.expect('PUT', '/session/organisation', { organisationId: other.id });
+    const stream = await listen(first);
+    await first.expect('PUT', '/session/organisation', { organisationId: first.session?.organisation.id });
+    await stream.ended;
+    await second.expect('PATCH', `/projects/${project.id}`, { name: 'Renamed meanwhile' });
+    expect(stream.events.map(({ type }) => type)).toEqual(['hello']);
+  });
 });

@@ -1,4 +1,5 @@
 import { randomUUID } from 'node:crypto';
+import net from 'node:net';
 import { sql } from 'drizzle-orm';
 import pg from 'pg';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
@@ -41,6 +42,42 @@ async function codeOf(promise: Promise<unknown>): Promise<string | undefined> {
     }
     return 'no code';
   }
+}
+
+/** A way to PostgreSQL on which connections break at the very moment when `begin` is sent. */
+async function startCuttingRelay(target: string) {
+  const { hostname, port } = new URL(target);
+  let begins = 0;
+  const sockets = new Set<net.Socket>();
+  const server = net.createServer((client) => {
+    const upstream = net.connect(Number(port), hostname);
+    for (const socket of [client, upstream]) {
+      sockets.add(socket);
+      socket.on('error', () => socket.destroy());
+      socket.on('close', () => {
+        client.destroy();
+        upstream.destroy();
+      });
+    }
+    client.on('data', (bytes) => {
+      if (begins > 0 && bytes.includes('begin')) {
+        begins -= 1;
+        client.destroy();
+      } else upstream.write(bytes);
+    });
+    upstream.pipe(client);
+  });
+  await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve));
+  const relayed = new URL(target);
+  relayed.port = String((server.address() as net.AddressInfo).port);
+  return {
+    url: relayed.href,
+    cutBegins: (count: number) => (begins = count),
+    close: () => {
+      server.close();
+      for (const socket of sockets) socket.destroy();
+    },
+  };
 }
 
 let first: Tenant;
@@ -148,12 +185,21 @@ describe('what looks past row-level security still stops at the organisation', (
 
 describe('the transaction wrapper', () => {
   it('gives its connection back when begin fails, however often', async () => {
-    const [row] = await testDatabase.look<{ pid: number }>(`select pid from pg_stat_activity where application_name = 'tenancy-test'`);
-    expect(row).toBeDefined();
-    for (let turn = 0; turn < 5; turn++) {
-      // The pooled connection dies while idle: the next begin on it fails.
-      await testDatabase.look(`select pg_terminate_backend(pid) from pg_stat_activity where application_name = 'tenancy-test'`);
-      await database.transaction(first, async (tx) => expect(await projectNames(tx)).toContain('Project of First'));
+    const relay = await startCuttingRelay(testDatabase.applicationUrl);
+    const cut = new Database({ url: relay.url, poolSize: 1, applicationName: 'cut-test', connectionTimeoutMs: 2_000 });
+    try {
+      for (let turn = 0; turn < 5; turn++) {
+        // One begin is cut: it is made again on a fresh connection. Two in a row: the caller is told.
+        relay.cutBegins(turn % 2 === 0 ? 1 : 2);
+        const names = cut.transaction(first, projectNames);
+        if (turn % 2 === 0) expect(await names).toContain('Project of First');
+        else await expect(names).rejects.toMatchObject({ name: 'DatabaseUnavailableError' });
+      }
+      // With a pool of one, a connection that was never given back would keep this one waiting.
+      expect(await cut.transaction(first, projectNames)).toContain('Project of First');
+    } finally {
+      await cut.close();
+      relay.close();
     }
   });
 
@@ -189,7 +235,7 @@ describe('the catalogue', () => {
     measurements: { may: ['SELECT', 'INSERT'], update: [] },
     measuring_runs: {
       may: ['SELECT', 'INSERT'],
-      update: ['state', 'stage', 'progress', 'fence', 'measurement_id', 'error_code', 'error_message', 'error_byte', 'error_line', 'started_at', 'finished_at'],
+      update: ['state', 'stage', 'progress', 'fence', 'unended_take_ups', 'measurement_id', 'error_code', 'error_message', 'error_byte', 'error_line', 'started_at', 'finished_at'],
     },
     memberships: { may: ['SELECT', 'INSERT', 'DELETE'], update: ['role'] },
     organisations: { may: ['SELECT', 'INSERT'], update: [] },

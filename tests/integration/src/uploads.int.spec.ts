@@ -196,8 +196,26 @@ describe('an upload', () => {
       } else {
         expect(cancelled.status).toBe(204);
         expect(completed.status).toBe(409);
+        const [row] = await database.look<{ key: string }>('select object_key as key from uploads where id = $1', [upload.id]);
+        await expect.poll(async () => (await database.look('select 1 from outbox where done_at is null')).length, { timeout: 10_000 }).toBe(0);
+        expect(await storage.headObject(row?.key ?? '')).toBeUndefined();
       }
     }
+  });
+});
+
+describe('what nobody came back to', () => {
+  it('is swept by a worker as it starts: the upload is cancelled, and the storage keeps nothing of it', async () => {
+    const upload = await engineer.send(projectId, 'left behind.stl', good);
+    const kept = await engineer.send(projectId, 'begun just now.stl', good);
+    await database.look(`update uploads set created_at = now() - interval '25 hours' where id = $1`, [upload.id]);
+    const sweeper = await startTestWorker(programEnvironment(database, Number(new URL(api.url).port)));
+    await expect.poll(async () => (await engineer.get<Upload>(`/uploads/${upload.id}`)).state, { timeout: 10_000 }).toBe('cancelled');
+    const keysInStorage = async () => (await storage.listMultipartUploads()).map(({ key }) => key);
+    const [row] = await database.look<{ key: string }>('select object_key as key from uploads where id = $1', [upload.id]);
+    await expect.poll(async () => (await keysInStorage()).includes(row?.key ?? ''), { timeout: 10_000 }).toBe(false);
+    expect((await engineer.get<Upload>(`/uploads/${kept.id}`)).state).toBe('open');
+    await sweeper.stop();
   });
 });
 
@@ -280,7 +298,7 @@ describe('settings', () => {
 
   it('can’t be nonsense', async () => {
     const part = await engineer.addMesh(projectId, 'nonsense.stl', good);
-    for (const change of [{ densityKgM3: -1 }, { densityKgM3: 1e9 }, { lengthUnit: 'parsec' }, { axis: { kind: 'typed', pointM: [0, 0, 0], direction: [0, 0, 0] } }, { drive: { speedRadPerS: 1, timeS: 0 } }]) {
+    for (const change of [{ densityKgM3: -1 }, { densityKgM3: 1e9 }, { lengthUnit: 'parsec' }, { axis: { kind: 'typed', pointM: [0, 0, 0], direction: [0, 0, 0] } }, { drive: { speedRadPerS: 1, timeS: 0 } }, { drive: { speedRadPerS: 1, timeS: 1e-320 } }, { axis: { kind: 'typed', pointM: [1e200, 0, 0], direction: [0, 0, 1] } }, { densityKgM3: 1e-300 }]) {
       expect((await engineer.ask('PATCH', `/parts/${part.id}/setting`, { version: 1, ...change })).status).toBe(422);
     }
   });

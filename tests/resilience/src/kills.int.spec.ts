@@ -181,6 +181,23 @@ describe('a worker held longer than its lock', () => {
   });
 });
 
+describe('a worker that was superseded', () => {
+  it('does not call the work done: should its successor die, the run is still taken up again', async () => {
+    const bytes = newMesh();
+    const upload = await user.send(projectId, 'superseded.stl', bytes);
+    const release = await stack.hold('lock table measurements in share row exclusive mode');
+    const part = await user.complete(upload.id);
+    await waitFor('the worker waits to insert', () => isSomeoneWaitingForLock('measurements'));
+    // Another has taken it up, as far as the first can see, and is still at it.
+    await stack.look(`update measuring_runs set fence = fence + 1 where revision_id = $1`, [part.revision.id]);
+    await release();
+    await waitFor('the first is refused', async () => (await stack.look(`select 1 from pg_stat_activity where wait_event_type = 'Lock' and application_name = 'masswright-worker'`)).length === 0);
+    // Nobody is at it any more: only the open row of the outbox brings it back.
+    await expectAllMeasured(stack, user, [{ partId: part.id, uploadId: upload.id, bytes }]);
+    expect((await runState(part.id))?.fence).toBe(3);
+  });
+});
+
 describe('twenty rounds of kills at random moments', () => {
   const victims = ['worker', 'redis', 'redis, flushed', 'postgres', 'api'] as const;
   const random = createRandom(seed);

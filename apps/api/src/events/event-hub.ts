@@ -2,7 +2,7 @@ import { Inject, Injectable, type OnApplicationBootstrap, type OnModuleDestroy }
 import type { Logger } from '@masswright/logs';
 import { z } from 'zod';
 import { serverEvent, type ServerEvent } from '@masswright/contracts';
-import { Database, doesSessionStand, eventChannel, Listener, sessionChannel } from '@masswright/drizzle';
+import { Database, eventChannel, findOrganisationOfSession, Listener, sessionChannel, sessionMoveChannel } from '@masswright/drizzle';
 import { InjectApiSettings, type ApiSettings } from '../platform/api-settings';
 import { InjectLogger } from '../platform/inject-logger';
 
@@ -33,8 +33,8 @@ export class EventHub implements OnApplicationBootstrap, OnModuleDestroy {
     this.listener = new Listener({
       url: settings.DATABASE_URL,
       applicationName: 'masswright-api-events',
-      channels: [eventChannel, sessionChannel],
-      onNotification: (channel, payload) => (channel === sessionChannel ? this.endSession(payload) : this.relay(payload)),
+      channels: [eventChannel, sessionChannel, sessionMoveChannel],
+      onNotification: (channel, payload) => this.hear(channel, payload),
       onConnected: () => void this.resynchronise(),
       onError: (error) => logger.warn({ err: error }, 'event connection lost'),
     });
@@ -65,6 +65,15 @@ export class EventHub implements OnApplicationBootstrap, OnModuleDestroy {
     return this.streams.size;
   }
 
+  private hear(channel: string, payload: string): void {
+    if (channel === eventChannel) this.relay(payload);
+    else for (const stream of this.streamsOf(payload)) if (channel === sessionChannel) this.signOut(stream); else this.drop(stream);
+  }
+
+  private streamsOf(sessionId: string): EventStream[] {
+    return [...this.streams].filter((stream) => stream.sessionId === sessionId);
+  }
+
   private relay(payload: string): void {
     const parsed = published.safeParse(JSON.parse(payload));
     if (!parsed.success) {
@@ -76,12 +85,13 @@ export class EventHub implements OnApplicationBootstrap, OnModuleDestroy {
     }
   }
 
-  private endSession(sessionId: string): void {
-    for (const stream of this.streams) if (stream.sessionId === sessionId) this.signOut(stream);
-  }
-
   private signOut(stream: EventStream): void {
     stream.send({ type: 'signed-out' });
+    this.drop(stream);
+  }
+
+  /** Ends a stream whose session is in another organisation now; the page opens one anew. */
+  private drop(stream: EventStream): void {
     stream.end();
     this.streams.delete(stream);
   }
@@ -93,12 +103,13 @@ export class EventHub implements OnApplicationBootstrap, OnModuleDestroy {
     }
   }
 
-  /** Whether a stream's session still stands; a stream whose session doesn't is ended. While the database can't say, it is left. */
+  /** Whether a stream's session still stands where the stream is; one whose session doesn't is ended. While the database can't say, it is left. */
   async checkSession(stream: EventStream): Promise<boolean> {
     try {
-      const stands = await this.database.transaction({ userId: stream.userId }, (tx) => doesSessionStand(tx, stream.sessionId));
-      if (!stands) this.signOut(stream);
-      return stands;
+      const organisationId = await this.database.transaction({ userId: stream.userId }, (tx) => findOrganisationOfSession(tx, stream.sessionId));
+      if (organisationId === undefined) this.signOut(stream);
+      else if (organisationId !== stream.organisationId) this.drop(stream);
+      return organisationId === stream.organisationId;
     } catch (error) {
       this.logger.warn({ err: error }, 'a stream’s session could not be checked');
       return true;

@@ -7,6 +7,7 @@ import { EventHub, type EventStream } from './event-hub';
 
 /** Often enough that no proxy takes a quiet stream for a dead one. */
 const heartbeatMs = 15_000;
+const mostUnreadBytes = 1_000_000;
 
 @ApiTags('events')
 @Controller('events')
@@ -22,16 +23,27 @@ export class EventsController {
     response.status(200).set({ 'Content-Type': 'text/event-stream', 'Cache-Control': 'no-store', 'X-Accel-Buffering': 'no' });
     response.flushHeaders();
     const { sessionId, userId, organisationId } = context;
+    const write = (text: string) => {
+      if (response.writableEnded || response.destroyed) return;
+      // A reader that doesn't read would have us keep everything for it; it can come back and read the state anew.
+      if (response.writableLength > mostUnreadBytes) response.destroy();
+      else response.write(text);
+    };
+    let heartbeat: NodeJS.Timeout | undefined;
     const stream: EventStream = {
       sessionId,
       userId,
       organisationId,
-      send: (event) => void response.write(`data: ${JSON.stringify(event)}\n\n`),
-      end: () => void response.end(),
+      send: (event) => write(`data: ${JSON.stringify(event)}\n\n`),
+      end: () => {
+        clearInterval(heartbeat);
+        response.end();
+      },
     };
+    response.on('error', () => response.destroy());
     const remove = this.hub.add(stream);
-    const heartbeat = setInterval(() => {
-      response.write(': still here\n\n');
+    heartbeat = setInterval(() => {
+      write(': still here\n\n');
       void this.hub.checkSession(stream);
     }, heartbeatMs);
     request.once('close', () => {

@@ -1,7 +1,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { z } from 'zod';
 import type { Member, Page, PageQuery, Role } from '@masswright/contracts';
-import { countAdministrators, deleteMembership, findMember, listMembers, lockAdministrators, publishEvent, setRole } from '@masswright/drizzle';
+import { countAdministrators, deleteMembership, findMember, listMembers, lockAdministrators, publishEvent, setRole, withdrawInvitations, type Transaction } from '@masswright/drizzle';
 import { notFound } from '../platform/app-error';
 import { decodeCursor, toPage } from '../platform/cursor';
 import type { SignedInContext } from '../platform/request-context';
@@ -26,12 +26,13 @@ export class PeopleService {
     return this.work.run(context, async (tx, actor) => {
       requireManagePeople(actor);
       const { organisationId } = context;
-      const administrators = await lockAdministrators(tx, organisationId);
+      const administrators = await this.lock(tx, context);
       const member = await findMember(tx, organisationId, userId);
       if (member === undefined) throw notFound('person');
       if (role !== 'administrator') requireNotLastAdministrator(member, administrators);
       if (member.role !== role) {
         await setRole(tx, organisationId, userId, role);
+        if (role !== 'administrator') await withdrawInvitations(tx, { invitedBy: userId });
         await audit(tx, context, { action: 'member.change-role', subject: { type: 'user', id: userId }, before: { role: member.role }, after: { role } });
         await publishEvent(tx, { organisationId, event: { type: 'people' } });
       }
@@ -44,13 +45,24 @@ export class PeopleService {
     return this.work.run(context, async (tx, actor) => {
       requireManagePeople(actor);
       const { organisationId } = context;
-      const administrators = await lockAdministrators(tx, organisationId);
+      const administrators = await this.lock(tx, context);
       const member = await findMember(tx, organisationId, userId);
       if (member === undefined) throw notFound('person');
       requireNotLastAdministrator(member, administrators);
+      // What they had offered to others, or to themselves under another address, goes with them.
+      await withdrawInvitations(tx, { invitedBy: userId });
       await deleteMembership(tx, organisationId, userId);
       await audit(tx, context, { action: 'member.remove', subject: { type: 'user', id: userId }, before: { role: member.role } });
       await publishEvent(tx, { organisationId, event: { type: 'people' } });
     });
+  }
+
+  /** Waits for others who change administrators, then looks again whether the person still is one: they may have been removed meanwhile. */
+  private async lock(tx: Transaction, { organisationId, userId }: SignedInContext): Promise<number> {
+    const administrators = await lockAdministrators(tx, organisationId);
+    const self = await findMember(tx, organisationId, userId);
+    if (self === undefined) throw notFound('person');
+    requireManagePeople(self);
+    return administrators;
   }
 }

@@ -1,9 +1,15 @@
 import helmet from 'helmet';
+import { findPublicOrigin } from '@masswright/storage';
 import type { ApiSettings } from './api-settings';
 
 /** The page may load from the app alone, and talk to it and to the storage; nobody may frame it. */
 export function securityHeaders(settings: ApiSettings) {
-  const storageOrigin = new URL(settings.S3_PUBLIC_ENDPOINT ?? settings.S3_ENDPOINT).origin;
+  const storageOrigin = findPublicOrigin({
+    endpoint: settings.S3_ENDPOINT,
+    publicEndpoint: settings.S3_PUBLIC_ENDPOINT,
+    bucket: settings.S3_BUCKET,
+    forcePathStyle: settings.S3_FORCE_PATH_STYLE,
+  });
   const isSecure = settings.PUBLIC_URL.startsWith('https:');
   return helmet({
     contentSecurityPolicy: {

@@ -112,6 +112,6 @@ export class SessionService {
 
   /** The token is rotated at every sign-in: the one that the browser had ends. */
   private async endFormer(context: RequestContext): Promise<void> {
-    if (context.sessionTokenHash !== undefined) await this.sessions.end(context.sessionTokenHash);
+    if (context.sessionTokenHash !== undefined) await this.sessions.end(context.sessionTokenHash, context.requestId);
   }
 }

@@ -1,6 +1,6 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { Response } from 'express';
-import { Database, deleteSession, findSessionByToken, insertSession, sweepSessionsOfUser, touchSession, type SessionRow, type Transaction } from '@masswright/drizzle';
+import { Database, deleteSession, findSessionByToken, insertSession, recordAudit, sweepSessionsOfUser, touchSession, type SessionRow, type Transaction } from '@masswright/drizzle';
 import { hashToken } from '@masswright/jobs';
 import { InjectApiSettings, type ApiSettings } from '../platform/api-settings';
 import { createSessionToken, setSessionCookie } from './session-cookie';
@@ -28,7 +28,7 @@ export class Sessions {
   }
 
   /**
-   * Begins a session under a new token and ends the one that the browser had. Needs the scope of the person in the organisation.
+   * Begins a session under a new token. Needs the scope of the person in the organisation.
    * The cookie is set by {@link handOver} once the transaction is committed.
    */
   async begin(tx: Transaction, who: { userId: string; organisationId: string }): Promise<string> {
@@ -48,10 +48,13 @@ export class Sessions {
   }
 
   /** Ends whatever session a token has. */
-  async end(tokenHash: Buffer): Promise<void> {
-    await this.database.transaction({ tokenHash }, async (tx) => {
-      const session = await findSessionByToken(tx, tokenHash);
-      if (session !== undefined) await deleteSession(tx, session.id);
+  async end(tokenHash: Buffer, requestId: string): Promise<void> {
+    const session = await this.database.transaction({ tokenHash }, (tx) => findSessionByToken(tx, tokenHash));
+    if (session === undefined) return;
+    const { userId, organisationId } = session;
+    await this.database.transaction({ userId, organisationId }, async (tx) => {
+      await deleteSession(tx, session.id);
+      await recordAudit(tx, { organisationId, actorId: userId, action: 'session.end', subject: { type: 'user', id: userId }, requestId });
     });
   }
 

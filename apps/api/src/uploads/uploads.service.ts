@@ -105,14 +105,18 @@ export class UploadsService {
     const upload = await this.read(context, uploadId, requireEdit);
     if (upload.state === 'cancelled') throw new AppError('conflict', 'This upload was cancelled. Add the file again.');
     if (upload.state === 'open') await this.completeObject(upload);
-    return this.work.run(context, async (tx, actor) => {
+    const completed = await this.work.run(context, async (tx, actor) => {
       requireEdit(actor);
       if (await closeUpload(tx, uploadId, 'stored')) return this.addPart(tx, context, actor, upload, request);
       const partId = await findPartOfUpload(tx, uploadId);
       const known = partId === undefined ? undefined : await findPart(tx, partId);
-      if (known === undefined) throw new AppError('conflict', 'This upload was cancelled. Add the file again.');
-      return presentPart(known, actor);
+      if (known !== undefined) return presentPart(known, actor);
+      // It was cancelled while the storage put the object together: then the object came after its deletion.
+      await this.discardObject(tx, context, upload);
+      return undefined;
     });
+    if (completed === undefined) throw new AppError('conflict', 'This upload was cancelled. Add the file again.');
+    return completed;
   }
 
   /** Cancelling twice is no error; what was sent is deleted by the worker. */
@@ -122,10 +126,13 @@ export class UploadsService {
       const upload = await getUpload(tx, uploadId);
       if (upload.state === 'stored') throw new AppError('conflict', 'This file is stored already; it is a part now.');
       if (!(await closeUpload(tx, uploadId, 'cancelled'))) return;
-      const { objectKey, multipartId } = upload;
-      await addToOutbox(tx, { organisationId: context.organisationId, job: 'object.delete', payload: { objectKey, multipartId }, requestId: context.requestId });
+      await this.discardObject(tx, context, upload);
       await audit(tx, context, { action: 'upload.cancel', subject: { type: 'upload', id: uploadId } });
     });
+  }
+
+  private discardObject(tx: Transaction, { organisationId, requestId }: SignedInContext, { objectKey, multipartId }: UploadRow): Promise<void> {
+    return addToOutbox(tx, { organisationId, job: 'object.delete', payload: { objectKey, multipartId }, requestId });
   }
 
   private async addPart(tx: Transaction, context: SignedInContext, actor: Actor, upload: UploadRow, request: CompleteUploadRequest): Promise<Part> {
@@ -163,7 +170,11 @@ export class UploadsService {
       await this.storage.completeMultipartUpload(objectKey, multipartId, parts);
     } catch (error) {
       // An earlier request may have completed it and died, or be completing it at this moment; then the object is there.
-      if (!(error instanceof ObjectStorageError) || error.code !== 'no-such-upload') throw error;
+      if (!(error instanceof ObjectStorageError)) throw error;
+      if (error.code === 'invalid-parts') {
+        throw new AppError('upload-incomplete', 'A part changed while the upload was completed. Complete it again.', {}, { cause: error });
+      }
+      if (error.code !== 'no-such-upload') throw error;
     }
     const object = await this.storage.headObject(objectKey);
     if (object?.sizeBytes !== sizeBytes) {

@@ -16,9 +16,12 @@ export class Mailer implements OnModuleDestroy {
     this.transport.close();
   }
 
-  /** The id is made of the outbox row: should a mail be sent twice, both are the same message to whoever receives them. */
-  async send(to: string, mail: Mail, outboxId: number): Promise<void> {
-    const messageId = `<outbox-${outboxId}@${new URL(this.settings.PUBLIC_URL).hostname}>`;
+  /**
+   * `reason` names what the mail is about, such as an invitation by its id: should a mail be sent twice, both have the same
+   * Message-ID and are the same message to whoever receives them.
+   */
+  async send(to: string, mail: Mail, reason: string): Promise<void> {
+    const messageId = `<${reason}@${new URL(this.settings.PUBLIC_URL).hostname}>`;
     await this.transport.sendMail({ to, ...mail, messageId });
   }
 }

@@ -9,19 +9,20 @@ import {
   keepMeasurement,
   noteProgress,
   publishEvent,
+  recordAudit,
   setUploadHash,
   takeRun,
   type TakenRun,
   type Transaction,
 } from '@masswright/drizzle';
 import type { JobPayload } from '@masswright/jobs';
-import { HandedBackError, TryAgainError, type JobContext } from '../queue/job-handlers';
+import { HandedBackError, SupersededError, TryAgainError, type JobContext } from '../queue/job-handlers';
 import { LatestOnly } from './latest-only';
 import type { MeasuringOutcome, MeasuringProgress } from './measure-object';
 import { MeasuringThreads } from './measuring-threads';
 
-/** A run taken up so often ends each time with the death of the process: then it is the file that kills it. */
-const mostTakeUps = 25;
+/** A run taken up so often without an orderly end ends each time with the death of the process: then it is the file that kills it. */
+const mostUnendedTakeUps = 25;
 const gaveUp: MeasuringError = {
   code: 'gave-up',
   message: 'Measuring this file was begun again and again and never came to an end. Export the mesh with fewer facets, or split it, and add it again.',
@@ -37,11 +38,6 @@ const readingShare = 0.8;
 
 type Held = TakenRun & { organisationId: string };
 
-/** Thrown inside a transaction to roll it back when another worker has taken the run up since. */
-class SupersededError extends Error {
-  override readonly name = 'SupersededError';
-}
-
 /** Measures a revision's file: takes the run up, has a thread stream the object, and keeps what came of it. */
 @Injectable()
 export class MeasuringHandler {
@@ -54,14 +50,14 @@ export class MeasuringHandler {
     const run = await this.takeUp(organisationId, runId);
     if (run === undefined) return;
     try {
-      if (run.fence > mostTakeUps) {
+      if (run.unendedTakeUps > mostUnendedTakeUps) {
         await this.refuse(run, null, gaveUp, context);
         return;
       }
       await this.settle(run, await this.measure(run, context), context);
     } catch (error) {
-      // Whoever took the run up after us does the rest.
-      if (error instanceof SupersededError) return;
+      // Whoever took the run up after us does the rest, and says so when it is done.
+      if (error instanceof SupersededError) throw error;
       await this.inOrganisation(run, (tx) => handBackRun(tx, run)).catch(() => undefined);
       if (context.signal.aborted) throw new HandedBackError('The process stops.', { cause: error });
       throw error;
@@ -97,7 +93,7 @@ export class MeasuringHandler {
   private async settle(run: Held, outcome: MeasuringOutcome, context: JobContext): Promise<void> {
     switch (outcome.kind) {
       case 'measured':
-        await this.keep(run, outcome);
+        await this.keep(run, outcome, context);
         return;
       case 'refused':
         await this.refuse(run, outcome.sha256, outcome.error, context);
@@ -108,28 +104,37 @@ export class MeasuringHandler {
     }
   }
 
-  private async keep(run: Held, { sha256, measurement }: Extract<MeasuringOutcome, { kind: 'measured' }>): Promise<void> {
+  private async keep(run: Held, { sha256, measurement }: Extract<MeasuringOutcome, { kind: 'measured' }>, { requestId }: JobContext): Promise<void> {
     const hash = Buffer.from(sha256);
     await this.inOrganisation(run, async (tx) => {
       await setUploadHash(tx, run.uploadId, hash);
       const measurementId = await keepMeasurement(tx, { organisationId: run.organisationId, sha256: hash, measurement });
       if (!(await finishRun(tx, run, measurementId))) throw new SupersededError();
+      await this.audit(tx, run, requestId, 'measurement.keep', { measurementId });
       await this.announce(tx, run, { state: 'done', stage: 'storing', progress: 1 });
     });
   }
 
-  /** The row keeps the reason; the bytes are of no use to anyone and are deleted. */
+  /** The row keeps the reason. The bytes of a file that is none are deleted; those that only we could not cope with are kept. */
   private async refuse(run: Held, sha256: Uint8Array | null, error: MeasuringError, { requestId }: JobContext): Promise<void> {
     await this.inOrganisation(run, async (tx) => {
       if (!(await failRun(tx, run, error))) throw new SupersededError();
       if (sha256 !== null) await setUploadHash(tx, run.uploadId, Buffer.from(sha256));
-      await addToOutbox(tx, { organisationId: run.organisationId, job: 'object.delete', payload: { objectKey: run.objectKey }, requestId });
+      if (error.code !== gaveUp.code && error.code !== fileMissing.code) {
+        await addToOutbox(tx, { organisationId: run.organisationId, job: 'object.delete', payload: { objectKey: run.objectKey }, requestId });
+      }
+      await this.audit(tx, run, requestId, 'measurement.refuse', { code: error.code });
       await this.announce(tx, run, { state: 'failed', stage: 'reading', progress: 1 });
     });
   }
 
   private inOrganisation<Result>(run: Held, work: (tx: Transaction) => Promise<Result>): Promise<Result> {
     return this.database.transaction({ organisationId: run.organisationId }, work);
+  }
+
+  /** The worker changed it, and nobody but the request that asked for it is behind that. */
+  private audit(tx: Transaction, run: Held, requestId: string, action: string, after: object): Promise<void> {
+    return recordAudit(tx, { organisationId: run.organisationId, actorId: null, action, subject: { type: 'revision', id: run.revisionId }, after, requestId });
   }
 
   private announce(tx: Transaction, run: Held, state: Pick<MeasuringRun, 'state' | 'stage' | 'progress'>): Promise<void> {

@@ -15,6 +15,11 @@ export class TryAgainError extends Error {
   override readonly name = 'TryAgainError';
 }
 
+/** Thrown by a handler whose work another has taken up since: the other's end counts, so nothing is noted. */
+export class SupersededError extends Error {
+  override readonly name = 'SupersededError';
+}
+
 /** Thrown by a handler that gave its work back because the process stops: it is handed out again at once. */
 export class HandedBackError extends Error {
   override readonly name = 'HandedBackError';

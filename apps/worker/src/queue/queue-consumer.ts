@@ -3,7 +3,7 @@ import { isWorkOpen, makeWorkDue, markWorkDone, type Database } from '@masswrigh
 import { isJobName, parseJobPayload, queuedJob, UnknownJobError, type JobName, type QueuedJob, type QueueName } from '@masswright/jobs';
 import type { Logger } from '@masswright/logs';
 import type { WorkerSettings } from '../platform/worker-settings';
-import { HandedBackError, type JobContext, type JobHandlers } from './job-handlers';
+import { HandedBackError, SupersededError, type JobContext, type JobHandlers } from './job-handlers';
 import { redisOptions } from './redis-connection';
 import { queuePrefix } from './work-queues';
 
@@ -28,6 +28,8 @@ export interface QueueConsumerOptions {
 export class QueueConsumer {
   private worker: Worker;
   private readonly stopping = new AbortController();
+  /** Workers that were replaced and have not ended yet. */
+  private readonly former = new Set<Promise<void>>();
   private lostAt: number | undefined;
   private readonly watch: NodeJS.Timeout;
 
@@ -41,7 +43,7 @@ export class QueueConsumer {
   async stop(patienceMs: number): Promise<void> {
     clearInterval(this.watch);
     const timer = setTimeout(() => this.stopping.abort(), patienceMs);
-    await this.worker.close().catch(() => undefined);
+    await Promise.all([this.worker.close().catch(() => undefined), ...this.former]);
     clearTimeout(timer);
   }
 
@@ -69,14 +71,16 @@ export class QueueConsumer {
   }
 
   private replaceIfLost(): void {
-    if (this.lostAt === undefined || Date.now() - this.lostAt < replaceAfterMs) return;
+    if (this.lostAt === undefined || Date.now() - this.lostAt < replaceAfterMs || this.former.size > 0) return;
     this.lostAt = undefined;
     const former = this.worker;
     if (former.isRunning() && !former.isPaused()) {
       this.options.logger.warn({ queue: this.options.queue }, 'the queue was lost for long; its worker is replaced');
     }
     this.worker = this.createWorker();
-    void former.close().catch(() => undefined);
+    const closing = former.close().catch(() => undefined);
+    this.former.add(closing);
+    void closing.finally(() => this.former.delete(closing));
   }
 
   private async process(job: Job): Promise<void> {
@@ -95,6 +99,10 @@ export class QueueConsumer {
       await database.transaction({ relay: true }, (tx) => markWorkDone(tx, outboxId));
       log.info({ durationMs: Math.round(performance.now() - begunAt) }, 'done');
     } catch (error) {
+      if (error instanceof SupersededError) {
+        log.info('another worker has taken it up');
+        return;
+      }
       const isHandedBack = error instanceof HandedBackError;
       log[isHandedBack ? 'info' : 'warn']({ err: error }, isHandedBack ? 'handed back' : 'failed; it will be tried again');
       await this.postpone(job, outboxId, isHandedBack ? 0 : this.pauseAfter(envelope.data.handedOut ?? 0), error).catch(() => undefined);

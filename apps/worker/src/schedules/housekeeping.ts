@@ -1,18 +1,20 @@
 import { Inject, Injectable, type OnApplicationBootstrap, type OnModuleDestroy } from '@nestjs/common';
 import { Database, forgetDoneWork, sweepAttempts } from '@masswright/drizzle';
 import type { Logger } from '@masswright/logs';
+import { AbandonedUploads } from './abandoned-uploads';
 import { InjectLogger } from '../platform/inject-logger';
 
 const everyMs = 3_600_000;
 const keepDoneWorkDays = 7;
 
-/** Forgets what nobody needs any more: outbox rows long done, counters whose time is over. Several workers may do it at once. */
+/** Forgets what nobody needs any more: outbox rows long done, counters whose time is over, abandoned uploads. Several workers may do it at once. */
 @Injectable()
 export class Housekeeping implements OnApplicationBootstrap, OnModuleDestroy {
   private timer: NodeJS.Timeout | undefined;
 
   constructor(
     @Inject(Database) private readonly database: Database,
+    @Inject(AbandonedUploads) private readonly abandonedUploads: AbandonedUploads,
     @InjectLogger() private readonly logger: Logger,
   ) {}
 
@@ -31,6 +33,7 @@ export class Housekeeping implements OnApplicationBootstrap, OnModuleDestroy {
         await forgetDoneWork(tx, keepDoneWorkDays);
         await sweepAttempts(tx);
       });
+      await this.abandonedUploads.sweep();
     } catch (error) {
       this.logger.warn({ err: error }, 'housekeeping failed; it comes again');
     }

@@ -1,0 +1,1 @@
+ALTER TABLE "measuring_runs" ADD COLUMN "unended_take_ups" integer DEFAULT 0 NOT NULL;
