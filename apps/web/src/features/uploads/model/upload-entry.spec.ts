@@ -89,6 +89,18 @@ describe('an upload', () => {
     expect(describeEntry(failed)).toBe('Could not be measured');
     expect(failed.part?.problem).toBe('It was cut off.');
   });
+  it('that is measured stays measured, though an answer from before arrives after', () => {
+    const done: UploadEvent = { type: 'run', partId: 'part-1', run: { state: 'done', stage: 'storing', progress: 1 } };
+    const late = pass(stored, done, { type: 'read', part: part('part-1') }, { type: 'run', partId: 'part-1', run: { state: 'running', stage: 'measuring', progress: 0.5 } });
+    expect(isSettled(late)).toBe(true);
+    expect(describeEntry(late)).toBe('Measured');
+  });
+  it('that could not be measured may still learn why', () => {
+    const read = part('part-1');
+    read.revision.run = { ...read.revision.run, state: 'failed', error: { code: 'file-truncated', message: 'It was cut off.', at: null } };
+    const failed: UploadEvent = { type: 'run', partId: 'part-1', run: { state: 'failed', stage: 'reading', progress: 0 } };
+    expect(pass(stored, failed, { type: 'read', part: read }, { type: 'read', part: part('part-1') }).part?.problem).toBe('It was cut off.');
+  });
   it('leaves the others, and their list, alone', () => {
     const list = [entry('a'), entry('b')];
     const next = changeEntries(list, { type: 'begun', key: 'b' });

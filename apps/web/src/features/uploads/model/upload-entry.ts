@@ -32,6 +32,8 @@ export type UploadEvent =
 
 const running: readonly UploadPhase[] = ['waiting', 'sending', 'storing'];
 
+const isOver = ({ state }: Pick<MeasuringRun, 'state'>): boolean => state === 'done' || state === 'failed';
+
 /** Still to be sent: leaving the page now would lose it. */
 export function isUnfinished(entry: UploadEntry): boolean {
   return running.includes(entry.phase);
@@ -40,12 +42,20 @@ export function isUnfinished(entry: UploadEntry): boolean {
 /** Nothing more will happen to it by itself. */
 export function isSettled(entry: UploadEntry): boolean {
   if (isUnfinished(entry)) return false;
-  return entry.phase !== 'stored' || entry.part?.run.state === 'done' || entry.part?.run.state === 'failed';
+  return entry.phase !== 'stored' || (entry.part !== undefined && isOver(entry.part.run));
 }
 
 function takePart({ id, revision }: Part): NonNullable<UploadEntry['part']> {
   const { state, stage, progress, error } = revision.run;
   return { id, run: { state, stage, progress }, problem: error?.message };
+}
+
+/** What was heard of a run takes the place of what was known, unless it was said before the end that is known already. */
+function takeNews(entry: UploadEntry, news: NonNullable<UploadEntry['part']>): UploadEntry {
+  const { part } = entry;
+  if (part?.id !== news.id) return entry;
+  if (isOver(part.run) && !isOver(news.run)) return entry;
+  return { ...entry, part: news };
 }
 
 /** What an event makes of an entry. What comes too late (progress of a cancelled file, say) changes nothing. */
@@ -68,9 +78,9 @@ function changeEntry(entry: UploadEntry, event: UploadEvent): UploadEntry {
     case 'tried-again':
       return entry.phase === 'failed' || entry.phase === 'cancelled' ? { ...entry, phase: 'waiting', sentBytes: 0, problem: undefined } : entry;
     case 'run':
-      return entry.part?.id === event.partId ? { ...entry, part: { ...entry.part, run: event.run } } : entry;
+      return takeNews(entry, { id: event.partId, run: event.run, problem: entry.part?.problem });
     case 'read':
-      return entry.part?.id === event.part.id ? { ...entry, part: takePart(event.part) } : entry;
+      return takeNews(entry, takePart(event.part));
   }
 }
 

@@ -3,6 +3,7 @@ import { createStore, useStore } from '../../../lib/store';
 import { readPartOfUpload } from '../api/uploads';
 import { changeEntries, isSettled, isUnfinished, type UploadEntry, type UploadEvent } from './upload-entry';
 import type { Transport } from './transport';
+import { createQuietWatch } from './quiet-watch';
 
 /** Lives outside of React: files go on being sent while a person moves about in the application. */
 const entries = createStore<readonly UploadEntry[]>([]);
@@ -106,6 +107,10 @@ entries.subscribe(() => {
   if (entries.get().some(isUnfinished)) addEventListener('beforeunload', askBeforeLeaving);
   else removeEventListener('beforeunload', askBeforeLeaving);
 });
+
+// An event can be lost and an answer can be old: what nothing more is heard of is asked about again.
+const quietWatch = createQuietWatch(readAgain);
+entries.subscribe(() => quietWatch.update(entries.get().flatMap((entry) => (entry.part && !isSettled(entry) ? [entry.part.id] : []))));
 
 export const useUploads = (): readonly UploadEntry[] => useStore(entries);
 export const useUnfinishedUploads = (): number => useUploads().filter(isUnfinished).length;
