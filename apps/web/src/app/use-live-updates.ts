@@ -1,8 +1,8 @@
 import type { ServerEvent } from '@masswright/contracts';
-import { useQueryClient, type QueryClient } from '@tanstack/react-query';
+import { useQueryClient, type QueryClient, type QueryKey } from '@tanstack/react-query';
 import { useEffect } from 'react';
 import { startBrowserStream } from '../features/events/model/browser-stream';
-import { createCoalescer } from '../features/events/model/coalesce';
+import { createCoalescer, type GatheredAction } from '../features/events/model/coalesce';
 import { applyRun, partKey, partsKey } from '../features/parts/api/parts';
 import { peopleKey } from '../features/people/api/people';
 import { projectKey, projectsKey } from '../features/projects/api/projects';
@@ -11,18 +11,28 @@ import { applyRunToUploads, readUploadsAgain } from '../features/uploads/model/u
 
 const gatherMs = 300;
 
+/**
+ * Reads again what is stale by now. A read under way is never broken off: while many parts arrive none would come to its end.
+ * It may have been answered before the change, though, so after it the same is read once more.
+ */
+async function readAnew(client: QueryClient, queryKey?: QueryKey): Promise<void> {
+  const underWay = client.isFetching({ queryKey }) > 0;
+  await client.invalidateQueries({ queryKey }, { cancelRefetch: false });
+  if (underWay) await client.invalidateQueries({ queryKey }, { cancelRefetch: false });
+}
+
 /** What each event makes the page read again. */
-function createEventHandler(client: QueryClient, coalesce: (key: string, action: () => void) => void): (event: ServerEvent) => void {
+function createEventHandler(client: QueryClient, coalesce: (key: string, action: GatheredAction) => void): (event: ServerEvent) => void {
   const readAgain = (...queryKey: readonly unknown[]): void => {
-    coalesce(JSON.stringify(queryKey), () => void client.invalidateQueries({ queryKey }));
+    coalesce(JSON.stringify(queryKey), () => readAnew(client, queryKey));
   };
   return (event) => {
     switch (event.type) {
       case 'hello':
       case 'resync':
         coalesce('everything', () => {
-          void client.invalidateQueries();
           readUploadsAgain();
+          return readAnew(client);
         });
         return;
       case 'signed-out':

@@ -12,6 +12,8 @@ import { ProjectNameDialog } from '../features/projects/components/project-name-
 import { useSignedIn } from '../features/session/api/session';
 import { AddMeshesDialog } from '../features/uploads/components/add-meshes-dialog';
 import { openUploadDialog } from '../features/uploads/model/dialog-state';
+import { isUnfinished } from '../features/uploads/model/upload-entry';
+import { useUploads } from '../features/uploads/model/upload-queue';
 import { countOf } from '../lib/plural';
 
 export function Component() {
@@ -45,7 +47,7 @@ function ProjectPage({ projectId }: { projectId: string }) {
           </>
         }
       />
-      <Parts projectId={projectId} add={add} />
+      <Parts projectId={projectId} add={add} isCountedEmpty={project.parts === 0} />
       <AddMeshesDialog projectId={projectId} />
       <ProjectNameDialog
         title="Rename the project"
@@ -61,11 +63,20 @@ function ProjectPage({ projectId }: { projectId: string }) {
   );
 }
 
-function Parts({ projectId, add }: { projectId: string; add: React.ReactNode }) {
+interface PartsProps {
+  projectId: string;
+  add: React.ReactNode;
+  /** What the project itself says; the list may be older than that. */
+  isCountedEmpty: boolean;
+}
+
+function Parts({ projectId, add, isCountedEmpty }: PartsProps) {
+  const isSending = useUploads().some((entry) => entry.projectId === projectId && (isUnfinished(entry) || entry.phase === 'stored'));
   const { data, error, refetch, hasNextPage, fetchNextPage, isFetchingNextPage } = useParts(projectId);
   if (error && !data) return <Failure error={error} onRetry={() => void refetch()} />;
   if (!data) return <Loading what="the parts" />;
   const rows = data.pages.flatMap((page) => page.items);
+  if (rows.length === 0 && (!isCountedEmpty || isSending)) return <Loading what="the parts" />;
   if (rows.length === 0) {
     return (
       <section className="no-parts">
