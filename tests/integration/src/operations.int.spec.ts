@@ -57,7 +57,7 @@ describe('health', () => {
   it('is live and ready apart from each other: without its database the api lives and is not ready', async () => {
     const process = await startApiProcess(database, { DATABASE_URL: 'postgres://masswright_app:x@127.0.0.1:1/none' });
     const status = async (which: string) => (await fetch(`${process.url}/api/health/${which}`).catch(() => undefined))?.status;
-    for (let turn = 0; turn < 100 && (await status('live')) !== 200; turn++) await new Promise((resolve) => setTimeout(resolve, 50));
+    for (let turn = 0; turn < 400 && (await status('live')) !== 200; turn++) await new Promise((resolve) => setTimeout(resolve, 50));
     expect(await status('live')).toBe(200);
     expect(await status('ready')).toBe(503);
     process.child.kill('SIGTERM');
@@ -96,7 +96,7 @@ describe('metrics', () => {
 describe('logs', () => {
   it('carry one request id through api, outbox and job, and neither file names, tokens nor addresses', async () => {
     const process = await startApiProcess(database);
-    for (let turn = 0; turn < 100; turn++) {
+    for (let turn = 0; turn < 400; turn++) {
       if ((await fetch(`${process.url}/api/health/live`).catch(() => undefined))?.ok === true) break;
       await new Promise((resolve) => setTimeout(resolve, 50));
     }

@@ -29,7 +29,10 @@ export class EventsController {
       if (response.writableLength > mostUnreadBytes) response.destroy();
       else response.write(text);
     };
-    let heartbeat: NodeJS.Timeout | undefined;
+    const heartbeat = setInterval(() => {
+      write(': still here\n\n');
+      void this.hub.checkSession(stream);
+    }, heartbeatMs);
     const stream: EventStream = {
       sessionId,
       userId,
@@ -42,10 +45,6 @@ export class EventsController {
     };
     response.on('error', () => response.destroy());
     const remove = this.hub.add(stream);
-    heartbeat = setInterval(() => {
-      write(': still here\n\n');
-      void this.hub.checkSession(stream);
-    }, heartbeatMs);
     request.once('close', () => {
       clearInterval(heartbeat);
       remove();
