@@ -1,12 +1,14 @@
-import type { StatementRecord } from '@masswright/contracts';
+import type { Axis, StatementRecord } from '@masswright/contracts';
 import { computeAxisMoment, resolveAxis } from '@masswright/mechanics';
 import { fromSi, type Quantity } from '@masswright/units';
+import { useState } from 'react';
 import { ChoiceBar } from '../../../components/choice-bar';
 import { Figure } from '../../../components/figure';
 import { Notice } from '../../../components/notice';
 import { axisChoices, computeAxis, describeAxis, findChoice } from '../model/axis-choice';
 import { describeAxes, isAxisUnique } from '../model/axes-words';
 import { chooseDisplayUnit } from '../model/display-units';
+import { isSameAxis } from '../model/setting-difference';
 import type { SettingEditor, SettingEditorState } from '../model/setting-editor';
 import { DriveFields } from './drive-fields';
 import { Fact, Section, sectionNames } from './section';
@@ -70,6 +72,13 @@ interface AxisSectionProps {
 export function AxisSection({ statement, canEdit, editor, state }: AxisSectionProps) {
   const { axis, drive } = state.draft;
   const { axes, aboutAxis } = statement;
+  /** The axis that was set when its fields stopped to be one. A change from elsewhere writes them anew. */
+  const [unreadable, setUnreadable] = useState<Axis>();
+  const isUnreadable = unreadable !== undefined && isSameAxis(unreadable, axis);
+  const setAxis = (next: Axis): void => {
+    setUnreadable(undefined);
+    editor.change({ axis: next });
+  };
   const ambiguous = axis.kind === 'principal' && axes && !isAxisUnique(axes, axis.number);
   return (
     <Section name={sectionNames.axis}>
@@ -79,17 +88,17 @@ export function AxisSection({ statement, canEdit, editor, state }: AxisSectionPr
             label="Axis"
             choices={axisChoices}
             value={findChoice(axis)}
-            onChange={(choice) => editor.change({ axis: computeAxis(choice, axis, statement) })}
+            onChange={(choice) => setAxis(computeAxis(choice, axis, statement))}
           />
-          {axis.kind === 'typed' && <TypedAxisFields axis={axis} onChange={(typed) => editor.change({ axis: typed })} />}
+          {axis.kind === 'typed' && <TypedAxisFields axis={axis} onChange={setAxis} onUnreadable={() => setUnreadable(axis)} />}
         </div>
       )}
-      <AxisFigures statement={statement} state={state} />
+      {isUnreadable ? <p>Mend the axis first: a moment is about an axis.</p> : <AxisFigures statement={statement} state={state} />}
       {ambiguous && <p className="soft">{describeAxes(axes)}</p>}
-      {aboutAxis && (
-        <div className="drive">
+      {aboutAxis && (canEdit || drive) && (
+        <div className={drive ? 'drive' : 'drive screen-only'}>
           <h3>Drive</h3>
-          <DriveFields drive={drive} inertiaKgM2={aboutAxis.inertiaKgM2} canEdit={canEdit} onChange={(typed) => editor.change({ drive: typed })} />
+          <DriveFields drive={drive} inertiaKgM2={isUnreadable ? undefined : aboutAxis.inertiaKgM2} canEdit={canEdit} onChange={(typed) => editor.change({ drive: typed })} />
           <Notice tone="doubt">
             <p>
               What turns stores energy, and gives it back at once when it meets a hand. These figures size a drive; they do not make it safe. Assess the risk

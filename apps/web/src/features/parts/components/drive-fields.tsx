@@ -15,25 +15,25 @@ function Shown({ quantity, value }: { quantity: Quantity; value: number }) {
   return <Figure value={fromSi(value, unit)} unit={unit.symbol} digits={digits} />;
 }
 
-function Outcome({ inertiaKgM2, drive }: { inertiaKgM2: number; drive: Drive }) {
+/** What a drive comes to; dashes while there is none, or no moment, that the figures could belong to. */
+function Outcome({ inertiaKgM2, drive }: { inertiaKgM2: number | undefined; drive: Drive | null }) {
+  const figures =
+    drive && inertiaKgM2 !== undefined
+      ? { torque: computeTorque(inertiaKgM2, drive), energy: computeStoredEnergy(inertiaKgM2, drive.speedRadPerS) }
+      : undefined;
   return (
     <dl className="facts drive-outcome">
       <div className="fact">
         <dt>Torque</dt>
         <dd>
-          <b>
-            <Shown quantity="torque" value={computeTorque(inertiaKgM2, drive)} />
-          </b>{' '}
+          <b>{figures ? <Shown quantity="torque" value={figures.torque} /> : '–'}</b>{' '}
           <span className="soft">for this part alone, at an even acceleration from rest; friction, load and the rest of the drive come on top</span>
         </dd>
       </div>
       <div className="fact">
         <dt>Stored energy</dt>
         <dd>
-          <b>
-            <Shown quantity="energy" value={computeStoredEnergy(inertiaKgM2, drive.speedRadPerS)} />
-          </b>{' '}
-          <span className="soft">at that speed</span>
+          <b>{figures ? <Shown quantity="energy" value={figures.energy} /> : '–'}</b> <span className="soft">at that speed</span>
         </dd>
       </div>
     </dl>
@@ -42,7 +42,8 @@ function Outcome({ inertiaKgM2, drive }: { inertiaKgM2: number; drive: Drive }) 
 
 interface DriveFieldsProps {
   drive: Drive | null;
-  inertiaKgM2: number;
+  /** About the axis that is shown; none while its fields can't be read. */
+  inertiaKgM2: number | undefined;
   canEdit: boolean;
   onChange: (drive: Drive | null) => void;
 }
@@ -73,19 +74,21 @@ export function DriveFields({ drive, inertiaKgM2, canEdit, onChange }: DriveFiel
       </>
     ) : null;
   }
+  const isSpeedEmpty = texts.speed.trim() === '';
+  const isTimeEmpty = texts.time.trim() === '';
   // One field that is still empty is not yet a mistake.
-  const error = (texts.speed.trim() !== '' && read.speedError) || (texts.time.trim() !== '' && read.timeError);
+  const error = (!isSpeedEmpty && read.speedError) || (!isTimeEmpty && read.timeError);
   return (
     <>
       <div className="drive-fields">
         <span>From rest to</span>
         <span className="drive-field">
-          <NumberInput label="Speed in r/min" text={texts.speed} error={texts.speed.trim() === '' ? undefined : read.speedError} onChange={(speed) => commit({ ...texts, speed })} />
+          <NumberInput label="Speed in r/min" text={texts.speed} error={isSpeedEmpty ? undefined : read.speedError} onChange={(speed) => commit({ ...texts, speed })} />
           <span className="unit">r/min</span>
         </span>
         <span>in</span>
         <span className="drive-field">
-          <NumberInput label="Time in s" text={texts.time} error={texts.time.trim() === '' ? undefined : read.timeError} width={84} onChange={(time) => commit({ ...texts, time })} />
+          <NumberInput label="Time in s" text={texts.time} error={isTimeEmpty ? undefined : read.timeError} width={84} onChange={(time) => commit({ ...texts, time })} />
           <span className="unit">s</span>
         </span>
       </div>
@@ -94,7 +97,13 @@ export function DriveFields({ drive, inertiaKgM2, canEdit, onChange }: DriveFiel
           {error}
         </p>
       )}
-      {drive && <Outcome inertiaKgM2={inertiaKgM2} drive={drive} />}
+      {!error && isSpeedEmpty !== isTimeEmpty && (
+        <p role="status" className="soft">
+          Give a speed and a time.
+        </p>
+      )}
+      {/* What can be read is the drive at once; while the fields can't be read, the drive is still the one before them. */}
+      {!(isSpeedEmpty && isTimeEmpty) && <Outcome inertiaKgM2={inertiaKgM2} drive={read.drive ? drive : null} />}
     </>
   );
 }

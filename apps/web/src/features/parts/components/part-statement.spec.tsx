@@ -143,6 +143,38 @@ describe('the statement of a part', () => {
     for (const standard of ['ISO 12100', 'ISO 14120', 'ISO 14119']) expect(axis).toContain(standard);
   });
 
+  it('shows a torque only for what the fields say', () => {
+    const editor = open(block, { setting: { ...metal, drive: { speedRadPerS: 31.41592653589793, timeS: 0.5 } } });
+    const axis = section('Axis and torque');
+    expect(text(axis)).toContain('0.11027 N·mm');
+    fireEvent.change(screen.getByLabelText('Speed in r/min'), { target: { value: '' } });
+    expect(text(axis)).not.toContain('N·mm');
+    expect(text(axis)).toContain('Give a speed and a time.');
+    fireEvent.change(screen.getByLabelText('Speed in r/min'), { target: { value: 'fast' } });
+    expect(text(axis)).not.toContain('N·mm');
+    fireEvent.change(screen.getByLabelText('Speed in r/min'), { target: { value: '' } });
+    fireEvent.change(screen.getByLabelText('Time in s'), { target: { value: '' } });
+    expect(editor.get().draft.drive).toBeNull();
+    expect(text(axis)).not.toContain('Torque');
+  });
+
+  it('shows no moment while the typed axis is none', () => {
+    open(block, { setting: { ...metal, axis: { kind: 'typed', pointM: [0, 0, 0], direction: [0, 0, 1] }, drive: { speedRadPerS: 10, timeS: 1 } } });
+    const axis = section('Axis and torque');
+    fireEvent.change(screen.getByLabelText('Direction z'), { target: { value: '0' } });
+    expect(text(axis)).toContain('Mend the axis first');
+    expect(text(axis)).not.toMatch(/kg·mm²|N·mm|mJ/);
+    fireEvent.change(screen.getByLabelText('Direction x'), { target: { value: '1' } });
+    expect(text(axis)).toContain('kg·mm²');
+    expect(text(axis)).not.toContain('Mend');
+  });
+
+  it('has no heading of a drive, and no caution about one, where there is none and none can be given', () => {
+    open(block, { edit: false });
+    expect(text(section('Axis and torque'))).not.toContain('Drive');
+    expect(text(section('Axis and torque'))).not.toContain('ISO 12100');
+  });
+
   it('shows no figure of an open mesh, and says why and what to do', () => {
     open(openBlock);
     expect(text(section('Soundness'))).toContain('Open: not defensible');

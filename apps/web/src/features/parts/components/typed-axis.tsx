@@ -20,8 +20,15 @@ function readVector(texts: Texts): { vector: Vector3; error?: undefined } | { ve
   return { vector: [x.value, y.value, z.value] };
 }
 
+interface TypedAxisFieldsProps {
+  axis: TypedAxis;
+  onChange: (axis: TypedAxis) => void;
+  /** What is typed is no axis; the one given in is then not what the fields say. */
+  onUnreadable: () => void;
+}
+
 /** A point and a direction as numbers; they count as soon as all six are numbers and the direction is one. */
-export function TypedAxisFields({ axis, onChange }: { axis: TypedAxis; onChange: (axis: TypedAxis) => void }) {
+export function TypedAxisFields({ axis, onChange, onUnreadable }: TypedAxisFieldsProps) {
   const unit = chooseDisplayUnit('length', 0);
   const writePoint = (pointM: Vector3): Texts => writeVector(pointM, (element) => writeNumber(fromSi(element, unit)));
   const [shown, setShown] = useState(axis);
@@ -43,7 +50,10 @@ export function TypedAxisFields({ axis, onChange }: { axis: TypedAxis; onChange:
     setDirection(directions);
     const { vector: pointRead } = readVector(points);
     const { vector: directionRead } = readVector(directions);
-    if (!pointRead || !directionRead || directionRead.every((element) => element === 0)) return;
+    if (!pointRead || !directionRead || directionRead.every((element) => element === 0)) {
+      onUnreadable();
+      return;
+    }
     const next: TypedAxis = { kind: 'typed', pointM: [toSi(pointRead[0], unit), toSi(pointRead[1], unit), toSi(pointRead[2], unit)], direction: directionRead };
     setShown(next);
     onChange(next);
