@@ -47,7 +47,7 @@ function PartPage({ part }: { part: Part }) {
         }
         actions={part.can.edit && <Button onClick={() => setRenaming(true)}>Rename</Button>}
       />
-      <PartStatement part={part} editor={editor} state={state} />
+      <PartStatement part={part} editor={editor} state={state} ownName={session.user.name} />
       <RenamePartDialog part={part} isOpen={renaming} onClose={() => setRenaming(false)} />
     </>
   );

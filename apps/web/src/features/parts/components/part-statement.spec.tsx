@@ -61,7 +61,7 @@ function makePart(measurement: Measurement | null, setting: Setting, edit: boole
 }
 
 function Page({ part, editor }: { part: Part; editor: SettingEditor }) {
-  return <PartStatement part={part} editor={editor} state={useStore(editor)} />;
+  return <PartStatement part={part} editor={editor} state={useStore(editor)} ownName="Ines Marsh" />;
 }
 
 function open(measurement: Measurement | null, { setting = metal, edit = true }: { setting?: Setting; edit?: boolean } = {}): SettingEditor {
@@ -71,6 +71,7 @@ function open(measurement: Measurement | null, { setting = metal, edit = true }:
     save: ({ version, ...change }) => Promise.resolve({ ...stored, ...change, version: version + 1 }),
     reload: () => Promise.resolve(stored),
     isStale: () => false,
+    isPassing: () => false,
     describe: String,
   });
   render(<Page part={part} editor={editor} />);

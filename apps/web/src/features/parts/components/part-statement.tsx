@@ -16,13 +16,14 @@ interface PartStatementProps {
   part: Part;
   editor: SettingEditor;
   state: SettingEditorState;
+  ownName: string;
 }
 
 /**
  * The statement of a part: what the worker measured, under the setting as the person has it now. Every change of the setting
  * is computed here with the same function that the server records with.
  */
-export function PartStatement({ part, editor, state }: PartStatementProps) {
+export function PartStatement({ part, editor, state, ownName }: PartStatementProps) {
   const { revision, can } = part;
   const { measurement, fileName, sha256, run } = revision;
   const { draft } = state;
@@ -50,7 +51,7 @@ export function PartStatement({ part, editor, state }: PartStatementProps) {
             ))}
           </ol>
         </nav>
-        {can.edit && run.state !== 'failed' && <SaveStatus editor={editor} state={state} />}
+        {can.edit && run.state !== 'failed' && <SaveStatus editor={editor} state={state} ownName={ownName} />}
       </aside>
       <article className="statement" aria-label="Statement">
         <SourceSection part={part} editor={editor} state={state} />

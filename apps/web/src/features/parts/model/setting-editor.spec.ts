@@ -39,6 +39,7 @@ class Server {
       save: this.save,
       reload: () => Promise.resolve(this.stored),
       isStale: (error) => error instanceof StaleError,
+      isPassing: (error) => error instanceof OfflineError,
       describe: (error) => (error instanceof Error ? error.message : 'unknown'),
     });
   }
@@ -141,6 +142,46 @@ describe('setting editor', () => {
     await pass(100);
     expect(editor.get().status).toBe('saved');
     expect(server.stored.densityKgM3).toBe(7850);
+  });
+
+  it('what could not be saved is tried again by itself, after longer and longer pauses', async () => {
+    server.offline = true;
+    editor.change({ densityKgM3: 7850 });
+    await pass(500);
+    expect(editor.get()).toMatchObject({ status: 'failed', isAtRisk: true });
+    await pass(2_100);
+    expect(server.requests).toHaveLength(2);
+    await pass(3_000);
+    expect(server.requests).toHaveLength(2);
+    server.offline = false;
+    await pass(1_100);
+    expect(editor.get()).toMatchObject({ status: 'saved', isAtRisk: false });
+    expect(server.stored.densityKgM3).toBe(7850);
+    await pass(120_000);
+    expect(server.requests).toHaveLength(3);
+  });
+
+  it('a change that the server refuses is not sent again by itself', async () => {
+    const save = vi.fn(() => Promise.reject(new Error('That is no density.')));
+    const refused = createSettingEditor(server.stored, { save, reload: () => Promise.resolve(server.stored), isStale: () => false, isPassing: () => false, describe: String });
+    refused.change({ densityKgM3: 1 });
+    await pass(120_000);
+    expect(save).toHaveBeenCalledTimes(1);
+    expect(refused.get()).toMatchObject({ status: 'failed', isAtRisk: true });
+  });
+
+  it('what was undone can be done again, until something else is changed', async () => {
+    editor.change({ densityKgM3: 7850 });
+    await pass(2_000);
+    editor.undo();
+    expect(editor.get()).toMatchObject({ draft: { densityKgM3: 2700 }, canUndo: false, canRedo: true });
+    editor.redo();
+    await pass(2_000);
+    expect(server.stored.densityKgM3).toBe(7850);
+    expect(editor.get()).toMatchObject({ canUndo: true, canRedo: false });
+    editor.undo();
+    editor.change({ lengthUnit: 'inch' });
+    expect(editor.get().canRedo).toBe(false);
   });
 
   it('when someone else was first, their setting is shown and mine is kept to put back', async () => {

@@ -2,14 +2,17 @@ import type { Part } from '@masswright/contracts';
 import { useQueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import { useStore } from '../../../lib/store';
-import { getSentence, isProblem } from '../../../lib/problem';
+import { getSentence, isProblem, isWorthAnotherTry } from '../../../lib/problem';
 import { changeSetting, keepPart, partKey, readPart } from '../api/parts';
 import { createSettingEditor, type SettingEditor, type SettingEditorState } from './setting-editor';
 
-/** The keys by which people everywhere take back their last change; within a text field they belong to the text. */
-function isUndoKey(event: KeyboardEvent): boolean {
-  const inText = event.target instanceof HTMLInputElement && !['radio', 'checkbox'].includes(event.target.type);
-  return (event.ctrlKey || event.metaKey) && !event.shiftKey && !event.altKey && event.key.toLowerCase() === 'z' && !inText;
+const isText = (target: EventTarget | null): boolean =>
+  target instanceof HTMLTextAreaElement || (target instanceof HTMLInputElement && !['radio', 'checkbox'].includes(target.type));
+
+/** The keys by which people everywhere take back their last change, and do it again; within a text field they belong to the text. */
+function findStep(event: KeyboardEvent): 'undo' | 'redo' | undefined {
+  if (!(event.ctrlKey || event.metaKey) || event.altKey || event.key.toLowerCase() !== 'z' || isText(event.target)) return undefined;
+  return event.shiftKey ? 'redo' : 'undo';
 }
 
 /** The editor of one part's setting, for as long as its page is open. */
@@ -27,24 +30,37 @@ export function useSettingEditor(part: Part): { editor: SettingEditor; state: Se
         return now.revision.setting;
       },
       isStale: (error) => isProblem(error, 'stale-version'),
+      isPassing: isWorthAnotherTry,
       describe: getSentence,
     }),
   );
   const stored = part.revision.setting;
   useEffect(() => editor.adopt(stored), [editor, stored]);
   useEffect(() => {
-    const undo = (event: KeyboardEvent): void => {
-      if (!isUndoKey(event) || !editor.get().canUndo) return;
+    const takeStep = (event: KeyboardEvent): void => {
+      const step = findStep(event);
+      if (!step) return;
+      // Otherwise the browser would undo in a text field that was left long ago.
       event.preventDefault();
-      editor.undo();
+      editor[step]();
     };
-    document.addEventListener('keydown', undo);
+    document.addEventListener('keydown', takeStep);
     addEventListener('pagehide', editor.flush);
+    addEventListener('online', editor.retry);
     return () => {
-      document.removeEventListener('keydown', undo);
+      document.removeEventListener('keydown', takeStep);
       removeEventListener('pagehide', editor.flush);
+      removeEventListener('online', editor.retry);
       editor.flush();
     };
   }, [editor]);
-  return { editor, state: useStore(editor) };
+  const state = useStore(editor);
+  const { isAtRisk } = state;
+  useEffect(() => {
+    if (!isAtRisk) return;
+    const askBeforeLeaving = (event: BeforeUnloadEvent): void => event.preventDefault();
+    addEventListener('beforeunload', askBeforeLeaving);
+    return () => removeEventListener('beforeunload', askBeforeLeaving);
+  }, [isAtRisk]);
+  return { editor, state };
 }
