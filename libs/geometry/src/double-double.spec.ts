@@ -3,8 +3,8 @@ import { describe, expect, it } from 'vitest';
 import { add, createRegisters, differ, divide, multiply, put, round, squareRoot, subtract, type Registers } from './double-double';
 import { toNumber } from './testing/exact-integrals';
 
-/** A number of some hundred bits: a multiple of 2⁻¹⁰⁰⁰ as an integer. */
-const shift = 1000n;
+/** A number as an integer multiple of 2⁻¹¹⁰⁰: the least that binary64 has is 2⁻¹⁰⁷⁴. */
+const shift = 1100n;
 function toBig(value: number): bigint {
   let scaled = value;
   let power = 0;
