@@ -24,7 +24,16 @@ describe('figures on the page', () => {
     }
   });
   it('a figure without a fraction leaves the place of the point free too', () => {
-    const { container } = render(<AlignedFigure value={123456} digits={4} fractionDigits={2} />);
+    const { container } = render(<AlignedFigure value={12345} digits={4} fractionDigits={2} />);
     expect(roomOf(container)).toBe(3);
+  });
+  it('of a column have no more digits than the others when they are large', () => {
+    const { container } = render(<AlignedFigure value={1234567} digits={4} fractionDigits={2} />);
+    expect(container.textContent).toBe('1.235×10^6');
+  });
+  it('with a power of ten are set with ordinary digits, and read as a power where they are copied', () => {
+    const { container } = render(<Figure value={1.5e-12} unit="kg·m²" digits={3} />);
+    expect(container.textContent).toBe('1.50×10^-12 kg·m²');
+    expect(container.querySelector('sup')?.textContent).toBe('^-12');
   });
 });

@@ -15,15 +15,17 @@ export function readDensity(text: string): TypedDensity {
   return { densityKgM3: parsed.value };
 }
 
+const withUnit = (densityKgM3: number, digits: number): string => `${Number(densityKgM3.toPrecision(digits))} kg/m³`;
+const isSameText = (one: string, other: string): boolean => one.replace(/\s|\^/g, '').replace('m3', 'm³') === other.replace(/\s/g, '');
+
 /** What was understood; nothing where the text says it in the same words already. */
 export function describeDensity(densityKgM3: number, text: string): string {
   const plain = writeDensity(densityKgM3);
-  if (text.replace(/\s|\^/g, '').replace('m3', 'm³') === plain.replace(/\s/g, '')) return '';
+  if (isSameText(text, plain) || isSameText(text, withUnit(densityKgM3, 15))) return '';
   return `= ${plain}`;
 }
 
-/** A density as it is typed and shown: all the digits that were given, none that were not. */
+/** A density for the eye: six digits, since those of a conversion go on for ever. What is stored stays as it is. */
 export function writeDensity(densityKgM3: number | null): string {
-  if (densityKgM3 === null) return '';
-  return `${Number(densityKgM3.toPrecision(12))} kg/m³`;
+  return densityKgM3 === null ? '' : withUnit(densityKgM3, 6);
 }

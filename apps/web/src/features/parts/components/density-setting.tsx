@@ -21,6 +21,8 @@ export function DensitySetting({ densityKgM3, onChange }: DensitySettingProps) {
     setText(writeDensity(densityKgM3));
   }
   const commit = (typed: string, finished: boolean): void => {
+    // Fewer digits are shown than are stored: what nobody has changed is not to be stored with fewer.
+    if (typed === writeDensity(densityKgM3)) return;
     const { densityKgM3: read } = readDensity(typed);
     if (read === undefined || (read === null && !finished)) return;
     setShown(read);

@@ -116,6 +116,16 @@ describe('the statement of a part', () => {
     expect(editor.get().draft.densityKgM3).toBe(7850);
   });
 
+  it('leaves the digits of a density alone that its field does not show', () => {
+    const editor = open(block, { setting: { ...metal, densityKgM3: 2712.6306616 } });
+    const density = screen.getByLabelText<HTMLInputElement>('Density');
+    expect(density.value).toBe('2712.63 kg/m³');
+    fireEvent.focus(density);
+    fireEvent.blur(density);
+    fireEvent.keyDown(density, { key: 'Enter' });
+    expect(editor.get().draft.densityKgM3).toBe(2712.6306616);
+  });
+
   it('takes an undone density back into its field', () => {
     open(block);
     fireEvent.change(screen.getByLabelText('Density'), { target: { value: '7.85 g/cm3' } });

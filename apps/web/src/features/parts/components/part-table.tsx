@@ -91,10 +91,10 @@ export function PartTable({ rows }: { rows: readonly PartRow[] }) {
             <th scope="col" className="numeric">
               Mass <span className="unit">{mass.symbol}</span>
             </th>
-            {['₁', '₂', '₃'].map((index) => (
+            {[1, 2, 3].map((index) => (
               <th key={index} scope="col" className="numeric">
                 <span className="unit">
-                  <b className="part-moment">I{index}</b> {inertia.symbol}
+                  <b className="part-moment">I<sub>{index}</sub></b> {inertia.symbol}
                 </span>
               </th>
             ))}

@@ -1,5 +1,6 @@
 import type { StatementRecord, Vector3 } from '@masswright/contracts';
 import { fromSi } from '@masswright/units';
+import { PowerText } from '../../../components/figure';
 import { createGroupFormat, formatDecimals } from '../../../lib/fixed-figure';
 import { describeAxes, isAxisUnique } from '../model/axes-words';
 import { chooseDisplayUnit } from '../model/display-units';
@@ -40,7 +41,11 @@ export function PrincipalTable({ principal }: { principal: Principal }) {
               <span className="unit">radius of gyration, {length.symbol}</span>
             </th>
             <th scope="col">
-              <span className="unit">direction x, y, z</span>
+              <span className="unit principal-direction">
+                {(['x', 'y', 'z'] as const).map((letter) => (
+                  <span key={letter}>{letter === 'x' ? `direction ${letter}` : letter}</span>
+                ))}
+              </span>
             </th>
           </tr>
         </thead>
@@ -50,8 +55,8 @@ export function PrincipalTable({ principal }: { principal: Principal }) {
               <th scope="row">
                 <span className={`axis-numeral axis-numeral-${number}`}>{number}</span>
               </th>
-              <td className="figure figure-main">{formatMoment(shownMoments[number - 1] ?? 0)}</td>
-              <td className="figure">{formatRadius(shownRadii[number - 1] ?? 0)}</td>
+              <td className="figure figure-main"><PowerText text={formatMoment(shownMoments[number - 1] ?? 0)} /></td>
+              <td className="figure"><PowerText text={formatRadius(shownRadii[number - 1] ?? 0)} /></td>
               <td className="figure principal-direction">
                 {isAxisUnique(kind, number) ? (
                   (axes[number - 1] ?? []).map((component, index) => <span key={index}>{formatDecimals(component, directionDecimals)}</span>)

@@ -1,4 +1,5 @@
 import type { Soundness } from '@masswright/contracts';
+import { formatCount } from '@masswright/units';
 import { StatusTag } from '../../../components/status-tag';
 import { describeEdges, describeFinding, describeVerdict } from '../model/soundness-words';
 import { Fact, Section, sectionNames } from './section';
@@ -29,8 +30,8 @@ export function SoundnessSection({ soundness }: { soundness: Soundness }) {
                   {finding.facets.length > 0 && (
                     <span className="soft">
                       {' '}
-                      Facet{finding.facets.length > 1 && 's'} <span className="figure">{finding.facets.slice(0, 6).join(', ')}</span>
-                      {finding.facets.length > 6 && ' …'}, counted from 0.
+                      Facet{finding.facets.length > 1 && 's'} <span className="figure">{finding.facets.slice(0, 6).map((facet) => formatCount(facet + 1)).join(', ')}</span>
+                      {finding.facets.length > 6 && ' …'}, counted from 1.
                     </span>
                   )}
                 </li>

@@ -1,4 +1,4 @@
-import type { Axis, StatementRecord } from '@masswright/contracts';
+import type { Axis, StatementRecord, Vector3 } from '@masswright/contracts';
 import { resolveAxis, type Line } from '@masswright/mechanics';
 import type { Choice } from '../../../components/choice-bar';
 
@@ -25,8 +25,17 @@ export function findChoice(axis: Axis): AxisChoice {
   }
 }
 
+/** To a millionth of the body, in decimal millimetres: the digits behind are the noise of the integral, and would stand in fields. */
+function roundPoint(pointM: Vector3, { min, max }: StatementRecord['boundingBoxM']): Vector3 {
+  const sizeMm = Math.max(...max.map((end, index) => end - (min[index] ?? 0))) * 1000;
+  const decimals = sizeMm > 0 ? Math.min(20, Math.max(0, 5 - Math.floor(Math.log10(sizeMm)))) : 20;
+  // Adding 0 takes the sign off a zero.
+  const round = (element: number): number => Number((element * 1000).toFixed(decimals)) / 1000 + 0;
+  return [round(pointM[0]), round(pointM[1]), round(pointM[2])];
+}
+
 /** The axis that a choice means. A typed one begins as the axis that was shown before, so that nothing jumps. */
-export function computeAxis(choice: AxisChoice, before: Axis, statement: Pick<StatementRecord, 'centreOfMassM' | 'principalAxes'>): Axis {
+export function computeAxis(choice: AxisChoice, before: Axis, statement: Pick<StatementRecord, 'boundingBoxM' | 'centreOfMassM' | 'principalAxes'>): Axis {
   switch (choice) {
     case 'x':
     case 'y':
@@ -40,7 +49,7 @@ export function computeAxis(choice: AxisChoice, before: Axis, statement: Pick<St
       return { kind: 'principal', number: 3 };
     case 'typed': {
       const line = resolveAxis(before, statement);
-      return { kind: 'typed', pointM: line?.pointM ?? [0, 0, 0], direction: line?.direction ?? [0, 0, 1] };
+      return { kind: 'typed', pointM: line ? roundPoint(line.pointM, statement.boundingBoxM) : [0, 0, 0], direction: line?.direction ?? [0, 0, 1] };
     }
   }
 }

@@ -1,4 +1,5 @@
 import type { MeasuringRun } from '@masswright/contracts';
+import { formatCount } from '@masswright/units';
 
 const stageWords: Record<MeasuringRun['stage'], string> = {
   waiting: 'Waiting for its turn',
@@ -18,7 +19,7 @@ export function describeRun({ state, stage, progress }: Pick<MeasuringRun, 'stat
 
 /** Where in a file something went wrong; a person looks for it with a hex viewer or an editor. */
 export function describePlace(at: NonNullable<MeasuringRun['error']>['at']): string | undefined {
-  if (at?.line !== undefined) return `line ${at.line}`;
-  if (at?.byte !== undefined) return `byte ${at.byte}`;
+  if (at?.line !== undefined) return `line ${formatCount(at.line)}`;
+  if (at?.byte !== undefined) return `byte ${formatCount(at.byte)}`;
   return undefined;
 }

@@ -10,7 +10,7 @@ export function describeVerdict(soundness: Verdict): { tone: Tone; word: string;
   if (!soundness.closed) return { tone: 'wrong', word: 'Open', words: 'Open: not defensible' };
   if (!soundness.oriented) return { tone: 'wrong', word: 'Mixed winding', words: 'Closed, but wound both ways: not defensible' };
   if (!soundness.defensible) return { tone: 'wrong', word: 'No volume', words: 'Closed, but without volume: not defensible' };
-  if (soundness.turned) return { tone: 'doubt', word: 'Closed, turned', words: 'Closed and oriented, turned inside out' };
+  if (soundness.turned) return { tone: 'doubt', word: 'Closed, turned', words: 'Closed and oriented; it was inside out and was turned' };
   return { tone: 'agreement', word: 'Closed', words: 'Closed, oriented, outward' };
 }
 
