@@ -7,6 +7,7 @@ import { countOf } from '../lib/plural';
 import { useSignedIn, useSignOut, useSwitchOrganisation } from '../features/session/api/session';
 import { computeInitials } from '../features/session/model/initials';
 import { useUnfinishedUploads, stopUploads } from '../features/uploads/model/upload-queue';
+import { openKeysDialog } from './keys-dialog-state';
 import { noteSignOut } from './sign-out';
 import { chooseTheme, useThemeChoice, type ThemeChoice } from './theme';
 
@@ -78,6 +79,9 @@ export function AccountMenu() {
         </p>
         <ChoiceBar label="Theme" choices={themeChoices} value={theme} onChange={chooseTheme} />
       </section>
+      <Button variant="minimal" className="account-keys" onClick={openKeysDialog}>
+        Keys <kbd>?</kbd>
+      </Button>
       <Button onClick={() => ask({ kind: 'sign-out' })}>Sign out</Button>
     </div>
   );
@@ -85,7 +89,7 @@ export function AccountMenu() {
 
   return (
     <>
-      <PopoverNext content={panel} placement="bottom-end" animation="minimal" arrow={false}>
+      <PopoverNext content={panel} placement="bottom-end" animation="minimal" arrow={false} popoverClassName="account-popover">
         <Button variant="minimal" className="band-who" aria-label={`${initials}: account of ${session.user.name}`}>
           {initials}
         </Button>

@@ -7,6 +7,7 @@ import { useSession } from '../features/session/api/session';
 import type { SignInState } from '../features/session/model/where-next';
 import { UploadTray } from '../features/uploads/components/upload-tray';
 import { AccountMenu } from './account-menu';
+import { KeysDialog } from './keys-dialog';
 import { findSignOutSentence } from './sign-out';
 import { useLiveUpdates } from './use-live-updates';
 import './shell.css';
@@ -53,6 +54,7 @@ function Shell({ organisationId }: { organisationId: string }) {
           <Outlet />
         </main>
         <UploadTray />
+        <KeysDialog />
       </div>
     </CrumbPlace>
   );
