@@ -4,7 +4,7 @@ import { noteSignIn } from '../app/sign-out';
 import { Loading } from '../components/loading';
 import { Notice } from '../components/notice';
 import { ProblemNotice } from '../components/problem-notice';
-import { useInvitation } from '../features/session/api/session';
+import { useInvitation, useSession } from '../features/session/api/session';
 import { InvitationForm } from '../features/session/components/invitation-form';
 import { parseLinkToken } from '../features/session/model/link-token';
 import { roleTexts } from '../lib/role-texts';
@@ -13,6 +13,7 @@ import { isWorthAnotherTry } from '../lib/problem';
 export function Component() {
   const navigate = useNavigate();
   const { hash } = useLocation();
+  const { data: session } = useSession();
   const [link] = useState(() => parseLinkToken(hash));
   const { data: invitation, error, isLoading, refetch } = useInvitation(link.token);
   const done = (): void => {
@@ -39,7 +40,7 @@ export function Component() {
         </>
       )}
       <nav className="front-door-links" aria-label="Other ways in">
-        <Link to="/sign-in">Sign in instead</Link>
+        {session ? <Link to="/">All projects</Link> : <Link to="/sign-in">Sign in instead</Link>}
       </nav>
     </section>
   );
