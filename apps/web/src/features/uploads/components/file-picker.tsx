@@ -1,6 +1,7 @@
 import { Button } from '@blueprintjs/core';
 import { useRef, useState, type DragEvent } from 'react';
 import { formatBytes } from '../../../lib/format-bytes';
+import { countOf } from '../../../lib/plural';
 
 interface FilePickerProps {
   files: readonly File[];
@@ -48,6 +49,11 @@ export function FilePicker({ files, onAdd, onRemove }: FilePickerProps) {
           }}
         />
       </div>
+      {files.length > 1 && (
+        <p className="soft file-count">
+          {countOf(files.length, 'file')}, {formatBytes(files.reduce((sum, { size }) => sum + size, 0))}
+        </p>
+      )}
       {files.length > 0 && (
         <ul className="file-list" aria-label="Chosen files" tabIndex={0}>
           {files.map((file, index) => (
