@@ -16,7 +16,7 @@ export function Crumbs({ crumbs }: { crumbs: readonly Crumb[] }) {
   return createPortal(
     <ol className="crumbs">
       {crumbs.map((crumb, index) => (
-        <li key={`${index} ${crumb.label}`} aria-current={index === crumbs.length - 1 ? 'page' : undefined}>
+        <li key={`${index} ${crumb.label}`} title={crumb.label.length > 30 ? crumb.label : undefined} aria-current={index === crumbs.length - 1 ? 'page' : undefined}>
           {crumb.to ? <Link to={crumb.to}>{crumb.label}</Link> : <span>{crumb.label}</span>}
         </li>
       ))}

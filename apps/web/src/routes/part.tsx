@@ -5,6 +5,7 @@ import { useParams } from 'react-router-dom';
 import { Failure } from '../components/failure';
 import { Loading } from '../components/loading';
 import { Crumbs, PageHeading } from '../components/page';
+import { PrintLine } from '../components/print-line';
 import { usePart } from '../features/parts/api/parts';
 import { PartStatement } from '../features/parts/components/part-statement';
 import { RenamePartDialog } from '../features/parts/components/rename-part-dialog';
@@ -47,6 +48,10 @@ function PartPage({ part }: { part: Part }) {
         }
         actions={part.can.edit && <Button onClick={() => setRenaming(true)}>Rename</Button>}
       />
+      <PrintLine>
+        {session.organisation.name}, {part.projectName}, part {part.number}, revision {part.revision.letter}, setting version {state.saved.version}
+        {state.status !== 'saved' && ' with changes that are not saved'}
+      </PrintLine>
       <PartStatement part={part} editor={editor} state={state} ownName={session.user.name} />
       <RenamePartDialog part={part} isOpen={renaming} onClose={() => setRenaming(false)} />
     </>

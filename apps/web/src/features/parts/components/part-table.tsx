@@ -8,6 +8,9 @@ import { describeRun } from '../model/run-words';
 import { describeVerdict } from '../model/soundness-words';
 import './part-table.css';
 
+/** Longer names are cut after two lines of it. */
+const nameLetters = 60;
+
 /** What a mesh gives no figures for, in the place where they would stand. */
 function findReason(row: PartRow): string | undefined {
   const { run, setting } = row.revision;
@@ -72,7 +75,7 @@ export function PartTable({ rows }: { rows: readonly PartRow[] }) {
   const fractions = computeColumnFractions(figures);
   const { length, mass, inertia } = listUnits;
   return (
-    <div className="table-frame" role="region" aria-label="Parts" tabIndex={0}>
+    <div className="table-frame part-table-frame" role="region" aria-label="Parts" tabIndex={0}>
       <table className="table part-table">
         <caption className="hidden-visually">
           Parts with mass in {mass.symbol} and principal moments in {inertia.symbol} about each centre of mass
@@ -83,6 +86,7 @@ export function PartTable({ rows }: { rows: readonly PartRow[] }) {
               No.
             </th>
             <th scope="col">Part</th>
+            <th scope="col">Mesh</th>
             <th scope="col">Rev</th>
             <th scope="col">Unit</th>
             <th scope="col" className="numeric">
@@ -98,7 +102,6 @@ export function PartTable({ rows }: { rows: readonly PartRow[] }) {
                 </span>
               </th>
             ))}
-            <th scope="col">Mesh</th>
           </tr>
         </thead>
         <tbody>
@@ -106,8 +109,13 @@ export function PartTable({ rows }: { rows: readonly PartRow[] }) {
             <tr key={row.id}>
               <td className="numeric figure soft">{row.number}</td>
               <th scope="row">
-                <Link to={`/projects/${row.projectId}/parts/${row.id}`}>{row.name}</Link>
+                <Link to={`/projects/${row.projectId}/parts/${row.id}`} title={row.name.length > nameLetters ? row.name : undefined}>
+                  {row.name}
+                </Link>
               </th>
+              <td>
+                <SoundnessCell row={row} />
+              </td>
               <td className="figure">{row.revision.letter}</td>
               <td>
                 {row.revision.setting.lengthUnit ? (
@@ -117,9 +125,6 @@ export function PartTable({ rows }: { rows: readonly PartRow[] }) {
                 )}
               </td>
               <FigureCells row={row} figures={figures[index] ?? computeRowFigures(row)} fractions={fractions} />
-              <td>
-                <SoundnessCell row={row} />
-              </td>
             </tr>
           ))}
         </tbody>
