@@ -1,5 +1,6 @@
 import type { PartRow } from '@masswright/contracts';
 import { formatFigure, getLengthUnit } from '@masswright/units';
+import { Fragment } from 'react';
 import { Link } from 'react-router-dom';
 import { AlignedFigure } from '../../../components/figure';
 import { StatusTag } from '../../../components/status-tag';
@@ -32,7 +33,16 @@ function FigureCells({ row, figures, fractions }: { row: PartRow; figures: RowFi
   const { size, mass, moments } = figures;
   return (
     <>
-      <td className="numeric figure part-size">{size ? size.map((extent) => formatFigure(extent, { digits: listDigits })).join(' × ') : '–'}</td>
+      <td className="numeric figure part-size">
+        {size
+          ? size.map((extent, index) => (
+              <Fragment key={index}>
+                {index > 0 && ' × '}
+                <span className="part-extent">{formatFigure(extent, { digits: listDigits })}</span>
+              </Fragment>
+            ))
+          : '–'}
+      </td>
       {mass === null || !moments ? (
         <td colSpan={4} className="part-reason">
           {row.soundness?.defensible ? 'State the density: without it there is no mass.' : 'No figures: the mesh has no inside that could be defended.'}
