@@ -1,7 +1,7 @@
 // npm start, npm run dev: everything on this machine, from a fresh clone to a page in the browser. Built-ins only until `npm ci` has run.
 import { ServiceFailure, wrongEnvironment } from './services/index.mjs';
 import { chooseDataFolder, describeFallback } from './setup/data-folder.mjs';
-import { Obstacle } from './setup/checkout.mjs';
+import { Obstacle, root } from './setup/checkout.mjs';
 import { ensureDebianPackages } from './setup/debian-packages.mjs';
 import { ensureNodePackages } from './setup/node-packages.mjs';
 import { checkDisk, checkPorts } from './setup/room.mjs';
@@ -58,6 +58,8 @@ async function startServices(settings, runNotes) {
 const describeServices = (services) => Object.values(services).flatMap((service) => service?.name ?? []).join(', ') || 'all elsewhere';
 
 async function start() {
+  // First of all: without room an installation would fail in words that are not ours.
+  checkDisk(root);
   const local = { postgres: !process.env.DATABASE_URL, redis: !process.env.REDIS_URL };
   await stage(
     'System packages',
