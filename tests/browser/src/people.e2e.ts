@@ -93,6 +93,9 @@ describe('inviting a colleague', () => {
     const { page } = await stage.openBrowser();
     await page.goto('/sign-in');
     await page.getByRole('link', { name: /forgotten/i }).click();
+    // Both pages have a field for the address; the next one must be there before it is filled in.
+    await page.waitForURL('**/forgotten-password');
+    await page.getByLabel('Password').waitFor({ state: 'detached' });
     await page.getByLabel('E-mail').fill(user.email);
     await page.keyboard.press('Enter');
     await page.getByText(/on its way/).waitFor();
