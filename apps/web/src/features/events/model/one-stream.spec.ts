@@ -165,4 +165,19 @@ describe('one event stream a browser', () => {
     tab.stop();
     expect(browser.openSources).toHaveLength(1);
   });
+
+  it('a tab that is stopped in the very moment when its lock is granted lets the lock go', async () => {
+    let grant: (() => Promise<void>) | undefined;
+    const openSource = vi.fn();
+    const locks: NonNullable<OneStreamParts['locks']> = {
+      request: (_name, _options, callback) => {
+        grant = callback;
+        return new Promise(() => undefined);
+      },
+    };
+    const channel: Channel = { onmessage: null, postMessage: () => undefined, close: () => undefined };
+    startOneStream('stream', { locks, openChannel: () => channel, openSource, onEvent: () => undefined })();
+    await grant?.();
+    expect(openSource).not.toHaveBeenCalled();
+  });
 });

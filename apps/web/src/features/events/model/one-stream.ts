@@ -78,6 +78,11 @@ export function startOneStream(name: string, parts: OneStreamParts): () => void 
   };
   const lead = (): Promise<void> =>
     new Promise((resolve) => {
+      // The lock may be granted in the very moment of stopping; who is stopped must let it go, or no tab ever hears an event again.
+      if (stopping.signal.aborted) {
+        resolve();
+        return;
+      }
       stopping.signal.addEventListener('abort', () => resolve());
       keepSource(
         parts.openSource,
