@@ -10,10 +10,12 @@ describe('a typed density', () => {
     expect(readDensity('  ')).toEqual({ densityKgM3: null });
   });
   it('without a unit is refused: 2.7 could be grams to the cubic centimetre or kilograms to the cubic metre', () => {
-    expect(readDensity('2.7').error).toBeTruthy();
+    expect(readDensity('2.7').error).toMatch(/unit/i);
+    expect(readDensity('2.7').densityKgM3).toBeUndefined();
   });
   it('of nothing or of more than any material has is refused', () => {
     expect(readDensity('0 g/cm3').error).toContain('greater than 0');
+    expect(readDensity('1e-9 kg/m3').error).toContain('at least');
     expect(readDensity('2700 g/cm3').error).toContain('Check the unit');
   });
   it('is repeated in kg/m³ where it was typed otherwise, and only there', () => {

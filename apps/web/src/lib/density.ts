@@ -11,6 +11,7 @@ export function readDensity(text: string): TypedDensity {
   const parsed = parseQuantity(text, 'density');
   if ('error' in parsed) return { error: parsed.error };
   if (!(parsed.value > 0)) return { error: 'A density is greater than 0.' };
+  if (parsed.value < 1e-6) return { error: 'A density is at least 0.000001 kg/m³.' };
   if (parsed.value > greatestKgM3) return { error: `A density of ${formatFigure(parsed.value, { digits: 4 })} kg/m³ is more than any material has. Check the unit.` };
   return { densityKgM3: parsed.value };
 }

@@ -21,7 +21,7 @@ describe('soundness in words', () => {
   it('an open mesh is called open, and is refused with why and what to do', () => {
     expect(describeVerdict(open)).toMatchObject({ tone: 'wrong', word: 'Open' });
     expect(findRefusal(open)?.why).toContain('open at 4 edges');
-    expect(findRefusal(open)?.remedy).toBeTruthy();
+    expect(findRefusal(open)?.remedy).toContain('Close the gap');
   });
   it('a sound mesh is not refused', () => {
     expect(describeVerdict(sound)).toMatchObject({ tone: 'agreement', word: 'Closed' });

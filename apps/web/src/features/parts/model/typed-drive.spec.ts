@@ -16,7 +16,8 @@ describe('a typed drive', () => {
   });
   it('of no time or of impossible speed is refused', () => {
     expect(readDrive({ speed: '300', time: '0' }).timeError).toContain('greater than 0');
-    expect(readDrive({ speed: '1e9', time: '1' }).speedError).toBeTruthy();
+    expect(readDrive({ speed: '300', time: '1e-9' }).timeError).toContain('microsecond');
+    expect(readDrive({ speed: '1e9', time: '1' }).speedError).toContain('faster than anything turns');
   });
   it('is written as it was typed', () => {
     const typed = { speed: '1500', time: '0.4' };

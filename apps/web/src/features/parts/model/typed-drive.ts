@@ -17,7 +17,7 @@ export function readDrive({ speed, time }: DriveTexts): ReadDrive {
   const speedRead = parseQuantity(speed, 'angularSpeed', { bareUnit: 'r/min' });
   const timeRead = parseQuantity(time, 'time', { bareUnit: 's' });
   const speedError = 'error' in speedRead ? speedRead.error : Math.abs(speedRead.value) > 1e6 ? 'This is faster than anything turns.' : undefined;
-  const timeError = 'error' in timeRead ? timeRead.error : !(timeRead.value > 0) ? 'A time is greater than 0.' : timeRead.value > 1e9 ? 'This is longer than anything runs up.' : undefined;
+  const timeError = 'error' in timeRead ? timeRead.error : !(timeRead.value > 0) ? 'A time is greater than 0.' : timeRead.value < 1e-6 ? 'A time is at least a microsecond.' : timeRead.value > 1e9 ? 'This is longer than anything runs up.' : undefined;
   if (speedError !== undefined || timeError !== undefined || 'error' in speedRead || 'error' in timeRead) return { speedError, timeError };
   return { drive: { speedRadPerS: speedRead.value, timeS: timeRead.value } };
 }
