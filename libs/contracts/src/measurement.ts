@@ -1,8 +1,15 @@
 import { z } from 'zod';
 import { symmetric3, vector3 } from './common';
 
-export const meshFormat = z.enum(['stl-binary', 'stl-ascii']);
+export const meshFormat = z.enum(['stl-binary', 'stl-ascii', 'obj']);
 export type MeshFormat = z.infer<typeof meshFormat>;
+
+/** How the stored file wraps the mesh. */
+export const meshCompression = z.enum(['gzip']);
+export type MeshCompression = z.infer<typeof meshCompression>;
+/** How the file was packed, where it was. */
+export const meshCompression = z.enum(['gzip']);
+export type MeshCompression = z.infer<typeof meshCompression>;
 
 /** Something noticed in a mesh: a fact that a reader of the figures should know, with how often it occurs. */
 export const finding = z.object({
@@ -18,6 +25,7 @@ export const finding = z.object({
     'several-solids',
     'nonzero-attributes',
     'contradicting-normals',
+    'non-planar-polygons',
   ]),
   count: z.number().int().nonnegative(),
   /** Indices (from 0, in the order of the file) of some of the facets concerned, at most 20. */
@@ -72,6 +80,7 @@ export type Integrals = z.infer<typeof integrals>;
 export const measurement = z.object({
   measuringVersion: z.string(),
   format: meshFormat,
+  compression: meshCompression.nullable(),
   facets: z.number().int().positive(),
   origin: vector3,
   boundingBox: z.object({ min: vector3, max: vector3 }),
@@ -82,7 +91,7 @@ export const measurement = z.object({
 });
 export type Measurement = z.infer<typeof measurement>;
 
-/** Why a file could not be measured. `at` is a byte (from 0) or a line (from 1) of the file. */
+/** Why a file could not be measured. `at` is a byte (from 0) or a line (from 1) of the mesh; in `archive-damaged` and `too-large-expanded`, a byte of the file as stored. */
 export const measuringErrorCodes = [
   'file-empty',
   'format-unknown',
@@ -94,6 +103,11 @@ export const measuringErrorCodes = [
   'facets-none',
   'size-differs',
   'too-many-facets',
+  'too-many-vertices',
+  'polygon-too-large',
+  'vertex-missing',
+  'archive-damaged',
+  'too-large-expanded',
   'file-missing',
   'gave-up',
 ] as const;

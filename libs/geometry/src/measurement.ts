@@ -4,7 +4,10 @@
  */
 export const measuringVersion = 'm1';
 
-export type MeshFormat = 'stl-binary' | 'stl-ascii';
+export type MeshFormat = 'stl-binary' | 'stl-ascii' | 'obj';
+
+/** How the stored file wraps the mesh. */
+export type MeshCompression = 'gzip';
 
 /** Numbers along x, y and z of the mesh frame. */
 export type Vector3 = [number, number, number];
@@ -31,11 +34,12 @@ export const findingKinds = [
   'several-solids',
   'nonzero-attributes',
   'contradicting-normals',
+  'non-planar-polygons',
 ] as const;
 export type FindingKind = (typeof findingKinds)[number];
 
 /**
- * Something noticed in a mesh. `count` counts what the kind names: edges, facets, bytes (`trailing-bytes`), solids;
+ * Something noticed in a mesh. `count` counts what the kind names: edges, facets, bytes (`trailing-bytes`), solids, polygons;
  * it is 1 for `turned-whole` and `no-volume`. `facets` holds at most 20 of the facets concerned, from 0, ascending.
  */
 export interface Finding {
@@ -84,6 +88,8 @@ export interface Integrals {
 export interface Measurement {
   measuringVersion: string;
   format: MeshFormat;
+  /** Null where the file is the mesh itself. */
+  compression: MeshCompression | null;
   facets: number;
   origin: Vector3;
   boundingBox: { min: Vector3; max: Vector3 };

@@ -71,6 +71,7 @@ export function createMeasurer({ sizeBytes, maximumFacets = defaultMaximumFacets
     return {
       measuringVersion,
       format,
+      compression: null,
       facets,
       origin,
       boundingBox: { min, max },

@@ -10,10 +10,15 @@ export const meshErrorCodes = [
   'facets-none',
   'size-differs',
   'too-many-facets',
+  'too-many-vertices',
+  'polygon-too-large',
+  'vertex-missing',
+  'archive-damaged',
+  'too-large-expanded',
 ] as const;
 export type MeshErrorCode = (typeof meshErrorCodes)[number];
 
-/** Where in the file: a byte (from 0) or a line (from 1). */
+/** Where in the mesh, as it is when expanded: a byte (from 0) or a line (from 1). `archive-damaged` and `too-large-expanded` give a byte of the file as stored. */
 export interface MeshPlace {
   byte?: number;
   line?: number;
