@@ -12,6 +12,7 @@ export const problemCodes = [
   'stale-version',
   'link-expired',
   'too-large',
+  'quota-exceeded',
   'too-many-attempts',
   'upload-incomplete',
   'unavailable',

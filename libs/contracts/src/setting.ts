@@ -30,11 +30,53 @@ export const drive = z.object({
 });
 export type Drive = z.infer<typeof drive>;
 
-/** What turns a measurement into a statement. Null means: not stated yet, and no figure that needs it is given. */
+export const densityKgM3 = z.number().min(1e-6, 'A density is at least 0.000001 kg/m³.').max(1e6, 'A density is at most 1 000 000 kg/m³.');
+/** Half the width of the interval within which a density lies, every value in it as likely as any other. */
+export const densitySpreadKgM3 = z.number().min(0, 'A spread is not negative.').max(1e6, 'A spread is at most 1 000 000 kg/m³.');
+
+/** The library's name of a material as it was when the setting was made. */
+export const namedMaterial = z.object({ id: z.string().min(1).max(80), name: z.string() });
+export type NamedMaterial = z.infer<typeof namedMaterial>;
+
+/** A part on the scale: its mass, and the expanded uncertainty of that (k = 2). */
+export const weighing = z.object({
+  massKg: z.number().min(1e-12, 'A mass is greater than 0.').max(1e9, 'A mass is at most 1 000 000 000 kg.'),
+  uncertaintyKg: z.number().min(0, 'An uncertainty is not negative.').max(1e9),
+});
+export type Weighing = z.infer<typeof weighing>;
+
+/**
+ * What turns a measurement into a statement. Null means: not stated yet, and no figure that needs it is given.
+ * `densityKgM3` is the one that was typed, or the named material's at the time when it was chosen; a weighing may set another
+ * (`resolveDensity` of mechanics), and never outlives its revision.
+ */
 export const setting = z.object({
   lengthUnit: lengthUnit.nullable(),
-  densityKgM3: z.number().min(1e-6, 'A density is at least 0.000001 kg/m³.').max(1e6, 'A density is at most 1 000 000 kg/m³.').nullable(),
+  densityKgM3: densityKgM3.nullable(),
+  densitySpreadKgM3: densitySpreadKgM3.nullable(),
+  material: namedMaterial.nullable(),
+  weighing: weighing.nullable(),
   axis,
   drive: drive.nullable(),
 });
 export type Setting = z.infer<typeof setting>;
+
+/**
+ * A density as a person gives it: typed, or by the name of a material, whose density is then taken from the library of this moment
+ * unless one is given with it (what an undo puts back keeps the density that it was made with). Typing a density alone takes the name away.
+ */
+export const densityChoice = z.object({
+  densityKgM3: densityKgM3.nullable().optional(),
+  densitySpreadKgM3: densitySpreadKgM3.nullable().optional(),
+  material: namedMaterial.pick({ id: true }).nullable().optional(),
+});
+export type DensityChoice = z.infer<typeof densityChoice>;
+
+/** Some fields of a setting to be changed; what is left out stays as it is. */
+export const settingChange = densityChoice.extend({
+  lengthUnit: lengthUnit.nullable().optional(),
+  weighing: weighing.nullable().optional(),
+  axis: axis.optional(),
+  drive: drive.nullable().optional(),
+});
+export type SettingChange = z.infer<typeof settingChange>;

@@ -1,7 +1,8 @@
 import { z } from 'zod';
+import { weighingVerdict } from './part';
 import { lengthUnit } from './setting';
 import { symmetric3, vector3 } from './common';
-import { meshFormat, measuringError, soundness } from './measurement';
+import { meshFormat, measuringError, measuringErrorCodes, soundness } from './measurement';
 
 /** Elements of the inertia matrix: off-diagonals are -∫xy dm, said in the record itself. */
 export const inertiaTensor = symmetric3.extend({ offDiagonals: z.literal('-∫xy dm') });
@@ -21,7 +22,11 @@ export const statementRecord = z.object({
   facets: z.number().int(),
   measuringVersion: z.string(),
   soundness,
+  /** The named material's name; null where the density was typed or is not stated. */
+  material: z.string().nullable(),
   densityKgM3: z.number().nullable(),
+  /** A weighed mass, the density that it implies of a uniform body, and how that stands to the material. */
+  weighing: z.object({ massKg: z.number(), uncertaintyKg: z.number(), impliedDensityKgM3: z.number(), verdict: weighingVerdict }).nullable(),
   volumeM3: z.number().nullable(),
   areaM2: z.number(),
   massKg: z.number().nullable(),
@@ -40,5 +45,8 @@ export const statementRecord = z.object({
 export type StatementRecord = z.infer<typeof statementRecord>;
 
 /** What stands in the record's place for a file that could not be measured. */
-export const failedRecord = z.object({ file: z.string(), error: measuringError });
+export const failedRecord = z.object({
+  file: z.string(),
+  error: measuringError.extend({ code: z.enum([...measuringErrorCodes, 'not-measured-yet', 'unit-not-stated']) }),
+});
 export type FailedRecord = z.infer<typeof failedRecord>;
