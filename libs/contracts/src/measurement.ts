@@ -7,9 +7,6 @@ export type MeshFormat = z.infer<typeof meshFormat>;
 /** How the stored file wraps the mesh. */
 export const meshCompression = z.enum(['gzip']);
 export type MeshCompression = z.infer<typeof meshCompression>;
-/** How the file was packed, where it was. */
-export const meshCompression = z.enum(['gzip']);
-export type MeshCompression = z.infer<typeof meshCompression>;
 
 /** Something noticed in a mesh: a fact that a reader of the figures should know, with how often it occurs. */
 export const finding = z.object({
