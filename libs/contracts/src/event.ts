@@ -9,7 +9,10 @@ export const serverEvent = z.discriminatedUnion('type', [
   z.object({ type: z.literal('signed-out') }),
   z.object({ type: z.literal('people') }),
   z.object({ type: z.literal('project'), projectId: id }),
+  /** Many parts of a project at once, or where they stand in its list: read the list again. */
+  z.object({ type: z.literal('parts'), projectId: id }),
   z.object({ type: z.literal('part'), projectId: id, partId: id }),
+  z.object({ type: z.literal('materials') }),
   z.object({
     type: z.literal('run'),
     projectId: id,

@@ -38,6 +38,14 @@ export type Material = z.infer<typeof material>;
 export const materialList = z.object({ items: z.array(material), can: z.object({ create: z.boolean() }) });
 export type MaterialList = z.infer<typeof materialList>;
 
+export const materialListQuery = z.object({
+  /** Every word of it must be in the name, the group or the source. */
+  text: z.string().max(200, 'A search has at most 200 characters.').default(''),
+  /** true: archived ones too. */
+  archived: z.stringbool().default(false),
+});
+export type MaterialListQuery = z.infer<typeof materialListQuery>;
+
 export const createMaterialRequest = materialFields;
 export type CreateMaterialRequest = z.infer<typeof createMaterialRequest>;
 export const changeMaterialRequest = materialFields.partial().extend({ version: z.number().int().positive(), archived: z.boolean().optional() });
@@ -58,6 +66,7 @@ export const materialUse = z.object({
   massAtPresentDensityKg: z.number().nullable(),
 });
 export type MaterialUse = z.infer<typeof materialUse>;
+/** At most 500 parts, by project and number; `total` counts all. */
 export const materialUses = z.object({ items: z.array(materialUse), total: z.number().int().nonnegative() });
 export type MaterialUses = z.infer<typeof materialUses>;
 
