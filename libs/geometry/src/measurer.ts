@@ -1,23 +1,19 @@
-import { facetBytes } from './detect-format';
 import type { FacetBatch } from './facet-batch';
 import { isDegenerate, isNormalContradicting } from './facet-shape';
 import { createFacetSums } from './facet-sums';
 import { finishIntegrals } from './finish-integrals';
 import { integrateBlocked } from './integrate-blocked';
 import { chooseOpenSums, chooseSums } from './integrate-mesh';
+import type { ReadingLimits } from './limits';
 import { findingFacets, measuringVersion, type Measurement, type Vector3 } from './measurement';
 import { createMeshReader } from './mesh-reader';
 import { checkConnections, judgeSoundness, noOccurrence, type Occurrence } from './soundness';
-import { createWelder } from './weld-corners';
+import { createWelder, type Welder } from './weld-corners';
 
-/** The limit where the caller names none; the README says what memory it takes. */
-export const defaultMaximumFacets = 20_000_000;
-
-export interface MeasurerOptions {
-  /** Size of the whole file; exactly so many bytes must be pushed. */
+/** Limits that are not given are the usual ones; the README says what memory they come to. */
+export interface MeasurerOptions extends Partial<ReadingLimits> {
+  /** Size of the whole file, packed where it is packed; exactly so many bytes must be pushed. */
   sizeBytes: number;
-  /** A mesh of more facets is refused (`too-many-facets`) before memory is taken for them. */
-  maximumFacets?: number;
 }
 
 export interface Measurer {
@@ -32,16 +28,15 @@ export interface Measurer {
  * Measures a mesh file that arrives in chunks. The result depends on the bytes alone, not on how they were cut: the same bytes give the same bits.
  * Memory grows with the facets received, never with what a header declares.
  */
-export function createMeasurer({ sizeBytes, maximumFacets = defaultMaximumFacets }: MeasurerOptions): Measurer {
-  // No facet takes fewer bytes, in ASCII neither.
-  const welder = createWelder(Math.min(maximumFacets, Math.max(1, Math.floor(sizeBytes / facetBytes))));
+export function createMeasurer(options: MeasurerOptions): Measurer {
+  let welder: Welder | undefined;
   const sums = createFacetSums();
   const origin: Vector3 = [0, 0, 0];
   const min: Vector3 = [Infinity, Infinity, Infinity];
   const max: Vector3 = [-Infinity, -Infinity, -Infinity];
   const degenerate = noOccurrence();
   const contradicting = noOccurrence();
-  const reader = createMeshReader({ sizeBytes, maximumFacets, onFacets });
+  const reader = createMeshReader({ ...options, onFacets });
 
   function onFacets(batch: FacetBatch): void {
     // Adding 0 makes +0 of -0, which JSON could not keep.
@@ -49,12 +44,18 @@ export function createMeasurer({ sizeBytes, maximumFacets = defaultMaximumFacets
     integrateBlocked(sums, origin, batch.corners, batch.count);
     extendBox(min, max, batch);
     examineFacets(batch, degenerate, contradicting);
+    welder ??= beginWelding();
     welder.add(batch);
   }
 
+  function beginWelding(): Welder {
+    const { most, expected } = reader.facetsToCome;
+    return createWelder(most, expected);
+  }
+
   function finish(): Measurement {
-    const { format, facets, trailingBytes, solids, nonzeroAttributes } = reader.finish();
-    const mesh = welder.finish();
+    const { format, compression, facets, trailingBytes, solids, nonzeroAttributes, nonPlanarPolygons } = reader.finish();
+    const mesh = (welder ?? beginWelding()).finish();
     const connections = checkConnections(mesh);
     const extent = Math.max(max[0] - min[0], max[1] - min[1], max[2] - min[2]);
     const chosen =
@@ -67,11 +68,12 @@ export function createMeasurer({ sizeBytes, maximumFacets = defaultMaximumFacets
       'trailing-bytes': { count: trailingBytes, facets: [] },
       'several-solids': { count: solids > 1 ? solids : 0, facets: [] },
       'nonzero-attributes': nonzeroAttributes,
+      'non-planar-polygons': nonPlanarPolygons,
     });
     return {
       measuringVersion,
       format,
-      compression: null,
+      compression,
       facets,
       origin,
       boundingBox: { min, max },
@@ -91,7 +93,7 @@ export function createMeasurer({ sizeBytes, maximumFacets = defaultMaximumFacets
 }
 
 /** Measures a mesh file that is at hand as a whole. Throws a MeshError where it cannot be measured. */
-export function measureMesh(bytes: Uint8Array, options: { maximumFacets?: number } = {}): Measurement {
+export function measureMesh(bytes: Uint8Array, options: Partial<ReadingLimits> = {}): Measurement {
   const measurer = createMeasurer({ sizeBytes: bytes.length, ...options });
   if (bytes.length > 0) measurer.push(bytes);
   return measurer.finish();

@@ -33,9 +33,9 @@ describe('files that are refused', () => {
   const ascii = decode(writeAsciiStl(block));
   const cases: [name: string, bytes: Uint8Array, code: string, sentence: RegExp, at: object | null][] = [
     ['an empty file', new Uint8Array(0), 'file-empty', /^The file is empty/, null],
-    ['text that is no mesh', encode('Dear all,\nplease find the part attached.\n'), 'format-unknown', /text, but not an STL mesh/, { line: 1 }],
-    ['a long text', encode('lorem ipsum '.repeat(500)), 'format-unknown', /text, but not an STL mesh/, { line: 1 }],
-    ['another mesh format', encode('# made by hand\nv 0 0 0\nv 1 0 0\nv 0 1 0\nf 1 2 3\n'), 'format-unknown', /looks like an OBJ mesh/, { byte: 0 }],
+    ['text that is no mesh', encode('Dear all,\nplease find the part attached.\n'), 'format-unknown', /text, but neither an STL mesh/, { line: 1 }],
+    ['a long text', encode('lorem ipsum '.repeat(500)), 'format-unknown', /text, but neither an STL mesh/, { line: 1 }],
+    ['another mesh format', encode('OFF\n3 1 0\n0 0 0\n1 0 0\n0 1 0\n3 0 1 2\n'), 'format-unknown', /looks like an OFF mesh, not like an STL or OBJ mesh/, { byte: 0 }],
     ['a PNG renamed', Uint8Array.from([0x89, 0x50, 0x4e, 0x47, 13, 10, 26, 10, ...new Uint8Array(500)]), 'format-unknown', /looks like a PNG picture/, { byte: 0 }],
     ['a JPEG renamed', Uint8Array.from([0xff, 0xd8, 0xff, 0xe0, ...new Uint8Array(500)]), 'format-unknown', /looks like a JPEG picture/, { byte: 0 }],
     ['a ZIP archive renamed', Uint8Array.from([0x50, 0x4b, 3, 4, ...new Uint8Array(30)]), 'format-unknown', /looks like a ZIP archive/, { byte: 0 }],

@@ -1,80 +1,48 @@
-import { decidingBytes, detectFormat, facetBytes, headerBytes } from './detect-format';
+import { createContentReader, type ContentSummary, type FacetsToCome } from './content-reader';
 import type { FacetSink } from './facet-batch';
-import type { MeshFormat } from './measurement';
+import { completeLimits, type ReadingLimits } from './limits';
 import { MeshError, spellCounted } from './mesh-error';
-import { createAsciiStlReader, tooManyFacets } from './read-stl-ascii';
-import { createBinaryStlReader, type FileRemarks, type FormatReader } from './read-stl-binary';
 
-export interface MeshReaderOptions {
-  /** Size of the whole file; so many bytes must arrive. */
+export interface MeshReaderOptions extends Partial<ReadingLimits> {
+  /** Size of the whole file, packed where it is packed; so many bytes must arrive. */
   sizeBytes: number;
-  /** A file with more facets is refused before anything is kept for them. */
-  maximumFacets: number;
   /** Takes the facets in the order of the file. */
   onFacets: FacetSink;
 }
 
-export interface MeshSummary extends FileRemarks {
-  format: MeshFormat;
-  facets: number;
-  /** Bytes after the last facet of a binary file; fewer than one facet's. */
-  trailingBytes: number;
-}
+export type MeshSummary = ContentSummary;
 
 export interface MeshReader {
   push(chunk: Uint8Array): void;
   finish(): MeshSummary;
   readonly facetsRead: number;
+  /** How many facets can come; known from the first one on. */
+  readonly facetsToCome: FacetsToCome;
 }
 
 /**
- * Reads a mesh file that is pushed in chunks of any size; what comes out does not depend on the sizes. Memory is constant: a batch of facets
- * and the pieces that straddle chunks. `push` and `finish` throw a MeshError; after that the reader is of no more use.
+ * Reads a mesh file that is pushed in chunks of any size; what comes out does not depend on the sizes. Memory is constant for STL: a batch of facets
+ * and the pieces that straddle chunks; of OBJ the vertices are kept. `push` and `finish` throw a MeshError; after that the reader is of no more use.
  */
-export function createMeshReader({ sizeBytes, maximumFacets, onFacets }: MeshReaderOptions): MeshReader {
-  const beginning = new Uint8Array(Math.min(decidingBytes, sizeBytes));
+export function createMeshReader({ sizeBytes, onFacets, ...limits }: MeshReaderOptions): MeshReader {
+  const content = createContentReader({ sizeBytes, limits: completeLimits(limits), onFacets });
   let received = 0;
-  let begun: { reader: FormatReader; format: MeshFormat; trailingBytes: number } | undefined;
-
-  function begin(): NonNullable<typeof begun> {
-    const detected = detectFormat(beginning, sizeBytes);
-    if (detected.format === 'stl-ascii') {
-      return { reader: createAsciiStlReader(maximumFacets, onFacets), format: detected.format, trailingBytes: 0 };
-    }
-    const { declaredFacets, trailingBytes } = detected;
-    if (declaredFacets > maximumFacets) throw tooManyFacets(maximumFacets, { byte: headerBytes + facetBytes * maximumFacets });
-    return { reader: createBinaryStlReader(declaredFacets, onFacets), format: detected.format, trailingBytes };
-  }
-
-  function push(chunk: Uint8Array): void {
-    if (received + chunk.length > sizeBytes) throw sizeDiffers(`more than ${spellCounted(sizeBytes, 'byte')} arrived`, sizeBytes);
-    let rest = chunk;
-    if (begun === undefined) {
-      const taken = Math.min(beginning.length - received, chunk.length);
-      beginning.set(chunk.subarray(0, taken), received);
-      received += taken;
-      if (received < beginning.length) return;
-      begun = begin();
-      begun.reader.push(beginning);
-      rest = chunk.subarray(taken);
-    }
-    received += rest.length;
-    if (rest.length > 0) begun.reader.push(rest);
-  }
-
-  function finish(): MeshSummary {
-    if (received !== sizeBytes) throw sizeDiffers(`only ${spellCounted(received, 'byte')} of ${spellCounted(sizeBytes, 'byte')} arrived`, received);
-    const { reader, format, trailingBytes } = begun ?? begin();
-    const remarks = reader.finish();
-    if (reader.facetsRead === 0) throw new MeshError('facets-none', 'The file is an STL mesh without a single facet. Check that something was selected when it was exported.');
-    return { format, facets: reader.facetsRead, trailingBytes, ...remarks };
-  }
 
   return {
-    push,
-    finish,
+    push(chunk) {
+      if (received + chunk.length > sizeBytes) throw sizeDiffers(`more than ${spellCounted(sizeBytes, 'byte')} arrived`, sizeBytes);
+      received += chunk.length;
+      content.push(chunk);
+    },
+    finish() {
+      if (received !== sizeBytes) throw sizeDiffers(`only ${spellCounted(received, 'byte')} of ${spellCounted(sizeBytes, 'byte')} arrived`, received);
+      return content.finish();
+    },
     get facetsRead() {
-      return begun?.reader.facetsRead ?? 0;
+      return content.facetsRead;
+    },
+    get facetsToCome() {
+      return content.facetsToCome;
     },
   };
 }

@@ -1,11 +1,10 @@
 import { batchFacets, createFacetBatch, flushFacets, type FacetSink } from './facet-batch';
+import { noRemarks, tooManyFacets, type FormatReader } from './format-reader';
+import type { ReadingLimits } from './limits';
 import { MeshError, spellCount } from './mesh-error';
+import { parseCoordinate, quoteWord, refuseNumber } from './mesh-words';
 import { isNonFiniteWord, parseDecimal } from './parse-decimal';
-import type { FormatReader } from './read-stl-binary';
 import { createWordScanner } from './scan-words';
-
-/** Binary STL can hold no larger coordinate, and the fifth power of this one still fits binary64. */
-const largestCoordinate = 3.4028234663852886e38;
 
 /** What the reader waits for. In the name states the words up to the end of the line are a name and mean nothing. */
 type Expected = 'solid' | 'facet' | 'normal' | 'normal-number' | 'outer' | 'loop' | 'vertex' | 'coordinate' | 'endloop' | 'endfacet' | NameState;
@@ -28,7 +27,7 @@ const wanted: Record<Exclude<Expected, NameState>, string> = {
  * Reads the facets of an ASCII STL file, pushed in chunks of any size. Words in any case, any white space and line ends, several solids, names of
  * several words. Coordinates keep binary64. Throws a MeshError with the line for anything that does not belong there.
  */
-export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): FormatReader {
+export function createAsciiStlReader(limits: ReadingLimits, sink: FacetSink): FormatReader {
   const batch = createFacetBatch();
   let expected: Expected = 'solid';
   let read = 0;
@@ -36,7 +35,7 @@ export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): Fo
   let numbers = 0;
   // Whether the name after "endsolid" has the word "solid" in it: another solid may have begun on the same line.
   let solidInName = false;
-  const scanner = createWordScanner(takeWord, takeLineEnd);
+  const scanner = createWordScanner(limits, takeWord, takeLineEnd);
 
   function takeLineEnd(): void {
     if (expected === 'solid-name') expected = 'facet';
@@ -120,7 +119,7 @@ export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): Fo
   }
 
   function beginNumbers(): void {
-    if (read >= maximumFacets) throw tooManyFacets(maximumFacets, { line: scanner.line });
+    if (read >= limits.maximumFacets) throw tooManyFacets(limits.maximumFacets, 'stl-ascii', { line: scanner.line });
     numbers = 0;
     expected = 'normal-number';
   }
@@ -132,18 +131,15 @@ export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): Fo
 
   function takeNormal(bytes: Uint8Array, start: number, end: number): void {
     const number = parseDecimal(bytes, start, end) ?? (isNonFiniteWord(bytes, start, end) ? NaN : undefined);
-    if (number === undefined) refuseNumber(bytes, start, end);
+    if (number === undefined) refuseAsNumber(bytes, start, end);
     batch.normals[3 * batch.count + numbers] = number;
     numbers += 1;
     if (numbers === 3) expected = 'outer';
   }
 
   function takeCoordinate(bytes: Uint8Array, start: number, end: number): void {
-    const number = parseDecimal(bytes, start, end);
-    if (number === undefined) refuseNumber(bytes, start, end);
-    if (number > largestCoordinate || number < -largestCoordinate) {
-      throw new MeshError('number-not-finite', `A coordinate in line ${spellCount(scanner.line)} is larger than 3.4e38, the most that STL can hold. Export the mesh again.`, { line: scanner.line });
-    }
+    const number = parseCoordinate(bytes, start, end, scanner.line, 'STL');
+    if (number === undefined) refuseWord(bytes, start, end);
     batch.corners[9 * batch.count + numbers] = number;
     numbers += 1;
     if (numbers === 9) expected = 'endloop';
@@ -154,6 +150,7 @@ export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): Fo
     batch.count += 1;
     read += 1;
     expected = 'facet';
+    scanner.restartLine();
     if (batch.count === batchFacets) flushFacets(batch, sink);
   }
 
@@ -162,19 +159,11 @@ export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): Fo
   }
 
   function refuseWord(bytes: Uint8Array, start: number, end: number): never {
-    refuse(`${quote(bytes, start, end)} stands where ${wanted[expected as keyof typeof wanted]} belongs. Export the mesh again.`);
+    refuse(`${quoteWord(bytes, start, end)} stands where ${wanted[expected as keyof typeof wanted]} belongs. Export the mesh again.`);
   }
 
-  function refuseNumber(bytes: Uint8Array, start: number, end: number): never {
-    const line = scanner.line;
-    if (isNonFiniteWord(bytes, start, end)) {
-      throw new MeshError('number-not-finite', `A coordinate in line ${spellCount(line)} is ${quote(bytes, start, end)}, not a finite number. Export the mesh again.`, { line });
-    }
-    const word = quote(bytes, start, end);
-    if (/^"[+-]?\d+,\d*(e[+-]?\d+)?"$/i.test(word)) {
-      throw new MeshError('number-invalid', `Line ${spellCount(line)} has ${word} with a decimal comma; STL has a decimal point. Export the mesh again.`, { line });
-    }
-    if (/^"[+-.]?\d/.test(word)) throw new MeshError('number-invalid', `Line ${spellCount(line)} has ${word}, which is not a number. Export the mesh again.`, { line });
+  function refuseAsNumber(bytes: Uint8Array, start: number, end: number): never {
+    refuseNumber(bytes, start, end, scanner.line, 'STL');
     refuseWord(bytes, start, end);
   }
 
@@ -186,7 +175,7 @@ export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): Fo
         throw new MeshError('file-truncated', `The file ends in the middle of ${read > 0 ? `a solid, after ${spellCount(read)} whole facets` : 'its first solid'}; "endsolid" is missing. It was cut off: export it again.`, { line: scanner.line });
       }
       flushFacets(batch, sink);
-      return { solids, nonzeroAttributes: { count: 0, facets: [] } };
+      return { ...noRemarks(), solids };
     },
     get facetsRead() {
       return read;
@@ -194,19 +183,9 @@ export function createAsciiStlReader(maximumFacets: number, sink: FacetSink): Fo
   };
 }
 
-export function tooManyFacets(maximumFacets: number, at: { byte: number } | { line: number }): MeshError {
-  return new MeshError('too-many-facets', `The mesh has more than ${spellCount(maximumFacets)} facets, the most that can be examined here. Reduce it or split it into parts.`, at);
-}
-
 /** A word in any case; setting bit 5 maps the capitals, and no other byte, onto the small letters. */
 function isKeyword(bytes: Uint8Array, start: number, end: number, keyword: string): boolean {
   if (end - start !== keyword.length) return false;
   for (let k = 0; k < keyword.length; k++) if (((bytes[start + k] ?? 0) | 32) !== keyword.charCodeAt(k)) return false;
   return true;
-}
-
-/** A word of the file for a message: at most 24 characters, and nothing unprintable. */
-function quote(bytes: Uint8Array, start: number, end: number): string {
-  const word = String.fromCharCode(...bytes.subarray(start, Math.min(end, start + 24))).replace(/[^\x20-\x7e]/g, '?');
-  return `"${word}${end - start > 24 ? '…' : ''}"`;
 }

@@ -1,33 +1,25 @@
-import { facetBytes, headerBytes } from './detect-format';
+import { checkDeclaredFacets, facetBytes, headerBytes } from './detect-format';
 import { batchFacets, createFacetBatch, flushFacets, type FacetSink } from './facet-batch';
+import { noRemarks, tooManyFacets, type FormatReader } from './format-reader';
 import { findingFacets } from './measurement';
 import { MeshError, spellCount } from './mesh-error';
 
-export interface FormatReader {
-  push(bytes: Uint8Array): void;
-  /** Hands on the last facets and says what was seen beside them. */
-  finish(): FileRemarks;
-  readonly facetsRead: number;
-}
-
-/** What was noticed in a file beside its facets. */
-export interface FileRemarks {
-  solids: number;
-  nonzeroAttributes: { count: number; facets: number[] };
-}
-
 /**
  * Reads the facets of a binary STL file, pushed in chunks of any size: little-endian, 84 bytes of header, then for each facet a normal,
- * three corners and a 16-bit attribute. The number of facets was found to fit the size of the file; bytes after the last are passed over.
+ * three corners and a 16-bit attribute. Whether the declared number of facets fits the size of the file is checked at the end, since the size of
+ * a packed one is not known before; fewer bytes than a facet's after the last are passed over.
  */
-export function createBinaryStlReader(facets: number, sink: FacetSink): FormatReader {
+export function createBinaryStlReader(facets: number, maximumFacets: number, sink: FacetSink): FormatReader {
   const batch = createFacetBatch();
   const carry = new Uint8Array(facetBytes);
   const carryView = new DataView(carry.buffer);
-  const attributes = { count: 0, facets: [] as number[] };
+  const remarks = noRemarks();
+  const attributes = remarks.nonzeroAttributes;
+  const wanted = Math.min(facets, maximumFacets);
   let carried = 0;
   let toSkip = headerBytes;
   let read = 0;
+  let received = 0;
 
   function readFacet(view: DataView, at: number): void {
     const { corners, normals } = batch;
@@ -63,6 +55,7 @@ export function createBinaryStlReader(facets: number, sink: FacetSink): FormatRe
   }
 
   function push(bytes: Uint8Array): void {
+    received += bytes.length;
     let at = Math.min(toSkip, bytes.length);
     toSkip -= at;
     if (carried > 0) {
@@ -72,14 +65,16 @@ export function createBinaryStlReader(facets: number, sink: FacetSink): FormatRe
       at += taken;
       if (carried < facetBytes) return;
       carried = 0;
-      if (read < facets) readFacet(carryView, 0);
+      if (read < wanted) readFacet(carryView, 0);
     }
-    const whole = Math.min(facets - read, Math.floor((bytes.length - at) / facetBytes));
+    const whole = Math.min(wanted - read, Math.floor((bytes.length - at) / facetBytes));
     if (whole > 0) {
       const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
       for (let n = 0; n < whole; n++, at += facetBytes) readFacet(view, at);
     }
-    if (read < facets && at < bytes.length) {
+    if (at === bytes.length) return;
+    if (read === maximumFacets && facets > maximumFacets) throw tooManyFacets(maximumFacets, 'stl-binary', { byte: headerBytes + facetBytes * maximumFacets });
+    if (read < wanted) {
       carry.set(bytes.subarray(at));
       carried = bytes.length - at;
     }
@@ -89,7 +84,8 @@ export function createBinaryStlReader(facets: number, sink: FacetSink): FormatRe
     push,
     finish() {
       flushFacets(batch, sink);
-      return { solids: 1, nonzeroAttributes: attributes };
+      remarks.trailingBytes = checkDeclaredFacets(facets, received);
+      return remarks;
     },
     get facetsRead() {
       return read;

@@ -25,8 +25,9 @@ const fullest = 0.7;
  * unit in the last place stays a gap. Open addressing with linear probing, after a mixed hash of the coordinates' bits.
  *
  * @param mostFacets how many facets can come; bounds the growth of the arrays, allocates nothing
+ * @param expectedFacets how many probably will; lets the table grow in fewer steps
  */
-export function createWelder(mostFacets: number): Welder {
+export function createWelder(mostFacets: number, expectedFacets = mostFacets): Welder {
   let corners = new Uint32Array(3 * Math.min(mostFacets, 1024));
   let coordinates = new Float64Array(3 * Math.min(3 * mostFacets, 1024));
   // A slot holds a vertex number plus one; 0 is free.
@@ -74,8 +75,8 @@ export function createWelder(mostFacets: number): Welder {
   }
 
   function rehash(): void {
-    // As many as all facets that can come would need at the present rate of new vertices, within what the facets received justify.
-    const expected = (vertexCount / facetCount) * mostFacets;
+    // As many as all facets that are expected would need at the present rate of new vertices, within what the facets received justify.
+    const expected = (vertexCount / facetCount) * expectedFacets;
     let length = 2 * slots.length;
     while (length < 8 * slots.length && fullest * length < expected) length *= 2;
     slots = allocate(() => new Uint32Array(length));
