@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto';
 import { deriveLinkToken } from '@masswright/jobs';
 import { get, DemoPerson } from './installation';
 import { makeDemoMeshes, type DemoMesh } from './meshes';
@@ -17,11 +18,11 @@ async function addMesh(person: DemoPerson, projectId: string, mesh: DemoMesh): P
   const { api } = person;
   const upload = get(await api.POST('/api/v1/projects/{projectId}/uploads', { params: { path: { projectId } }, body: { fileName: mesh.fileName, sizeBytes: mesh.bytes.length } }));
   const path = { uploadId: upload.id };
-  const partNumbers = Array.from({ length: upload.partCount }, (_, index) => index + 1);
-  const { grants } = get(await api.POST('/api/v1/uploads/{uploadId}/part-grants', { params: { path }, body: { partNumbers } }));
-  for (const { partNumber, url } of grants) {
-    const begin = (partNumber - 1) * upload.partSizeBytes;
-    const sent = await fetch(url, { method: 'PUT', body: mesh.bytes.slice(begin, begin + upload.partSizeBytes) });
+  const bodies = Array.from({ length: upload.partCount }, (_, index) => mesh.bytes.slice(index * upload.partSizeBytes, (index + 1) * upload.partSizeBytes));
+  const parts = bodies.map((body, index) => ({ partNumber: index + 1, sha256: createHash('sha256').update(body).digest('hex') }));
+  const { grants } = get(await api.POST('/api/v1/uploads/{uploadId}/part-grants', { params: { path }, body: { parts } }));
+  for (const { partNumber, url, headers } of grants) {
+    const sent = await fetch(url, { method: 'PUT', headers, body: bodies[partNumber - 1] ?? null });
     if (!sent.ok) throw new Error(`The storage refused a part: ${sent.status}.`);
   }
   get(await api.POST('/api/v1/uploads/{uploadId}/completion', { params: { path }, body: { partName: mesh.partName, setting: mesh.setting } }));

@@ -41,7 +41,7 @@ function badDigest(message) {
  * @param {string} folder
  * @param {import('node:stream').Readable} body
  * @param {Expectation} expectation
- * @returns {Promise<{ file: string, sizeBytes: number, md5: string }>}
+ * @returns {Promise<{ file: string, sizeBytes: number, md5: string, sha256: string }>} the hashes in hexadecimal digits
  */
 export async function takeIn(folder, body, expectation) {
   const file = path.join(folder, randomBytes(16).toString('hex'));
@@ -71,7 +71,7 @@ export async function takeIn(folder, body, expectation) {
     if (expectation.sha256Hex !== undefined && sha256Sum.toString('hex') !== expectation.sha256Hex) {
       throw Object.assign(new S3Error('XAmzContentSHA256Mismatch', 'The body is not the one that was signed.'), { status: 400 });
     }
-    return { file, sizeBytes, md5: md5Sum.toString('hex') };
+    return { file, sizeBytes, md5: md5Sum.toString('hex'), sha256: sha256Sum.toString('hex') };
   } catch (error) {
     await rm(file, { force: true });
     if (error instanceof S3Error) throw error;

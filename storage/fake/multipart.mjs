@@ -30,7 +30,7 @@ export async function answerListParts(ctx, store, bucket, key, uploadId) {
       NextPartNumberMarker: page.at(-1)?.number ?? 0,
       MaxParts: limit,
       IsTruncated: rest.length > page.length,
-      Part: page.map((part) => ({ PartNumber: part.number, LastModified: part.modified.toISOString(), ETag: `"${part.etag}"`, Size: part.sizeBytes })),
+      Part: page.map((part) => ({ PartNumber: part.number, LastModified: part.modified.toISOString(), ETag: `"${part.etag}"`, Size: part.sizeBytes, ...(part.sha256 === undefined ? {} : { ChecksumSHA256: Buffer.from(part.sha256, 'hex').toString('base64') }) })),
     },
   };
 }

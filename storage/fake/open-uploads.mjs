@@ -7,8 +7,8 @@ import { getExpectation, takeIn } from './intake.mjs';
 export const smallestPartBytes = 5 * 1024 * 1024;
 const mostParts = 10_000;
 
-/** @typedef {{ bucket: string, key: string, metadata: Record<string, unknown>, initiated: string }} Upload */
-/** @typedef {{ number: number, etag: string, sizeBytes: number, modified: Date, file: string }} Part */
+/** @typedef {{ bucket: string, key: string, metadata: Record<string, unknown>, initiated: string, checksumAlgorithm?: string }} Upload */
+/** @typedef {{ number: number, etag: string, sha256?: string, sizeBytes: number, modified: Date, file: string }} Part */
 
 const noSuchUpload = () => new S3Error('NoSuchUpload', 'The specified upload does not exist. It may have been aborted or completed.');
 
@@ -26,12 +26,12 @@ export class OpenUploads {
     return path.join(this.folder, uploadId);
   }
 
-  /** @param {string} bucket @param {string} key @param {string} uploadId @param {Record<string, unknown>} metadata */
-  async add(bucket, key, uploadId, metadata) {
+  /** @param {string} bucket @param {string} key @param {string} uploadId @param {Record<string, unknown>} metadata @param {string | undefined} checksumAlgorithm */
+  async add(bucket, key, uploadId, metadata, checksumAlgorithm) {
     const draft = path.join(this.incoming, uploadId);
     await mkdir(draft, { recursive: true });
     await mkdir(this.folder, { recursive: true });
-    await writeFile(path.join(draft, 'upload.json'), JSON.stringify({ bucket, key, metadata, initiated: new Date().toISOString() }));
+    await writeFile(path.join(draft, 'upload.json'), JSON.stringify({ bucket, key, metadata, initiated: new Date().toISOString(), checksumAlgorithm }));
     await rename(draft, this.#at(uploadId));
   }
 
@@ -52,8 +52,10 @@ export class OpenUploads {
   /** @param {string} uploadId @param {number} number @param {import('node:stream').Readable} body */
   async putPart(uploadId, number, body) {
     if (!Number.isInteger(number) || number < 1 || number > mostParts) throw new S3Error('InvalidArgument', `Part number must be an integer between 1 and ${mostParts}.`);
-    const taken = await takeIn(this.incoming, body, getExpectation(body));
-    const name = `${number}-${taken.md5}`;
+    const expectation = getExpectation(body);
+    const isChecked = await this.#checksumsOf(uploadId, expectation.sha256Base64 !== undefined);
+    const taken = await takeIn(this.incoming, body, expectation);
+    const name = `${number}-${taken.md5}${isChecked ? `-${taken.sha256}` : ''}`;
     try {
       await rename(taken.file, path.join(this.#at(uploadId), name));
     } catch {
@@ -66,13 +68,21 @@ export class OpenUploads {
     return { size: taken.sizeBytes, md5: taken.md5 };
   }
 
+  /** As S3: an upload is begun with checksums of its parts or without, and then every part has one or none. @param {string} uploadId @param {boolean} given */
+  async #checksumsOf(uploadId, given) {
+    const { checksumAlgorithm } = await this.get(uploadId);
+    if (checksumAlgorithm !== undefined && !given) throw new S3Error('InvalidRequest', `The upload was created using a ${checksumAlgorithm} checksum. The upload part request must include it.`);
+    if (checksumAlgorithm === undefined && given) throw new S3Error('InvalidRequest', 'Checksum Type mismatch occurred, expected checksum Type: null, actual checksum Type: sha256');
+    return given;
+  }
+
   /** @param {string} uploadId @returns {Promise<Part[]>} in the order of their numbers */
   async listParts(uploadId) {
     await this.get(uploadId);
     const folder = this.#at(uploadId);
     const found = (await readdir(folder)).flatMap((name) => {
-      const match = /^(\d+)-([0-9a-f]{32})$/.exec(name);
-      return match === null ? [] : [{ number: Number(match[1]), etag: match[2] ?? '', file: path.join(folder, name) }];
+      const match = /^(\d+)-([0-9a-f]{32})(?:-([0-9a-f]{64}))?$/.exec(name);
+      return match === null ? [] : [{ number: Number(match[1]), etag: match[2] ?? '', sha256: match[3], file: path.join(folder, name) }];
     });
     const parts = await Promise.all(
       found.map(async (part) => {

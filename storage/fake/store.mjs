@@ -101,7 +101,9 @@ export class DurableStore extends FilesystemStore {
 
   /** @param {string} bucket @param {string} key @param {string} uploadId @param {Record<string, unknown>} headers */
   async initiateUpload(bucket, key, uploadId, headers) {
-    await this.uploads.add(bucket, key, uploadId, new S3Object(bucket, key, null, headers).metadata);
+    const algorithm = headers['x-amz-checksum-algorithm'];
+    if (algorithm !== undefined && algorithm !== 'SHA256') throw new S3Error('NotImplemented', 'Only SHA256 checksums of parts are supported here.');
+    await this.uploads.add(bucket, key, uploadId, new S3Object(bucket, key, null, headers).metadata, algorithm);
   }
 
   /** @param {string} _bucket @param {string} uploadId @param {string} partNumber @param {import('node:stream').Readable} body */

@@ -6,6 +6,7 @@ export {
   largestPartNumber,
   smallestPartBytes,
   type OpenUpload,
+  type PartPresigned,
   type PartPresignRequest,
   type StoredPart,
   type UploadedPart,

@@ -19,6 +19,8 @@ export interface UploadedPart {
   partNumber: number;
   /** As the storage gave it, with or without its quotes. It is not the hash of the file. */
   etag: string;
+  /** SHA-256 in hexadecimal digits against which the storage checked the bytes; undefined where it keeps no checksums. */
+  sha256?: string | undefined;
 }
 
 export interface StoredPart extends UploadedPart {
@@ -37,8 +39,18 @@ export interface PartPresignRequest {
   partNumber: number;
   /** Goes under the signature: a body of any other length is refused. */
   sizeBytes: number;
+  /** In hexadecimal digits; goes under the signature too, and the storage refuses a body of any other. */
+  sha256: string;
   expiresSeconds: number;
 }
+
+export interface PartPresigned {
+  url: string;
+  /** What must be sent with the body. */
+  headers: Record<string, string>;
+}
+
+const checksumHeader = 'x-amz-checksum-sha256';
 
 export class MultipartUploads {
   constructor(
@@ -49,21 +61,24 @@ export class MultipartUploads {
 
   async create(key: string, contentType: string): Promise<string> {
     const answer = await attempt('create upload', () =>
-      this.client.send(new CreateMultipartUploadCommand({ Bucket: this.bucket, Key: key, ContentType: contentType })),
+      this.client.send(new CreateMultipartUploadCommand({ Bucket: this.bucket, Key: key, ContentType: contentType, ChecksumAlgorithm: 'SHA256' })),
     );
     if (!answer.UploadId) throw new ObjectStorageError('unexpected', 'Object storage: the answer has no upload id');
     return answer.UploadId;
   }
 
-  async presignPart(request: PartPresignRequest): Promise<string> {
-    const { key, uploadId, partNumber, sizeBytes, expiresSeconds } = request;
-    return attempt('presign part', () =>
+  async presignPart(request: PartPresignRequest): Promise<PartPresigned> {
+    const { key, uploadId, partNumber, sizeBytes, sha256, expiresSeconds } = request;
+    const checksum = Buffer.from(sha256, 'hex').toString('base64');
+    const url = await attempt('presign part', () =>
       getSignedUrl(
         this.publicClient,
-        new UploadPartCommand({ Bucket: this.bucket, Key: key, UploadId: uploadId, PartNumber: partNumber, ContentLength: sizeBytes }),
-        { expiresIn: expiresSeconds, signableHeaders: new Set(['host', 'content-length']) },
+        new UploadPartCommand({ Bucket: this.bucket, Key: key, UploadId: uploadId, PartNumber: partNumber, ContentLength: sizeBytes, ChecksumSHA256: checksum }),
+        // As a parameter of the address the checksum would be signed but not looked at.
+        { expiresIn: expiresSeconds, signableHeaders: new Set(['host', 'content-length', checksumHeader]), unhoistableHeaders: new Set([checksumHeader]) },
       ),
     );
+    return { url, headers: { [checksumHeader]: checksum } };
   }
 
   async listParts(key: string, uploadId: string): Promise<StoredPart[]> {
@@ -75,9 +90,9 @@ export class MultipartUploads {
         const page = await this.client.send(
           new ListPartsCommand({ Bucket: this.bucket, Key: key, UploadId: uploadId, PartNumberMarker: marker }),
         );
-        for (const { PartNumber, ETag, Size } of page.Parts ?? []) {
+        for (const { PartNumber, ETag, Size, ChecksumSHA256 } of page.Parts ?? []) {
           if (PartNumber === undefined || ETag === undefined || Size === undefined) continue;
-          parts.push({ partNumber: PartNumber, etag: ETag, sizeBytes: Size });
+          parts.push({ partNumber: PartNumber, etag: ETag, sizeBytes: Size, sha256: ChecksumSHA256 === undefined ? undefined : Buffer.from(ChecksumSHA256, 'base64').toString('hex') });
         }
         marker = page.IsTruncated ? page.NextPartNumberMarker : undefined;
       } while (marker !== undefined);
@@ -86,7 +101,11 @@ export class MultipartUploads {
   }
 
   async complete(key: string, uploadId: string, parts: readonly UploadedPart[], onlyIfAbsent: boolean): Promise<void> {
-    const Parts = [...parts].sort((a, b) => a.partNumber - b.partNumber).map(({ partNumber, etag }) => ({ PartNumber: partNumber, ETag: etag }));
+    const Parts = [...parts].sort((a, b) => a.partNumber - b.partNumber).map(({ partNumber, etag, sha256 }) => ({
+      PartNumber: partNumber,
+      ETag: etag,
+      ChecksumSHA256: sha256 === undefined ? undefined : Buffer.from(sha256, 'hex').toString('base64'),
+    }));
     await attempt('complete upload', () =>
       this.client.send(
         new CompleteMultipartUploadCommand({

@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto';
 import { buffer } from 'node:stream/consumers';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { findRefusal, makeBytes, RunningStorage } from '../test/running-storage';
@@ -10,12 +11,14 @@ beforeAll(async () => {
 afterAll(() => storage.stop());
 
 const contentType = 'model/stl';
+const hashOf = (bytes: Uint8Array | string): string => createHash('sha256').update(bytes).digest('hex');
 
 async function putPart(key: string, uploadId: string, partNumber: number, bytes: Uint8Array): Promise<UploadedPart> {
-  const address = await storage.client.presignPart({ key, uploadId, partNumber, sizeBytes: bytes.length, expiresSeconds: 60 });
-  const answer = await fetch(address, { method: 'PUT', body: bytes as Uint8Array<ArrayBuffer> });
+  const sha256 = hashOf(bytes);
+  const { url, headers } = await storage.client.presignPart({ key, uploadId, partNumber, sizeBytes: bytes.length, sha256, expiresSeconds: 60 });
+  const answer = await fetch(url, { method: 'PUT', headers, body: bytes as Uint8Array<ArrayBuffer> });
   if (!answer.ok) throw new Error(`part ${partNumber}: ${answer.status} ${await answer.text()}`);
-  return { partNumber, etag: answer.headers.get('etag') ?? '' };
+  return { partNumber, etag: answer.headers.get('etag') ?? '', sha256 };
 }
 
 describe('an upload in parts', () => {
@@ -51,6 +54,22 @@ describe('an upload in parts', () => {
     expect(await storage.client.headObject('again')).toEqual({ sizeBytes: 200 });
   });
 
+  it('lists the hash against which each part was checked, and takes no part with another or with none', async () => {
+    const uploadId = await storage.client.createMultipartUpload('hashed', { contentType });
+    const bytes = makeBytes(3000, 5);
+    await putPart('hashed', uploadId, 1, bytes);
+    expect(await storage.client.listParts('hashed', uploadId)).toMatchObject([{ partNumber: 1, sizeBytes: 3000, sha256: hashOf(bytes) }]);
+    const { url, headers } = await storage.client.presignPart({ key: 'hashed', uploadId, partNumber: 2, sizeBytes: 3000, sha256: hashOf(bytes), expiresSeconds: 60 });
+    const other = makeBytes(3000, 6);
+    expect(await (await fetch(url, { method: 'PUT', headers, body: other })).text()).toContain('BadDigest');
+    const lying = { 'x-amz-checksum-sha256': createHash('sha256').update(other).digest('base64') };
+    expect(await (await fetch(url, { method: 'PUT', headers: lying, body: other })).text()).toContain('SignatureDoesNotMatch');
+    expect((await fetch(url, { method: 'PUT', body: bytes })).status).toBe(403);
+    expect(await storage.client.listParts('hashed', uploadId)).toHaveLength(1);
+    await storage.client.completeMultipartUpload('hashed', uploadId, await storage.client.listParts('hashed', uploadId));
+    expect(await storage.client.headObject('hashed')).toEqual({ sizeBytes: 3000 });
+  });
+
   it('is not completed with a small part before the last, and stays open', async () => {
     const uploadId = await storage.client.createMultipartUpload('small', { contentType });
     const parts = [await putPart('small', uploadId, 1, makeBytes(smallestPartBytes - 1)), await putPart('small', uploadId, 2, makeBytes(1))];
@@ -77,10 +96,10 @@ describe('an upload in parts', () => {
 
   it('takes no late part once it is completed', async () => {
     const uploadId = await storage.client.createMultipartUpload('late', { contentType });
-    const late = await storage.client.presignPart({ key: 'late', uploadId, partNumber: 1, sizeBytes: 4, expiresSeconds: 60 });
+    const late = await storage.client.presignPart({ key: 'late', uploadId, partNumber: 1, sizeBytes: 4, sha256: hashOf('evil'), expiresSeconds: 60 });
     const part = await putPart('late', uploadId, 1, makeBytes(1000));
     await storage.client.completeMultipartUpload('late', uploadId, [part]);
-    expect((await fetch(late, { method: 'PUT', body: 'evil' })).status).toBe(404);
+    expect((await fetch(late.url, { method: 'PUT', headers: late.headers, body: 'evil' })).status).toBe(404);
     expect(await storage.client.headObject('late')).toEqual({ sizeBytes: 1000 });
     expect(await findRefusal(storage.client.completeMultipartUpload('late', uploadId, [part]))).toBe('no-such-upload');
   });

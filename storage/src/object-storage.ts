@@ -8,7 +8,7 @@ import {
   type ListObjectsV2CommandOutput,
   type S3Client,
 } from '@aws-sdk/client-s3';
-import { MultipartUploads, type OpenUpload, type PartPresignRequest, type StoredPart, type UploadedPart } from './multipart-upload';
+import { MultipartUploads, type OpenUpload, type PartPresigned, type PartPresignRequest, type StoredPart, type UploadedPart } from './multipart-upload';
 import { getObjectStream, type ObjectContent, type ObjectRange } from './object-reader';
 import { attempt, ObjectStorageError } from './object-storage-error';
 import { createClient, type ObjectStorageOptions } from './object-storage-options';
@@ -30,8 +30,8 @@ export class ObjectStorage {
     return this.uploads.create(key, options.contentType);
   }
 
-  /** An address to which a browser PUTs one part of exactly `sizeBytes`; the ETag is in the answer's header. */
-  presignPart(request: PartPresignRequest): Promise<string> {
+  /** An address to which a browser PUTs one part of exactly `sizeBytes` and `sha256`; the ETag is in the answer's header. */
+  presignPart(request: PartPresignRequest): Promise<PartPresigned> {
     return this.uploads.presignPart(request);
   }
 

@@ -31,9 +31,13 @@ afterAll(async () => {
 
 async function presign(sizeBytes: number, key = 'part', expiresSeconds = 60): Promise<{ address: string; uploadId: string }> {
   const uploadId = await storage.client.createMultipartUpload(key, { contentType: 'model/stl' });
-  return { address: await storage.client.presignPart({ key, uploadId, partNumber: 1, sizeBytes, expiresSeconds }), uploadId };
+  const { url } = await storage.client.presignPart({ key, uploadId, partNumber: 1, sizeBytes, sha256: createHash('sha256').update(body).digest('hex'), expiresSeconds });
+  return { address: url, uploadId };
 }
-const put = (address: string, body: string, headers: Record<string, string> = {}) => fetch(address, { method: 'PUT', body, headers });
+/** Whatever is sent, the hash that goes with it is the one that was signed: so it is the rest that is refused. */
+const body = '12345';
+const checksum = { 'x-amz-checksum-sha256': createHash('sha256').update(body).digest('base64') };
+const put = (address: string, sent: string, headers: Record<string, string> = {}) => fetch(address, { method: 'PUT', body: sent, headers: { ...checksum, ...headers } });
 const refusal = async (answer: Response) => `${answer.status} ${/<Code>(\w+)<\/Code>/.exec(await answer.text())?.[1] ?? ''}`;
 
 describe('a presigned address', () => {
@@ -110,7 +114,7 @@ describe('a body', () => {
     const part = what === 'a part' ? await presign(100_000, key) : undefined;
     const address = new URL(part?.address ?? (await getSignedUrl(sdk, new PutObjectCommand({ Bucket: 'meshes', Key: key, ContentLength: 100_000 }), { expiresIn: 60 })));
     const socket = net.connect(Number(address.port), address.hostname);
-    socket.write(`PUT ${address.pathname}${address.search} HTTP/1.1\r\nHost: ${address.host}\r\nContent-Length: 100000\r\n\r\n`);
+    socket.write(`PUT ${address.pathname}${address.search} HTTP/1.1\r\nHost: ${address.host}\r\nContent-Length: 100000\r\n${part ? `x-amz-checksum-sha256: ${checksum['x-amz-checksum-sha256']}\r\n` : ''}\r\n`);
     socket.write(makeBytes(60_000));
     await vi.waitFor(async () => expect(await storage.listIncoming()).toHaveLength(1));
     socket.destroy();

@@ -1,5 +1,5 @@
-import { randomUUID } from 'node:crypto';
-import type { Part, Project, Session, Setting, Upload } from '@masswright/contracts';
+import { createHash, randomUUID } from 'node:crypto';
+import type { CompleteUploadRequest, IntakeSetting, Part, PartGrants, Project, Session, Upload } from '@masswright/contracts';
 import { checkAgainstDocument } from './api-document';
 
 export interface Answer<Body = unknown> {
@@ -9,6 +9,13 @@ export interface Answer<Body = unknown> {
 }
 
 export const password = 'a long enough password';
+
+export const hashOf = (bytes: Uint8Array): string => createHash('sha256').update(bytes).digest('hex');
+
+/** A file's parts as its upload wants them. */
+export function cutIntoParts(bytes: Uint8Array, { partCount, partSizeBytes }: Pick<Upload, 'partCount' | 'partSizeBytes'>): Uint8Array<ArrayBuffer>[] {
+  return Array.from({ length: partCount }, (_, index) => new Uint8Array(bytes.slice(index * partSizeBytes, (index + 1) * partSizeBytes)));
+}
 
 /** Someone who uses the api as the web app does: with a cookie, an origin, and every answer held against the OpenAPI document. */
 export class ApiUser {
@@ -69,23 +76,23 @@ export class ApiUser {
   /** Sends a file's bytes to the storage in its parts, as a browser does, without completing the upload. */
   async send(projectId: string, fileName: string, bytes: Uint8Array): Promise<Upload> {
     const upload = await this.expect<Upload>('POST', `/projects/${projectId}/uploads`, { fileName, sizeBytes: bytes.length });
-    const partNumbers = Array.from({ length: upload.partCount }, (_, index) => index + 1);
-    const { grants } = await this.expect<{ grants: { partNumber: number; url: string }[] }>('POST', `/uploads/${upload.id}/part-grants`, { partNumbers });
-    for (const { partNumber, url } of grants) {
-      const begin = (partNumber - 1) * upload.partSizeBytes;
-      const sent = await fetch(url, { method: 'PUT', body: bytes.slice(begin, begin + upload.partSizeBytes) });
+    const bodies = cutIntoParts(bytes, upload);
+    const parts = bodies.map((body, index) => ({ partNumber: index + 1, sha256: hashOf(body) }));
+    const { grants } = await this.expect<PartGrants>('POST', `/uploads/${upload.id}/part-grants`, { parts });
+    for (const { partNumber, url, headers } of grants) {
+      const sent = await fetch(url, { method: 'PUT', headers, body: bodies[partNumber - 1] ?? null });
       if (!sent.ok) throw new Error(`Part ${partNumber} was refused: ${sent.status} ${await sent.text()}`);
     }
     return upload;
   }
 
-  complete(uploadId: string, setting: Pick<Setting, 'lengthUnit' | 'densityKgM3'> = { lengthUnit: 'mm', densityKgM3: 2700 }, partName?: string): Promise<Part> {
-    return this.expect<Part>('POST', `/uploads/${uploadId}/completion`, { setting, partName });
+  complete(uploadId: string, setting: IntakeSetting = { lengthUnit: 'mm', densityKgM3: 2700 }, more: Omit<CompleteUploadRequest, 'setting'> = {}): Promise<Part> {
+    return this.expect<Part>('POST', `/uploads/${uploadId}/completion`, { setting, ...more });
   }
 
-  async addMesh(projectId: string, fileName: string, bytes: Uint8Array, setting?: Pick<Setting, 'lengthUnit' | 'densityKgM3'>): Promise<Part> {
+  async addMesh(projectId: string, fileName: string, bytes: Uint8Array, setting?: IntakeSetting, more?: Omit<CompleteUploadRequest, 'setting'>): Promise<Part> {
     const upload = await this.send(projectId, fileName, bytes);
-    return this.complete(upload.id, setting);
+    return this.complete(upload.id, setting, more);
   }
 
   /** Waits until a part's file is measured or refused. */

@@ -14,6 +14,7 @@ import { WorkQueues } from './queue/work-queues';
 import { OutboxRelay } from './relay/outbox-relay';
 import { AbandonedUploads } from './schedules/abandoned-uploads';
 import { Housekeeping } from './schedules/housekeeping';
+import { MissingSummaries } from './schedules/missing-summaries';
 
 @Module({})
 export class WorkerModule {
@@ -22,7 +23,7 @@ export class WorkerModule {
       module: WorkerModule,
       imports: [PlatformModule.with(settings, logger)],
       controllers: [HealthController],
-      providers: [WorkQueues, MeasuringThreads, MeasuringHandler, Mailer, MailHandler, ObjectDeletionHandler, QueueConsumers, OutboxRelay, AbandonedUploads, Housekeeping, Metrics],
+      providers: [WorkQueues, MeasuringThreads, MeasuringHandler, Mailer, MailHandler, ObjectDeletionHandler, QueueConsumers, OutboxRelay, AbandonedUploads, MissingSummaries, Housekeeping, Metrics],
     };
   }
 }

@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm';
-import { and, eq, inArray } from 'drizzle-orm';
+import { and, eq, inArray, isNull, ne, or } from 'drizzle-orm';
 import type { Integrals, Measurement, MeasuringError, MeasuringRun, Symmetric3, Vector3 } from '@masswright/contracts';
 import { measurements, measuringRuns, parts, revisions, uploads } from '../schema';
 import type { Transaction } from '../tenancy/database';
@@ -15,30 +15,94 @@ export interface TakenRun {
   uploadId: string;
   objectKey: string;
   sizeBytes: number;
+  /** Known from an earlier take-up of the run; null where it must be found out. */
+  sha256: Buffer | null;
+  /** Another stored file of the organisation has as many bytes: this one may be known, so its hash is found out before it is measured. */
+  hashFirst: boolean;
+}
+
+/** Held until the transaction ends by whoever decides about files of one size: two of the same bytes must not both be measured. */
+async function holdFileSize(tx: Transaction, sizeBytes: number): Promise<void> {
+  await tx.execute(sql`select pg_advisory_xact_lock(hashtextextended('files of ' || current_organisation_id()::text || ' of ' || ${String(sizeBytes)}, 0))`);
 }
 
 /** Takes up a run that isn't finished and raises its fence, which shuts out whoever had it before. Undefined when it is finished. */
 export async function takeRun(tx: Transaction, runId: string): Promise<TakenRun | undefined> {
-  const [taken] = await tx
-    .update(measuringRuns)
-    .set({ fence: sql`${measuringRuns.fence} + 1`, unendedTakeUps: sql`${measuringRuns.unendedTakeUps} + 1`, state: 'running', stage: 'reading', progress: 0, startedAt: sql`now()` })
-    .where(and(eq(measuringRuns.id, runId), inArray(measuringRuns.state, ['queued', 'running'])))
-    .returning({ fence: measuringRuns.fence, unendedTakeUps: measuringRuns.unendedTakeUps, revisionId: measuringRuns.revisionId });
-  if (taken === undefined) return undefined;
   const [found] = await tx
     .select({
+      revisionId: revisions.id,
       projectId: parts.projectId,
       partId: parts.id,
       uploadId: uploads.id,
       objectKey: uploads.objectKey,
       sizeBytes: uploads.sizeBytes,
+      sha256: uploads.sha256,
     })
-    .from(revisions)
+    .from(measuringRuns)
+    .innerJoin(revisions, and(eq(revisions.organisationId, measuringRuns.organisationId), eq(revisions.id, measuringRuns.revisionId)))
     .innerJoin(parts, and(eq(parts.organisationId, revisions.organisationId), eq(parts.id, revisions.partId)))
     .innerJoin(uploads, and(eq(uploads.organisationId, revisions.organisationId), eq(uploads.id, revisions.uploadId)))
-    .where(eq(revisions.id, taken.revisionId));
-  if (found === undefined) throw new Error('The revision of a run is gone.');
-  return { runId, ...taken, ...found };
+    .where(eq(measuringRuns.id, runId));
+  if (found === undefined) return undefined;
+  await holdFileSize(tx, found.sizeBytes);
+  const hashFirst = await isSizeShared(tx, found.uploadId, found.sizeBytes);
+  const [taken] = await tx
+    .update(measuringRuns)
+    .set({
+      fence: sql`${measuringRuns.fence} + 1`,
+      unendedTakeUps: sql`${measuringRuns.unendedTakeUps} + 1`,
+      state: 'running',
+      stage: hashFirst ? 'hashing' : 'reading',
+      progress: 0,
+      startedAt: sql`now()`,
+    })
+    .where(and(eq(measuringRuns.id, runId), inArray(measuringRuns.state, ['queued', 'running'])))
+    .returning({ fence: measuringRuns.fence, unendedTakeUps: measuringRuns.unendedTakeUps });
+  return taken === undefined ? undefined : { runId, ...taken, ...found, hashFirst };
+}
+
+/** Whether another stored file of the organisation has as many bytes. */
+async function isSizeShared(tx: Transaction, uploadId: string, sizeBytes: number): Promise<boolean> {
+  const rows = await tx
+    .select({ id: uploads.id })
+    .from(uploads)
+    .where(and(eq(uploads.sizeBytes, sizeBytes), eq(uploads.state, 'stored'), ne(uploads.id, uploadId)))
+    .limit(1);
+  return rows.length > 0;
+}
+
+/** known: the measurement that the organisation has of these bytes. claimed: this run may measure them. wait: another is about to. lost: another worker has this run. */
+export type MeasuringClaim = { kind: 'known'; measurementId: string } | { kind: 'claimed' | 'wait' | 'lost' };
+
+/** Notes the hash of a run's file and decides who measures these bytes: in an organisation, nothing is measured twice. */
+export async function claimMeasuring(tx: Transaction, run: TakenRun, sha256: Buffer, measuringVersion: string): Promise<MeasuringClaim> {
+  await holdFileSize(tx, run.sizeBytes);
+  await tx.update(uploads).set({ sha256 }).where(eq(uploads.id, run.uploadId));
+  const measurementId = await findMeasurement(tx, sha256, measuringVersion);
+  if (measurementId !== undefined) return { kind: 'known', measurementId };
+  if (await isBeingMeasured(tx, run, sha256)) return { kind: 'wait' };
+  const claimed = await tx.update(measuringRuns).set({ stage: 'measuring' }).where(held(run)).returning({ id: measuringRuns.id });
+  return { kind: claimed.length > 0 ? 'claimed' : 'lost' };
+}
+
+/** Whether a run that is past its hashing has the same bytes, or bytes that are not known yet. */
+async function isBeingMeasured(tx: Transaction, run: TakenRun, sha256: Buffer): Promise<boolean> {
+  const rows = await tx
+    .select({ id: measuringRuns.id })
+    .from(measuringRuns)
+    .innerJoin(revisions, and(eq(revisions.organisationId, measuringRuns.organisationId), eq(revisions.id, measuringRuns.revisionId)))
+    .innerJoin(uploads, and(eq(uploads.organisationId, revisions.organisationId), eq(uploads.id, revisions.uploadId)))
+    .where(
+      and(
+        ne(measuringRuns.id, run.runId),
+        eq(measuringRuns.state, 'running'),
+        ne(measuringRuns.stage, 'hashing'),
+        eq(uploads.sizeBytes, run.sizeBytes),
+        or(isNull(uploads.sha256), eq(uploads.sha256, sha256)),
+      ),
+    )
+    .limit(1);
+  return rows.length > 0;
 }
 
 const held = (run: Pick<TakenRun, 'runId' | 'fence'>) =>
@@ -89,6 +153,7 @@ export function presentMeasurement(row: MeasurementRow): Measurement {
   return {
     measuringVersion: row.measuringVersion,
     format: row.format,
+    compression: row.compression,
     facets: row.facets,
     origin: vectorOf(row.origin),
     boundingBox: { min: vectorOf(row.boxMin), max: vectorOf(row.boxMax) },
@@ -123,6 +188,7 @@ export async function keepMeasurement(
       sha256,
       measuringVersion: measurement.measuringVersion,
       format: measurement.format,
+      compression: measurement.compression,
       facets: measurement.facets,
       origin: measurement.origin,
       boxMin: measurement.boundingBox.min,
@@ -150,6 +216,18 @@ export async function keepMeasurement(
   const id = await findMeasurement(tx, sha256, measurement.measuringVersion);
   if (id === undefined) throw new Error('A measurement conflicts with one that cannot be seen.');
   return id;
+}
+
+/** Puts a run that has ended, or waits, at the beginning again: its file is to be read anew. Gives its id. */
+export async function restartRun(tx: Transaction, revisionId: string): Promise<string> {
+  const rows = await tx
+    .update(measuringRuns)
+    .set({ state: 'queued', stage: 'waiting', progress: 0, fence: sql`${measuringRuns.fence} + 1`, unendedTakeUps: 0, measurementId: null, errorCode: null, errorMessage: null, errorByte: null, errorLine: null, startedAt: null, finishedAt: null })
+    .where(eq(measuringRuns.revisionId, revisionId))
+    .returning({ id: measuringRuns.id });
+  const [run] = rows;
+  if (run === undefined) throw new Error('A revision has no run.');
+  return run.id;
 }
 
 /** The id of the organisation's measurement of a file, if there is one. */

@@ -6,6 +6,7 @@ import type { Transaction } from '../tenancy/database';
 export interface ProjectRow {
   id: string;
   name: string;
+  /** Deleted ones left out. */
   parts: number;
   createdAt: Date;
 }
@@ -14,7 +15,7 @@ const columns = {
   id: projects.id,
   name: projects.name,
   // Written out: in a query of one table drizzle leaves the tables' names away, and then `id` would be the part's.
-  parts: sql<number>`(select count(*)::int from parts where parts.organisation_id = projects.organisation_id and parts.project_id = projects.id)`,
+  parts: sql<number>`(select count(*)::int from parts where parts.organisation_id = projects.organisation_id and parts.project_id = projects.id and parts.deleted_at is null)`,
   createdAt: projects.createdAt,
 };
 

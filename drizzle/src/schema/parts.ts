@@ -5,6 +5,7 @@ import {
   check,
   doublePrecision,
   foreignKey,
+  index,
   integer,
   jsonb,
   pgTable,
@@ -13,7 +14,7 @@ import {
   uniqueIndex,
   uuid,
 } from 'drizzle-orm/pg-core';
-import type { Axis, Finding, MeasuringRun, MeshFormat, Setting } from '@masswright/contracts';
+import type { Axis, Finding, MeasuringRun, MeshCompression, MeshFormat, Setting } from '@masswright/contracts';
 import { at, bytea, createdAt, ofOrganisation, primaryId } from './columns';
 import { organisations, users } from './people';
 
@@ -34,6 +35,9 @@ export const projects = pgTable(
   ],
 );
 
+/** open: being sent. stored: a revision. cancelled: given up. discarded: its revision was deleted for good, and its object with it. */
+export type UploadState = 'open' | 'stored' | 'cancelled' | 'discarded';
+
 export const uploads = pgTable(
   'uploads',
   {
@@ -41,12 +45,14 @@ export const uploads = pgTable(
     organisationId: ofOrganisation(),
     projectId: uuid('project_id').notNull(),
     fileName: text('file_name').notNull(),
+    /** Where in the dropped folder the file lay: a label. */
+    folder: text('folder').notNull().default(''),
     sizeBytes: bigint('size_bytes', { mode: 'number' }).notNull(),
     partSizeBytes: integer('part_size_bytes').notNull(),
     /** One key an upload, never used again; it says nothing of the file. */
     objectKey: text('object_key').notNull(),
     multipartId: text('multipart_id').notNull(),
-    state: text('state').$type<'open' | 'stored' | 'cancelled'>().notNull().default('open'),
+    state: text('state').$type<UploadState>().notNull().default('open'),
     /** Known once the worker has read the stored bytes. */
     sha256: bytea('sha256'),
     createdAt: createdAt(),
@@ -61,7 +67,11 @@ export const uploads = pgTable(
       columns: [table.organisationId, table.projectId],
       foreignColumns: [projects.organisationId, projects.id],
     }),
-    check('uploads_state_is_known', sql`${table.state} in ('open', 'stored', 'cancelled')`),
+    check('uploads_state_is_known', sql`${table.state} in ('open', 'stored', 'cancelled', 'discarded')`),
+    // The same bytes are looked for by their hash, and before that is known by their number.
+    index('uploads_sha256_index').on(table.organisationId, table.sha256),
+    index('uploads_size_index').on(table.organisationId, table.sizeBytes),
+    index('uploads_open_index').on(table.organisationId, table.projectId, table.createdBy).where(sql`${table.state} = 'open'`),
   ],
 );
 
@@ -74,8 +84,12 @@ export const parts = pgTable(
     number: integer('number').notNull(),
     name: text('name').notNull(),
     createdAt: createdAt(),
+    /** Deleted, with a way back for thirty days; then the worker forgets it. */
+    deletedAt: at('deleted_at'),
+    deletedBy: uuid('deleted_by').references(() => users.id),
   },
   (table) => [
+    index('parts_deleted_index').on(table.deletedAt).where(sql`${table.deletedAt} is not null`),
     unique('parts_organisation_id_id_key').on(table.organisationId, table.id),
     unique('parts_number_key').on(table.organisationId, table.projectId, table.number),
     foreignKey({
@@ -95,6 +109,8 @@ export const revisions = pgTable(
     /** 1, 2, 3 …, shown as A, B, C …. */
     ordinal: integer('ordinal').notNull(),
     uploadId: uuid('upload_id').notNull(),
+    /** Why there is a new revision, in the words of who made it. */
+    reason: text('reason').notNull().default(''),
     createdAt: createdAt(),
     createdBy: uuid('created_by').notNull(),
   },
@@ -128,7 +144,16 @@ export const settings = pgTable(
     revisionId: uuid('revision_id').primaryKey(),
     organisationId: ofOrganisation(),
     lengthUnit: text('length_unit').$type<NonNullable<Setting['lengthUnit']>>(),
+    /** When and by whom the unit was stated for this file; null where it was taken over from the revision before. */
+    unitStatedAt: at('unit_stated_at'),
+    unitStatedBy: uuid('unit_stated_by').references(() => users.id),
     densityKgM3: doublePrecision('density_kg_m3'),
+    densitySpreadKgM3: doublePrecision('density_spread_kg_m3'),
+    /** Of the starter library, or of the organisation's own (then the text of its id); the name is that of the time of the choice. */
+    materialId: text('material_id'),
+    materialName: text('material_name'),
+    weighedMassKg: doublePrecision('weighed_mass_kg'),
+    weighedMassUncertaintyKg: doublePrecision('weighed_mass_uncertainty_kg'),
     axis: jsonb('axis').$type<Axis>().notNull(),
     driveSpeedRadPerS: doublePrecision('drive_speed_rad_per_s'),
     driveTimeS: doublePrecision('drive_time_s'),
@@ -142,7 +167,11 @@ export const settings = pgTable(
       columns: [table.organisationId, table.revisionId],
       foreignColumns: [revisions.organisationId, revisions.id],
     }),
+    index('settings_material_index').on(table.organisationId, table.materialId),
     check('settings_density_is_positive', sql`${table.densityKgM3} > 0`),
+    check('settings_material_has_a_name', sql`(${table.materialId} is null) = (${table.materialName} is null)`),
+    check('settings_weighing_is_whole', sql`(${table.weighedMassKg} is null) = (${table.weighedMassUncertaintyKg} is null)`),
+    check('settings_unit_stated_is_whole', sql`(${table.unitStatedAt} is null) = (${table.unitStatedBy} is null)`),
   ],
 );
 
@@ -155,6 +184,7 @@ export const measurements = pgTable(
     sha256: bytea('sha256').notNull(),
     measuringVersion: text('measuring_version').notNull(),
     format: text('format').$type<MeshFormat>().notNull(),
+    compression: text('compression').$type<MeshCompression>(),
     facets: integer('facets').notNull(),
     origin: doublePrecision('origin').array().notNull(),
     boxMin: doublePrecision('box_min').array().notNull(),
@@ -223,7 +253,7 @@ export const measuringRuns = pgTable(
       foreignColumns: [measurements.organisationId, measurements.id],
     }),
     check('measuring_runs_state_is_known', sql`${table.state} in ('queued', 'running', 'done', 'failed')`),
-    check('measuring_runs_stage_is_known', sql`${table.stage} in ('waiting', 'reading', 'measuring', 'storing')`),
+    check('measuring_runs_stage_is_known', sql`${table.stage} in ('waiting', 'hashing', 'reading', 'measuring', 'storing')`),
     check(
       'measuring_runs_end_has_a_reason',
       sql`(${table.state} = 'done') = (${table.measurementId} is not null) and (${table.state} = 'failed') = (${table.errorCode} is not null)`,

@@ -263,23 +263,6 @@ export interface paths {
         patch: operations["projects.rename"];
         trace?: never;
     };
-    "/api/v1/projects/{projectId}/parts": {
-        parameters: {
-            query?: never;
-            header?: never;
-            path?: never;
-            cookie?: never;
-        };
-        /** The parts of a project, by number */
-        get: operations["parts.list"];
-        put?: never;
-        post?: never;
-        delete?: never;
-        options?: never;
-        head?: never;
-        patch?: never;
-        trace?: never;
-    };
     "/api/v1/parts/{partId}": {
         parameters: {
             query?: never;
@@ -315,6 +298,23 @@ export interface paths {
         patch: operations["parts.changeSetting"];
         trace?: never;
     };
+    "/api/v1/parts/{partId}/run": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /** Read a file that could not be measured once more */
+        post: operations["parts.measureAgain"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
     "/api/v1/parts/{partId}/statement": {
         parameters: {
             query?: never;
@@ -339,10 +339,45 @@ export interface paths {
             path?: never;
             cookie?: never;
         };
-        get?: never;
+        /** What you began to send to a project and did not finish */
+        get: operations["uploads.listOpen"];
         put?: never;
         /** Announce a mesh file to be sent */
         post: operations["uploads.create"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/v1/projects/{projectId}/name-matches": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /** Parts whose file has one of these names: candidates for a next revision */
+        post: operations["uploads.findNameMatches"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/v1/storage-use": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /** What the organisation’s files take in the storage, and how much they may */
+        get: operations["uploads.getStorageUse"];
+        put?: never;
+        post?: never;
         delete?: never;
         options?: never;
         head?: never;
@@ -393,7 +428,7 @@ export interface paths {
         };
         get?: never;
         put?: never;
-        /** Make a part of a wholly sent file and have it measured */
+        /** Make a part, or a part’s next revision, of a wholly sent file and have it measured */
         post: operations["uploads.complete"];
         delete?: never;
         options?: never;
@@ -459,7 +494,7 @@ export interface components {
             title: string;
             status: number;
             /** @enum {string} */
-            code: "bad-request" | "invalid-input" | "not-signed-in" | "forbidden" | "cross-site" | "not-found" | "conflict" | "stale-version" | "link-expired" | "too-large" | "too-many-attempts" | "upload-incomplete" | "unavailable" | "internal";
+            code: "bad-request" | "invalid-input" | "not-signed-in" | "forbidden" | "cross-site" | "not-found" | "conflict" | "stale-version" | "link-expired" | "too-large" | "quota-exceeded" | "too-many-attempts" | "upload-incomplete" | "unavailable" | "internal";
             detail: string;
             requestId: string;
             fields: {
@@ -559,12 +594,17 @@ export interface components {
             projectName: string;
             number: number;
             name: string;
+            /** @enum {string} */
+            state: "measuring" | "failed" | "not-defensible" | "unit-missing" | "unit-doubt" | "density-missing" | "weight-disagrees" | "ready";
+            deletedAt: string | null;
             revision: {
                 /** Format: uuid */
                 id: string;
                 letter: string;
                 fileName: string;
+                folder: string;
                 sizeBytes: number;
+                reason: string;
                 /** Format: date-time */
                 createdAt: string;
                 createdBy: string;
@@ -572,11 +612,11 @@ export interface components {
                     /** @enum {string} */
                     state: "queued" | "running" | "done" | "failed";
                     /** @enum {string} */
-                    stage: "waiting" | "reading" | "measuring" | "storing";
+                    stage: "waiting" | "hashing" | "reading" | "measuring" | "storing";
                     progress: number;
                     error: {
                         /** @enum {string} */
-                        code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "file-missing" | "gave-up";
+                        code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "too-many-vertices" | "polygon-too-large" | "vertex-missing" | "archive-damaged" | "too-large-expanded" | "file-missing" | "gave-up";
                         message: string;
                         at: {
                             byte?: number;
@@ -589,6 +629,15 @@ export interface components {
                 setting: {
                     lengthUnit: ("micron" | "mm" | "cm" | "m" | "inch" | "foot") | null;
                     densityKgM3: number | null;
+                    densitySpreadKgM3: number | null;
+                    material: {
+                        id: string;
+                        name: string;
+                    } | null;
+                    weighing: {
+                        massKg: number;
+                        uncertaintyKg: number;
+                    } | null;
                     axis: {
                         /** @enum {string} */
                         kind: "mesh";
@@ -620,13 +669,20 @@ export interface components {
                     /** Format: date-time */
                     changedAt: string;
                     changedBy: string;
+                    unitStated: {
+                        /** Format: date-time */
+                        at: string;
+                        by: string;
+                    } | null;
                 };
                 sha256: string | null;
-                format: ("stl-binary" | "stl-ascii") | null;
+                format: ("stl-binary" | "stl-ascii" | "obj") | null;
+                compression: "gzip" | null;
                 measurement: {
                     measuringVersion: string;
                     /** @enum {string} */
-                    format: "stl-binary" | "stl-ascii";
+                    format: "stl-binary" | "stl-ascii" | "obj";
+                    compression: "gzip" | null;
                     facets: number;
                     origin: [
                         number,
@@ -689,13 +745,38 @@ export interface components {
                         defensible: boolean;
                         findings: {
                             /** @enum {string} */
-                            kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals";
+                            kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons";
                             count: number;
                             facets: number[];
                         }[];
                     };
                 } | null;
             };
+            revisions: {
+                /** Format: uuid */
+                id: string;
+                letter: string;
+                fileName: string;
+                reason: string;
+                /** Format: date-time */
+                createdAt: string;
+                createdBy: string;
+            }[];
+            unitDoubt: {
+                /** @enum {string} */
+                lengthUnit: "micron" | "mm" | "cm" | "m" | "inch" | "foot";
+                volumeRatio: number;
+            } | null;
+            sameBytes: {
+                /** Format: uuid */
+                projectId: string;
+                projectName: string;
+                /** Format: uuid */
+                partId: string;
+                number: number;
+                name: string;
+                letter: string;
+            }[];
             can: {
                 edit: boolean;
             };
@@ -704,8 +785,16 @@ export interface components {
             name: string;
         };
         ChangeSettingRequest: {
-            lengthUnit?: ("micron" | "mm" | "cm" | "m" | "inch" | "foot") | null;
             densityKgM3?: number | null;
+            densitySpreadKgM3?: number | null;
+            material?: {
+                id: string;
+            } | null;
+            lengthUnit?: ("micron" | "mm" | "cm" | "m" | "inch" | "foot") | null;
+            weighing?: {
+                massKg: number;
+                uncertaintyKg: number;
+            } | null;
             axis?: {
                 /** @enum {string} */
                 kind: "mesh";
@@ -737,6 +826,8 @@ export interface components {
         };
         CreateUploadRequest: {
             fileName: string;
+            /** @default  */
+            folder: string;
             sizeBytes: number;
         };
         Upload: {
@@ -745,24 +836,70 @@ export interface components {
             /** Format: uuid */
             projectId: string;
             fileName: string;
+            folder: string;
             sizeBytes: number;
             /** @enum {string} */
-            state: "open" | "stored" | "cancelled";
+            state: "open" | "stored" | "cancelled" | "discarded";
+            /** Format: date-time */
+            createdAt: string;
             partSizeBytes: number;
             partCount: number;
             storedParts: {
                 partNumber: number;
                 sizeBytes: number;
-                etag: string;
+                sha256: string | null;
             }[];
         };
+        OpenUploads: {
+            items: {
+                /** Format: uuid */
+                id: string;
+                /** Format: uuid */
+                projectId: string;
+                fileName: string;
+                folder: string;
+                sizeBytes: number;
+                /** @enum {string} */
+                state: "open" | "stored" | "cancelled" | "discarded";
+                /** Format: date-time */
+                createdAt: string;
+                partSizeBytes: number;
+                partCount: number;
+            }[];
+        };
+        FindNameMatchesRequest: {
+            fileNames: string[];
+        };
+        NameMatches: {
+            matches: {
+                fileName: string;
+                /** Format: uuid */
+                partId: string;
+                number: number;
+                name: string;
+                letter: string;
+                storedFileName: string;
+                sameCase: boolean;
+            }[];
+        };
+        StorageUse: {
+            usedBytes: number;
+            limitBytes: number;
+            largestFileBytes: number;
+        };
         GrantPartsRequest: {
-            partNumbers: number[];
+            parts: {
+                partNumber: number;
+                sha256: string;
+            }[];
         };
         PartGrants: {
             grants: {
                 partNumber: number;
                 url: string;
+                headers: {
+                    [key: string]: string;
+                };
                 /** Format: date-time */
                 expiresAt: string;
             }[];
@@ -770,9 +907,19 @@ export interface components {
         CompleteUploadRequest: {
             partName?: string;
             setting: {
+                densityKgM3?: number | null;
+                densitySpreadKgM3?: number | null;
+                material?: {
+                    id: string;
+                } | null;
                 lengthUnit: ("micron" | "mm" | "cm" | "m" | "inch" | "foot") | null;
-                densityKgM3: number | null;
             };
+            revisionOf?: {
+                /** Format: uuid */
+                partId: string;
+                reason: string;
+            };
+            partHashes?: string[];
         };
     };
     responses: never;
@@ -1617,139 +1764,6 @@ export interface operations {
             };
         };
     };
-    "parts.list": {
-        parameters: {
-            query?: {
-                after?: string;
-                limit?: number;
-            };
-            header?: never;
-            path: {
-                projectId: string;
-            };
-            cookie?: never;
-        };
-        requestBody?: never;
-        responses: {
-            /** @description The parts of a project, by number */
-            200: {
-                headers: {
-                    [name: string]: unknown;
-                };
-                content: {
-                    "application/json": {
-                        items: {
-                            /** Format: uuid */
-                            id: string;
-                            /** Format: uuid */
-                            projectId: string;
-                            number: number;
-                            name: string;
-                            revision: {
-                                /** Format: uuid */
-                                id: string;
-                                letter: string;
-                                fileName: string;
-                                sizeBytes: number;
-                                /** Format: date-time */
-                                createdAt: string;
-                                createdBy: string;
-                                run: {
-                                    /** @enum {string} */
-                                    state: "queued" | "running" | "done" | "failed";
-                                    /** @enum {string} */
-                                    stage: "waiting" | "reading" | "measuring" | "storing";
-                                    progress: number;
-                                    error: {
-                                        /** @enum {string} */
-                                        code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "file-missing" | "gave-up";
-                                        message: string;
-                                        at: {
-                                            byte?: number;
-                                            line?: number;
-                                        } | null;
-                                    } | null;
-                                    finishedAt: string | null;
-                                    durationMs: number | null;
-                                };
-                                setting: {
-                                    lengthUnit: ("micron" | "mm" | "cm" | "m" | "inch" | "foot") | null;
-                                    densityKgM3: number | null;
-                                    axis: {
-                                        /** @enum {string} */
-                                        kind: "mesh";
-                                        /** @enum {string} */
-                                        along: "x" | "y" | "z";
-                                    } | {
-                                        /** @enum {string} */
-                                        kind: "principal";
-                                        number: 1 | 2 | 3;
-                                    } | {
-                                        /** @enum {string} */
-                                        kind: "typed";
-                                        pointM: [
-                                            number,
-                                            number,
-                                            number
-                                        ];
-                                        direction: [
-                                            number,
-                                            number,
-                                            number
-                                        ];
-                                    };
-                                    drive: {
-                                        speedRadPerS: number;
-                                        timeS: number;
-                                    } | null;
-                                    version: number;
-                                    /** Format: date-time */
-                                    changedAt: string;
-                                    changedBy: string;
-                                };
-                            };
-                            soundness: {
-                                defensible: boolean;
-                                closed: boolean;
-                                oriented: boolean;
-                                turned: boolean;
-                            } | null;
-                            sizeM: [
-                                number,
-                                number,
-                                number
-                            ] | null;
-                            massKg: number | null;
-                            principalMomentsKgM2: [
-                                number,
-                                number,
-                                number
-                            ] | null;
-                        }[];
-                        next: string | null;
-                    };
-                };
-            };
-            /** @description Refused; `code` says why. */
-            "4XX": {
-                headers: {
-                    [name: string]: unknown;
-                };
-                content: {
-                    "application/problem+json": components["schemas"]["Problem"];
-                };
-            };
-            /** @description Failed; worth trying again. */
-            "5XX": {
-                headers: {
-                    [name: string]: unknown;
-                };
-                content: {
-                    "application/problem+json": components["schemas"]["Problem"];
-                };
-            };
-        };
-    };
     "parts.get": {
         parameters: {
             query?: never;
@@ -1878,6 +1892,46 @@ export interface operations {
             };
         };
     };
+    "parts.measureAgain": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                partId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description Read a file that could not be measured once more */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["Part"];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
     "parts.getStatement": {
         parameters: {
             query?: never;
@@ -1901,7 +1955,7 @@ export interface operations {
                         file: string;
                         sha256: string;
                         /** @enum {string} */
-                        format: "stl-binary" | "stl-ascii";
+                        format: "stl-binary" | "stl-ascii" | "obj";
                         /** @enum {string} */
                         lengthUnit: "micron" | "mm" | "cm" | "m" | "inch" | "foot";
                         facets: number;
@@ -1918,12 +1972,20 @@ export interface operations {
                             defensible: boolean;
                             findings: {
                                 /** @enum {string} */
-                                kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals";
+                                kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons";
                                 count: number;
                                 facets: number[];
                             }[];
                         };
+                        material: string | null;
                         densityKgM3: number | null;
+                        weighing: {
+                            massKg: number;
+                            uncertaintyKg: number;
+                            impliedDensityKgM3: number;
+                            /** @enum {string} */
+                            verdict: "agrees" | "unchecked" | "disagrees";
+                        } | null;
                         volumeM3: number | null;
                         areaM2: number;
                         massKg: number | null;
@@ -2002,7 +2064,7 @@ export interface operations {
                         file: string;
                         error: {
                             /** @enum {string} */
-                            code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "file-missing" | "gave-up";
+                            code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "too-many-vertices" | "polygon-too-large" | "vertex-missing" | "archive-damaged" | "too-large-expanded" | "file-missing" | "gave-up" | "not-measured-yet" | "unit-not-stated";
                             message: string;
                             at: {
                                 byte?: number;
@@ -2010,6 +2072,46 @@ export interface operations {
                             } | null;
                         };
                     };
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "uploads.listOpen": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                projectId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description What you began to send to a project and did not finish */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["OpenUploads"];
                 };
             };
             /** @description Refused; `code` says why. */
@@ -2054,6 +2156,88 @@ export interface operations {
                 };
                 content: {
                     "application/json": components["schemas"]["Upload"];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "uploads.findNameMatches": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                projectId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": components["schemas"]["FindNameMatchesRequest"];
+            };
+        };
+        responses: {
+            /** @description Parts whose file has one of these names: candidates for a next revision */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["NameMatches"];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "uploads.getStorageUse": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description What the organisation’s files take in the storage, and how much they may */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["StorageUse"];
                 };
             };
             /** @description Refused; `code` says why. */
@@ -2213,7 +2397,7 @@ export interface operations {
             };
         };
         responses: {
-            /** @description Make a part of a wholly sent file and have it measured */
+            /** @description Make a part, or a part’s next revision, of a wholly sent file and have it measured */
             201: {
                 headers: {
                     [name: string]: unknown;

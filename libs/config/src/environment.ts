@@ -60,6 +60,7 @@ const shared = {
     .default('info'),
   METRICS_TOKEN: z.string().min(16, { error: 'should have at least 16 characters' }).optional(),
   UPLOAD_MAX_BYTES: integer(1, 5_000_000_000_000, 2_147_483_648),
+  ORGANISATION_MAX_BYTES: integer(1, 9_000_000_000_000_000, 107_374_182_400),
   SHUTDOWN_DEADLINE_MS: integer(100, 600_000, 10_000),
 };
 

@@ -6,10 +6,10 @@ import { meshCompression, measurement, measuringError, meshFormat } from './meas
 export const partName = z.string().trim().min(1, 'Give the part a name.').max(200, 'A name has at most 200 characters.');
 export const revisionReason = z.string().trim().max(500, 'A reason has at most 500 characters.');
 
-/** How far the worker is with a file. `progress` runs from 0 to 1 within the whole run. */
+/** How far the worker is with a file. `progress` runs from 0 to 1 within the whole run. hashing: finding out whether its bytes were measured before. */
 export const measuringRun = z.object({
   state: z.enum(['queued', 'running', 'done', 'failed']),
-  stage: z.enum(['waiting', 'reading', 'measuring', 'storing']),
+  stage: z.enum(['waiting', 'hashing', 'reading', 'measuring', 'storing']),
   progress: z.number().min(0).max(1),
   error: measuringError.nullable(),
   finishedAt: timestamp.nullable(),

@@ -38,9 +38,9 @@ export type Upload = z.infer<typeof upload>;
 export const openUploads = z.object({ items: z.array(upload.omit({ storedParts: true })) });
 export type OpenUploads = z.infer<typeof openUploads>;
 
-/** A grant with a hash lets in only a body of that hash. */
+/** A grant lets in only a body of the hash that it was asked for with. */
 export const grantPartsRequest = z.object({
-  parts: z.array(z.object({ partNumber: z.number().int().min(1).max(10_000), sha256: partHash.optional() })).min(1).max(100),
+  parts: z.array(z.object({ partNumber: z.number().int().min(1).max(10_000), sha256: partHash })).min(1).max(100),
 });
 export type GrantPartsRequest = z.infer<typeof grantPartsRequest>;
 export const partGrants = z.object({

@@ -2,6 +2,7 @@ import type { Integrals, Measurement, Setting, StatementRecord, Symmetric3, Vect
 import { convertToMetres, type LengthUnit } from '@masswright/units';
 import { computeAxisMoment, computeRadiusOfGyration, resolveAxis, type Line, type RigidBody } from './axis-moment';
 import { classifyAxes, computePrincipalAxes } from './principal-axes';
+import { resolveDensity } from './resolve-density';
 import { computeTensorFromSecondMoments, scaleTensor, type Tensor } from './tensor';
 
 export interface StatementSource {
@@ -16,11 +17,12 @@ export interface StatementSource {
  * The browser and the server call this same function, so that both have the same bits.
  */
 export function computeStatement(measurement: Measurement, setting: Setting, { file, sha256 }: StatementSource): StatementRecord | undefined {
-  const { lengthUnit, densityKgM3 } = setting;
+  const { lengthUnit } = setting;
   if (lengthUnit === null) return undefined;
   const { volume, surface, soundness, boundingBox } = measurement;
   const centreOfMassM = volume && convertPoint(measurement.origin, volume.centreFromOrigin, lengthUnit);
   const volumeM3 = volume && convertToMetres(volume.content, lengthUnit, 3);
+  const { densityKgM3, weighing } = resolveDensity(volumeM3, setting);
   const body = volume && densityKgM3 !== null ? computeBody(volume, measurement.origin, lengthUnit, densityKgM3) : null;
   const principal = body && computePrincipalAxes(body.inertiaAtCentreOfMassKgM2);
   const line = resolveAxis(setting.axis, { centreOfMassM, principalAxes: principal?.axes ?? null });
@@ -33,7 +35,9 @@ export function computeStatement(measurement: Measurement, setting: Setting, { f
     facets: measurement.facets,
     measuringVersion: measurement.measuringVersion,
     soundness,
+    material: setting.material?.name ?? null,
     densityKgM3,
+    weighing,
     volumeM3,
     areaM2: convertToMetres(surface.content, lengthUnit, 2),
     massKg: body?.massKg ?? null,

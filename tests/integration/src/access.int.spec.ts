@@ -77,6 +77,11 @@ const expected: Record<string, Expectation> = {
   'patch /api/v1/projects/:projectId': { ...editors(200), foreign: 404, body: () => ({ name: randomUUID() }), parameters: project },
   'get /api/v1/projects/:projectId/parts': { ...everyone, foreign: 404, parameters: project },
   'post /api/v1/projects/:projectId/uploads': { ...editors(201), foreign: 404, body: () => ({ fileName: 'a.stl', sizeBytes: 100 }), parameters: project },
+  'get /api/v1/projects/:projectId/uploads': { ...editors(200), foreign: 404, parameters: project },
+  'post /api/v1/projects/:projectId/name-matches': { ...editors(200), foreign: 404, body: () => ({ fileNames: ['block.stl'] }), parameters: project },
+  'get /api/v1/storage-use': everyone,
+  // It waits to be measured already: that is answered, and nothing is done.
+  'post /api/v1/parts/:partId/run': { ...editors(200), foreign: 404, parameters: part },
   'get /api/v1/parts/:partId': { ...everyone, foreign: 404, parameters: part },
   'patch /api/v1/parts/:partId': { ...editors(200), foreign: 404, body: () => ({ name: randomUUID() }), parameters: part },
   'patch /api/v1/parts/:partId/setting': {
@@ -89,7 +94,7 @@ const expected: Record<string, Expectation> = {
   // Nothing measures in this test: there is no statement yet.
   'get /api/v1/parts/:partId/statement': { administrator: 409, engineer: 409, reviewer: 409, reader: 409, foreign: 404, visitor: 401, parameters: part },
   'get /api/v1/uploads/:uploadId': { ...everyone, foreign: 404, parameters: openUpload },
-  'post /api/v1/uploads/:uploadId/part-grants': { ...editors(200), foreign: 404, body: () => ({ partNumbers: [1] }), parameters: openUpload },
+  'post /api/v1/uploads/:uploadId/part-grants': { ...editors(200), foreign: 404, body: () => ({ parts: [{ partNumber: 1, sha256: 'a'.repeat(64) }] }), parameters: openUpload },
   'post /api/v1/uploads/:uploadId/completion': {
     ...editors(201),
     foreign: 404,

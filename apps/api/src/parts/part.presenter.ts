@@ -1,17 +1,6 @@
-import {
-  axis,
-  measuringErrorCodes,
-  type FailedRecord,
-  type MeasuringError,
-  type MeasuringRun,
-  type Part,
-  type PartRow,
-  type Setting,
-  type StatementRecord,
-  type StoredSetting,
-} from '@masswright/contracts';
-import { presentMeasurement, type StoredPart } from '@masswright/drizzle';
-import { computeStatement } from '@masswright/mechanics';
+import { measuringErrorCodes, type FailedRecord, type MeasuringError, type MeasuringRun, type Part, type PartRow, type StatementRecord } from '@masswright/contracts';
+import { presentMeasurement, readSetting, readStoredSetting, readSummarySource, type listRevisions, type listSameBytes, type StoredPart } from '@masswright/drizzle';
+import { computeStatement, summarisePart } from '@masswright/mechanics';
 import type { Actor } from '../platform/work';
 import { mayEdit } from '../projects/project.policy';
 
@@ -43,35 +32,18 @@ function presentRun(run: StoredPart['run']): MeasuringRun {
   };
 }
 
-export function readSetting(row: StoredPart['setting']): Setting {
-  const { driveSpeedRadPerS: speedRadPerS, driveTimeS: timeS } = row;
-  return {
-    lengthUnit: row.lengthUnit,
-    densityKgM3: row.densityKgM3,
-    axis: axis.parse(row.axis),
-    drive: speedRadPerS === null || timeS === null ? null : { speedRadPerS, timeS },
-  };
-}
-
-function presentSetting(stored: StoredPart): StoredSetting {
-  return {
-    ...readSetting(stored.setting),
-    version: stored.setting.version,
-    changedAt: stored.setting.changedAt.toISOString(),
-    changedBy: stored.settingChangedByName,
-  };
-}
-
 function presentRevisionHead(stored: StoredPart): PartRow['revision'] {
   return {
     id: stored.revision.id,
     letter: revisionLetter(stored.revision.ordinal),
     fileName: stored.upload.fileName,
+    folder: stored.upload.folder,
     sizeBytes: stored.upload.sizeBytes,
+    reason: stored.revision.reason,
     createdAt: stored.revision.createdAt.toISOString(),
     createdBy: stored.createdByName,
     run: presentRun(stored.run),
-    setting: presentSetting(stored),
+    setting: readStoredSetting(stored),
   };
 }
 
@@ -84,45 +56,73 @@ function computeRecord(stored: StoredPart): StatementRecord | undefined {
   });
 }
 
-export function presentPartRow(stored: StoredPart): PartRow {
-  const { measurement } = stored;
-  const record = computeRecord(stored);
-  const box = record?.boundingBoxM;
+/** @param sameBytes by SHA-256: how many revisions have those bytes (`countSameBytes`) */
+export function presentPartRow(stored: StoredPart, sameBytes: ReadonlyMap<string, number>): PartRow {
+  const { measurement, part, upload } = stored;
+  const { state, figures, unitDoubt } = summarisePart(readSummarySource(stored));
+  const withTheseBytes = upload.sha256 === null ? 0 : (sameBytes.get(upload.sha256.toString('hex')) ?? 0);
   return {
-    id: stored.part.id,
-    projectId: stored.part.projectId,
-    number: stored.part.number,
-    name: stored.part.name,
+    id: part.id,
+    projectId: part.projectId,
+    number: part.number,
+    name: part.name,
+    state,
+    deletedAt: part.deletedAt?.toISOString() ?? null,
     revision: presentRevisionHead(stored),
     soundness:
       measurement === null
         ? null
         : { defensible: measurement.defensible, closed: measurement.closed, oriented: measurement.oriented, turned: measurement.turned },
-    sizeM: box === undefined ? null : [box.max[0] - box.min[0], box.max[1] - box.min[1], box.max[2] - box.min[2]],
-    massKg: record?.massKg ?? null,
-    principalMomentsKgM2: record?.principalMomentsKgM2 ?? null,
+    sizeM: figures.sizeM,
+    volumeM3: figures.volumeM3,
+    massKg: figures.massKg,
+    balance: figures.balance,
+    principalMomentsKgM2: figures.principalMomentsKgM2,
+    unitDoubt,
+    // A deleted part's own revision is not among those that are counted.
+    sameBytes: Math.max(0, withTheseBytes - (part.deletedAt === null ? 1 : 0)),
   };
 }
 
-export function presentPart(stored: StoredPart, actor: Pick<Actor, 'role'>): Part {
-  const { measurement, upload } = stored;
+export interface PartSurroundings {
+  revisions: Awaited<ReturnType<typeof listRevisions>>;
+  sameBytes: Awaited<ReturnType<typeof listSameBytes>>;
+  actor: Pick<Actor, 'role'>;
+}
+
+export function presentPart(stored: StoredPart, { revisions, sameBytes, actor }: PartSurroundings): Part {
+  const { measurement, part, upload } = stored;
+  const { state, unitDoubt } = summarisePart(readSummarySource(stored));
   return {
-    id: stored.part.id,
-    projectId: stored.part.projectId,
-    projectName: stored.part.projectName,
-    number: stored.part.number,
-    name: stored.part.name,
+    id: part.id,
+    projectId: part.projectId,
+    projectName: part.projectName,
+    number: part.number,
+    name: part.name,
+    state,
+    deletedAt: part.deletedAt?.toISOString() ?? null,
     revision: {
       ...presentRevisionHead(stored),
       sha256: upload.sha256?.toString('hex') ?? null,
       format: measurement?.format ?? null,
+      compression: measurement?.compression ?? null,
       measurement: measurement === null ? null : presentMeasurement(measurement),
     },
-    can: { edit: mayEdit(actor) },
+    revisions: revisions.map(({ id, ordinal, fileName, reason, createdAt, createdByName }) => ({
+      id,
+      letter: revisionLetter(ordinal),
+      fileName,
+      reason,
+      createdAt: createdAt.toISOString(),
+      createdBy: createdByName,
+    })),
+    unitDoubt,
+    sameBytes: sameBytes.map(({ projectId, projectName, partId, number, name, ordinal }) => ({ projectId, projectName, partId, number, name, letter: revisionLetter(ordinal) })),
+    can: { edit: mayEdit(actor) && part.deletedAt === null },
   };
 }
 
-/** The record of a part, or why there is none; undefined while the file is not measured or its unit not stated. */
+/** The record of a part, or why its file has none; undefined while the file is not measured or its unit not stated. */
 export function presentStatement(stored: StoredPart): StatementRecord | FailedRecord | undefined {
   const error = presentError(stored.run);
   return error === null ? computeRecord(stored) : { file: stored.upload.fileName, error };

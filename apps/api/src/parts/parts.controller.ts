@@ -1,22 +1,16 @@
-import { Body, Controller, Get, Inject, Param, Patch, Query } from '@nestjs/common';
+import { Body, Controller, Get, Inject, Param, Patch, Post } from '@nestjs/common';
 import { ApiTags } from '@nestjs/swagger';
 import { z } from 'zod';
 import {
   changeSettingRequest,
   failedRecord,
   id,
-  page,
-  pageQuery,
   part,
-  partRow,
   renamePartRequest,
   statementRecord,
   type ChangeSettingRequest,
   type FailedRecord,
-  type Page,
-  type PageQuery,
   type Part,
-  type PartRow,
   type RenamePartRequest,
   type StatementRecord,
 } from '@masswright/contracts';
@@ -28,12 +22,6 @@ import { PartsService } from './parts.service';
 @Controller()
 export class PartsController {
   constructor(@Inject(PartsService) private readonly service: PartsService) {}
-
-  @Get('projects/:projectId/parts')
-  @Operation({ summary: 'The parts of a project, by number', answer: page(partRow) })
-  list(@SignedIn() context: SignedInContext, @Param('projectId', { schema: id }) projectId: string, @Query({ schema: pageQuery }) query: PageQuery): Promise<Page<PartRow>> {
-    return this.service.list(context, projectId, query);
-  }
 
   @Get('parts/:partId')
   @Operation({ summary: 'A part: its latest revision, what was measured and how it is set', answer: part })
@@ -51,6 +39,12 @@ export class PartsController {
   @Operation({ summary: 'Change the unit, density, axis or drive of a part', answer: part })
   changeSetting(@SignedIn() context: SignedInContext, @Param('partId', { schema: id }) partId: string, @Body({ schema: changeSettingRequest }) request: ChangeSettingRequest): Promise<Part> {
     return this.service.changeSetting(context, partId, request);
+  }
+
+  @Post('parts/:partId/run')
+  @Operation({ summary: 'Read a file that could not be measured once more', answer: part })
+  measureAgain(@SignedIn() context: SignedInContext, @Param('partId', { schema: id }) partId: string): Promise<Part> {
+    return this.service.measureAgain(context, partId);
   }
 
   @Get('parts/:partId/statement')

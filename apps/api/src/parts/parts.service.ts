@@ -1,35 +1,21 @@
 import { Inject, Injectable } from '@nestjs/common';
-import { z } from 'zod';
-import type { ChangeSettingRequest, FailedRecord, Page, PageQuery, Part, PartRow, Setting, StatementRecord } from '@masswright/contracts';
-import { changeSetting, findPart, findProject, listParts, publishEvent, renamePart, type StoredPart, type Transaction } from '@masswright/drizzle';
-import { AppError, notFound } from '../platform/app-error';
-import { decodeCursor, toPage } from '../platform/cursor';
+import type { ChangeSettingRequest, FailedRecord, Part, Setting, StatementRecord } from '@masswright/contracts';
+import { addToOutbox, changeSetting, publishEvent, readSetting, refreshPartSummaries, renamePart, restartRun, type StoredPart, type Transaction } from '@masswright/drizzle';
+import { summarisePart } from '@masswright/mechanics';
+import { chooseDensity } from '../materials/choose-density';
+import { AppError } from '../platform/app-error';
 import type { SignedInContext } from '../platform/request-context';
 import { audit, Work } from '../platform/work';
 import { requireEdit } from '../projects/project.policy';
-import { presentPart, presentPartRow, presentStatement, readSetting } from './part.presenter';
-
-async function getStoredPart(tx: Transaction, partId: string): Promise<StoredPart> {
-  const stored = await findPart(tx, partId);
-  if (stored === undefined) throw notFound('part');
-  return stored;
-}
+import { presentStatement } from './part.presenter';
+import { getPresentPart, getStoredPart, readPart } from './stored-part';
 
 @Injectable()
 export class PartsService {
   constructor(@Inject(Work) private readonly work: Work) {}
 
-  list(context: SignedInContext, projectId: string, query: PageQuery): Promise<Page<PartRow>> {
-    const after = decodeCursor(z.tuple([z.number().int()]), query.after);
-    return this.work.run(context, async (tx) => {
-      if ((await findProject(tx, projectId)) === undefined) throw notFound('project');
-      const rows = await listParts(tx, projectId, { afterNumber: after?.[0] ?? 0, limit: query.limit + 1 });
-      return toPage(rows, query.limit, presentPartRow, (row) => [row.part.number]);
-    });
-  }
-
   get(context: SignedInContext, partId: string): Promise<Part> {
-    return this.work.run(context, async (tx, actor) => presentPart(await getStoredPart(tx, partId), actor));
+    return this.work.run(context, (tx, actor) => readPart(tx, partId, actor));
   }
 
   getStatement(context: SignedInContext, partId: string): Promise<StatementRecord | FailedRecord> {
@@ -43,33 +29,53 @@ export class PartsService {
   rename(context: SignedInContext, partId: string, name: string): Promise<Part> {
     return this.work.run(context, async (tx, actor) => {
       requireEdit(actor);
-      const stored = await getStoredPart(tx, partId);
+      const stored = await getPresentPart(tx, partId);
       await renamePart(tx, partId, name);
       await audit(tx, context, { action: 'part.rename', subject: { type: 'part', id: partId }, before: { name: stored.part.name }, after: { name } });
       await this.announce(tx, context, stored);
-      return presentPart({ ...stored, part: { ...stored.part, name } }, actor);
+      return readPart(tx, partId, actor);
     });
   }
 
   changeSetting(context: SignedInContext, partId: string, request: ChangeSettingRequest): Promise<Part> {
     return this.work.run(context, async (tx, actor) => {
       requireEdit(actor);
-      const stored = await getStoredPart(tx, partId);
+      const stored = await getPresentPart(tx, partId);
       const before = readSetting(stored.setting);
-      const { version, ...changes } = request;
-      const setting: Setting = { ...before, ...changes };
-      const isChanged = await changeSetting(tx, { revisionId: stored.revision.id, version, setting, changedBy: context.userId });
+      const { version, densityKgM3, densitySpreadKgM3, material, ...changes } = request;
+      const density = await chooseDensity(tx, before, { densityKgM3, densitySpreadKgM3, material });
+      const setting: Setting = { ...before, ...changes, ...density };
+      const statesUnit = changes.lengthUnit !== undefined;
+      const isChanged = await changeSetting(tx, { revisionId: stored.revision.id, version, setting, statesUnit, changedBy: context.userId });
       if (!isChanged) {
         throw new AppError('stale-version', `${stored.settingChangedByName} changed this setting meanwhile. Look at theirs, then make your change again.`);
       }
       await audit(tx, context, { action: 'setting.change', subject: { type: 'revision', id: stored.revision.id }, before, after: setting });
       await this.announce(tx, context, stored);
-      return presentPart(await getStoredPart(tx, partId), actor);
+      return readPart(tx, partId, actor);
     });
   }
 
-  private announce(tx: Transaction, context: SignedInContext, stored: StoredPart): Promise<void> {
+  /** Has a file that could not be measured read once more: its bytes are still there. */
+  measureAgain(context: SignedInContext, partId: string): Promise<Part> {
+    return this.work.run(context, async (tx, actor) => {
+      requireEdit(actor);
+      const stored = await getPresentPart(tx, partId);
+      if (stored.run.state === 'done') throw new AppError('conflict', 'This file is measured; the same bytes give the same figures.');
+      if (stored.run.state === 'failed') {
+        const { organisationId, requestId } = context;
+        const runId = await restartRun(tx, stored.revision.id);
+        await addToOutbox(tx, { organisationId, job: 'measurement.run', payload: { organisationId, runId }, requestId });
+        await audit(tx, context, { action: 'measurement.restart', subject: { type: 'revision', id: stored.revision.id }, before: { code: stored.run.errorCode } });
+        await this.announce(tx, context, stored);
+      }
+      return readPart(tx, partId, actor);
+    });
+  }
+
+  private async announce(tx: Transaction, { organisationId }: SignedInContext, stored: StoredPart): Promise<void> {
     const { projectId, id: partId } = stored.part;
-    return publishEvent(tx, { organisationId: context.organisationId, event: { type: 'part', projectId, partId } });
+    await refreshPartSummaries(tx, organisationId, [partId], summarisePart);
+    await publishEvent(tx, { organisationId, event: { type: 'part', projectId, partId } });
   }
 }

@@ -15,6 +15,7 @@ const problemsByCode: Record<ProblemCode, { status: number; title: string }> = {
   'stale-version': { status: 409, title: 'Someone changed it meanwhile' },
   'link-expired': { status: 410, title: 'The link no longer works' },
   'too-large': { status: 413, title: 'Too large' },
+  'quota-exceeded': { status: 413, title: 'No room left' },
   'too-many-attempts': { status: 429, title: 'Too many attempts' },
   'upload-incomplete': { status: 409, title: 'The upload is not complete' },
   unavailable: { status: 503, title: 'Not available just now' },

@@ -10,7 +10,9 @@ describe('the first name of a part', () => {
     ['.stl', 'Unnamed part'],
     ['drum\u202Elts.stl', 'drumlts'],
     ['line\nbreak\u0000.stl', 'linebreak'],
-    [`${'x'.repeat(300)}.stl`, 'x'.repeat(200)],
+    [`${'x'.repeat(300)}.stl`, `${'x'.repeat(159)}…${'x'.repeat(36)}`],
+    ['pawl.OBJ.gz', 'pawl'],
+    ['pawl.stl.old', 'pawl.stl.old'],
   ])('of %j is %j', (fileName, name) => {
     expect(nameOfPart(fileName)).toBe(name);
   });

@@ -1,8 +1,9 @@
 import { workerData, type MessagePort } from 'node:worker_threads';
 import { createObjectStorage, type ObjectStorageOptions } from '@masswright/storage';
-import { measureObject, type MeasuringOutcome } from './measure-object';
+import { hashObject, measureObject, type HashingOutcome, type MeasuringOutcome, type MeasuringProgress } from './measure-object';
 
-export interface MeasureTask {
+export interface ThreadTask {
+  work: 'hash' | 'measure';
   objectKey: string;
   sizeBytes: number;
   progress: MessagePort;
@@ -12,16 +13,19 @@ const tellEveryMs = 150;
 const storage = createObjectStorage((workerData as { storage: ObjectStorageOptions }).storage);
 
 /** Runs in a thread of its own, so that hashing and integrating never hold up the locks and timers of the process. */
-export default async function measure({ objectKey, sizeBytes, progress }: MeasureTask): Promise<MeasuringOutcome> {
+export default async function run({ work, objectKey, sizeBytes, progress }: ThreadTask): Promise<MeasuringOutcome | HashingOutcome> {
   let toldAt = 0;
   let toldStage = '';
-  const outcome = await measureObject(storage, { objectKey, sizeBytes }, (state) => {
+  const tell = (state: MeasuringProgress): void => {
     const now = performance.now();
     if (now - toldAt < tellEveryMs && state.stage === toldStage) return;
     toldAt = now;
     toldStage = state.stage;
     progress.postMessage(state);
-  });
-  progress.close();
-  return outcome;
+  };
+  try {
+    return work === 'hash' ? await hashObject(storage, { objectKey }, tell) : await measureObject(storage, { objectKey, sizeBytes }, tell);
+  } finally {
+    progress.close();
+  }
 }

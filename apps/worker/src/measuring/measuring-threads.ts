@@ -3,7 +3,10 @@ import { MessageChannel } from 'node:worker_threads';
 import { Injectable, type OnModuleDestroy } from '@nestjs/common';
 import { Piscina } from 'piscina';
 import { InjectWorkerSettings, storageOptions, type WorkerSettings } from '../platform/worker-settings';
-import type { MeasuringOutcome, MeasuringProgress } from './measure-object';
+import type { HashingOutcome, MeasuringOutcome, MeasuringProgress } from './measure-object';
+import type { ThreadTask } from './measure-thread';
+
+type StoredObject = Pick<ThreadTask, 'objectKey' | 'sizeBytes'>;
 
 /** The pool of measuring threads, as many as files are measured at once; kept warm, for starting one takes longer than a small file. */
 @Injectable()
@@ -25,15 +28,21 @@ export class MeasuringThreads implements OnModuleDestroy {
   }
 
   /** Measures an object in a thread; the signal ends the thread wherever it is. */
-  async measure(
-    object: { objectKey: string; sizeBytes: number },
-    onProgress: (progress: MeasuringProgress) => void,
-    signal: AbortSignal,
-  ): Promise<MeasuringOutcome> {
+  async measure(object: StoredObject, onProgress: (progress: MeasuringProgress) => void, signal: AbortSignal): Promise<MeasuringOutcome> {
+    return (await this.run('measure', object, onProgress, signal)) as MeasuringOutcome;
+  }
+
+  /** Finds out an object's hash in a thread. */
+  async hash(object: StoredObject, onProgress: (progress: MeasuringProgress) => void, signal: AbortSignal): Promise<HashingOutcome> {
+    return (await this.run('hash', object, onProgress, signal)) as HashingOutcome;
+  }
+
+  private async run(work: ThreadTask['work'], { objectKey, sizeBytes }: StoredObject, onProgress: (progress: MeasuringProgress) => void, signal: AbortSignal): Promise<unknown> {
     const { port1: ours, port2: theirs } = new MessageChannel();
     ours.on('message', onProgress);
     try {
-      return (await this.pool.run({ ...object, progress: theirs }, { transferList: [theirs], signal })) as MeasuringOutcome;
+      const task: ThreadTask = { work, objectKey, sizeBytes, progress: theirs };
+      return await this.pool.run(task, { transferList: [theirs], signal });
     } finally {
       ours.close();
     }

@@ -1,7 +1,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { MeasuringError, MeasuringRun } from '@masswright/contracts';
 import {
-  addToOutbox,
+  claimMeasuring,
   Database,
   failRun,
   finishRun,
@@ -10,13 +10,16 @@ import {
   noteProgress,
   publishEvent,
   recordAudit,
+  refreshPartSummaries,
   setUploadHash,
   takeRun,
   type TakenRun,
   type Transaction,
 } from '@masswright/drizzle';
+import { measuringVersion } from '@masswright/geometry';
 import type { JobPayload } from '@masswright/jobs';
-import { HandedBackError, SupersededError, TryAgainError, type JobContext } from '../queue/job-handlers';
+import { summarisePart } from '@masswright/mechanics';
+import { HandedBackError, SupersededError, TryAgainError, WaitingError, type JobContext } from '../queue/job-handlers';
 import { LatestOnly } from './latest-only';
 import type { MeasuringOutcome, MeasuringProgress } from './measure-object';
 import { MeasuringThreads } from './measuring-threads';
@@ -35,6 +38,8 @@ const fileMissing: MeasuringError = {
 };
 /** Share of a run's time that reading takes, for the progress bar; what is left is finishing. */
 const readingShare = 0.8;
+/** So long a run waits before it looks again whether the same bytes are measured by now. */
+const waitForSameBytesMs = 400;
 
 type Held = TakenRun & { organisationId: string };
 
@@ -54,6 +59,7 @@ export class MeasuringHandler {
         await this.refuse(run, null, gaveUp, context);
         return;
       }
+      if (run.hashFirst && (await this.isSettledByHash(run, context))) return;
       await this.settle(run, await this.measure(run, context), context);
     } catch (error) {
       // Whoever took the run up after us does the rest, and says so when it is done.
@@ -69,25 +75,63 @@ export class MeasuringHandler {
       const taken = await takeRun(tx, runId);
       if (taken === undefined) return undefined;
       const run = { ...taken, organisationId };
-      await this.announce(tx, run, { state: 'running', stage: 'reading', progress: 0 });
+      await this.announce(tx, run, { state: 'running', stage: run.hashFirst ? 'hashing' : 'reading', progress: 0 });
       return run;
     });
   }
 
-  private async measure(run: Held, { signal }: JobContext): Promise<MeasuringOutcome> {
+  /** Finds out the file's hash and whether its bytes are known; true when that ends the run. */
+  private async isSettledByHash(run: Held, context: JobContext): Promise<boolean> {
+    let { sha256 } = run;
+    if (sha256 === null) {
+      const outcome = await this.inThread(run, (onProgress) => this.threads.hash(run, onProgress, context.signal));
+      if (outcome.kind === 'interrupted') {
+        await this.settle(run, outcome, context);
+        return true;
+      }
+      sha256 = Buffer.from(outcome.sha256);
+    }
+    const claim = await this.claim(run, sha256, context);
+    if (claim === 'wait') throw new WaitingError('The same bytes are being measured, or may be.', waitForSameBytesMs);
+    return claim === 'known';
+  }
+
+  private claim(run: Held, sha256: Buffer, { requestId }: JobContext): Promise<'known' | 'claimed' | 'wait'> {
+    return this.inOrganisation(run, async (tx) => {
+      const claim = await claimMeasuring(tx, run, sha256, measuringVersion);
+      if (claim.kind === 'lost') throw new SupersededError();
+      if (claim.kind === 'known') await this.end(tx, run, claim.measurementId, requestId);
+      return claim.kind;
+    });
+  }
+
+  private measure(run: Held, { signal }: JobContext): Promise<MeasuringOutcome> {
+    return this.inThread(run, (onProgress) => this.threads.measure(run, onProgress, signal));
+  }
+
+  private async inThread<Outcome>(run: Held, work: (onProgress: (progress: MeasuringProgress) => void) => Promise<Outcome>): Promise<Outcome> {
     const notes = new LatestOnly((progress: MeasuringProgress) => this.note(run, progress));
     try {
-      return await this.threads.measure(run, (progress) => notes.push(progress), signal);
+      return await work((progress) => notes.push(progress));
     } finally {
       await notes.settle();
     }
   }
 
-  private async note(run: Held, { stage, bytesRead }: MeasuringProgress): Promise<void> {
-    const progress = stage === 'reading' ? (readingShare * bytesRead) / Math.max(1, run.sizeBytes) : readingShare;
+  private async note(run: Held, { stage: noted, bytesRead }: MeasuringProgress): Promise<void> {
+    // A run that hashed first has claimed these bytes by its stage: that must not be taken back while they are read once more.
+    const stage = run.hashFirst && noted === 'reading' ? 'measuring' : noted;
+    const progress = this.computeProgress(run, noted, bytesRead);
     await this.inOrganisation(run, async (tx) => {
       if (await noteProgress(tx, run, { stage, progress })) await this.announce(tx, run, { state: 'running', stage, progress });
     });
+  }
+
+  private computeProgress(run: Held, stage: MeasuringProgress['stage'], bytesRead: number): number {
+    const share = bytesRead / Math.max(1, run.sizeBytes);
+    const hashingShare = run.hashFirst ? 0.3 : 0;
+    if (stage === 'hashing') return hashingShare * share;
+    return stage === 'reading' ? hashingShare + (readingShare - hashingShare) * share : readingShare;
   }
 
   private async settle(run: Held, outcome: MeasuringOutcome, context: JobContext): Promise<void> {
@@ -108,21 +152,23 @@ export class MeasuringHandler {
     const hash = Buffer.from(sha256);
     await this.inOrganisation(run, async (tx) => {
       await setUploadHash(tx, run.uploadId, hash);
-      const measurementId = await keepMeasurement(tx, { organisationId: run.organisationId, sha256: hash, measurement });
-      if (!(await finishRun(tx, run, measurementId))) throw new SupersededError();
-      await this.audit(tx, run, requestId, 'measurement.keep', { measurementId });
-      await this.announce(tx, run, { state: 'done', stage: 'storing', progress: 1 });
+      await this.end(tx, run, await keepMeasurement(tx, { organisationId: run.organisationId, sha256: hash, measurement }), requestId);
     });
   }
 
-  /** The row keeps the reason. The bytes of a file that is none are deleted; those that only we could not cope with are kept. */
+  private async end(tx: Transaction, run: Held, measurementId: string, requestId: string): Promise<void> {
+    if (!(await finishRun(tx, run, measurementId))) throw new SupersededError();
+    await refreshPartSummaries(tx, run.organisationId, [run.partId], summarisePart);
+    await this.audit(tx, run, requestId, 'measurement.keep', { measurementId });
+    await this.announce(tx, run, { state: 'done', stage: 'storing', progress: 1 });
+  }
+
+  /** The row keeps the reason. The bytes stay as long as the part does: the file can be read again, and nobody's only copy is thrown away. */
   private async refuse(run: Held, sha256: Uint8Array | null, error: MeasuringError, { requestId }: JobContext): Promise<void> {
     await this.inOrganisation(run, async (tx) => {
       if (!(await failRun(tx, run, error))) throw new SupersededError();
       if (sha256 !== null) await setUploadHash(tx, run.uploadId, Buffer.from(sha256));
-      if (error.code !== gaveUp.code && error.code !== fileMissing.code) {
-        await addToOutbox(tx, { organisationId: run.organisationId, job: 'object.delete', payload: { objectKey: run.objectKey }, requestId });
-      }
+      await refreshPartSummaries(tx, run.organisationId, [run.partId], summarisePart);
       await this.audit(tx, run, requestId, 'measurement.refuse', { code: error.code });
       await this.announce(tx, run, { state: 'failed', stage: 'reading', progress: 1 });
     });

@@ -15,6 +15,18 @@ export class TryAgainError extends Error {
   override readonly name = 'TryAgainError';
 }
 
+/** Thrown by a handler that has to wait for the end of another's work: the job is handed out again after a fixed pause. */
+export class WaitingError extends Error {
+  override readonly name = 'WaitingError';
+
+  constructor(
+    message: string,
+    readonly pauseMs: number,
+  ) {
+    super(message);
+  }
+}
+
 /** Thrown by a handler whose work another has taken up since: the other's end counts, so nothing is noted. */
 export class SupersededError extends Error {
   override readonly name = 'SupersededError';

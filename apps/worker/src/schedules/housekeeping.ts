@@ -2,6 +2,7 @@ import { Inject, Injectable, type OnApplicationBootstrap, type OnModuleDestroy }
 import { Database, forgetDoneWork, sweepAttempts } from '@masswright/drizzle';
 import type { Logger } from '@masswright/logs';
 import { AbandonedUploads } from './abandoned-uploads';
+import { MissingSummaries } from './missing-summaries';
 import { InjectLogger } from '../platform/inject-logger';
 
 const everyMs = 3_600_000;
@@ -15,6 +16,7 @@ export class Housekeeping implements OnApplicationBootstrap, OnModuleDestroy {
   constructor(
     @Inject(Database) private readonly database: Database,
     @Inject(AbandonedUploads) private readonly abandonedUploads: AbandonedUploads,
+    @Inject(MissingSummaries) private readonly missingSummaries: MissingSummaries,
     @InjectLogger() private readonly logger: Logger,
   ) {}
 
@@ -34,6 +36,7 @@ export class Housekeeping implements OnApplicationBootstrap, OnModuleDestroy {
         await sweepAttempts(tx);
       });
       await this.abandonedUploads.sweep();
+      await this.missingSummaries.write();
     } catch (error) {
       this.logger.warn({ err: error }, 'housekeeping failed; it comes again');
     }

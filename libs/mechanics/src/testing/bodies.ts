@@ -39,6 +39,7 @@ export function makeMeasurement(content: number, centreFromOrigin: Vector3, seco
   return {
     measuringVersion: 'm1',
     format: 'stl-binary',
+    compression: null,
     facets: 12,
     origin,
     boundingBox: { min: [-1, -2, -3], max: [1, 2, 3] },
@@ -48,7 +49,7 @@ export function makeMeasurement(content: number, centreFromOrigin: Vector3, seco
   };
 }
 
-export const plainSetting: Setting = { lengthUnit: 'm', densityKgM3: 1, axis: { kind: 'mesh', along: 'z' }, drive: null };
+export const plainSetting: Setting = { lengthUnit: 'm', densityKgM3: 1, densitySpreadKgM3: null, material: null, weighing: null, axis: { kind: 'mesh', along: 'z' }, drive: null };
 
 export const anyNumber = fc.double({ min: -10, max: 10, noNaN: true });
 export const anyVector: fc.Arbitrary<Vector3> = fc.tuple(anyNumber, anyNumber, anyNumber);

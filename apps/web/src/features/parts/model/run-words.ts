@@ -3,6 +3,7 @@ import { formatCount } from '@masswright/units';
 
 const stageWords: Record<MeasuringRun['stage'], string> = {
   waiting: 'Waiting for its turn',
+  hashing: 'Comparing with known files',
   reading: 'Reading the file',
   measuring: 'Measuring',
   storing: 'Storing the figures',

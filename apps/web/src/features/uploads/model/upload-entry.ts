@@ -97,6 +97,7 @@ export function changeEntries(entries: readonly UploadEntry[], event: UploadEven
 
 const stageWords: Record<MeasuringRun['stage'], string> = {
   waiting: 'Waiting to be measured',
+  hashing: 'Comparing with known files',
   reading: 'Reading the file',
   measuring: 'Measuring',
   storing: 'Storing the figures',

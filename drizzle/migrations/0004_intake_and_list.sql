@@ -1,0 +1,2 @@
+ALTER TABLE "measuring_runs" DROP CONSTRAINT "measuring_runs_stage_is_known";--> statement-breakpoint
+ALTER TABLE "measuring_runs" ADD CONSTRAINT "measuring_runs_stage_is_known" CHECK ("measuring_runs"."stage" in ('waiting', 'hashing', 'reading', 'measuring', 'storing'));

@@ -1,0 +1,29 @@
+import { convertToMetres, lengthUnits } from '@masswright/units';
+import { describe, expect, it } from 'vitest';
+import { findUnitDoubt } from './unit-doubt';
+
+describe('a unit in doubt', () => {
+  it('is found for every mistaken pair of the six units, and the right one is named', () => {
+    for (const right of lengthUnits) {
+      for (const taken of lengthUnits) {
+        // The same body as before, exported in `right` but read in the unit of the revision before.
+        const volume = 6.4e-5 / convertToMetres(1, right, 3);
+        const before = { volume: 6.4e-5 / convertToMetres(1, taken, 3), lengthUnit: taken };
+        const doubt = findUnitDoubt({ volume: volume * 1.04, lengthUnit: taken }, before);
+        if (right === taken) expect(doubt).toBeUndefined();
+        else expect(doubt?.lengthUnit, `${right} read as ${taken}`).toBe(right);
+      }
+    }
+  });
+  it('is not raised by a change of the design, however large', () => {
+    for (const ratio of [0.3, 0.9, 1, 1.5, 3, 8, 100, 500]) {
+      expect(findUnitDoubt({ volume: 1000 * ratio, lengthUnit: 'mm' }, { volume: 1000, lengthUnit: 'mm' }), String(ratio)).toBeUndefined();
+    }
+  });
+  it('says by how much the volumes differ', () => {
+    const doubt = findUnitDoubt({ volume: 1000, lengthUnit: 'inch' }, { volume: 1000, lengthUnit: 'mm' });
+    expect(doubt?.lengthUnit).toBe('mm');
+    // 25.4³, exactly 16387.064: NIST SP 811, from memory.
+    expect(doubt?.volumeRatio).toBeCloseTo(16387.064, 6);
+  });
+});
