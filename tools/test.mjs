@@ -109,7 +109,7 @@ for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
 
 async function main() {
   if (unknown !== undefined) throw new Obstacle(`--only takes one of ${kinds.join(', ')}, not "${unknown}".`);
-  await stage('System packages', () => ensureDebianPackages(['postgresql', 'redis-server', 'chromium', 'fonts-liberation']), (installed) => (installed.length > 0 ? `installed ${installed.join(', ')}` : 'all there'));
+  await stage('System packages', () => ensureDebianPackages(['postgresql', 'redis-server', 'chromium', 'fonts-liberation', 'assimp-testmodels']), (installed) => (installed.length > 0 ? `installed ${installed.join(', ')}` : 'all there'));
   await stage('Node packages', ensureNodePackages, (ran) => (ran ? 'installed from the lock file' : 'as in the lock file'));
   const notes = new RunNotes(inCheckout('.test/run'));
   notes.claim('npm test');

@@ -6,12 +6,13 @@ import { Obstacle } from './checkout.mjs';
 /** @param {string} command */
 const hasCommand = (command) => spawnSync('sh', ['-c', `command -v ${command}`]).status === 0;
 
-/** @type {Record<string, () => boolean>} by the name of the package: is what we need of it there? */
+/** @type {Record<string, () => boolean>} by the name of the package: is what we need of it there? The last one holds meshes for tests. */
 const isThere = {
   postgresql: () => findPostgresPrograms() !== undefined,
   'redis-server': () => hasCommand('redis-server'),
   chromium: () => existsSync('/usr/bin/chromium'),
   'fonts-liberation': () => existsSync('/usr/share/fonts/truetype/liberation') || existsSync('/usr/share/fonts/truetype/liberation2'),
+  'assimp-testmodels': () => existsSync('/usr/share/assimp/models/invalid'),
 };
 
 /**
@@ -33,6 +34,6 @@ export function ensureDebianPackages(wanted) {
     if (done.status !== 0) throw new Obstacle(`apt-get ${args.join(' ')} failed:\n${done.stderr || done.error?.message}`);
   }
   const still = missing.filter((name) => !isThere[name]?.());
-  if (still.length > 0) throw new Obstacle(`apt-get installed ${still.join(', ')}, but its programs are not where they are expected.`);
+  if (still.length > 0) throw new Obstacle(`apt-get installed ${still.join(', ')}, but not where it is expected.`);
   return missing;
 }

@@ -41,10 +41,10 @@ export function detectFormat(beginning: Uint8Array, sizeBytes: number | null): D
 
   const textual = detectText(beginning);
   if (textual !== undefined) return textual;
-  if (declaredFacets !== undefined && sizeBytes === null && looksLikeFacets(beginning)) return { format: 'stl-binary', declaredFacets };
+  const text = isText(beginning);
+  if (declaredFacets !== undefined && sizeBytes === null && !text && looksLikeFacets(beginning)) return { format: 'stl-binary', declaredFacets };
   if (beginning[0] === 0x1f && beginning[1] === 0x8b) return { format: 'gzip' };
 
-  const text = isText(beginning);
   const stranger = findStranger(latin1(beginning), text);
   if (stranger !== undefined) throw new MeshError('format-unknown', `This looks like ${stranger}, not like an STL or OBJ mesh. ${askForMesh}`, { byte: 0 });
   if (text) {
