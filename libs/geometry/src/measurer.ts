@@ -1,3 +1,4 @@
+import { emptyBox, extendBox } from './bounding-box';
 import type { FacetBatch } from './facet-batch';
 import { isDegenerate, isNormalContradicting } from './facet-shape';
 import { createFacetSums } from './facet-sums';
@@ -32,8 +33,7 @@ export function createMeasurer(options: MeasurerOptions): Measurer {
   let welder: Welder | undefined;
   const sums = createFacetSums();
   const origin: Vector3 = [0, 0, 0];
-  const min: Vector3 = [Infinity, Infinity, Infinity];
-  const max: Vector3 = [-Infinity, -Infinity, -Infinity];
+  const boundingBox = emptyBox();
   const degenerate = noOccurrence();
   const contradicting = noOccurrence();
   const reader = createMeshReader({ ...options, onFacets });
@@ -42,7 +42,7 @@ export function createMeasurer(options: MeasurerOptions): Measurer {
     // Adding 0 makes +0 of -0, which JSON could not keep.
     if (batch.first === 0) for (let k = 0; k < 3; k++) origin[k] = (batch.corners[k] ?? 0) + 0;
     integrateBlocked(sums, origin, batch.corners, batch.count);
-    extendBox(min, max, batch);
+    extendBox(boundingBox, batch);
     examineFacets(batch, degenerate, contradicting);
     welder ??= beginWelding();
     welder.add(batch);
@@ -57,6 +57,7 @@ export function createMeasurer(options: MeasurerOptions): Measurer {
     const { format, compression, facets, trailingBytes, solids, nonzeroAttributes, nonPlanarPolygons } = reader.finish();
     const mesh = (welder ?? beginWelding()).finish();
     const connections = checkConnections(mesh);
+    const { min, max } = boundingBox;
     const extent = Math.max(max[0] - min[0], max[1] - min[1], max[2] - min[2]);
     const chosen =
       connections.closed && connections.oriented
@@ -76,7 +77,7 @@ export function createMeasurer(options: MeasurerOptions): Measurer {
       compression,
       facets,
       origin,
-      boundingBox: { min, max },
+      boundingBox,
       volume: soundness.defensible ? finishIntegrals(chosen.body, 'body', soundness.turned ? -1 : 1) : null,
       surface: finishIntegrals(chosen.surface, 'surface'),
       soundness,
@@ -97,20 +98,6 @@ export function measureMesh(bytes: Uint8Array, options: Partial<ReadingLimits> =
   const measurer = createMeasurer({ sizeBytes: bytes.length, ...options });
   if (bytes.length > 0) measurer.push(bytes);
   return measurer.finish();
-}
-
-function extendBox(min: Vector3, max: Vector3, { corners, count }: FacetBatch): void {
-  for (let k = 0; k < 3; k++) {
-    let least = min[k] ?? 0;
-    let greatest = max[k] ?? 0;
-    for (let at = k; at < 9 * count; at += 3) {
-      const coordinate = (corners[at] ?? 0) + 0;
-      if (coordinate < least) least = coordinate;
-      if (coordinate > greatest) greatest = coordinate;
-    }
-    min[k] = least;
-    max[k] = greatest;
-  }
 }
 
 function examineFacets(batch: FacetBatch, degenerate: Occurrence, contradicting: Occurrence): void {

@@ -24,6 +24,8 @@ const table = mayImport as Record<string, string[]>;
 /** Those that others import by name; applications are imported by nobody. */
 const libraries = Object.keys(table).filter((name) => !['api', 'worker', 'web', 'cli'].includes(name));
 const applications = ['api', 'worker', 'web'];
+/** By which name a project imports a library: the pages have an entry of their own to geometry. */
+const findEntry = (project: string, library: string): string => `@masswright/${library}${project === 'web' && library === 'geometry' ? '/web-worker' : ''}`;
 /** An installation without its command line has no such project yet. */
 const rows = Object.keys(table).filter((name) => name !== 'cli');
 
@@ -40,7 +42,7 @@ describe('the table of imports', () => {
     const others = libraries.filter((library) => library !== project);
     for (const library of others) {
       const allowed = table[project]?.includes(library) ?? false;
-      const refusals = await findRefusals(plantedFile(project), `@masswright/${library}`);
+      const refusals = await findRefusals(plantedFile(project), findEntry(project, library));
       expect(refusals.length > 0, `${project} importing ${library}`).toBe(!allowed);
     }
     expect(others.filter((library) => !table[project]?.includes(library)).length, 'rows that allow everything').toBeGreaterThan(0);
@@ -90,6 +92,9 @@ describe('packages', () => {
     ['web', 'drizzle-orm'],
     ['web', '@nestjs/common'],
     ['web', '@aws-sdk/client-s3'],
+    ['web', '@masswright/geometry'],
+    ['web', '@masswright/geometry/measurer'],
+    ['api', '@masswright/geometry/web-worker'],
   ])('%s may not import %s', async (project, imported) => {
     expect(await findRefusals(plantedFile(project), imported)).toContain('no-restricted-imports');
   });
@@ -97,6 +102,8 @@ describe('packages', () => {
   it.each([
     ['web', './features/events/model/stream'],
     ['web', 'react'],
+    ['web', '@masswright/geometry/web-worker'],
+    ['geometry', 'pako'],
     ['worker', 'bullmq'],
     ['storage', 'node:crypto'],
     ['contracts', 'zod'],
