@@ -4,6 +4,10 @@ import type { Logger } from '@masswright/logs';
 import { EventsModule } from './events/events.module';
 import { HealthModule } from './health/health.module';
 import { InvitationsModule } from './invitations/invitations.module';
+import { MaterialsModule } from './materials/materials.module';
+import { PartDeletionsModule } from './part-deletions/part-deletions.module';
+import { PartExportsModule } from './part-exports/part-exports.module';
+import { PartListModule } from './part-list/part-list.module';
 import { PartsModule } from './parts/parts.module';
 import { PasswordResetsModule } from './password-resets/password-resets.module';
 import { PeopleModule } from './people/people.module';
@@ -14,6 +18,7 @@ import { ContractValidationPipe } from './platform/validation.pipe';
 import { ProjectsModule } from './projects/projects.module';
 import { SessionGuard } from './session/session.guard';
 import { SessionModule } from './session/session.module';
+import { SettingsChangesModule } from './settings-changes/settings-changes.module';
 import { UploadsModule } from './uploads/uploads.module';
 
 @Module({})
@@ -28,7 +33,12 @@ export class AppModule {
         InvitationsModule,
         PasswordResetsModule,
         ProjectsModule,
+        PartListModule,
+        PartExportsModule,
+        PartDeletionsModule,
+        SettingsChangesModule,
         PartsModule,
+        MaterialsModule,
         UploadsModule,
         EventsModule,
         HealthModule,

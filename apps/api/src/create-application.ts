@@ -1,3 +1,4 @@
+import type { IncomingMessage } from 'node:http';
 import { VersioningType } from '@nestjs/common';
 import { NestFactory } from '@nestjs/core';
 import type { NestExpressApplication } from '@nestjs/platform-express';
@@ -9,6 +10,8 @@ import { ProblemFilter } from './platform/problem.filter';
 import { logRequests } from './platform/request-log';
 import { securityHeaders } from './platform/security-headers';
 import { serveWebPages } from './platform/web-pages';
+
+const isTableOfMaterials = ({ url, headers }: IncomingMessage): boolean => url === '/api/v1/materials/import' && /^application\/json\b/iu.test(headers['content-type'] ?? '');
 
 /** The whole api, not yet listening. */
 export async function createApplication(settings: ApiSettings, logger: Logger): Promise<NestExpressApplication> {
@@ -23,7 +26,9 @@ export async function createApplication(settings: ApiSettings, logger: Logger): 
   application.use(application.get(Metrics).observe);
   application.use(securityHeaders(settings));
   if (settings.WEB_DIR !== undefined) application.use(...serveWebPages(settings.WEB_DIR));
-  application.useBodyParser('json', { limit: '256kb', strict: true });
+  // A table of materials is two million characters at most; ten thousand ids of parts fit into half a megabyte.
+  application.useBodyParser('json', { limit: '4mb', strict: true, type: isTableOfMaterials });
+  application.useBodyParser('json', { limit: '512kb', strict: true });
   // /api/v1/… for every noun; health and metrics are of no version.
   application.setGlobalPrefix('api');
   application.enableVersioning({ type: VersioningType.URI, defaultVersion: '1' });

@@ -263,6 +263,108 @@ export interface paths {
         patch: operations["projects.rename"];
         trace?: never;
     };
+    "/api/v1/projects/{projectId}/parts": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /** A stretch of a project’s list of parts, and how many there are in each state */
+        get: operations["partlist.list"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/v1/projects/{projectId}/parts/export": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /** What the list of parts shows, as a table or as the records of its statements */
+        get: operations["partexports.export"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/v1/projects/{projectId}/part-deletions": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /** Delete parts, with a way back for thirty days */
+        post: operations["partdeletions.delete"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/v1/projects/{projectId}/part-restorations": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /** Restore deleted parts */
+        post: operations["partdeletions.restore"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/v1/projects/{projectId}/setting-changes": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /** Change the unit, density, material or axis of many parts at once */
+        post: operations["settingschanges.change"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/v1/setting-changes/{changeId}/undo": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /** Take a change of many settings back, as far as nobody has changed the same since */
+        post: operations["settingschanges.undo"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
     "/api/v1/parts/{partId}": {
         parameters: {
             query?: never;
@@ -324,6 +426,92 @@ export interface paths {
         };
         /** The record of the part’s statement, or why its file could not be measured */
         get: operations["parts.getStatement"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/v1/materials": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /** The materials of the starter library and the organisation’s own */
+        get: operations["materials.list"];
+        put?: never;
+        /** Add a material */
+        post: operations["materials.create"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/v1/materials/export": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /** The library as a table */
+        get: operations["materials.export"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/v1/materials/import": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /** Take materials from a table, or say what that would do */
+        post: operations["materials.import"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/api/v1/materials/{materialId}": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        /** Change or archive a material of the organisation */
+        patch: operations["materials.change"];
+        trace?: never;
+    };
+    "/api/v1/materials/{materialId}/parts": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /** The parts that are set to a material, and what its present density would make of them */
+        get: operations["materials.listUses"];
         put?: never;
         post?: never;
         delete?: never;
@@ -586,6 +774,233 @@ export interface components {
         RenameProjectRequest: {
             name: string;
         };
+        PartList: {
+            items: {
+                /** Format: uuid */
+                id: string;
+                /** Format: uuid */
+                projectId: string;
+                number: number;
+                name: string;
+                /** @enum {string} */
+                state: "measuring" | "failed" | "not-defensible" | "unit-missing" | "unit-doubt" | "density-missing" | "weight-disagrees" | "ready";
+                deletedAt: string | null;
+                revision: {
+                    /** Format: uuid */
+                    id: string;
+                    letter: string;
+                    fileName: string;
+                    folder: string;
+                    sizeBytes: number;
+                    reason: string;
+                    /** Format: date-time */
+                    createdAt: string;
+                    createdBy: string;
+                    run: {
+                        /** @enum {string} */
+                        state: "queued" | "running" | "done" | "failed";
+                        /** @enum {string} */
+                        stage: "waiting" | "hashing" | "reading" | "measuring" | "storing";
+                        progress: number;
+                        error: {
+                            /** @enum {string} */
+                            code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "too-many-vertices" | "polygon-too-large" | "vertex-missing" | "archive-damaged" | "too-large-expanded" | "file-missing" | "gave-up";
+                            message: string;
+                            at: {
+                                byte?: number;
+                                line?: number;
+                            } | null;
+                        } | null;
+                        finishedAt: string | null;
+                        durationMs: number | null;
+                    };
+                    setting: {
+                        lengthUnit: ("micron" | "mm" | "cm" | "m" | "inch" | "foot") | null;
+                        densityKgM3: number | null;
+                        densitySpreadKgM3: number | null;
+                        material: {
+                            id: string;
+                            name: string;
+                        } | null;
+                        weighing: {
+                            massKg: number;
+                            uncertaintyKg: number;
+                        } | null;
+                        axis: {
+                            /** @enum {string} */
+                            kind: "mesh";
+                            /** @enum {string} */
+                            along: "x" | "y" | "z";
+                        } | {
+                            /** @enum {string} */
+                            kind: "principal";
+                            number: 1 | 2 | 3;
+                        } | {
+                            /** @enum {string} */
+                            kind: "typed";
+                            pointM: [
+                                number,
+                                number,
+                                number
+                            ];
+                            direction: [
+                                number,
+                                number,
+                                number
+                            ];
+                        };
+                        drive: {
+                            speedRadPerS: number;
+                            timeS: number;
+                        } | null;
+                        version: number;
+                        /** Format: date-time */
+                        changedAt: string;
+                        changedBy: string;
+                        unitStated: {
+                            /** Format: date-time */
+                            at: string;
+                            by: string;
+                        } | null;
+                    };
+                };
+                soundness: {
+                    defensible: boolean;
+                    closed: boolean;
+                    oriented: boolean;
+                    turned: boolean;
+                } | null;
+                sizeM: [
+                    number,
+                    number,
+                    number
+                ] | null;
+                volumeM3: number | null;
+                massKg: number | null;
+                balance: [
+                    number,
+                    number,
+                    number
+                ] | null;
+                principalMomentsKgM2: [
+                    number,
+                    number,
+                    number
+                ] | null;
+                unitDoubt: {
+                    /** @enum {string} */
+                    lengthUnit: "micron" | "mm" | "cm" | "m" | "inch" | "foot";
+                    volumeRatio: number;
+                } | null;
+                sameBytes: number;
+            }[];
+            total: number;
+            counts: {
+                [key: string]: number;
+            };
+            deleted: number;
+        };
+        DeletePartsRequest: {
+            parts: {
+                ids: string[];
+            } | {
+                filter: {
+                    /** @default  */
+                    text: string;
+                    /** @default  */
+                    states: string;
+                    /** @default false */
+                    deleted: boolean;
+                };
+                /** @default [] */
+                except: string[];
+            };
+        };
+        MovedParts: {
+            ids: string[];
+        };
+        RestorePartsRequest: {
+            parts: {
+                ids: string[];
+            } | {
+                filter: {
+                    /** @default  */
+                    text: string;
+                    /** @default  */
+                    states: string;
+                    /** @default false */
+                    deleted: boolean;
+                };
+                /** @default [] */
+                except: string[];
+            };
+        };
+        ChangeSettingsRequest: {
+            parts: {
+                ids: string[];
+            } | {
+                filter: {
+                    /** @default  */
+                    text: string;
+                    /** @default  */
+                    states: string;
+                    /** @default false */
+                    deleted: boolean;
+                };
+                /** @default [] */
+                except: string[];
+            };
+            change: {
+                lengthUnit?: ("micron" | "mm" | "cm" | "m" | "inch" | "foot") | null;
+                densityKgM3?: number | null;
+                densitySpreadKgM3?: number | null;
+                material?: {
+                    id: string;
+                } | null;
+                axis?: {
+                    /** @enum {string} */
+                    kind: "mesh";
+                    /** @enum {string} */
+                    along: "x" | "y" | "z";
+                } | {
+                    /** @enum {string} */
+                    kind: "principal";
+                    number: 1 | 2 | 3;
+                } | {
+                    /** @enum {string} */
+                    kind: "typed";
+                    pointM: [
+                        number,
+                        number,
+                        number
+                    ];
+                    direction: [
+                        number,
+                        number,
+                        number
+                    ];
+                };
+            };
+        };
+        SettingsChange: {
+            /** Format: uuid */
+            id: string;
+            /** Format: uuid */
+            projectId: string;
+            changed: number;
+            unchanged: number;
+            left: {
+                /** Format: uuid */
+                partId: string;
+                number: number;
+                name: string;
+                changedBy: string;
+            }[];
+            reverses: string | null;
+            /** Format: date-time */
+            createdAt: string;
+            createdBy: string;
+        };
         Part: {
             /** Format: uuid */
             id: string;
@@ -823,6 +1238,101 @@ export interface components {
                 timeS: number;
             } | null;
             version: number;
+        };
+        MaterialList: {
+            items: {
+                name: string;
+                /** @enum {string} */
+                group: "aluminium" | "steel" | "copper" | "titanium" | "other-metal" | "polymer" | "elastomer" | "composite" | "wood" | "glass-ceramic" | "other";
+                densityKgM3: number;
+                densitySpreadKgM3: number;
+                /** @enum {string} */
+                spreadBasis: "source" | "judgement";
+                source: string;
+                id: string;
+                /** @enum {string} */
+                origin: "starter" | "own";
+                version: number;
+                archivedAt: string | null;
+                usedByParts: number;
+                can: {
+                    edit: boolean;
+                };
+            }[];
+            can: {
+                create: boolean;
+            };
+        };
+        CreateMaterialRequest: {
+            name: string;
+            /** @enum {string} */
+            group: "aluminium" | "steel" | "copper" | "titanium" | "other-metal" | "polymer" | "elastomer" | "composite" | "wood" | "glass-ceramic" | "other";
+            densityKgM3: number;
+            densitySpreadKgM3: number;
+            /** @enum {string} */
+            spreadBasis: "source" | "judgement";
+            source: string;
+        };
+        Material: {
+            name: string;
+            /** @enum {string} */
+            group: "aluminium" | "steel" | "copper" | "titanium" | "other-metal" | "polymer" | "elastomer" | "composite" | "wood" | "glass-ceramic" | "other";
+            densityKgM3: number;
+            densitySpreadKgM3: number;
+            /** @enum {string} */
+            spreadBasis: "source" | "judgement";
+            source: string;
+            id: string;
+            /** @enum {string} */
+            origin: "starter" | "own";
+            version: number;
+            archivedAt: string | null;
+            usedByParts: number;
+            can: {
+                edit: boolean;
+            };
+        };
+        ImportMaterialsRequest: {
+            csv: string;
+            rehearse: boolean;
+        };
+        ImportMaterialsAnswer: {
+            added: number;
+            changed: number;
+            unchanged: number;
+            errors: {
+                row: number;
+                column: string | null;
+                message: string;
+            }[];
+        };
+        ChangeMaterialRequest: {
+            name?: string;
+            /** @enum {string} */
+            group?: "aluminium" | "steel" | "copper" | "titanium" | "other-metal" | "polymer" | "elastomer" | "composite" | "wood" | "glass-ceramic" | "other";
+            densityKgM3?: number;
+            densitySpreadKgM3?: number;
+            /** @enum {string} */
+            spreadBasis?: "source" | "judgement";
+            source?: string;
+            version: number;
+            archived?: boolean;
+        };
+        MaterialUses: {
+            items: {
+                /** Format: uuid */
+                partId: string;
+                /** Format: uuid */
+                projectId: string;
+                projectName: string;
+                number: number;
+                name: string;
+                letter: string;
+                densityKgM3: number;
+                massKg: number | null;
+                massAtPresentDensityKg: number | null;
+            }[];
+            total: number;
         };
         CreateUploadRequest: {
             fileName: string;
@@ -1764,6 +2274,397 @@ export interface operations {
             };
         };
     };
+    "partlist.list": {
+        parameters: {
+            query?: {
+                text?: string;
+                states?: string;
+                deleted?: string;
+                sort?: "number" | "name" | "file" | "unit" | "material" | "size" | "volume" | "mass" | "moment1" | "moment2" | "moment3" | "state" | "changed";
+                direction?: "ascending" | "descending";
+                offset?: number;
+                limit?: number;
+            };
+            header?: never;
+            path: {
+                projectId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description A stretch of a project’s list of parts, and how many there are in each state */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["PartList"];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "partexports.export": {
+        parameters: {
+            query: {
+                text?: string;
+                states?: string;
+                deleted?: string;
+                sort?: "number" | "name" | "file" | "unit" | "material" | "size" | "volume" | "mass" | "moment1" | "moment2" | "moment3" | "state" | "changed";
+                direction?: "ascending" | "descending";
+                format: "csv" | "json";
+                columns?: string;
+            };
+            header?: never;
+            path: {
+                projectId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description What the list of parts shows, as a table or as the records of its statements */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "text/csv": string;
+                    "application/json": ({
+                        /** @constant */
+                        schema: "masswright.statement/1";
+                        file: string;
+                        sha256: string;
+                        /** @enum {string} */
+                        format: "stl-binary" | "stl-ascii" | "obj";
+                        /** @enum {string} */
+                        lengthUnit: "micron" | "mm" | "cm" | "m" | "inch" | "foot";
+                        facets: number;
+                        measuringVersion: string;
+                        soundness: {
+                            closed: boolean;
+                            oriented: boolean;
+                            outward: boolean;
+                            turned: boolean;
+                            boundaryEdges: number;
+                            nonManifoldEdges: number;
+                            degenerateFacets: number;
+                            duplicateFacets: number;
+                            defensible: boolean;
+                            findings: {
+                                /** @enum {string} */
+                                kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons";
+                                count: number;
+                                facets: number[];
+                            }[];
+                        };
+                        material: string | null;
+                        densityKgM3: number | null;
+                        weighing: {
+                            massKg: number;
+                            uncertaintyKg: number;
+                            impliedDensityKgM3: number;
+                            /** @enum {string} */
+                            verdict: "agrees" | "unchecked" | "disagrees";
+                        } | null;
+                        volumeM3: number | null;
+                        areaM2: number;
+                        massKg: number | null;
+                        boundingBoxM: {
+                            min: [
+                                number,
+                                number,
+                                number
+                            ];
+                            max: [
+                                number,
+                                number,
+                                number
+                            ];
+                        };
+                        /** @constant */
+                        frame: "mesh";
+                        centreOfMassM: [
+                            number,
+                            number,
+                            number
+                        ] | null;
+                        inertiaAtCentreOfMassKgM2: {
+                            xx: number;
+                            yy: number;
+                            zz: number;
+                            xy: number;
+                            yz: number;
+                            zx: number;
+                            /** @constant */
+                            offDiagonals: "-∫xy dm";
+                        } | null;
+                        principalMomentsKgM2: [
+                            number,
+                            number,
+                            number
+                        ] | null;
+                        principalAxes: [
+                            [
+                                number,
+                                number,
+                                number
+                            ],
+                            [
+                                number,
+                                number,
+                                number
+                            ],
+                            [
+                                number,
+                                number,
+                                number
+                            ]
+                        ] | null;
+                        axes: ("distinct" | "disc-like" | "rod-like" | "ball") | null;
+                        radiiOfGyrationM: [
+                            number,
+                            number,
+                            number
+                        ] | null;
+                        aboutAxis: {
+                            pointM: [
+                                number,
+                                number,
+                                number
+                            ];
+                            direction: [
+                                number,
+                                number,
+                                number
+                            ];
+                            inertiaKgM2: number;
+                            radiusOfGyrationM: number;
+                        } | null;
+                    } | {
+                        file: string;
+                        error: {
+                            /** @enum {string} */
+                            code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "too-many-vertices" | "polygon-too-large" | "vertex-missing" | "archive-damaged" | "too-large-expanded" | "file-missing" | "gave-up" | "not-measured-yet" | "unit-not-stated";
+                            message: string;
+                            at: {
+                                byte?: number;
+                                line?: number;
+                            } | null;
+                        };
+                    })[];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "partdeletions.delete": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                projectId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": components["schemas"]["DeletePartsRequest"];
+            };
+        };
+        responses: {
+            /** @description Delete parts, with a way back for thirty days */
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["MovedParts"];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "partdeletions.restore": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                projectId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": components["schemas"]["RestorePartsRequest"];
+            };
+        };
+        responses: {
+            /** @description Restore deleted parts */
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["MovedParts"];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "settingschanges.change": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                projectId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": components["schemas"]["ChangeSettingsRequest"];
+            };
+        };
+        responses: {
+            /** @description Change the unit, density, material or axis of many parts at once */
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["SettingsChange"];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "settingschanges.undo": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                changeId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description Take a change of many settings back, as far as nobody has changed the same since */
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["SettingsChange"];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
     "parts.get": {
         parameters: {
             query?: never;
@@ -2072,6 +2973,253 @@ export interface operations {
                             } | null;
                         };
                     };
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "materials.list": {
+        parameters: {
+            query?: {
+                text?: string;
+                archived?: string;
+            };
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The materials of the starter library and the organisation’s own */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["MaterialList"];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "materials.create": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": components["schemas"]["CreateMaterialRequest"];
+            };
+        };
+        responses: {
+            /** @description Add a material */
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["Material"];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "materials.export": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The library as a table */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "text/csv": string;
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "materials.import": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": components["schemas"]["ImportMaterialsRequest"];
+            };
+        };
+        responses: {
+            /** @description Take materials from a table, or say what that would do */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["ImportMaterialsAnswer"];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "materials.change": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                materialId: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                "application/json": components["schemas"]["ChangeMaterialRequest"];
+            };
+        };
+        responses: {
+            /** @description Change or archive a material of the organisation */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["Material"];
+                };
+            };
+            /** @description Refused; `code` says why. */
+            "4XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description Failed; worth trying again. */
+            "5XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    "materials.listUses": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                materialId: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The parts that are set to a material, and what its present density would make of them */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/json": components["schemas"]["MaterialUses"];
                 };
             };
             /** @description Refused; `code` says why. */

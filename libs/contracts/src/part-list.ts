@@ -62,7 +62,7 @@ export type ExportQuery = z.infer<typeof exportQuery>;
 /** Parts one by one, or all that a filter leaves but some. */
 export const partSelection = z.union([
   z.object({ ids: z.array(id).min(1).max(10_000) }),
-  z.object({ filter: partFilter.partial(), except: z.array(id).max(10_000).default([]) }),
+  z.object({ filter: partFilter.extend({ deleted: z.boolean().default(false) }).partial(), except: z.array(id).max(10_000).default([]) }),
 ]);
 export type PartSelection = z.infer<typeof partSelection>;
 

@@ -18,23 +18,29 @@ function unknownMaterial(): AppError {
  * @throws AppError invalid-input where the material is unknown, or a spread is given without a density to belong to
  */
 export async function chooseDensity(tx: Transaction, before: Setting, choice: DensityChoice): Promise<ChosenDensity> {
-  const material = choice.material ? await getMaterial(tx, before, choice.material.id) : choice.material;
-  return settleDensity(before, choice, material);
+  return (await prepareDensityChoice(tx, choice))(before);
 }
 
-/** The library's present density and name; where it has lost the material, the name that the setting has kept, which needs a density to be given. */
-async function getMaterial(tx: Transaction, before: Setting, id: string): Promise<Pick<KnownMaterial, 'id' | 'name'> & Partial<KnownMaterial>> {
-  const known = await findKnownMaterial(tx, id);
-  if (known !== undefined) return known;
-  if (before.material?.id === id) return before.material;
-  throw unknownMaterial();
+/** The same choice for many settings: the library is asked once. */
+export async function prepareDensityChoice(tx: Transaction, choice: DensityChoice): Promise<(before: Setting) => ChosenDensity> {
+  const { material } = choice;
+  if (!material) return (before) => settleDensity(before, choice, material);
+  const known = await findKnownMaterial(tx, material.id);
+  return (before) => {
+    // What a setting is already named by stays a name that it can have.
+    const named = known ?? (before.material?.id === material.id ? before.material : undefined);
+    if (named === undefined) throw unknownMaterial();
+    return settleDensity(before, choice, named);
+  };
 }
 
-function settleDensity(before: Setting, choice: DensityChoice, material: Awaited<ReturnType<typeof getMaterial>> | null | undefined): ChosenDensity {
+type NamedMaterial = Pick<KnownMaterial, 'id' | 'name'> & Partial<KnownMaterial>;
+
+function settleDensity(before: Setting, choice: DensityChoice, material: NamedMaterial | null | undefined): ChosenDensity {
   const { densityKgM3, densitySpreadKgM3 } = choice;
   if (material) {
     const named = { id: material.id, name: material.name };
-    if (densityKgM3 != null) return { densityKgM3, densitySpreadKgM3: densitySpreadKgM3 ?? null, material: named };
+    if (typeof densityKgM3 === 'number') return { densityKgM3, densitySpreadKgM3: densitySpreadKgM3 ?? null, material: named };
     if (material.densityKgM3 === undefined) throw unknownMaterial();
     return { densityKgM3: material.densityKgM3, densitySpreadKgM3: densitySpreadKgM3 ?? material.densitySpreadKgM3 ?? null, material: named };
   }

@@ -1,5 +1,5 @@
 import type { Part } from '@masswright/contracts';
-import { findPart, listRevisions, listSameBytes, type StoredPart, type Transaction } from '@masswright/drizzle';
+import { findPart, holdParts, listRevisions, listSameBytes, type StoredPart, type Transaction } from '@masswright/drizzle';
 import { AppError, notFound } from '../platform/app-error';
 import type { Actor } from '../platform/work';
 import { presentPart } from './part.presenter';
@@ -15,8 +15,14 @@ export function requirePresent({ deletedAt }: { deletedAt: Date | null }): void 
   if (deletedAt !== null) throw new AppError('conflict', 'This part is deleted. Restore it first, then change it.');
 }
 
-/** A part that is to be changed. @throws AppError where there is none, or where it is deleted */
+/**
+ * A part that is to be changed, held for the rest of the transaction before anything of it is: whoever changes many parts at once holds them first too,
+ * so that two never wait for each other.
+ *
+ * @throws AppError where there is none, or where it is deleted
+ */
 export async function getPresentPart(tx: Transaction, partId: string): Promise<StoredPart> {
+  await holdParts(tx, [partId]);
   const stored = await getStoredPart(tx, partId);
   requirePresent(stored.part);
   return stored;
