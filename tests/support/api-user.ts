@@ -43,7 +43,8 @@ export class ApiUser {
       this.cookie = pair.endsWith('=') ? undefined : pair;
     }
     const text = await response.text();
-    const parsed: unknown = text === '' ? undefined : JSON.parse(text);
+    const isJson = /json/u.test(response.headers.get('content-type') ?? '');
+    const parsed: unknown = text === '' ? undefined : isJson ? JSON.parse(text) : text;
     checkAgainstDocument({ method, path: `/api/v1${path.split('?')[0] ?? ''}`, status: response.status, contentType: response.headers.get('content-type'), body: parsed });
     return { status: response.status, body: parsed as Body, headers: response.headers };
   }
