@@ -23,6 +23,7 @@ export const finding = z.object({
     'nonzero-attributes',
     'contradicting-normals',
     'non-planar-polygons',
+    'folded-polygons',
   ]),
   count: z.number().int().nonnegative(),
   /** Indices (from 0, in the order of the file) of some of the facets concerned, at most 20. */

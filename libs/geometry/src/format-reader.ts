@@ -23,6 +23,8 @@ export interface FileRemarks {
   nonzeroAttributes: Remark;
   /** Polygons whose corners do not lie in one plane, each with the first facet that was cut from it. */
   nonPlanarPolygons: Remark;
+  /** Polygons that are not convex and whose triangles overlap, which makes the area too large and leaves the volume as it is. */
+  foldedPolygons: Remark;
 }
 
 export const noRemarks = (): FileRemarks => ({
@@ -30,6 +32,7 @@ export const noRemarks = (): FileRemarks => ({
   trailingBytes: 0,
   nonzeroAttributes: { count: 0, facets: [] },
   nonPlanarPolygons: { count: 0, facets: [] },
+  foldedPolygons: { count: 0, facets: [] },
 });
 
 /** A format as a sentence names it. */

@@ -35,6 +35,7 @@ export const findingKinds = [
   'nonzero-attributes',
   'contradicting-normals',
   'non-planar-polygons',
+  'folded-polygons',
 ] as const;
 export type FindingKind = (typeof findingKinds)[number];
 

@@ -54,7 +54,7 @@ export function createMeasurer(options: MeasurerOptions): Measurer {
   }
 
   function finish(): Measurement {
-    const { format, compression, facets, trailingBytes, solids, nonzeroAttributes, nonPlanarPolygons } = reader.finish();
+    const { format, compression, facets, trailingBytes, solids, nonzeroAttributes, nonPlanarPolygons, foldedPolygons } = reader.finish();
     const mesh = (welder ?? beginWelding()).finish();
     const connections = checkConnections(mesh);
     const { min, max } = boundingBox;
@@ -70,6 +70,7 @@ export function createMeasurer(options: MeasurerOptions): Measurer {
       'several-solids': { count: solids > 1 ? solids : 0, facets: [] },
       'nonzero-attributes': nonzeroAttributes,
       'non-planar-polygons': nonPlanarPolygons,
+      'folded-polygons': foldedPolygons,
     });
     return {
       measuringVersion,

@@ -1,5 +1,6 @@
+import { cutPolygon } from './cut-polygon';
 import { batchFacets, createFacetBatch, flushFacets, type FacetSink } from './facet-batch';
-import { noRemarks, tooManyFacets, type FormatReader } from './format-reader';
+import { noRemarks, tooManyFacets, type FormatReader, type Remark } from './format-reader';
 import { growArray } from './grow-array';
 import type { ReadingLimits } from './limits';
 import { findingFacets } from './measurement';
@@ -7,15 +8,15 @@ import { MeshError, spellCount, spellCounted, type MeshErrorCode } from './mesh-
 import { parseCoordinate, quoteWord, refuseNumber } from './mesh-words';
 import { findObjStatement } from './obj-statements';
 import { parseDecimal } from './parse-decimal';
-import { isPlanar } from './polygon-shape';
+import { findPolygonShape } from './polygon-shape';
 import { createStatementScanner } from './scan-statements';
 
 /** A position, a weight and four of a colour are the most numbers that anything writes after `v`. */
 const mostVertexNumbers = 8;
 
 /**
- * Reads the facets of an OBJ file, pushed in chunks of any size. Polygons are cut into triangles from their first corner, in the order of the file;
- * all objects and groups are one mesh. Coordinates keep binary64. Of a vertex only x, y and z count: a fourth number is a weight in free-form
+ * Reads the facets of an OBJ file, pushed in chunks of any size. Polygons are cut into triangles in the order of the file, each as a fan from its
+ * first corner or, where that fan would fold back on itself, by its ears; all objects and groups are one mesh. Coordinates keep binary64. Of a vertex only x, y and z count: a fourth number is a weight in free-form
  * curves and surfaces, which polygons do not use, or the beginning of a colour. Throws a MeshError with the line for what does not belong there, and for
  * free-form surfaces, which would be missing from the mesh.
  */
@@ -116,11 +117,25 @@ export function createObjReader(limits: ReadingLimits, sink: FacetSink): FormatR
   function endPolygon(): void {
     if (corners < 3) refuse('syntax-invalid', `The polygon in line ${spellCount(scanner.line)} has ${spellCounted(corners, 'corner')}; it needs three at least. Export the mesh again.`);
     if (read + corners - 2 > limits.maximumFacets) throw tooManyFacets(limits.maximumFacets, 'obj', { line: scanner.line });
-    if (!isPlanar(vertices, polygon, corners)) {
-      remarks.nonPlanarPolygons.count += 1;
-      if (remarks.nonPlanarPolygons.facets.length < findingFacets) remarks.nonPlanarPolygons.facets.push(read);
+    const triangles = corners > 3 ? cutFolded() : undefined;
+    for (let k = 2; k < corners; k++) {
+      if (triangles === undefined) addFacet(polygon[0] ?? 0, polygon[k - 1] ?? 0, polygon[k] ?? 0);
+      else addFacet(triangles[3 * k - 6] ?? 0, triangles[3 * k - 5] ?? 0, triangles[3 * k - 4] ?? 0);
     }
-    for (let k = 2; k < corners; k++) addFacet(polygon[0] ?? 0, polygon[k - 1] ?? 0, polygon[k] ?? 0);
+  }
+
+  /** The triangles of a polygon whose fan would fold back on itself; undefined where the fan is what there is. */
+  function cutFolded(): Uint32Array | undefined {
+    const { planar, folded, normal } = findPolygonShape(vertices, polygon, corners);
+    if (!planar) note(remarks.nonPlanarPolygons);
+    const triangles = folded && planar ? cutPolygon(vertices, polygon, corners, normal) : undefined;
+    if (folded && triangles === undefined) note(remarks.foldedPolygons);
+    return triangles;
+  }
+
+  function note(remark: Remark): void {
+    remark.count += 1;
+    if (remark.facets.length < findingFacets) remark.facets.push(read);
   }
 
   function addFacet(a: number, b: number, c: number): void {
