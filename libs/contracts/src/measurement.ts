@@ -89,7 +89,7 @@ export const measurement = z.object({
 });
 export type Measurement = z.infer<typeof measurement>;
 
-/** Why a file could not be measured. `at` is a byte (from 0) or a line (from 1) of the mesh; in `archive-damaged` and `too-large-expanded`, a byte of the file as stored. */
+/** Why a file could not be measured. `at` is a byte (from 0) or a line (from 1) of the mesh, unpacked; where the message is about the archive, a byte of that. */
 export const measuringErrorCodes = [
   'file-empty',
   'format-unknown',

@@ -1,10 +1,10 @@
 import { gzipSync } from 'node:zlib';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { createMeasurer, measureMesh } from './measurer';
+import { measureMesh } from './measurer';
 import { MeshError } from './mesh-error';
-import type { ReadingLimits } from './limits';
 import { blockObj, encode, writeObj } from './testing/obj-files';
+import { measureInChunks, refuseInChunks } from './testing/push-mesh';
 import { makeBlock, makeSphere } from './testing/shapes';
 import { writeAsciiStl, writeBinaryStl } from './write-stl';
 
@@ -12,18 +12,6 @@ const block = makeBlock([0, 0, 0], [2, 3, 4]);
 const sphere = makeSphere(7, 44);
 const pack = (bytes: Uint8Array | string, level = 6): Uint8Array<ArrayBuffer> => Uint8Array.from(gzipSync(bytes, { level }));
 const join = (...pieces: Uint8Array[]): Uint8Array<ArrayBuffer> => Uint8Array.from(pieces.flatMap((piece) => Array.from(piece)));
-
-function refusal(bytes: Uint8Array, { chunkBytes = Infinity, ...limits }: Partial<ReadingLimits> & { chunkBytes?: number } = {}): MeshError {
-  try {
-    const measurer = createMeasurer({ sizeBytes: bytes.length, ...limits });
-    for (let at = 0; at < bytes.length; at += chunkBytes) measurer.push(bytes.subarray(at, Math.min(bytes.length, at + chunkBytes)));
-    measurer.finish();
-  } catch (error) {
-    if (error instanceof MeshError) return error;
-    throw error;
-  }
-  throw new Error('The file was not refused.');
-}
 
 /** A binary STL file with a changed header or with bytes after it. */
 function patched(corners: Float64Array, change: (view: DataView) => void, extra = 0): Uint8Array<ArrayBuffer> {
@@ -61,14 +49,7 @@ describe('a mesh packed with gzip', () => {
     const wholes = packed.map((bytes) => JSON.stringify(measureMesh(bytes)));
     fc.assert(
       fc.property(fc.nat(packed.length - 1), fc.array(fc.oneof(fc.integer({ min: 1, max: 3 }), fc.integer({ min: 1, max: 20_000 })), { minLength: 1, maxLength: 8 }), (which, sizes) => {
-        const bytes = packed[which] ?? new Uint8Array(0);
-        const measurer = createMeasurer({ sizeBytes: bytes.length });
-        for (let at = 0, k = 0; at < bytes.length; k++) {
-          const end = Math.min(bytes.length, at + (sizes[k % sizes.length] ?? 1));
-          measurer.push(bytes.slice(at, end));
-          at = end;
-        }
-        expect(JSON.stringify(measurer.finish())).toBe(wholes[which]);
+        expect(JSON.stringify(measureInChunks(packed[which] ?? new Uint8Array(0), sizes))).toBe(wholes[which]);
       }),
       { numRuns: 60, examples: packed.map((_, which) => [which, [1]] as [number, number[]]) },
     );
@@ -103,20 +84,20 @@ describe('a mesh packed with gzip', () => {
   ];
 
   it.each(refused)('is refused %s', (_name, bytes, code, sentence) => {
-    const error = refusal(bytes);
+    const error = refuseInChunks(bytes);
     expect(error.code).toBe(code);
     expect(error.message).toMatch(sentence);
     if (code !== 'file-empty') expect(error.at).not.toBeNull();
-    for (const chunkBytes of [1, 17, 5000]) expect(refusal(bytes, { chunkBytes })).toMatchObject({ code, message: error.message, at: error.at });
+    for (const chunkBytes of [1, 17, 5000]) expect(refuseInChunks(bytes, chunkBytes)).toMatchObject({ code, message: error.message, at: error.at });
   });
 
   it('of more facets than the caller allows is refused as soon as they have come', () => {
     const facets = sphere.length / 9;
     for (const bytes of [writeBinaryStl(sphere), writeAsciiStl(sphere), encode(writeObj(sphere))]) {
-      expect(refusal(pack(bytes), { maximumFacets: facets - 1 }).code).toBe('too-many-facets');
+      expect(refuseInChunks(pack(bytes), Infinity, { maximumFacets: facets - 1 }).code).toBe('too-many-facets');
       expect(measureMesh(pack(bytes), { maximumFacets: facets }).facets).toBe(facets);
     }
-    expect(refusal(pack(writeBinaryStl(sphere)), { maximumFacets: 100 }).at).toEqual({ byte: 84 + 50 * 100 });
+    expect(refuseInChunks(pack(writeBinaryStl(sphere)), Infinity, { maximumFacets: 100 }).at).toEqual({ byte: 84 + 50 * 100 });
   });
 
   it('that was damaged anywhere is refused in words, or measured, never anything else', () => {

@@ -18,7 +18,7 @@ export const meshErrorCodes = [
 ] as const;
 export type MeshErrorCode = (typeof meshErrorCodes)[number];
 
-/** Where in the mesh, as it is when expanded: a byte (from 0) or a line (from 1). `archive-damaged` and `too-large-expanded` give a byte of the file as stored. */
+/** Where in the mesh, unpacked: a byte (from 0) or a line (from 1). Where the message is about the archive, a byte of that. */
 export interface MeshPlace {
   byte?: number;
   line?: number;

@@ -1,10 +1,11 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { createMeasurer, measureMesh } from './measurer';
+import { measureMesh } from './measurer';
 import { MeshError } from './mesh-error';
 import { anyMesh } from './testing/arbitrary-meshes';
 import { compareExactly } from './testing/compare-exactly';
 import { blockFaces, blockObj, blockVertices, encode, writeObj } from './testing/obj-files';
+import { measureInChunks, refuseInChunks } from './testing/push-mesh';
 import { makeBlock, makeSphere, makeTorus } from './testing/shapes';
 import { writeAsciiStl } from './write-stl';
 
@@ -12,18 +13,7 @@ const vertexLines = blockVertices.map((vertex) => `v ${vertex}\n`).join('');
 const faceLines = blockFaces.map((face) => `f ${face.join(' ')}\n`).join('');
 const faces = (corner: (vertex: number) => string): string => blockFaces.map((face) => `f ${face.map(corner).join(' ')}\n`).join('');
 
-function refusal(text: string | Uint8Array, chunkBytes = Infinity): MeshError {
-  const bytes = typeof text === 'string' ? encode(text) : text;
-  try {
-    const measurer = createMeasurer({ sizeBytes: bytes.length });
-    for (let at = 0; at < bytes.length; at += chunkBytes) measurer.push(bytes.subarray(at, Math.min(bytes.length, at + chunkBytes)));
-    measurer.finish();
-  } catch (error) {
-    if (error instanceof MeshError) return error;
-    throw error;
-  }
-  throw new Error('The file was not refused.');
-}
+const refusal = (text: string | Uint8Array, chunkBytes?: number): MeshError => refuseInChunks(typeof text === 'string' ? encode(text) : text, chunkBytes);
 
 describe('an OBJ mesh', () => {
   const expected = measureMesh(writeAsciiStl(makeBlock([0, 0, 0], [2, 3, 4])));
@@ -187,14 +177,7 @@ describe('how an OBJ file is cut into chunks', () => {
   it('changes nothing, down to one byte', () => {
     fc.assert(
       fc.property(fc.nat(texts.length - 1), fc.array(fc.oneof(fc.integer({ min: 1, max: 3 }), fc.integer({ min: 1, max: 5000 })), { minLength: 1, maxLength: 12 }), (which, sizes) => {
-        const bytes = encode(texts[which] ?? '');
-        const measurer = createMeasurer({ sizeBytes: bytes.length });
-        for (let at = 0, k = 0; at < bytes.length; k++) {
-          const end = Math.min(bytes.length, at + (sizes[k % sizes.length] ?? 1));
-          measurer.push(bytes.slice(at, end));
-          at = end;
-        }
-        expect(JSON.stringify(measurer.finish())).toBe(wholes[which]);
+        expect(JSON.stringify(measureInChunks(encode(texts[which] ?? ''), sizes))).toBe(wholes[which]);
       }),
       { numRuns: 60, examples: texts.map((_, which) => [which, [1]] as [number, number[]]) },
     );
