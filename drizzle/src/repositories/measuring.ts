@@ -3,6 +3,7 @@ import { and, eq, inArray, isNull, ne, or } from 'drizzle-orm';
 import type { Integrals, Measurement, MeasuringError, MeasuringRun, Symmetric3, Vector3 } from '@masswright/contracts';
 import { measurements, measuringRuns, parts, revisions, uploads } from '../schema';
 import type { Transaction } from '../tenancy/database';
+import { isOfThisOrganisation } from '../tenancy/of-this-organisation';
 
 /** A run that this worker has taken up: what to read, and the fence that its writes must still match. */
 export interface TakenRun {
@@ -66,7 +67,7 @@ async function isSizeShared(tx: Transaction, uploadId: string, sizeBytes: number
   const rows = await tx
     .select({ id: uploads.id })
     .from(uploads)
-    .where(and(eq(uploads.sizeBytes, sizeBytes), eq(uploads.state, 'stored'), ne(uploads.id, uploadId)))
+    .where(and(isOfThisOrganisation(uploads), eq(uploads.sizeBytes, sizeBytes), eq(uploads.state, 'stored'), ne(uploads.id, uploadId)))
     .limit(1);
   return rows.length > 0;
 }
@@ -94,6 +95,7 @@ async function isBeingMeasured(tx: Transaction, run: TakenRun, sha256: Buffer): 
     .innerJoin(uploads, and(eq(uploads.organisationId, revisions.organisationId), eq(uploads.id, revisions.uploadId)))
     .where(
       and(
+        isOfThisOrganisation(uploads),
         ne(measuringRuns.id, run.runId),
         eq(measuringRuns.state, 'running'),
         ne(measuringRuns.stage, 'hashing'),

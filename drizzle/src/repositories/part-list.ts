@@ -2,6 +2,7 @@ import { sql, type SQL } from 'drizzle-orm';
 import { partStates, type PartFilter, type PartOrder, type PartSort, type PartState } from '@masswright/contracts';
 import { partSummaries } from '../schema';
 import type { Transaction } from '../tenancy/database';
+import { isOfThisOrganisation } from '../tenancy/of-this-organisation';
 
 /**
  * The words of a search, as `search_text` holds them. A text of 200 characters has at most 100; each is looked for by itself.
@@ -18,7 +19,7 @@ export function splitSearch(text: string): string[] {
 export function matchesText(projectId: string, filter: Pick<PartFilter, 'text' | 'deleted'>): SQL {
   const words = splitSearch(filter.text).map((word) => sql`position(${word} in ${partSummaries.searchText}) > 0`);
   const deleted = filter.deleted ? sql`${partSummaries.deletedAt} is not null` : sql`${partSummaries.deletedAt} is null`;
-  return sql.join([sql`${partSummaries.projectId} = ${projectId}`, deleted, ...words], sql` and `);
+  return sql.join([isOfThisOrganisation(partSummaries), sql`${partSummaries.projectId} = ${projectId}`, deleted, ...words], sql` and `);
 }
 
 /** The states that a filter asks for; all where it names none. */
@@ -77,7 +78,7 @@ export async function listPartIds(
     select
       (select json_object_agg(state, n) from (select state, count(*)::int as n from matching group by state) by_state) as counts,
       array(select part_id from matching where ${holds(states)} order by ${orderBy(query)} limit ${query.limit} offset ${query.offset})::text[] as ids,
-      (select count(*)::int from ${partSummaries} where ${partSummaries.projectId} = ${projectId} and ${partSummaries.deletedAt} is not null) as deleted`);
+      (select count(*)::int from ${partSummaries} where ${isOfThisOrganisation(partSummaries)} and ${partSummaries.projectId} = ${projectId} and ${partSummaries.deletedAt} is not null) as deleted`);
   const [row] = rows;
   if (row === undefined) throw new Error('A select of one row gave none.');
   const counts = Object.fromEntries(partStates.map((state) => [state, row.counts?.[state] ?? 0])) as Record<PartState, number>;

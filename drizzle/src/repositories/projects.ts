@@ -41,6 +41,12 @@ export async function findProject(tx: Transaction, projectId: string): Promise<P
   return rows[0];
 }
 
+/** Whether there is such a project; quicker than to find it, which counts its parts. */
+export async function hasProject(tx: Transaction, projectId: string): Promise<boolean> {
+  const rows = await tx.select({ id: projects.id }).from(projects).where(eq(projects.id, projectId));
+  return rows.length > 0;
+}
+
 export async function isProjectNameTaken(tx: Transaction, name: string, exceptId?: string): Promise<boolean> {
   const rows = await tx
     .select({ id: projects.id })

@@ -2,6 +2,7 @@ import { sql } from 'drizzle-orm';
 import { and, eq, inArray, isNull, lt } from 'drizzle-orm';
 import { parts, partSummaries, projects, revisions, uploads, type UploadState } from '../schema';
 import type { Transaction } from '../tenancy/database';
+import { isOfThisOrganisation } from '../tenancy/of-this-organisation';
 
 export interface UploadRow {
   id: string;
@@ -48,7 +49,7 @@ export async function listOpenUploads(tx: Transaction, projectId: string, userId
   return tx
     .select(columns)
     .from(uploads)
-    .where(and(eq(uploads.projectId, projectId), eq(uploads.createdBy, userId), eq(uploads.state, 'open')))
+    .where(and(isOfThisOrganisation(uploads), eq(uploads.projectId, projectId), eq(uploads.createdBy, userId), eq(uploads.state, 'open')))
     .orderBy(uploads.createdAt, uploads.id)
     .limit(2000);
 }
@@ -92,7 +93,7 @@ export async function countSameBytes(tx: Transaction, hashes: readonly Buffer[])
     .from(uploads)
     .innerJoin(revisions, and(eq(revisions.organisationId, uploads.organisationId), eq(revisions.uploadId, uploads.id)))
     .innerJoin(parts, and(eq(parts.organisationId, revisions.organisationId), eq(parts.id, revisions.partId)))
-    .where(and(inArray(uploads.sha256, [...hashes]), isNull(parts.deletedAt)))
+    .where(and(isOfThisOrganisation(uploads), inArray(uploads.sha256, [...hashes]), isNull(parts.deletedAt)))
     .groupBy(uploads.sha256);
   return new Map(rows.map(({ sha256, count }) => [sha256?.toString('hex') ?? '', count]));
 }
@@ -105,7 +106,7 @@ export async function listSameBytes(tx: Transaction, sha256: Buffer, exceptRevis
     .innerJoin(revisions, and(eq(revisions.organisationId, uploads.organisationId), eq(revisions.uploadId, uploads.id)))
     .innerJoin(parts, and(eq(parts.organisationId, revisions.organisationId), eq(parts.id, revisions.partId)))
     .innerJoin(projects, and(eq(projects.organisationId, parts.organisationId), eq(projects.id, parts.projectId)))
-    .where(and(eq(uploads.sha256, sha256), isNull(parts.deletedAt), sql`${revisions.id} <> ${exceptRevisionId}`))
+    .where(and(isOfThisOrganisation(uploads), eq(uploads.sha256, sha256), isNull(parts.deletedAt), sql`${revisions.id} <> ${exceptRevisionId}`))
     .orderBy(revisions.createdAt, revisions.id)
     .limit(20);
 }
@@ -116,7 +117,7 @@ export async function findPartsByFileName(tx: Transaction, projectId: string, fi
   return tx
     .select({ partId: partSummaries.partId, fileKey: partSummaries.fileKey })
     .from(partSummaries)
-    .where(and(eq(partSummaries.projectId, projectId), inArray(partSummaries.fileKey, [...fileKeys]), isNull(partSummaries.deletedAt)))
+    .where(and(isOfThisOrganisation(partSummaries), eq(partSummaries.projectId, projectId), inArray(partSummaries.fileKey, [...fileKeys]), isNull(partSummaries.deletedAt)))
     .orderBy(partSummaries.number);
 }
 

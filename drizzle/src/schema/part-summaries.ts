@@ -1,3 +1,4 @@
+import { sql } from 'drizzle-orm';
 import { doublePrecision, foreignKey, index, integer, pgTable, text, uuid } from 'drizzle-orm/pg-core';
 import type { PartState } from '@masswright/contracts';
 import { at, ofOrganisation } from './columns';
@@ -36,6 +37,8 @@ export const partSummaries = pgTable(
     // Every list is of one project: a test of uuids, which row-level security lets through to the index, leaves only its rows for the text search.
     index('part_summaries_project_index').on(table.organisationId, table.projectId, table.number),
     index('part_summaries_file_index').on(table.organisationId, table.projectId, table.fileKey),
+    // Every list says how many deleted parts there are beside it.
+    index('part_summaries_deleted_index').on(table.organisationId, table.projectId).where(sql`${table.deletedAt} is not null`),
     foreignKey({
       name: 'part_summaries_part_fkey',
       columns: [table.organisationId, table.partId],

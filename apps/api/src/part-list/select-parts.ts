@@ -1,5 +1,5 @@
 import type { PartSelection } from '@masswright/contracts';
-import { findFilteredPartIds, findPartIdsOfProject, findProject, holdParts, type HeldPart, type Transaction } from '@masswright/drizzle';
+import { findFilteredPartIds, findPartIdsOfProject, hasProject, holdParts, type HeldPart, type Transaction } from '@masswright/drizzle';
 import { AppError, notFound } from '../platform/app-error';
 
 /** As many parts as one request may change: more would hold them longer than others want to wait. */
@@ -14,7 +14,7 @@ const tooMany = () => new AppError('invalid-input', `One change takes at most ${
  * @throws AppError not-found where the project or a named part is none of the organisation's; invalid-input where there are too many
  */
 export async function selectParts(tx: Transaction, projectId: string, selection: PartSelection): Promise<HeldPart[]> {
-  if ((await findProject(tx, projectId)) === undefined) throw notFound('project');
+  if (!(await hasProject(tx, projectId))) throw notFound('project');
   if ('ids' in selection) {
     const ids = [...new Set(selection.ids)];
     if ((await findPartIdsOfProject(tx, projectId, ids)).length < ids.length) throw notFound('part');
