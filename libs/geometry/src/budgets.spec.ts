@@ -140,6 +140,18 @@ describe('an OBJ file of vertices without end', () => {
   });
 });
 
+describe('one facet over and over', () => {
+  it('is counted without an object for each', () => {
+    const measurer = createMeasurer({ sizeBytes: 24 + 8 * 1e6 });
+    for (const chunk of repeat(['v 0 0 0\nv 1 0 0\nv 0 1 0\n', 1], ['f 1 2 3\n', 1e6])) measurer.push(chunk);
+    const before = process.memoryUsage().heapUsed;
+    const { soundness } = measurer.finish();
+    expect(process.memoryUsage().heapUsed - before).toBeLessThan(40 * megabyte);
+    expect(soundness.duplicateFacets).toBe(999_999);
+    expect(soundness.findings.at(-1)).toEqual({ kind: 'duplicate-facets', count: 999_999, facets: Array.from({ length: 20 }, (_, k) => k + 1) });
+  });
+});
+
 describe('an archive that grows beyond all bounds', () => {
   /** A gigabyte in 64 members of 16 MiB each: about a megabyte when packed. */
   function* bomb(head: string, unit: string | Uint8Array): Generator<Uint8Array> {

@@ -14,9 +14,9 @@ export function checkDuplicates(mesh: WeldedMesh): { count: number; facets: numb
     const begin = starts[vertex] ?? 0;
     const end = starts[vertex + 1] ?? 0;
     if (end - begin < 2 || (end - begin <= shortRow && !hasRepetition(mesh, rows, begin, end))) continue;
-    const found = findRepetitions(mesh, rows.subarray(begin, end));
-    count += found.length;
-    if (repeated.length < findingFacets) repeated.push(...found.slice(0, findingFacets - repeated.length));
+    const found = findRepetitions(mesh, rows.subarray(begin, end), findingFacets - repeated.length);
+    count += found.count;
+    repeated.push(...found.facets);
   }
   return { count, facets: repeated.sort((one, two) => one - two) };
 }
@@ -37,14 +37,27 @@ function hasRepetition({ corners }: WeldedMesh, rows: Uint32Array, begin: number
   return false;
 }
 
-/** Facets of a row that repeat one before them in the file. */
-function findRepetitions(mesh: WeldedMesh, row: Uint32Array): number[] {
-  const sorted = Array.from(row, (facet) => ({ facet, ...findGreaterTwo(mesh, facet) }));
-  sorted.sort((one, two) => one.middle - two.middle || one.greatest - two.greatest || one.facet - two.facet);
-  return sorted.flatMap(({ facet, middle, greatest }, k) => {
-    const before = sorted[k - 1];
-    return before?.middle === middle && before.greatest === greatest ? [facet] : [];
-  });
+/**
+ * Facets of a row that repeat one before them in the file: how many, and the first `wanted` in the order of their vertices. A file may be one facet over
+ * and over, so nothing but one number a facet is kept: its two greater vertices, exact up to 94 million vertices (their square is below 2⁵³).
+ */
+function findRepetitions(mesh: WeldedMesh, row: Uint32Array, wanted: number): { count: number; facets: number[] } {
+  const keys = allocate(() => new Float64Array(row.length));
+  for (let k = 0; k < row.length; k++) keys[k] = findKey(mesh, row[k] ?? 0);
+  const sorted = keys.slice().sort();
+  // The first facets of each key that is repeated, for as many keys as can be listed.
+  const listed = new Map<number, number[]>();
+  let count = 0;
+  for (let k = 1; k < sorted.length; k++) {
+    if (sorted[k] !== sorted[k - 1]) continue;
+    if (count < wanted) listed.set(sorted[k] ?? 0, []);
+    count += 1;
+  }
+  for (let k = 0; listed.size > 0 && k < keys.length; k++) {
+    const facets = listed.get(keys[k] ?? 0);
+    if (facets !== undefined && facets.length <= wanted) facets.push(row[k] ?? 0);
+  }
+  return { count, facets: [...listed.values()].flatMap((facets) => facets.slice(1)).slice(0, wanted) };
 }
 
 function sortFacets({ corners, facetCount, vertexCount }: WeldedMesh): { starts: Uint32Array; rows: Uint32Array } {
@@ -73,8 +86,9 @@ function sortFacets({ corners, facetCount, vertexCount }: WeldedMesh): { starts:
   return { starts, rows };
 }
 
-function findGreaterTwo({ corners }: WeldedMesh, facet: number): { middle: number; greatest: number } {
+/** The middle and the greatest vertex of a facet as one number. */
+function findKey({ corners, vertexCount }: WeldedMesh, facet: number): number {
   const a = corners[3 * facet] ?? 0, b = corners[3 * facet + 1] ?? 0, c = corners[3 * facet + 2] ?? 0;
   const greatest = Math.max(a, b, c);
-  return { greatest, middle: a + b + c - greatest - Math.min(a, b, c) };
+  return (a + b + c - greatest - Math.min(a, b, c)) * vertexCount + greatest;
 }

@@ -172,6 +172,11 @@ describe('a file of the disk', () => {
   it('is given up when the signal says so', async () => {
     const reason = new Error('The page was left.');
     await expect(readMeshFile(makeFile(writeBinaryStl(shapes.makeSphere(1, 12))), { signal: AbortSignal.abort(reason) })).rejects.toBe(reason);
+    // In the middle of it, too.
+    const left = new AbortController();
+    const reading = readMeshFile(makeFile(writeBinaryStl(shapes.makeSphere(1, 200))), { signal: left.signal });
+    left.abort(reason);
+    await expect(reading).rejects.toBe(reason);
   });
 });
 
