@@ -13,6 +13,7 @@ import { QueueConsumers } from './queue/queue-consumers';
 import { WorkQueues } from './queue/work-queues';
 import { OutboxRelay } from './relay/outbox-relay';
 import { AbandonedUploads } from './schedules/abandoned-uploads';
+import { DeletedParts } from './schedules/deleted-parts';
 import { Housekeeping } from './schedules/housekeeping';
 import { MissingSummaries } from './schedules/missing-summaries';
 
@@ -23,7 +24,7 @@ export class WorkerModule {
       module: WorkerModule,
       imports: [PlatformModule.with(settings, logger)],
       controllers: [HealthController],
-      providers: [WorkQueues, MeasuringThreads, MeasuringHandler, Mailer, MailHandler, ObjectDeletionHandler, QueueConsumers, OutboxRelay, AbandonedUploads, MissingSummaries, Housekeeping, Metrics],
+      providers: [WorkQueues, MeasuringThreads, MeasuringHandler, Mailer, MailHandler, ObjectDeletionHandler, QueueConsumers, OutboxRelay, AbandonedUploads, DeletedParts, MissingSummaries, Housekeeping, Metrics],
     };
   }
 }

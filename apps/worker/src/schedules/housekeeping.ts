@@ -2,13 +2,14 @@ import { Inject, Injectable, type OnApplicationBootstrap, type OnModuleDestroy }
 import { Database, forgetDoneWork, sweepAttempts } from '@masswright/drizzle';
 import type { Logger } from '@masswright/logs';
 import { AbandonedUploads } from './abandoned-uploads';
+import { DeletedParts } from './deleted-parts';
 import { MissingSummaries } from './missing-summaries';
 import { InjectLogger } from '../platform/inject-logger';
 
 const everyMs = 3_600_000;
 const keepDoneWorkDays = 7;
 
-/** Forgets what nobody needs any more: outbox rows long done, counters whose time is over, abandoned uploads. Several workers may do it at once. */
+/** Forgets what nobody needs any more: outbox rows long done, counters whose time is over, abandoned uploads, parts deleted long ago. Several workers may do it at once. */
 @Injectable()
 export class Housekeeping implements OnApplicationBootstrap, OnModuleDestroy {
   private timer: NodeJS.Timeout | undefined;
@@ -16,6 +17,7 @@ export class Housekeeping implements OnApplicationBootstrap, OnModuleDestroy {
   constructor(
     @Inject(Database) private readonly database: Database,
     @Inject(AbandonedUploads) private readonly abandonedUploads: AbandonedUploads,
+    @Inject(DeletedParts) private readonly deletedParts: DeletedParts,
     @Inject(MissingSummaries) private readonly missingSummaries: MissingSummaries,
     @InjectLogger() private readonly logger: Logger,
   ) {}
@@ -36,6 +38,7 @@ export class Housekeeping implements OnApplicationBootstrap, OnModuleDestroy {
         await sweepAttempts(tx);
       });
       await this.abandonedUploads.sweep();
+      await this.deletedParts.forget();
       await this.missingSummaries.write();
     } catch (error) {
       this.logger.warn({ err: error }, 'housekeeping failed; it comes again');
