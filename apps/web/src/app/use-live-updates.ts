@@ -3,7 +3,9 @@ import { useQueryClient, type QueryClient, type QueryKey } from '@tanstack/react
 import { useEffect } from 'react';
 import { startBrowserStream } from '../features/events/model/browser-stream';
 import { createCoalescer, type GatheredAction } from '../features/events/model/coalesce';
-import { applyRun, partKey, partsKey } from '../features/parts/api/parts';
+import { materialsKey } from '../features/materials/api/materials';
+import { partKey, partsKey } from '../features/parts/api/keys';
+import { applyRun } from '../features/parts/api/run-events';
 import { peopleKey } from '../features/people/api/people';
 import { projectKey, projectsKey } from '../features/projects/api/projects';
 import { sessionKey } from '../features/session/api/session';
@@ -52,6 +54,16 @@ function createEventHandler(client: QueryClient, coalesce: (key: string, action:
         // They say how many parts there are.
         readAgain(...projectKey(event.projectId));
         readAgain(...projectsKey);
+        return;
+      case 'parts':
+        readAgain(...partsKey(event.projectId));
+        // Any of them may be the part that a page is open on.
+        readAgain('part');
+        readAgain(...projectKey(event.projectId));
+        readAgain(...projectsKey);
+        return;
+      case 'materials':
+        readAgain(...materialsKey);
         return;
       case 'run':
         applyRun(client, event);

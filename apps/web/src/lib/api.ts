@@ -67,14 +67,3 @@ export async function unwrapAs<Data>(answer: Promise<Answer<Loosened<Data>>>): P
 export async function expectDone(answer: Promise<Answer<unknown>>): Promise<void> {
   await settle(answer);
 }
-
-/** A request that the client has no types for yet; who calls it says what the contract promises. */
-export async function request<Data>(method: 'GET' | 'POST' | 'PATCH', path: string, { body, signal }: { body?: unknown; signal?: AbortSignal } = {}): Promise<Data> {
-  const send = async (): Promise<Answer<Data>> => {
-    const headers = body === undefined ? undefined : { 'content-type': 'application/json' };
-    const response = await fetch(new Request(new URL(path, location.href), { method, headers, body: body === undefined ? undefined : JSON.stringify(body), signal }));
-    const content: unknown = await response.json().catch(() => undefined);
-    return response.ok ? { data: content as Data, response } : { error: content, response };
-  };
-  return unwrap(send());
-}

@@ -6,11 +6,15 @@ import { Failure } from '../components/failure';
 import { Loading } from '../components/loading';
 import { Crumbs, PageHeading } from '../components/page';
 import { PrintLine } from '../components/print-line';
+import { useMaterialItems } from '../features/materials/api/materials';
 import { usePart } from '../features/parts/api/parts';
+import { DeletedNotice } from '../features/parts/components/deleted-notice';
 import { PartStatement } from '../features/parts/components/part-statement';
 import { RenamePartDialog } from '../features/parts/components/rename-part-dialog';
 import { useSettingEditor } from '../features/parts/model/use-setting-editor';
 import { useSignedIn } from '../features/session/api/session';
+import { AddMeshesDialog } from '../features/uploads/components/add-meshes-dialog';
+import { openUploadDialog } from '../features/uploads/model/dialog-state';
 
 export function Component() {
   const { partId = '' } = useParams();
@@ -23,6 +27,7 @@ export function Component() {
 function PartPage({ part }: { part: Part }) {
   const session = useSignedIn();
   const { editor, state } = useSettingEditor(part);
+  const materials = useMaterialItems();
   const [renaming, setRenaming] = useState(false);
   return (
     <>
@@ -48,11 +53,13 @@ function PartPage({ part }: { part: Part }) {
         }
         actions={part.can.edit && <Button onClick={() => setRenaming(true)}>Rename</Button>}
       />
+      {part.deletedAt !== null && <DeletedNotice part={part} deletedAt={part.deletedAt} canRestore={session.can.createProject} />}
       <PrintLine>
         {session.organisation.name}, {part.projectName}, part {part.number}, revision {part.revision.letter}, setting version {state.saved.version}
         {state.status !== 'saved' && ' with changes that are not saved'}
       </PrintLine>
-      <PartStatement part={part} editor={editor} state={state} ownName={session.user.name} />
+      <PartStatement part={part} editor={editor} state={state} ownName={session.user.name} materials={materials} onReplace={part.can.edit ? () => openUploadDialog(part.projectId, [], { partId: part.id, number: part.number, name: part.name }) : undefined} />
+      <AddMeshesDialog projectId={part.projectId} materials={materials} />
       <RenamePartDialog part={part} isOpen={renaming} onClose={() => setRenaming(false)} />
     </>
   );

@@ -5,8 +5,8 @@ import { Failure } from '../components/failure';
 import { Loading } from '../components/loading';
 import { Crumbs, PageHeading } from '../components/page';
 import { PageDrop } from '../components/page-drop';
-import { useParts } from '../features/parts/api/parts';
-import { PartTable } from '../features/parts/components/part-table';
+import { useMaterialItems } from '../features/materials/api/materials';
+import { PartList } from '../features/parts/components/part-list';
 import { useProject, useRenameProject } from '../features/projects/api/projects';
 import { ProjectNameDialog } from '../features/projects/components/project-name-dialog';
 import { useSignedIn } from '../features/session/api/session';
@@ -25,6 +25,7 @@ function ProjectPage({ projectId }: { projectId: string }) {
   const session = useSignedIn();
   const { data: project, error, refetch } = useProject(projectId);
   const rename = useRenameProject(projectId);
+  const materials = useMaterialItems();
   const [renaming, setRenaming] = useState(false);
   if (error && !project) return <Failure error={error} onRetry={() => void refetch()} />;
   if (!project) return <Loading what="the project" />;
@@ -47,8 +48,14 @@ function ProjectPage({ projectId }: { projectId: string }) {
           </>
         }
       />
-      <Parts projectId={projectId} add={add} isCountedEmpty={project.parts === 0} />
-      <AddMeshesDialog projectId={projectId} />
+      <PartList
+        projectId={projectId}
+        canEdit={can.addMeshes}
+        materials={materials}
+        onReplace={can.addMeshes ? (row) => openUploadDialog(projectId, [], { partId: row.id, number: row.number, name: row.name }) : undefined}
+        empty={<NoParts projectId={projectId} add={add} />}
+      />
+      <AddMeshesDialog projectId={projectId} materials={materials} />
       <ProjectNameDialog
         title="Rename the project"
         submitLabel="Rename"
@@ -63,42 +70,18 @@ function ProjectPage({ projectId }: { projectId: string }) {
   );
 }
 
-interface PartsProps {
-  projectId: string;
-  add: React.ReactNode;
-  /** What the project itself says; the list may be older than that. */
-  isCountedEmpty: boolean;
-}
-
-function Parts({ projectId, add, isCountedEmpty }: PartsProps) {
+/** A project before its first part; files that are on their way there are not nothing. */
+function NoParts({ projectId, add }: { projectId: string; add: React.ReactNode }) {
   const isSending = useUploads().some((entry) => entry.projectId === projectId && (isUnfinished(entry) || entry.phase === 'stored'));
-  const { data, error, refetch, hasNextPage, fetchNextPage, isFetchingNextPage } = useParts(projectId);
-  if (error && !data) return <Failure error={error} onRetry={() => void refetch()} />;
-  if (!data) return <Loading what="the parts" />;
-  const rows = data.pages.flatMap((page) => page.items);
-  if (rows.length === 0 && (!isCountedEmpty || isSending)) return <Loading what="the parts" />;
-  if (rows.length === 0) {
-    return (
-      <section className="no-parts">
-        <h2>This project has no parts yet</h2>
-        <p className="soft">
-          {add
-            ? 'Drop STL files anywhere on this page, or add them with the button. Each file becomes a part; its mass properties appear in its row a moment after it has arrived.'
-            : 'An engineer or an administrator of your organisation can add meshes to it.'}
-        </p>
-      </section>
-    );
-  }
+  if (isSending) return <Loading what="the parts" />;
   return (
-    <>
-      <PartTable rows={rows} />
-      {hasNextPage && (
-        <div className="part-more screen-only">
-          <Button loading={isFetchingNextPage} onClick={() => void fetchNextPage()}>
-            Show more parts
-          </Button>
-        </div>
-      )}
-    </>
+    <section className="no-parts">
+      <h2>This project has no parts yet</h2>
+      <p className="soft">
+        {add
+          ? 'Drop STL or OBJ files, or a folder of them, anywhere on this page, or add them with the button. Each file becomes a part; its mass properties appear in its row a moment after it has arrived.'
+          : 'An engineer or an administrator of your organisation can add meshes to it.'}
+      </p>
+    </section>
   );
 }

@@ -1,15 +1,14 @@
-import type { ChangeMaterialRequest, CreateMaterialRequest, ImportMaterialsAnswer, ImportMaterialsRequest, Material, MaterialList, MaterialUses } from '@masswright/contracts';
+import type { ChangeMaterialRequest, CreateMaterialRequest, ImportMaterialsRequest, Material, MaterialList } from '@masswright/contracts';
 import { useMutation, useQuery, useQueryClient, type QueryClient } from '@tanstack/react-query';
-import { request } from '../../../lib/api';
+import { api, unwrap } from '../../../lib/api';
 
 export const materialsKey = ['materials'] as const;
 const listKey = ['materials', 'list'] as const;
 const usesKey = (materialId: string) => ['materials', 'uses', materialId] as const;
-const at = '/api/v1/materials';
 
 /** The whole library, starter and own, archived ones too: it is short, and what is shown of it is chosen here. */
 export function useMaterials() {
-  return useQuery({ queryKey: listKey, queryFn: ({ signal }) => request<MaterialList>('GET', `${at}?archived=true`, { signal }) });
+  return useQuery({ queryKey: listKey, queryFn: ({ signal }) => unwrap(api.GET('/api/v1/materials', { params: { query: { archived: 'true' } }, signal })) });
 }
 
 /** For pickers: nothing to choose from until it is read. */
@@ -18,7 +17,7 @@ export function useMaterialItems(): readonly Material[] {
 }
 
 export function useMaterialUses(materialId: string) {
-  return useQuery({ queryKey: usesKey(materialId), queryFn: ({ signal }) => request<MaterialUses>('GET', `${at}/${encodeURIComponent(materialId)}/parts`, { signal }) });
+  return useQuery({ queryKey: usesKey(materialId), queryFn: ({ signal }) => unwrap(api.GET('/api/v1/materials/{materialId}/parts', { params: { path: { materialId } }, signal })) });
 }
 
 function keepMaterial(client: QueryClient, material: Material): Promise<void> {
@@ -31,7 +30,7 @@ function keepMaterial(client: QueryClient, material: Material): Promise<void> {
 export function useCreateMaterial() {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: (body: CreateMaterialRequest) => request<Material>('POST', at, { body }),
+    mutationFn: (body: CreateMaterialRequest) => unwrap(api.POST('/api/v1/materials', { body })),
     onSuccess: (material) => keepMaterial(client, material),
   });
 }
@@ -39,7 +38,7 @@ export function useCreateMaterial() {
 export function useChangeMaterial() {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: ({ materialId, ...body }: ChangeMaterialRequest & { materialId: string }) => request<Material>('PATCH', `${at}/${encodeURIComponent(materialId)}`, { body }),
+    mutationFn: ({ materialId, ...body }: ChangeMaterialRequest & { materialId: string }) => unwrap(api.PATCH('/api/v1/materials/{materialId}', { params: { path: { materialId } }, body })),
     onSuccess: (material) => keepMaterial(client, material),
   });
 }
@@ -47,9 +46,9 @@ export function useChangeMaterial() {
 export function useImportMaterials() {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: (body: ImportMaterialsRequest) => request<ImportMaterialsAnswer>('POST', `${at}/import`, { body }),
+    mutationFn: (body: ImportMaterialsRequest) => unwrap(api.POST('/api/v1/materials/import', { body })),
     onSuccess: (_, { rehearse }) => (rehearse ? undefined : client.invalidateQueries({ queryKey: materialsKey })),
   });
 }
 
-export const materialsExportHref = `${at}/export`;
+export const materialsExportHref = '/api/v1/materials/export';

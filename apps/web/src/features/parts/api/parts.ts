@@ -1,21 +1,7 @@
-import type { ChangeSettingRequest, MeasuringRun, Page, Part, PartRow, RenamePartRequest, ServerEvent } from '@masswright/contracts';
-import { useInfiniteQuery, useMutation, useQuery, useQueryClient, type InfiniteData, type QueryClient } from '@tanstack/react-query';
+import type { ChangeSettingRequest, Part, RenamePartRequest } from '@masswright/contracts';
+import { useMutation, useQuery, useQueryClient, type QueryClient } from '@tanstack/react-query';
 import { api, unwrapAs } from '../../../lib/api';
-
-export const partsKey = (projectId: string) => ['parts', projectId] as const;
-export const partKey = (partId: string) => ['part', partId] as const;
-
-const pageSize = 100;
-
-export function useParts(projectId: string) {
-  return useInfiniteQuery({
-    queryKey: partsKey(projectId),
-    initialPageParam: undefined as string | undefined,
-    getNextPageParam: (page: Page<PartRow>) => page.next ?? undefined,
-    queryFn: ({ pageParam, signal }) =>
-      unwrapAs<Page<PartRow>>(api.GET('/api/v1/projects/{projectId}/parts', { params: { path: { projectId }, query: { after: pageParam, limit: pageSize } }, signal })),
-  });
-}
+import { partKey, partsKey } from './keys';
 
 export function readPart(partId: string, signal?: AbortSignal): Promise<Part> {
   return unwrapAs<Part>(api.GET('/api/v1/parts/{partId}', { params: { path: { partId } }, signal }));
@@ -44,28 +30,20 @@ export function useRenamePart(partId: string) {
   });
 }
 
-type RunEvent = Extract<ServerEvent, { type: 'run' }>;
+/** States a unit for this very file, also where it is the one that was taken over: then nobody doubts it any more. */
+export function useStateUnit() {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: ({ partId, lengthUnit, version }: Required<Pick<ChangeSettingRequest, 'lengthUnit' | 'version'>> & { partId: string }) => changeSetting(partId, { lengthUnit, version }),
+    onSuccess: (part) => keepPart(client, part),
+  });
+}
 
-const withRun = (run: MeasuringRun, event: RunEvent): MeasuringRun => ({ ...run, state: event.state, stage: event.stage, progress: event.progress });
-
-/** Shows at once how far a run is; its figures, or its reason, are then read from the api. */
-export function applyRun(client: QueryClient, event: RunEvent): void {
-  client.setQueryData<Part>(partKey(event.partId), (part) =>
-    part && { ...part, revision: { ...part.revision, run: withRun(part.revision.run, event) } },
-  );
-  client.setQueryData<InfiniteData<Page<PartRow>>>(partsKey(event.projectId), (data) =>
-    data && {
-      ...data,
-      pages: data.pages.map((page) =>
-        page.items.some((row) => row.id === event.partId)
-          ? {
-              ...page,
-              items: page.items.map((row) =>
-                row.id === event.partId ? { ...row, revision: { ...row.revision, run: withRun(row.revision.run, event) } } : row,
-              ),
-            }
-          : page,
-      ),
-    },
-  );
+/** Has a file that failed measured once more. */
+export function useMeasureAgain() {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: (partId: string) => unwrapAs<Part>(api.POST('/api/v1/parts/{partId}/run', { params: { path: { partId } } })),
+    onSuccess: (part) => keepPart(client, part),
+  });
 }

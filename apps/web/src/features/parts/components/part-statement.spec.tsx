@@ -1,6 +1,8 @@
-import type { Measurement, Part, Setting } from '@masswright/contracts';
+import type { Material, Measurement, Part, Setting } from '@masswright/contracts';
+import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { cleanup, fireEvent, render, screen, within } from '@testing-library/react';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import { MemoryRouter } from 'react-router-dom';
 import { useStore } from '../../../lib/store';
 import { createSettingEditor, type SettingEditor } from '../model/setting-editor';
 import { PartStatement } from './part-statement';
@@ -9,6 +11,7 @@ import { PartStatement } from './part-statement';
 const block: Measurement = {
   measuringVersion: 'm1',
   format: 'stl-binary',
+  compression: null,
   facets: 12,
   origin: [0, 0, 0],
   boundingBox: { min: [0, 0, 0], max: [30, 20, 10] },
@@ -34,41 +37,58 @@ const openBlock: Measurement = {
   soundness: { ...block.soundness, closed: false, oriented: false, defensible: false, boundaryEdges: 4, findings: [{ kind: 'boundary-edges', count: 4, facets: [2, 3] }] },
 };
 
-const metal: Setting = { lengthUnit: 'mm', densityKgM3: 2700, axis: { kind: 'mesh', along: 'z' }, drive: null };
+const metal: Setting = { lengthUnit: 'mm', densityKgM3: 2700, densitySpreadKgM3: null, material: null, weighing: null, axis: { kind: 'mesh', along: 'z' }, drive: null };
+
+const aluminium: Material = {
+  id: 'al-6061-t6', name: 'Aluminium 6061-T6', group: 'aluminium', densityKgM3: 2700, densitySpreadKgM3: 27, spreadBasis: 'judgement', source: 'a handbook',
+  origin: 'starter', version: 1, archivedAt: null, usedByParts: 0, can: { edit: false },
+};
+const steel: Material = { ...aluminium, id: 'steel-4140', name: 'Steel 4140', group: 'steel', densityKgM3: 7850, densitySpreadKgM3: 79 };
+const made: Pick<Setting, 'material' | 'densityKgM3' | 'densitySpreadKgM3'> = { material: { id: aluminium.id, name: aluminium.name }, densityKgM3: 2700, densitySpreadKgM3: 27 };
 
 function makePart(measurement: Measurement | null, setting: Setting, edit: boolean): Part {
+  const head = { id: 'revision', letter: 'A', fileName: 'block.stl', reason: '', createdAt: '2026-11-28T14:06:00Z', createdBy: 'Ines Marsh' };
   return {
     id: 'part',
     projectId: 'project',
     projectName: 'Reel',
     number: 4,
     name: 'Block',
+    state: measurement ? 'ready' : 'measuring',
+    deletedAt: null,
+    revisions: [head],
+    unitDoubt: null,
+    sameBytes: [],
     can: { edit },
     revision: {
-      id: 'revision',
-      letter: 'A',
-      fileName: 'block.stl',
+      ...head,
+      folder: '',
       sizeBytes: 684,
-      createdAt: '2026-11-28T14:06:00Z',
-      createdBy: 'Ines Marsh',
       run: { state: measurement ? 'done' : 'running', stage: measurement ? 'storing' : 'measuring', progress: measurement ? 1 : 0.4, error: null, finishedAt: measurement ? '2026-11-28T14:06:02Z' : null, durationMs: measurement ? 41 : null },
-      setting: { ...setting, version: 1, changedAt: '2026-11-28T14:06:00Z', changedBy: 'Ines Marsh' },
+      setting: { ...setting, version: 1, changedAt: '2026-11-28T14:06:00Z', changedBy: 'Ines Marsh', unitStated: null },
       sha256: measurement ? 'ab'.repeat(32) : null,
       format: measurement?.format ?? null,
+      compression: null,
       measurement,
     },
   };
 }
 
 function Page({ part, editor }: { part: Part; editor: SettingEditor }) {
-  return <PartStatement part={part} editor={editor} state={useStore(editor)} ownName="Ines Marsh" />;
+  return (
+    <QueryClientProvider client={new QueryClient()}>
+      <MemoryRouter>
+        <PartStatement part={part} editor={editor} state={useStore(editor)} ownName="Ines Marsh" materials={[aluminium, steel]} />
+      </MemoryRouter>
+    </QueryClientProvider>
+  );
 }
 
-function open(measurement: Measurement | null, { setting = metal, edit = true }: { setting?: Setting; edit?: boolean } = {}): SettingEditor {
-  const part = makePart(measurement, setting, edit);
+function open(measurement: Measurement | null, { setting = metal, edit = true, change = {} }: { setting?: Setting; edit?: boolean; change?: Partial<Part> } = {}): SettingEditor {
+  const part = { ...makePart(measurement, setting, edit), ...change };
   const { setting: stored } = part.revision;
   const editor = createSettingEditor(stored, {
-    save: ({ version, ...change }) => Promise.resolve({ ...stored, ...change, version: version + 1 }),
+    save: ({ version, material, ...changed }) => Promise.resolve({ ...stored, ...changed, material: material ? { id: material.id, name: material.id } : null, version: version + 1 }),
     reload: () => Promise.resolve(stored),
     isStale: () => false,
     isPassing: () => false,
@@ -214,7 +234,7 @@ describe('the statement of a part', () => {
 
   it('has no control that a reader may not use', () => {
     open(block, { edit: false });
-    for (const role of ['textbox', 'combobox', 'radio'] as const) expect(screen.queryAllByRole(role)).toEqual([]);
+    for (const role of ['textbox', 'combobox', 'radio', 'button'] as const) expect(screen.queryAllByRole(role).filter((element) => !element.textContent.startsWith('Copy'))).toEqual([]);
     expect(screen.queryByText('Saved')).toBeNull();
     expect(text(section('Source'))).toContain('2700 kg/m³');
     expect(text(section('Figures'))).toContain('16.2000 g');
@@ -224,5 +244,71 @@ describe('the statement of a part', () => {
     open(null);
     expect(screen.getAllByRole('progressbar', { name: 'Measuring, 40 %' })).toHaveLength(1);
     expect(screen.queryByRole('region', { name: 'Figures' })).toBeNull();
+  });
+
+  it('takes name, density and spread of a material that is picked, and keeps the name until a density is typed', () => {
+    const editor = open(block);
+    const picker = screen.getByRole('combobox', { name: 'Material' });
+    fireEvent.change(picker, { target: { value: '4140' } });
+    fireEvent.keyDown(picker, { key: 'Enter' });
+    expect(editor.get().draft).toMatchObject({ material: { id: 'steel-4140', name: 'Steel 4140' }, densityKgM3: 7850, densitySpreadKgM3: 79 });
+    expect(text(section('Figures'))).toContain('47.1000 g');
+    vi.setSystemTime(Date.now() + 2000);
+    fireEvent.change(screen.getByLabelText('Density'), { target: { value: '7.8 g/cm3 ± 1 %' } });
+    expect(editor.get().draft).toMatchObject({ material: null, densityKgM3: 7800, densitySpreadKgM3: 78 });
+    fireEvent.click(screen.getByRole('button', { name: /Undo/ }));
+    expect(editor.get().draft).toMatchObject({ material: { name: 'Steel 4140' }, densityKgM3: 7850 });
+  });
+
+  it('offers the density that the library has by now, with what it would move', () => {
+    const editor = open(block, { setting: { ...metal, ...made, densityKgM3: 2600 } });
+    const source = text(section('Source'));
+    expect(source).toContain('Aluminium 6061-T6 now has 2700 kg/m³ in the library; this setting was made with 2600 kg/m³.');
+    // 6000 mm³ at 100 kg/m³ more.
+    expect(source).toContain('+0.6 g, +3.8 %');
+    fireEvent.click(screen.getByRole('button', { name: /^Take/ }));
+    expect(editor.get().draft.densityKgM3).toBe(2700);
+    expect(text(section('Source'))).not.toContain('in the library');
+  });
+
+  it('a weight that the material allows sets the density; one that it does not is said, and changes nothing', () => {
+    open(block, { setting: { ...metal, ...made } });
+    const weighed = screen.getByLabelText('Weighed mass');
+    fireEvent.change(weighed, { target: { value: '16.3 g ± 0.1 g' } });
+    expect(text(section('Figures'))).toContain('16.3000 g');
+    expect(text(section('Source'))).toContain('Agrees');
+    fireEvent.change(weighed, { target: { value: '12 g ± 0.1 g' } });
+    expect(text(section('Figures'))).toContain('16.2000 g');
+    expect(text(section('Source'))).toContain('hollow, filled, or of another');
+  });
+
+  it('asks how sure the scale is', () => {
+    const editor = open(block);
+    const weighed = screen.getByLabelText('Weighed mass');
+    fireEvent.change(weighed, { target: { value: '16.3 g' } });
+    fireEvent.blur(weighed);
+    expect(text(section('Source'))).toContain('Say how sure the scale is');
+    expect(editor.get().draft.weighing).toBeNull();
+  });
+
+  it('asks for the unit again where the volume does not fit the revision before', () => {
+    const before = { id: 'earlier', letter: 'A', fileName: 'block.stl', reason: '', createdAt: '2026-11-27T09:00:00Z', createdBy: 'Ines Marsh' };
+    const editor = open(block, {
+      setting: { ...metal, lengthUnit: 'inch' },
+      change: { state: 'unit-doubt', unitDoubt: { lengthUnit: 'mm', volumeRatio: 16387.064 }, revisions: [{ ...before, id: 'revision', letter: 'B', reason: 'thicker wall' }, before] },
+    });
+    const source = text(section('Source'));
+    expect(source).toContain('16387 times that of revision A, as if millimetres had been taken for inches');
+    expect(source).toContain('taken over from revision A; nobody has stated it for this file');
+    expect(source).toContain('thicker wall');
+    fireEvent.click(screen.getByRole('button', { name: 'These are millimetres' }));
+    expect(editor.get().draft.lengthUnit).toBe('mm');
+    expect(screen.queryByText('Is the unit right?')).toBeNull();
+  });
+
+  it('says where the same bytes are', () => {
+    open(block, { change: { sameBytes: [{ projectId: 'other', projectName: 'Winch', partId: 'twin', number: 3, name: 'Slab', letter: 'C' }] } });
+    expect(text(section('Source'))).toContain('Slab revision C, in Winch');
+    expect(screen.getByRole('link', { name: 'Slab' }).getAttribute('href')).toBe('/projects/other/parts/twin');
   });
 });

@@ -1,6 +1,9 @@
-import type { Part } from '@masswright/contracts';
+import { Button } from '@blueprintjs/core';
+import type { Material, Part } from '@masswright/contracts';
 import { computeStatement } from '@masswright/mechanics';
 import { useMemo } from 'react';
+import { ProblemNotice } from '../../../components/problem-notice';
+import { useMeasureAgain } from '../api/parts';
 import type { SettingEditor, SettingEditorState } from '../model/setting-editor';
 import { AxisSection } from './axis-section';
 import { FiguresSection } from './figures-section';
@@ -9,7 +12,7 @@ import { SaveStatus } from './save-status';
 import { sectionNames, type SectionName } from './section';
 import { SoundnessSection } from './soundness-section';
 import { SourceSection } from './source-section';
-import './part-table.css';
+import './part-grid.css';
 import './statement.css';
 
 interface PartStatementProps {
@@ -17,13 +20,34 @@ interface PartStatementProps {
   editor: SettingEditor;
   state: SettingEditorState;
   ownName: string;
+  materials: readonly Material[];
+  /** Opens the choice of another file; absent where the page has none. */
+  onReplace?: () => void;
+}
+
+/** What can be done about a file that could not be measured. */
+function FailedActions({ part, onReplace }: Pick<PartStatementProps, 'part' | 'onReplace'>) {
+  const again = useMeasureAgain();
+  return (
+    <>
+      <Button size="small" loading={again.isPending} onClick={() => again.mutate(part.id)}>
+        Measure again
+      </Button>
+      {onReplace && (
+        <Button size="small" onClick={onReplace}>
+          Replace the file
+        </Button>
+      )}
+      {again.error && <ProblemNotice error={again.error} />}
+    </>
+  );
 }
 
 /**
  * The statement of a part: what the worker measured, under the setting as the person has it now. Every change of the setting
  * is computed here with the same function that the server records with.
  */
-export function PartStatement({ part, editor, state, ownName }: PartStatementProps) {
+export function PartStatement({ part, editor, state, ownName, materials, onReplace }: PartStatementProps) {
   const { revision, can } = part;
   const { measurement, fileName, sha256, run } = revision;
   const { draft } = state;
@@ -54,10 +78,10 @@ export function PartStatement({ part, editor, state, ownName }: PartStatementPro
         {can.edit && run.state !== 'failed' && <SaveStatus editor={editor} state={state} ownName={ownName} />}
       </aside>
       <article className="statement" aria-label="Statement">
-        <SourceSection part={part} editor={editor} state={state} />
+        <SourceSection part={part} editor={editor} state={state} materials={materials} statement={statement} />
         {!measurement && (
           <div className="section section-run">
-            <RunProgress run={run} />
+            <RunProgress run={run} actions={can.edit && <FailedActions part={part} onReplace={onReplace} />} />
           </div>
         )}
         {measurement && <SoundnessSection soundness={measurement.soundness} />}

@@ -1,16 +1,18 @@
 import type { MeasuringRun } from '@masswright/contracts';
+import type { ReactNode } from 'react';
 import { Notice } from '../../../components/notice';
 import { describePlace, describeRun } from '../model/run-words';
 
 const stages = [
   { stage: 'waiting', name: 'Waiting' },
+  { stage: 'hashing', name: 'Comparing' },
   { stage: 'reading', name: 'Reading' },
   { stage: 'measuring', name: 'Measuring' },
   { stage: 'storing', name: 'Storing' },
 ] as const satisfies readonly { stage: MeasuringRun['stage']; name: string }[];
 
 /** What takes the place of the figures until there are some: how far the file is, or why it stopped. */
-export function RunProgress({ run }: { run: MeasuringRun }) {
+export function RunProgress({ run, actions }: { run: MeasuringRun; actions?: ReactNode }) {
   if (run.state === 'failed') {
     const place = run.error && describePlace(run.error.at);
     return (
@@ -23,7 +25,11 @@ export function RunProgress({ run }: { run: MeasuringRun }) {
             It stopped at <span className="figure">{place}</span>.
           </p>
         )}
-        <p className="soft">Nothing was measured and nothing of the file was kept but its name. Mend or export it again, and add it anew.</p>
+        <p className="soft">
+          Where the fault is in the file, mend it or export it again and replace it: the part keeps its number and its name. Where it was not, have it measured
+          again.
+        </p>
+        {actions && <div className="notice-actions screen-only">{actions}</div>}
       </Notice>
     );
   }

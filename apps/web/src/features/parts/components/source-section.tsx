@@ -1,37 +1,26 @@
-import { HTMLSelect } from '@blueprintjs/core';
-import { lengthUnit as lengthUnitSchema, type Part } from '@masswright/contracts';
-import { formatCount, lengthUnits } from '@masswright/units';
+import type { Material, Part, StatementRecord } from '@masswright/contracts';
+import { formatCount } from '@masswright/units';
+import { Link } from 'react-router-dom';
 import { CopyButton } from '../../../components/copy-button';
 import { formatBytes } from '../../../lib/format-bytes';
-import { formatDuration, formatMoment } from '../../../lib/format-time';
-import { writeDensity } from '../../../lib/density';
-import { unitTexts } from '../../../lib/unit-texts';
+import { formatDay, formatDuration, formatMoment } from '../../../lib/format-time';
 import type { SettingEditor, SettingEditorState } from '../model/setting-editor';
-import { DensitySetting } from './density-setting';
+import { DensityFacts } from './density-facts';
 import { Fact, Section, sectionNames } from './section';
+import { UnitFact } from './unit-fact';
 
-const formatNames = { 'stl-binary': 'binary STL', 'stl-ascii': 'text STL' } as const;
-
-function UnitSetting({ editor, state }: { editor: SettingEditor; state: SettingEditorState }) {
-  return (
-    <HTMLSelect
-      aria-label="Unit"
-      value={state.draft.lengthUnit ?? ''}
-      options={[{ value: '', label: 'not stated' }, ...lengthUnits.map((value) => ({ value, label: unitTexts[value].name }))]}
-      onChange={(event) => editor.change({ lengthUnit: lengthUnitSchema.nullable().parse(event.currentTarget.value || null) })}
-    />
-  );
-}
+const formatNames = { 'stl-binary': 'binary STL', 'stl-ascii': 'text STL', obj: 'OBJ' } as const;
 
 interface SourceSectionProps {
   part: Part;
   editor: SettingEditor;
   state: SettingEditorState;
+  materials: readonly Material[];
+  statement: StatementRecord | undefined;
 }
 
-export function SourceSection({ part, editor, state }: SourceSectionProps) {
-  const { revision } = part;
-  const { run, sha256, measurement, format } = revision;
+export function SourceSection({ part, editor, state, materials, statement }: SourceSectionProps) {
+  const { run } = part.revision;
   const measured = run.finishedAt && run.state === 'done';
   return (
     <Section
@@ -46,50 +35,88 @@ export function SourceSection({ part, editor, state }: SourceSectionProps) {
       }
     >
       <dl className="facts">
-        <Fact name="File">
-          <span className="figure file-name-whole">{revision.fileName}</span>{' '}
-          <span className="soft">
-            {formatBytes(revision.sizeBytes)}, added {formatMoment(revision.createdAt)} by {revision.createdBy}
-          </span>
-        </Fact>
-        {sha256 && (
-          <Fact name="SHA-256">
-            <span className="figure hash">{sha256}</span> <CopyButton text={sha256} what="the SHA-256" />
-          </Fact>
+        <FileFacts part={part} />
+        {run.state !== 'failed' && (
+          <>
+            <UnitFact part={part} editor={editor} state={state} />
+            <DensityFacts editor={editor} state={state} canEdit={part.can.edit} materials={materials} statement={statement} />
+            <Fact name="Setting">
+              <span className="soft">
+                version {state.saved.version}, last changed {formatMoment(state.saved.changedAt)} by {state.saved.changedBy}
+              </span>
+            </Fact>
+          </>
         )}
-        {format && measurement && (
-          <Fact name="Mesh">
-            {formatNames[format]}, <span className="figure">{formatCount(measurement.facets)}</span> facets, measuring version{' '}
-            <span className="figure">{measurement.measuringVersion}</span>
-          </Fact>
-        )}
-        {run.state !== 'failed' && <SettingFacts part={part} editor={editor} state={state} />}
+        {part.revisions.length > 1 && <Revisions part={part} />}
       </dl>
     </Section>
   );
 }
 
-/** What a person states about the file: unit and density, and who did. */
-function SettingFacts({ part, editor, state }: SourceSectionProps) {
-  const { can } = part;
-  const { draft, saved } = state;
+/** What the file is, and where else it is. */
+function FileFacts({ part }: { part: Part }) {
+  const { revision } = part;
+  const { sha256, measurement, format, folder } = revision;
   return (
     <>
-      <Fact name="Unit">
-        {can.edit ? <UnitSetting editor={editor} state={state} /> : draft.lengthUnit ? unitTexts[draft.lengthUnit].name : 'not stated'}
-      </Fact>
-      <Fact name="Density">
-        {can.edit ? (
-          <DensitySetting densityKgM3={draft.densityKgM3} onChange={(densityKgM3) => editor.change({ densityKgM3 })} />
-        ) : (
-          <span className="figure">{writeDensity(draft.densityKgM3) || 'not stated'}</span>
-        )}
-      </Fact>
-      <Fact name="Setting">
+      <Fact name="File">
+        <span className="figure file-name-whole">
+          {folder && <span className="soft">{folder}/</span>}
+          {revision.fileName}
+        </span>{' '}
         <span className="soft">
-          version {saved.version}, last changed {formatMoment(saved.changedAt)} by {saved.changedBy}
+          {formatBytes(revision.sizeBytes)}, added {formatMoment(revision.createdAt)} by {revision.createdBy}
         </span>
       </Fact>
+      {sha256 && (
+        <Fact name="SHA-256">
+          <span className="figure hash">{sha256}</span> <CopyButton text={sha256} what="the SHA-256" />
+        </Fact>
+      )}
+      {part.sameBytes.length > 0 && (
+        <Fact name="Same bytes">
+          <ul className="same-bytes">
+            {part.sameBytes.map((other) => (
+              <li key={`${other.partId} ${other.letter}`}>
+                <Link to={`/projects/${other.projectId}/parts/${other.partId}`}>{other.name}</Link>{' '}
+                <span className="soft">
+                  revision <span className="figure">{other.letter}</span>
+                  {other.projectId !== part.projectId && `, in ${other.projectName}`}
+                </span>
+              </li>
+            ))}
+          </ul>
+          <span className="soft">They were measured once, and their measurements are one.</span>
+        </Fact>
+      )}
+      {format && measurement && (
+        <Fact name="Mesh">
+          {formatNames[format]}
+          {revision.compression && `, packed with ${revision.compression}`}, <span className="figure">{formatCount(measurement.facets)}</span> facets, measuring version{' '}
+          <span className="figure">{measurement.measuringVersion}</span>
+        </Fact>
+      )}
     </>
+  );
+}
+
+/** What became of the part, the latest first. */
+function Revisions({ part }: { part: Part }) {
+  return (
+    <Fact name="Revisions">
+      <ol className="revision-list">
+        {part.revisions.map(({ id, letter, fileName, reason, createdAt, createdBy }) => (
+          <li key={id} aria-current={id === part.revision.id ? 'true' : undefined}>
+            <b className="figure">{letter}</b>
+            <span>
+              {reason || (id === part.revisions.at(-1)?.id ? 'The first.' : 'No reason given.')}{' '}
+              <span className="soft">
+                {fileName}, {formatDay(createdAt)}, {createdBy}
+              </span>
+            </span>
+          </li>
+        ))}
+      </ol>
+    </Fact>
   );
 }

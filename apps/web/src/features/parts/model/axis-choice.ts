@@ -34,8 +34,8 @@ function roundPoint(pointM: Vector3, { min, max }: StatementRecord['boundingBoxM
   return [round(pointM[0]), round(pointM[1]), round(pointM[2])];
 }
 
-/** The axis that a choice means. A typed one begins as the axis that was shown before, so that nothing jumps. */
-export function computeAxis(choice: AxisChoice, before: Axis, statement: Pick<StatementRecord, 'boundingBoxM' | 'centreOfMassM' | 'principalAxes'>): Axis {
+/** The axis that a choice means by itself; undefined for a typed one, which needs a place and a direction. */
+export function computeSimpleAxis(choice: AxisChoice): Axis | undefined {
   switch (choice) {
     case 'x':
     case 'y':
@@ -47,11 +47,17 @@ export function computeAxis(choice: AxisChoice, before: Axis, statement: Pick<St
       return { kind: 'principal', number: 2 };
     case '3':
       return { kind: 'principal', number: 3 };
-    case 'typed': {
-      const line = resolveAxis(before, statement);
-      return { kind: 'typed', pointM: line ? roundPoint(line.pointM, statement.boundingBoxM) : [0, 0, 0], direction: line?.direction ?? [0, 0, 1] };
-    }
+    case 'typed':
+      return undefined;
   }
+}
+
+/** The axis that a choice means. A typed one begins as the axis that was shown before, so that nothing jumps. */
+export function computeAxis(choice: AxisChoice, before: Axis, statement: Pick<StatementRecord, 'boundingBoxM' | 'centreOfMassM' | 'principalAxes'>): Axis {
+  const simple = computeSimpleAxis(choice);
+  if (simple) return simple;
+  const line = resolveAxis(before, statement);
+  return { kind: 'typed', pointM: line ? roundPoint(line.pointM, statement.boundingBoxM) : [0, 0, 0], direction: line?.direction ?? [0, 0, 1] };
 }
 
 const writeTriple = (vector: readonly number[], decimals: number): string => `(${vector.map((element) => Number(element.toFixed(decimals))).join(', ')})`;

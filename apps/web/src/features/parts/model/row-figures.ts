@@ -6,39 +6,46 @@ import { computeFractionDigits } from '../../../components/figure';
 const family = 'g-mm';
 export const listUnits = {
   length: getDisplayUnit(family, 'length'),
+  volume: getDisplayUnit(family, 'volume'),
   mass: getDisplayUnit(family, 'mass'),
   inertia: getDisplayUnit(family, 'inertia'),
 } as const;
 
 export const listDigits = 4;
 
-export interface RowFigures {
-  size: readonly number[] | null;
-  mass: number | null;
-  moments: readonly [number, number, number] | null;
+/** Columns of figures that stand under one another at their decimal points. */
+export const alignedColumns = ['volume', 'mass', 'moment1', 'moment2', 'moment3'] as const;
+export type AlignedColumn = (typeof alignedColumns)[number];
+
+/** What a row has in such a column, in the unit of the list; null where there is none. */
+export function computeRowFigure({ volumeM3, massKg, principalMomentsKgM2 }: PartRow, column: AlignedColumn): number | null {
+  const shown = (value: number | null | undefined, unit: (typeof listUnits)[keyof typeof listUnits]): number | null => (value === null || value === undefined ? null : fromSi(value, unit));
+  switch (column) {
+    case 'volume':
+      return shown(volumeM3, listUnits.volume);
+    case 'mass':
+      return shown(massKg, listUnits.mass);
+    case 'moment1':
+      return shown(principalMomentsKgM2?.[0], listUnits.inertia);
+    case 'moment2':
+      return shown(principalMomentsKgM2?.[1], listUnits.inertia);
+    case 'moment3':
+      return shown(principalMomentsKgM2?.[2], listUnits.inertia);
+  }
 }
 
-export function computeRowFigures({ sizeM, massKg, principalMomentsKgM2 }: PartRow): RowFigures {
-  const moment = (value: number): number => fromSi(value, listUnits.inertia);
-  return {
-    size: sizeM && sizeM.map((extent) => fromSi(extent, listUnits.length)),
-    mass: massKg === null ? null : fromSi(massKg, listUnits.mass),
-    moments: principalMomentsKgM2 && [moment(principalMomentsKgM2[0]), moment(principalMomentsKgM2[1]), moment(principalMomentsKgM2[2])],
-  };
+export function computeRowSize({ sizeM }: PartRow): readonly number[] | null {
+  return sizeM && sizeM.map((extent) => fromSi(extent, listUnits.length));
 }
 
-export interface ColumnFractions {
-  mass: number;
-  moments: readonly [number, number, number];
-}
+export type ColumnFractions = Record<AlignedColumn, number>;
 
 /** The room that each column keeps behind its decimal points. */
-export function computeColumnFractions(rows: readonly RowFigures[]): ColumnFractions {
-  const digitsOf = (values: readonly (number | undefined)[]): number =>
+export function computeColumnFractions(rows: readonly PartRow[]): ColumnFractions {
+  const digitsOf = (column: AlignedColumn): number =>
     computeFractionDigits(
-      values.filter((value) => value !== undefined),
+      rows.map((row) => computeRowFigure(row, column)).filter((value) => value !== null),
       listDigits,
     );
-  const moment = (index: 0 | 1 | 2): number => digitsOf(rows.map((row) => row.moments?.[index]));
-  return { mass: digitsOf(rows.map((row) => row.mass ?? undefined)), moments: [moment(0), moment(1), moment(2)] };
+  return { volume: digitsOf('volume'), mass: digitsOf('mass'), moment1: digitsOf('moment1'), moment2: digitsOf('moment2'), moment3: digitsOf('moment3') };
 }

@@ -1,4 +1,4 @@
-import type { Axis, Drive, Setting } from '@masswright/contracts';
+import type { Axis, DensityChoice, Drive, Setting, SettingChange } from '@masswright/contracts';
 
 /** Equal in all their elements, in whatever order an object's fields were written. */
 function isEqual(one: unknown, other: unknown): boolean {
@@ -13,15 +13,24 @@ function isEqual(one: unknown, other: unknown): boolean {
 export const isSameAxis = (one: Axis, other: Axis): boolean => isEqual(one, other);
 export const isSameDrive = (one: Drive | null, other: Drive | null): boolean => isEqual(one, other);
 
-export function pickSetting({ lengthUnit, densityKgM3, axis, drive }: Setting): Setting {
-  return { lengthUnit, densityKgM3, axis, drive };
+export function pickSetting({ lengthUnit, densityKgM3, densitySpreadKgM3, material, weighing, axis, drive }: Setting): Setting {
+  return { lengthUnit, densityKgM3, densitySpreadKgM3, material, weighing, axis, drive };
 }
 
-/** The fields of `wanted` that are not so in `known`; empty where both say the same. */
-export function computeDifference(wanted: Setting, known: Setting): Partial<Setting> {
-  const difference: Partial<Setting> = {};
+/** The library may have given the material another name since: who it is stays the same. */
+const isSameDensity = (one: Setting, other: Setting): boolean =>
+  one.densityKgM3 === other.densityKgM3 && one.densitySpreadKgM3 === other.densitySpreadKgM3 && one.material?.id === other.material?.id;
+
+/** Density, spread and name go together: with a name the density that is shown, which the library may not have any more. */
+function writeDensityChoice({ densityKgM3, densitySpreadKgM3, material }: Setting): DensityChoice {
+  return { densityKgM3, densitySpreadKgM3, ...(material && { material: { id: material.id } }) };
+}
+
+/** What must be changed of `known` to have `wanted`; empty where both say the same. */
+export function computeDifference(wanted: Setting, known: Setting): SettingChange {
+  const difference: SettingChange = isSameDensity(wanted, known) ? {} : writeDensityChoice(wanted);
   if (wanted.lengthUnit !== known.lengthUnit) difference.lengthUnit = wanted.lengthUnit;
-  if (wanted.densityKgM3 !== known.densityKgM3) difference.densityKgM3 = wanted.densityKgM3;
+  if (!isEqual(wanted.weighing, known.weighing)) difference.weighing = wanted.weighing;
   if (!isSameAxis(wanted.axis, known.axis)) difference.axis = wanted.axis;
   if (!isSameDrive(wanted.drive, known.drive)) difference.drive = wanted.drive;
   return difference;

@@ -10,11 +10,15 @@ class Server {
   stored: StoredSetting = {
     lengthUnit: 'mm',
     densityKgM3: 2700,
+    densitySpreadKgM3: null,
+    material: null,
+    weighing: null,
     axis: { kind: 'mesh', along: 'z' },
     drive: null,
     version: 1,
     changedAt: '2026-11-28T14:06:00Z',
     changedBy: 'Ines Marsh',
+    unitStated: null,
   };
   requests: ChangeSettingRequest[] = [];
   offline = false;
@@ -25,12 +29,18 @@ class Server {
     this.stored = { ...this.stored, ...change, version: this.stored.version + 1, changedBy: by };
   }
 
+  /** As the api does: a density that comes without a name takes the name away, and the library knows every name. */
+  private apply({ material, ...change }: Omit<ChangeSettingRequest, 'version'>): Partial<Setting> {
+    if (material) return { ...change, material: { id: material.id, name: `Library's ${material.id}` } };
+    return change.densityKgM3 === undefined ? change : { ...change, material: null };
+  }
+
   save = async ({ version, ...change }: ChangeSettingRequest): Promise<StoredSetting> => {
     this.requests.push({ version, ...change });
     await new Promise((resolve) => setTimeout(resolve, this.latency));
     if (this.offline) throw new OfflineError('Masswright could not be reached.');
     if (version !== this.stored.version) throw new StaleError();
-    this.write(change, 'Ines Marsh');
+    this.write(this.apply(change), 'Ines Marsh');
     return this.stored;
   };
 
@@ -63,7 +73,7 @@ describe('setting editor', () => {
     expect(server.requests).toHaveLength(0);
     await pass(1);
     expect(editor.get().status).toBe('saving');
-    expect(server.requests).toEqual([{ densityKgM3: 7850, version: 1 }]);
+    expect(server.requests).toEqual([{ densityKgM3: 7850, densitySpreadKgM3: null, version: 1 }]);
     await pass(50);
     expect(editor.get()).toMatchObject({ status: 'saved', saved: { version: 2, densityKgM3: 7850 } });
   });
@@ -74,7 +84,7 @@ describe('setting editor', () => {
       await pass(100);
     }
     await pass(1000);
-    expect(server.requests).toEqual([{ densityKgM3: 7850, version: 1 }]);
+    expect(server.requests).toEqual([{ densityKgM3: 7850, densitySpreadKgM3: null, version: 1 }]);
   });
 
   it('a change that is made while another is being saved follows it, on the new version', async () => {
@@ -83,7 +93,7 @@ describe('setting editor', () => {
     editor.change({ lengthUnit: 'inch' });
     await pass(2000);
     expect(server.requests).toEqual([
-      { densityKgM3: 7850, version: 1 },
+      { densityKgM3: 7850, densitySpreadKgM3: null, version: 1 },
       { lengthUnit: 'inch', version: 2 },
     ]);
     expect(editor.get()).toMatchObject({ status: 'saved', draft: { densityKgM3: 7850, lengthUnit: 'inch' } });
@@ -238,5 +248,34 @@ describe('setting editor', () => {
     expect(server.stored.densityKgM3).toBe(7850);
     await pass(1000);
     expect(server.requests).toHaveLength(1);
+  });
+
+  it('a material is sent with the density that is shown, and a typed density without a name', async () => {
+    editor.change({ material: { id: 'steel', name: 'Steel' }, densityKgM3: 7850, densitySpreadKgM3: 79 });
+    await pass(2000);
+    editor.change({ material: null, densityKgM3: 7800, densitySpreadKgM3: null });
+    await pass(2000);
+    expect(server.requests).toEqual([
+      { material: { id: 'steel' }, densityKgM3: 7850, densitySpreadKgM3: 79, version: 1 },
+      { densityKgM3: 7800, densitySpreadKgM3: null, version: 2 },
+    ]);
+    editor.undo();
+    await pass(2000);
+    expect(server.stored).toMatchObject({ material: { id: 'steel' }, densityKgM3: 7850, densitySpreadKgM3: 79 });
+  });
+
+  it('a name that the library has changed meanwhile is no change of the setting', async () => {
+    editor.change({ material: { id: 'steel', name: 'Steel' }, densityKgM3: 7850, densitySpreadKgM3: 79 });
+    await pass(1000);
+    expect(editor.get()).toMatchObject({ status: 'saved', draft: { material: { name: "Library's steel" } } });
+    await pass(5000);
+    expect(server.requests).toHaveLength(1);
+  });
+
+  it('a weighing is changed by itself', async () => {
+    editor.change({ weighing: { massKg: 0.3, uncertaintyKg: 0.002 } });
+    await pass(1000);
+    expect(server.requests).toEqual([{ weighing: { massKg: 0.3, uncertaintyKg: 0.002 }, version: 1 }]);
+    expect(server.stored.densityKgM3).toBe(2700);
   });
 });

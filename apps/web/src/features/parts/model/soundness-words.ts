@@ -40,6 +40,8 @@ const findingSentences: Record<FindingKind, (number: number) => string> = {
   'several-solids': (n) => `The file holds ${count(n, 'solid')}. They are measured together as one part.`,
   'nonzero-attributes': (n) => `${count(n, 'facet')} ${n === 1 ? 'carries' : 'carry'} attribute bytes (colours, often). They mean nothing to the figures.`,
   'contradicting-normals': (n) => `${count(n, 'facet')} ${n === 1 ? 'has' : 'have'} a stored normal that points against the order of the corners. The corners decide.`,
+  'non-planar-polygons': (n) => `${count(n, 'polygon')} ${n === 1 ? 'has' : 'have'} corners that lie in no one plane. Each was cut into triangles from its first corner; another cut would give slightly other figures.`,
+  'folded-polygons': (n) => `${count(n, 'polygon')} ${n === 1 ? 'bends' : 'bend'} inwards, so triangles from the first corner lie over one another there. The volume holds all the same; the area comes out too large.`,
 };
 
 export function describeFinding({ kind, count: number }: Measurement['soundness']['findings'][number]): string {

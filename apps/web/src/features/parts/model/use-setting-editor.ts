@@ -3,17 +3,10 @@ import { useQueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import { useStore } from '../../../lib/store';
 import { getSentence, isProblem, isWorthAnotherTry } from '../../../lib/problem';
-import { changeSetting, keepPart, partKey, readPart } from '../api/parts';
+import { partKey } from '../api/keys';
+import { changeSetting, keepPart, readPart } from '../api/parts';
 import { createSettingEditor, type SettingEditor, type SettingEditorState } from './setting-editor';
-
-const isText = (target: EventTarget | null): boolean =>
-  target instanceof HTMLTextAreaElement || (target instanceof HTMLInputElement && !['radio', 'checkbox'].includes(target.type));
-
-/** The keys by which people everywhere take back their last change, and do it again; within a text field they belong to the text. */
-function findStep(event: KeyboardEvent): 'undo' | 'redo' | undefined {
-  if (!(event.ctrlKey || event.metaKey) || event.altKey || event.key.toLowerCase() !== 'z' || isText(event.target)) return undefined;
-  return event.shiftKey ? 'redo' : 'undo';
-}
+import { findStep } from './undo-keys';
 
 /** The editor of one part's setting, for as long as its page is open. */
 export function useSettingEditor(part: Part): { editor: SettingEditor; state: SettingEditorState } {

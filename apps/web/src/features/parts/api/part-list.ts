@@ -1,0 +1,89 @@
+import type { PartList, PartRow } from '@masswright/contracts';
+import { queryOptions, useQueries, useQueryClient, type QueryClient } from '@tanstack/react-query';
+import { useState } from 'react';
+import { api, unwrapAs } from '../../../lib/api';
+import { writeQuery, type ListQuery } from '../model/list-address';
+import { findStretches, placeRow, stretchRows } from '../model/stretches';
+import { partsKey } from './keys';
+
+const listKey = (projectId: string, query: ListQuery) => [...partsKey(projectId), writeQuery(query).toString()] as const;
+
+/** The client's types forget which states are counted; the contract says all. */
+type LooseList = Omit<PartList, 'counts'> & { counts: Record<string, number> };
+
+function stretchQuery(projectId: string, query: ListQuery, stretch: number) {
+  return queryOptions({
+    queryKey: [...listKey(projectId, query), stretch] as const,
+    queryFn: async ({ signal }): Promise<PartList> => {
+      const { text, states, deleted, sort, direction } = query;
+      const asked = { text, states, deleted: deleted ? ('true' as const) : undefined, sort, direction, offset: stretch * stretchRows, limit: stretchRows };
+      const list = await unwrapAs<LooseList>(api.GET('/api/v1/projects/{projectId}/parts', { params: { path: { projectId }, query: asked }, signal }));
+      return list;
+    },
+  });
+}
+
+export type ListHead = Pick<PartList, 'total' | 'counts' | 'deleted'>;
+
+/** The rows of a list that have been read, and what was last heard of the list as a whole. */
+export interface ReadList {
+  query: ListQuery;
+  head: ListHead | undefined;
+  getRow: (index: number) => PartRow | undefined;
+  /** All that are read, with their places. */
+  listRead: () => { index: number; row: PartRow }[];
+}
+
+function openRead(client: QueryClient, projectId: string, query: ListQuery): ReadList {
+  const key = listKey(projectId, query);
+  const stretchOf = (stretch: number): PartList | undefined => client.getQueryData<PartList>([...key, stretch]);
+  const entries = client.getQueryCache().findAll({ queryKey: key }).filter(({ state }) => state.data !== undefined);
+  const latest = entries.reduce<(typeof entries)[number] | undefined>((best, entry) => (best && best.state.dataUpdatedAt >= entry.state.dataUpdatedAt ? best : entry), undefined);
+  return {
+    query,
+    head: latest?.state.data as PartList | undefined,
+    getRow: (index) => {
+      const { stretch, place } = placeRow(index);
+      return stretchOf(stretch)?.items[place];
+    },
+    listRead: () =>
+      entries
+        .map(({ queryKey, state }) => ({ stretch: Number(queryKey.at(-1)), items: (state.data as PartList).items }))
+        .sort((one, other) => one.stretch - other.stretch)
+        .flatMap(({ stretch, items }) => items.map((row, place) => ({ index: stretch * stretchRows + place, row }))),
+  };
+}
+
+/**
+ * The rows of a project's list that are looked at, from `first` to `last`; others are read as they come into view. While the first answer to
+ * another filter or order is on its way the rows of the one before stay, so that nothing jumps.
+ */
+export function usePartList(projectId: string, query: ListQuery, range: { first: number; last: number }) {
+  const client = useQueryClient();
+  const [shown, setShown] = useState(query);
+  const isShown = writeQuery(shown).toString() === writeQuery(query).toString();
+  const before = openRead(client, projectId, shown);
+  const wanted = isShown ? findStretches(range.first, range.last, before.head?.total) : [0];
+  const results = useQueries({ queries: wanted.map((stretch) => stretchQuery(projectId, query, stretch)) });
+  if (!isShown && results[0]?.data) setShown(query);
+  const failed = results.find(({ error }) => error !== null);
+  return {
+    list: openRead(client, projectId, shown),
+    /** Another filter or order is asked for than the one that is seen. */
+    isTurning: !isShown,
+    error: failed?.error ?? null,
+    retry: () => results.forEach(({ error, refetch }) => void (error && refetch())),
+  };
+}
+
+/** The ids of rows that stand at some places, read where they are not known yet. */
+export async function readRowIds(client: QueryClient, projectId: string, query: ListQuery, indices: readonly number[]): Promise<string[]> {
+  const stretches = [...new Set(indices.map((index) => placeRow(index).stretch))];
+  const lists = await Promise.all(stretches.map(async (stretch) => [stretch, await client.fetchQuery({ ...stretchQuery(projectId, query, stretch), staleTime: 30_000 })] as const));
+  const byStretch = new Map(lists);
+  return indices.flatMap((index) => {
+    const { stretch, place } = placeRow(index);
+    const row = byStretch.get(stretch)?.items[place];
+    return row ? [row.id] : [];
+  });
+}

@@ -1,0 +1,158 @@
+import type { PartOrder, PartRow } from '@masswright/contracts';
+import { useEffect, useId, useLayoutEffect, useRef, useState, type CSSProperties, type KeyboardEvent, type MouseEvent } from 'react';
+import type { ReadList } from '../api/part-list';
+import { getColumn, type ColumnId } from '../model/columns';
+import { writeQuery } from '../model/list-address';
+import { findPlace, keepPlace } from '../model/list-place';
+import { computeColumnFractions } from '../model/row-figures';
+import { countSelected, isSelected, type Selection } from '../model/selection';
+import { useGridPosition } from '../model/use-grid-position';
+import { useIsPrinting } from '../model/use-is-printing';
+import { rowHeight, useVirtualRows, type RowRange } from '../model/use-virtual-rows';
+import { PartGridHead } from './part-grid-head';
+import { PartGridRow } from './part-grid-row';
+import type { RowActions } from './row-note';
+import './part-grid.css';
+
+interface PartGridProps {
+  projectId: string;
+  list: ReadList;
+  total: number;
+  columns: readonly ColumnId[];
+  onOrder: (order: PartOrder) => void;
+  selection: Selection;
+  canSelect: boolean;
+  onSelect: (selection: Selection) => void;
+  /** Which rows are in view, so that they are read. */
+  onRange: (range: RowRange) => void;
+  readIds: (indices: readonly number[]) => Promise<string[]>;
+  actions: RowActions | undefined;
+  onOpen: (row: PartRow) => void;
+  /** Of what is selected, or of one row where nothing is. */
+  onDelete: (row: PartRow | undefined) => void;
+}
+
+/** The name takes what the others leave; all others are as wide whatever stands in them. */
+function writeTracks(columns: readonly ColumnId[]): CSSProperties {
+  const tracks = columns.map((id) => (id === 'name' ? `minmax(${getColumn(id).width}px, 1fr)` : `${getColumn(id).width}px`));
+  const least = columns.reduce((sum, id) => sum + getColumn(id).width, selectWidth);
+  return { '--tracks': `${selectWidth}px ${tracks.join(' ')}`, '--least': `${least}px` } as CSSProperties;
+}
+const selectWidth = 54;
+
+/** Whether a click was on something that answers it by itself. */
+const isControl = (target: EventTarget): boolean => target instanceof Element && target.closest('a, button, .bp6-popover') !== null;
+const findIndex = (target: EventTarget): number | undefined => {
+  const index = target instanceof Element ? target.closest<HTMLElement>('[data-index]')?.dataset['index'] : undefined;
+  return index === undefined ? undefined : Number(index);
+};
+
+export function PartGrid(props: PartGridProps) {
+  const { projectId, list, total, columns, onOrder, selection, canSelect, onSelect, onRange, actions } = props;
+  const id = useId();
+  const scroller = useRef<HTMLDivElement>(null);
+  const queryText = writeQuery(list.query).toString();
+  const [place] = useState(() => findPlace(projectId, queryText));
+  const { range, reveal, scrollToTop, countSeen } = useVirtualRows(scroller, total, place.offset);
+  const isPrinting = useIsPrinting();
+  const position = useGridPosition({
+    total,
+    countSeen,
+    selection,
+    canSelect,
+    onSelect,
+    findId: (index) => list.getRow(index)?.id,
+    readIds: props.readIds,
+    reveal,
+    initial: place.current,
+  });
+  const { current, goToTop } = position;
+
+  const { first, last } = range;
+  useEffect(() => onRange({ first, last }), [onRange, first, last]);
+  const seen = useRef(queryText);
+  useLayoutEffect(() => {
+    if (seen.current === queryText) return;
+    // Another filter or order is another list: it begins at its beginning.
+    seen.current = queryText;
+    scrollToTop();
+    goToTop();
+  });
+  const keep = (offset: number): void => keepPlace(projectId, { query: queryText, offset, current });
+  useEffect(() => keep(scroller.current?.scrollTop ?? 0));
+
+  const press = (event: KeyboardEvent): void => {
+    if (event.target !== scroller.current && !(event.key === 'Escape' && event.target instanceof Element && event.target.closest('[role=row]'))) return;
+    const isCommand = event.ctrlKey || event.metaKey;
+    const target = isCommand || event.altKey ? undefined : position.findTarget(event.key);
+    const row = list.getRow(current);
+    if (target !== undefined) {
+      if (event.shiftKey) position.extendTo(target);
+      else position.goTo(target);
+    } else if (event.key === ' ') position.toggleAt(current);
+    else if (isCommand && event.key.toLowerCase() === 'a') position.selectAll();
+    else if (event.key === 'Enter' && row) props.onOpen(row);
+    else if (event.key === 'Delete') props.onDelete(countSelected(selection, total) > 0 ? undefined : row);
+    else if (event.key === 'Escape') position.clear();
+    else return;
+    event.preventDefault();
+  };
+  const click = (event: MouseEvent): void => {
+    const index = findIndex(event.target);
+    if (index === undefined || isControl(event.target)) return;
+    const isBox = event.target instanceof HTMLInputElement;
+    if (event.shiftKey && canSelect) {
+      getSelection()?.removeAllRanges();
+      position.extendTo(index);
+    } else if (isBox || event.ctrlKey || event.metaKey) position.toggleAt(index);
+    else position.goTo(index);
+    if (isBox) scroller.current?.focus({ preventScroll: true });
+  };
+
+  const read = list.listRead();
+  const fractions = computeColumnFractions(read.map(({ row }) => row));
+  const shown = isPrinting ? read : Array.from({ length: Math.max(0, last - first + 1) }, (_, step) => ({ index: first + step, row: list.getRow(first + step) }));
+  const chosen = countSelected(selection, total);
+  return (
+    <div
+      ref={scroller}
+      role="grid"
+      aria-label="Parts"
+      aria-rowcount={total + 1}
+      aria-colcount={columns.length + 1}
+      aria-multiselectable={canSelect ? true : undefined}
+      aria-activedescendant={list.getRow(current) && current >= first && current <= last ? `${id}-${current}` : undefined}
+      tabIndex={0}
+      className="part-grid"
+      style={writeTracks(columns)}
+      onKeyDown={press}
+      onClick={click}
+      onScroll={(event) => keep(event.currentTarget.scrollTop)}
+    >
+      <PartGridHead
+        columns={columns}
+        order={list.query}
+        onOrder={onOrder}
+        chosen={!canSelect ? undefined : chosen === 0 ? 'none' : chosen >= total ? 'all' : 'some'}
+        onChooseAll={(all) => (all ? position.selectAll() : position.clear())}
+      />
+      <div role="rowgroup" className="part-rows" style={{ height: total * rowHeight }}>
+        {shown.map(({ index, row }) => (
+          <PartGridRow
+            key={row?.id ?? `place ${index}`}
+            id={`${id}-${index}`}
+            row={row}
+            index={index}
+            columns={columns}
+            fractions={fractions}
+            isCurrent={index === current}
+            isSelected={row !== undefined && isSelected(selection, row.id)}
+            canSelect={canSelect}
+            actions={actions}
+            canSpan={!isPrinting}
+          />
+        ))}
+      </div>
+    </div>
+  );
+}

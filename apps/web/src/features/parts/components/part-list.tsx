@@ -1,0 +1,157 @@
+import type { Material, PartRow } from '@masswright/contracts';
+import { formatCount } from '@masswright/units';
+import { useQueryClient } from '@tanstack/react-query';
+import { useCallback, useState, type ReactNode } from 'react';
+import { useNavigate } from 'react-router-dom';
+import { ProblemNotice } from '../../../components/problem-notice';
+import { countOf } from '../../../lib/plural';
+import { changeSettings, deleteParts, restoreParts } from '../api/part-changes';
+import { readRowIds, usePartList } from '../api/part-list';
+import { useMeasureAgain, useStateUnit } from '../api/parts';
+import { unitTexts } from '../../../lib/unit-texts';
+import { writeQuery, type ListQuery } from '../model/list-address';
+import { countSelected, nothing, writeSelection, type Selection } from '../model/selection';
+import { useChangeSteps } from '../model/use-change-steps';
+import { useListView } from '../model/use-list-view';
+import type { RowRange } from '../model/use-virtual-rows';
+import { ColumnChooser } from './column-chooser';
+import { ExportMenu } from './export-menu';
+import { ListGap, ListSkeleton } from './list-gap';
+import { PartFilterBar } from './part-filter';
+import { PartGrid } from './part-grid';
+import type { RowActions } from './row-note';
+import { SelectionBar, type BulkChange } from './selection-bar';
+import { StepLine } from './step-line';
+import './part-list.css';
+
+interface PartListProps {
+  projectId: string;
+  canEdit: boolean;
+  materials: readonly Material[];
+  /** What stands there while the project has no parts at all. */
+  empty: ReactNode;
+  onReplace?: (row: PartRow) => void;
+}
+
+const filterKey = ({ text, states, deleted }: ListQuery): string => JSON.stringify([text, states, deleted]);
+
+/** Holds only for the filter under which it was made: under another, other rows would be meant. */
+function useSelection(query: ListQuery): [Selection, (selection: Selection) => void] {
+  const key = filterKey(query);
+  const [made, setMade] = useState<{ key: string; selection: Selection }>({ key, selection: nothing });
+  const select = useCallback((selection: Selection) => setMade({ key, selection }), [key]);
+  return [made.key === key ? made.selection : nothing, select];
+}
+
+/** A project's parts: narrowed, ordered, selected and changed together, with one way back. */
+export function PartList({ projectId, canEdit, materials, empty, onReplace }: PartListProps) {
+  const client = useQueryClient();
+  const navigate = useNavigate();
+  const { view, change } = useListView();
+  const [range, setRange] = useState<RowRange>({ first: 0, last: 0 });
+  const { list, isTurning, error, retry } = usePartList(projectId, view, range);
+  const [selection, select] = useSelection(list.query);
+  const { steps, state } = useChangeSteps(projectId);
+  const stateUnit = useStateUnit();
+  const measureAgain = useMeasureAgain();
+  const onText = useCallback((text: string) => change({ text }), [change]);
+  const total = list.head?.total ?? 0;
+  const count = countSelected(selection, total);
+  const chosen = () => writeSelection(selection, list.query);
+
+  const changeAll = ({ change: wanted, about, to }: BulkChange, parts = chosen()): Promise<void> =>
+    steps.take(async () => {
+      const done = await changeSettings(projectId, parts, wanted);
+      return { kind: 'setting', change: done, about, to };
+    });
+  const move = (kind: 'deleted' | 'restored', parts = chosen()): Promise<void> =>
+    steps.take(async () => {
+      const { ids } = await (kind === 'deleted' ? deleteParts : restoreParts)(projectId, parts);
+      select(nothing);
+      return { kind, ids };
+    });
+  const readAgain = (): void => void client.invalidateQueries({ queryKey: ['parts', projectId] });
+  const actions: RowActions = {
+    onStateUnit: (row, unit) => {
+      const { lengthUnit, version } = row.revision.setting;
+      // Keeping the unit changes no figure: it only says that a person has looked.
+      if (unit === lengthUnit) stateUnit.mutate({ partId: row.id, lengthUnit: unit, version });
+      else void changeAll({ change: { lengthUnit: unit }, about: 'Unit', to: unitTexts[unit].name }, { ids: [row.id] }).then(readAgain);
+    },
+    onMeasureAgain: (row) => measureAgain.mutate(row.id),
+    onReplace,
+  };
+  const isEmpty = list.head !== undefined && total === 0 && view.text === '' && view.states === '' && !view.deleted && list.head.deleted === 0 && !isTurning;
+  if (isEmpty) return empty;
+  return (
+    <section className="part-list" aria-label="List of parts">
+      <div className="part-tools screen-only">
+        <PartFilterBar view={view} head={list.head} onChange={change} onText={onText} />
+        <div className="part-tools-end">
+          <ColumnChooser columns={view.columns} onChange={(columns) => change({ columns })} />
+          <ExportMenu projectId={projectId} view={view} total={total} />
+        </div>
+      </div>
+      {error !== null && <ProblemNotice error={error} onRetry={retry} />}
+      {(stateUnit.error ?? measureAgain.error) !== null && <ProblemNotice error={stateUnit.error ?? measureAgain.error} />}
+      <div className={`part-list-body${isTurning ? ' part-list-turning' : ''}`} aria-busy={isTurning}>
+        {list.head === undefined ? (
+          error === null && <ListSkeleton columns={view.columns} />
+        ) : total === 0 ? (
+          <ListGap query={list.query} deletedCount={list.head.deleted} onClear={() => change({ text: '', states: '', deleted: false })} />
+        ) : (
+          <PartGrid
+            projectId={projectId}
+            list={list}
+            total={total}
+            columns={view.columns}
+            onOrder={change}
+            selection={selection}
+            canSelect={canEdit}
+            onSelect={select}
+            onRange={setRange}
+            readIds={(indices) => readRowIds(client, projectId, list.query, indices)}
+            actions={canEdit && !view.deleted ? actions : undefined}
+            onOpen={(row) => void navigate(`/projects/${projectId}/parts/${row.id}`)}
+            onDelete={(row) => canEdit && !view.deleted && void move('deleted', row ? { ids: [row.id] } : undefined)}
+          />
+        )}
+      </div>
+      <PrintedCount read={list.listRead().length} total={total} />
+      <footer className="part-foot screen-only">
+        <StepLine steps={steps} state={state} />
+        <div className="part-foot-line">
+          {count > 0 ? (
+            <SelectionBar
+              count={count}
+              materials={materials}
+              isBusy={state.isBusy}
+              isDeletedView={list.query.deleted}
+              onChange={(wanted) => void changeAll(wanted)}
+              onDelete={() => void move('deleted')}
+              onRestore={() => void move('restored')}
+              onClear={() => select(nothing)}
+            />
+          ) : (
+            total > 0 && (
+              <p className="soft">
+                <span className="figure">{formatCount(total)}</span> {total === 1 ? 'part' : 'parts'}
+                {writeQuery({ ...list.query, sort: 'number', direction: 'ascending' }).size > 0 && ' that the filter leaves'}. Principal moments are about each centre of mass.
+              </p>
+            )
+          )}
+        </div>
+      </footer>
+    </section>
+  );
+}
+
+/** On paper: rows that were never looked at are not there to be printed. */
+function PrintedCount({ read, total }: { read: number; total: number }) {
+  return (
+    <p className="print-only part-printed">
+      {countOf(read, 'part')} of {formatCount(total)}, principal moments about each centre of mass, mass and moments of uniform bodies.
+      {read < total && ` ${formatCount(total - read)} that were not looked at are left out; the export of the list has them all.`}
+    </p>
+  );
+}

@@ -1,0 +1,79 @@
+import { Button, HTMLSelect } from '@blueprintjs/core';
+import { lengthUnit as lengthUnitSchema, type Part } from '@masswright/contracts';
+import { lengthUnits } from '@masswright/units';
+import { Notice } from '../../../components/notice';
+import { ProblemNotice } from '../../../components/problem-notice';
+import { formatMoment } from '../../../lib/format-time';
+import { unitTexts } from '../../../lib/unit-texts';
+import { useStateUnit } from '../api/parts';
+import type { SettingEditor, SettingEditorState } from '../model/setting-editor';
+import { describeRatio } from './row-note';
+import { Fact } from './section';
+
+interface UnitFactProps {
+  part: Part;
+  editor: SettingEditor;
+  state: SettingEditorState;
+}
+
+/** Who says that it is this unit: a person for this file, or nobody yet. */
+function describeOrigin({ part, state }: Pick<UnitFactProps, 'part' | 'state'>): string {
+  const { draft, saved } = state;
+  if (draft.lengthUnit === null) return 'The file does not say it, and none is assumed.';
+  if (draft.lengthUnit !== saved.lengthUnit) return 'stated by you, just now';
+  if (saved.unitStated) return `stated by ${saved.unitStated.by}, ${formatMoment(saved.unitStated.at)}`;
+  const before = part.revisions[1];
+  return before ? `taken over from revision ${before.letter}; nobody has stated it for this file` : '';
+}
+
+/** A new revision whose volume does not fit the unit that it took over. */
+function Doubt({ part, editor, state }: UnitFactProps) {
+  const stateUnit = useStateUnit();
+  const { unitDoubt: doubt, can } = part;
+  const { saved, draft } = state;
+  const { lengthUnit } = saved;
+  if (!doubt || lengthUnit === null || draft.lengthUnit !== lengthUnit) return null;
+  const before = part.revisions[1];
+  return (
+    <Notice tone="doubt">
+      <p>
+        <b>Is the unit right?</b> Its volume is {describeRatio(doubt)} that of revision {before?.letter ?? 'before'}, as if {unitTexts[doubt.lengthUnit].plural} had been taken for{' '}
+        {unitTexts[lengthUnit].plural}.
+      </p>
+      {can.edit && (
+        <div className="notice-actions screen-only">
+          <Button size="small" onClick={() => editor.change({ lengthUnit: doubt.lengthUnit })}>
+            These are {unitTexts[doubt.lengthUnit].plural}
+          </Button>
+          <Button size="small" loading={stateUnit.isPending} onClick={() => stateUnit.mutate({ partId: part.id, lengthUnit, version: saved.version })}>
+            Keep {unitTexts[lengthUnit].plural}
+          </Button>
+        </div>
+      )}
+      {stateUnit.error && <ProblemNotice error={stateUnit.error} />}
+    </Notice>
+  );
+}
+
+/** In which unit the mesh is, who says so, and whether that can be doubted. */
+export function UnitFact({ part, editor, state }: UnitFactProps) {
+  const { draft } = state;
+  return (
+    <Fact name="Unit">
+      {part.can.edit ? (
+        <HTMLSelect
+          aria-label="Unit"
+          value={draft.lengthUnit ?? ''}
+          options={[{ value: '', label: 'not stated' }, ...lengthUnits.map((value) => ({ value, label: unitTexts[value].name }))]}
+          onChange={(event) => editor.change({ lengthUnit: lengthUnitSchema.nullable().parse(event.currentTarget.value || null) })}
+        />
+      ) : draft.lengthUnit ? (
+        unitTexts[draft.lengthUnit].name
+      ) : (
+        'not stated'
+      )}{' '}
+      <span className="soft">{describeOrigin({ part, state })}</span>
+      <Doubt part={part} editor={editor} state={state} />
+    </Fact>
+  );
+}
