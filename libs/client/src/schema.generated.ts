@@ -1160,7 +1160,7 @@ export interface components {
                         defensible: boolean;
                         findings: {
                             /** @enum {string} */
-                            kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons";
+                            kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons" | "folded-polygons";
                             count: number;
                             facets: number[];
                         }[];
@@ -1336,8 +1336,7 @@ export interface components {
         };
         CreateUploadRequest: {
             fileName: string;
-            /** @default  */
-            folder: string;
+            folder?: string;
             sizeBytes: number;
         };
         Upload: {
@@ -2371,7 +2370,7 @@ export interface operations {
                             defensible: boolean;
                             findings: {
                                 /** @enum {string} */
-                                kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons";
+                                kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons" | "folded-polygons";
                                 count: number;
                                 facets: number[];
                             }[];
@@ -2873,7 +2872,7 @@ export interface operations {
                             defensible: boolean;
                             findings: {
                                 /** @enum {string} */
-                                kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons";
+                                kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons" | "folded-polygons";
                                 count: number;
                                 facets: number[];
                             }[];

@@ -12,10 +12,10 @@ export const partHash = z.string().regex(/^[0-9a-f]{64}$/, 'A SHA-256 has 64 hex
 export const createUploadRequest = z.object({
   fileName,
   /** Where in the dropped folder the file lies: a label, too. */
-  folder: z.string().max(2000, 'The name of the folder has more than 2000 characters.').default(''),
+  folder: z.string().max(2000, 'The name of the folder has more than 2000 characters.').optional(),
   sizeBytes: z.number().int().min(0),
 });
-export type CreateUploadRequest = z.input<typeof createUploadRequest>;
+export type CreateUploadRequest = z.infer<typeof createUploadRequest>;
 
 /** A file on its way to object storage, in parts that the browser sends there itself. */
 export const upload = z.object({

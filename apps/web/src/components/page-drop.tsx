@@ -1,9 +1,10 @@
 import { useRef, useState, type DragEvent, type ReactNode } from 'react';
+import { collectDrop, type DroppedFile } from '../lib/dropped-files';
 
 const carriesFiles = (event: DragEvent): boolean => event.dataTransfer.types.includes('Files');
 
-/** A whole page on which files can be dropped. */
-export function PageDrop({ onFiles, children }: { onFiles: ((files: readonly File[]) => void) | undefined; children: ReactNode }) {
+/** A whole page on which files and folders can be dropped. */
+export function PageDrop({ onFiles, children }: { onFiles: ((files: readonly DroppedFile[]) => void) | undefined; children: ReactNode }) {
   const depth = useRef(0);
   const [over, setOver] = useState(false);
   if (!onFiles) return <>{children}</>;
@@ -29,7 +30,7 @@ export function PageDrop({ onFiles, children }: { onFiles: ((files: readonly Fil
         event.preventDefault();
         depth.current = 0;
         setOver(false);
-        onFiles([...event.dataTransfer.files]);
+        void collectDrop(event.dataTransfer).then(onFiles);
       }}
     >
       {children}

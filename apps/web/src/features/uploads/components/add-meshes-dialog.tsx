@@ -1,108 +1,150 @@
 import { Button, Dialog, DialogFooter } from '@blueprintjs/core';
-import { useState } from 'react';
-import { DensityField } from '../../../components/density-field';
-import { readDensity } from '../../../lib/density';
+import type { Material } from '@masswright/contracts';
+import { useState, type DragEvent } from 'react';
+import { Notice } from '../../../components/notice';
+import { collectDrop } from '../../../lib/dropped-files';
+import { formatBytes } from '../../../lib/format-bytes';
 import { countOf } from '../../../lib/plural';
-import { closeUploadDialog, useUploadDialog } from '../model/dialog-state';
-import { isUnfinished } from '../model/upload-entry';
-import { addUploads, useUploads } from '../model/upload-queue';
+import { useStorageUse } from '../api/uploads';
+import { closeUploadDialog, leaveOthersOut, takeFiles, takeOthers, useUploadDialog, type Replacement } from '../model/dialog-state';
+import { isRefusal } from '../model/quick-figures';
+import { awaitsDecision, type UploadEntry } from '../model/upload-entry';
+import { tellServer, useStatingProblem, useUploads } from '../model/upload-queue';
+import { lacksUnit, summariseUploads } from '../model/upload-summary';
+import { useTick } from '../model/use-tick';
 import { FilePicker } from './file-picker';
-import { UnitQuestion, type UnitAnswer } from './unit-question';
+import { NameMatchQuestion } from './name-match-question';
+import { UnitPanel } from './unit-panel';
 import { UploadList } from './upload-list';
+import { UploadTotals } from './upload-totals';
 import './uploads.css';
 
-/** Where a project's page puts it; it opens by `openUploadDialog`. */
-export function AddMeshesDialog({ projectId }: { projectId: string }) {
+interface AddMeshesDialogProps {
+  projectId: string;
+  /** The library, for the question of what the meshes are made of. */
+  materials: readonly Material[];
+}
+
+/** Where a project's page puts it; it opens by `openUploadDialog`. Files are sent from the moment in which they are dropped; what they are is asked meanwhile. */
+export function AddMeshesDialog({ projectId, materials }: AddMeshesDialogProps) {
   const dialog = useUploadDialog();
   const isOpen = dialog?.projectId === projectId;
+  const drop = (event: DragEvent): void => {
+    event.preventDefault();
+    void collectDrop(event.dataTransfer).then(takeFiles);
+  };
   return (
-    <Dialog title="Add meshes" isOpen={isOpen} onClose={closeUploadDialog} className="add-meshes" canOutsideClickClose={false}>
-      {isOpen && <Steps projectId={projectId} dropped={dialog.files} />}
+    <Dialog title={dialog?.replacement ? `New file for No. ${dialog.replacement.number} ${dialog.replacement.name}` : 'Add meshes'} isOpen={isOpen} onClose={closeUploadDialog} className="add-meshes" canOutsideClickClose={false}>
+      {isOpen && (
+        <div className="add-meshes-drop" onDragOver={(event) => event.preventDefault()} onDrop={drop}>
+          <Body projectId={projectId} materials={materials} others={dialog.others.length} excess={dialog.excess} replacement={dialog.replacement} />
+        </div>
+      )}
     </Dialog>
   );
 }
 
-function Steps({ projectId, dropped }: { projectId: string; dropped: readonly File[] }) {
-  const [sent, setSent] = useState(false);
-  return sent ? <Progress projectId={projectId} onMore={() => setSent(false)} /> : <Questions projectId={projectId} dropped={dropped} onSent={() => setSent(true)} />;
+interface BodyProps extends AddMeshesDialogProps {
+  others: number;
+  excess: string | undefined;
+  replacement: Replacement | undefined;
 }
 
-function Questions({ projectId, dropped, onSent }: { projectId: string; dropped: readonly File[]; onSent: () => void }) {
-  const [files, setFiles] = useState<readonly File[]>(dropped);
-  const [unit, setUnit] = useState<UnitAnswer>();
-  const [density, setDensity] = useState('');
-  const [asked, setAsked] = useState(false);
-  const typed = readDensity(density);
-  const missing = [
-    files.length === 0 && 'Choose at least one file.',
-    unit === undefined && 'Say in which unit the meshes are.',
-    typed.error !== undefined && typed.error,
-  ].filter((sentence) => sentence !== false);
-  const submit = (): void => {
-    if (missing.length > 0 || unit === undefined || typed.densityKgM3 === undefined) {
-      setAsked(true);
-      return;
-    }
-    addUploads(projectId, files, { lengthUnit: unit === 'later' ? null : unit, densityKgM3: typed.densityKgM3 });
-    onSent();
-  };
-  return (
-    <form
-      noValidate
-      onSubmit={(event) => {
-        event.preventDefault();
-        submit();
-      }}
-    >
-      <div className="bp6-dialog-body add-meshes-body">
-        <FilePicker
-          files={files}
-          onAdd={(added) => setFiles([...files, ...added])}
-          onRemove={(file) => setFiles(files.filter((candidate) => candidate !== file))}
-        />
-        <UnitQuestion answer={unit} onAnswer={setUnit} files={files.length} />
-        <DensityField
-          text={density}
-          onChange={setDensity}
-          emptyHint="With its unit: 2.7 g/cm3, 7850 kg/m3. Leave it empty to state it later."
-        />
-      </div>
-      <DialogFooter
-        actions={
-          <>
-            <Button onClick={closeUploadDialog}>Cancel</Button>
-            <Button type="submit" intent="primary">
-              {files.length === 0 ? 'Add' : `Add ${countOf(files.length, 'mesh', 'meshes')}`}
-            </Button>
-          </>
-        }
-      >
-        <span role="alert" className="add-meshes-missing">
-          {asked && missing.join(' ')}
-        </span>
-      </DialogFooter>
-    </form>
-  );
-}
-
-function Progress({ projectId, onMore }: { projectId: string; onMore: () => void }) {
-  const entries = useUploads().filter((entry) => entry.projectId === projectId);
-  const sending = entries.filter(isUnfinished).length;
+function Body({ projectId, materials, others, excess, replacement }: BodyProps) {
+  const all = useUploads();
+  const entries = all.filter((entry) => entry.projectId === projectId);
+  const [postponed, setPostponed] = useState<ReadonlySet<string>>(new Set());
+  // Asked about together: files that are one drop's question stay in it until it is answered, also when their unit is chosen one by one.
+  const [asking, setAsking] = useState<ReadonlySet<string>>(new Set());
+  const lacking = entries.filter((entry) => lacksUnit(entry) && !isRefusal(entry.quick) && !awaitsDecision(entry) && !postponed.has(entry.key));
+  const fresh = lacking.filter(({ key }) => !asking.has(key));
+  if (fresh.length > 0) setAsking(new Set([...asking, ...fresh.map(({ key }) => key)]));
+  const asked = entries.filter(({ key, phase }) => asking.has(key) && phase !== 'cancelled');
+  const showsPicker = entries.length === 0 || replacement !== undefined;
+  const settle = (): void => setAsking(new Set());
   return (
     <>
-      <div className="bp6-dialog-body add-meshes-progress">
-        <UploadList entries={entries} />
+      <div className="bp6-dialog-body add-meshes-body">
+        {excess && <Notice tone="wrong">{excess}</Notice>}
+        {others > 0 && <Others count={others} />}
+        {showsPicker && <FilePicker onFiles={takeFiles} single={replacement !== undefined} />}
+        <Undecided entries={entries} />
+        {asked.length > 0 && !replacement && (
+          <UnitPanel
+            entries={asked}
+            materials={materials}
+            onAnswered={settle}
+            onLater={() => {
+              setPostponed(new Set([...postponed, ...asked.map(({ key }) => key)]));
+              settle();
+            }}
+          />
+        )}
+        <StatingProblem projectId={projectId} />
+        {entries.length > 0 && <Files entries={entries} />}
       </div>
       <DialogFooter
         actions={
           <>
-            <Button onClick={onMore}>Add more</Button>
+            {!showsPicker && <FilePicker onFiles={takeFiles} small />}
             <Button onClick={closeUploadDialog}>Close</Button>
           </>
         }
       >
-        <span className="soft">{sending > 0 ? 'You can close this: they go on being sent.' : 'All are sent.'}</span>
+        <FooterWords entries={entries} />
       </DialogFooter>
     </>
   );
+}
+
+function Undecided({ entries }: { entries: readonly UploadEntry[] }) {
+  const undecided = entries.filter(awaitsDecision);
+  return undecided.length > 0 ? <NameMatchQuestion entries={undecided} /> : null;
+}
+
+function Others({ count }: { count: number }) {
+  return (
+    <Notice tone="plain">
+      {countOf(count, 'file')} of other kinds by {count === 1 ? 'its name' : 'their names'} {count === 1 ? 'was' : 'were'} left out.{' '}
+      <Button size="small" onClick={takeOthers}>
+        Send {count === 1 ? 'it' : 'them'} all the same
+      </Button>{' '}
+      <Button size="small" variant="minimal" onClick={leaveOthersOut}>
+        Leave out
+      </Button>
+    </Notice>
+  );
+}
+
+function StatingProblem({ projectId }: { projectId: string }) {
+  const problem = useStatingProblem();
+  if (problem?.projectId !== projectId) return null;
+  return (
+    <Notice tone="wrong">
+      What you stated could not be saved: {problem.sentence}{' '}
+      <Button size="small" onClick={() => tellServer(projectId)}>
+        Try again
+      </Button>
+    </Notice>
+  );
+}
+
+function Files({ entries }: { entries: readonly UploadEntry[] }) {
+  const summary = summariseUploads(entries);
+  const tick = useTick(summary.sending > 0);
+  return (
+    <section className="add-meshes-files" aria-label="Files being added">
+      <UploadTotals entries={entries} summary={summary} tick={tick} />
+      <UploadList entries={entries} tick={tick} />
+    </section>
+  );
+}
+
+function FooterWords({ entries }: { entries: readonly UploadEntry[] }) {
+  const { data: use } = useStorageUse();
+  const { sending, undecided } = summariseUploads(entries);
+  if (undecided > 0) return <span className="soft">{countOf(undecided, 'file')} {undecided === 1 ? 'wants' : 'want'} your decision.</span>;
+  if (sending > 0) return <span className="soft">You can close this: they go on being sent.</span>;
+  if (entries.length > 0) return <span className="soft">All are sent.</span>;
+  return use ? <span className="soft">{formatBytes(use.usedBytes)} of {formatBytes(use.limitBytes)} used; one file may have {formatBytes(use.largestFileBytes)}.</span> : null;
 }

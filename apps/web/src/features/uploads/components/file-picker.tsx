@@ -1,72 +1,42 @@
 import { Button } from '@blueprintjs/core';
-import { useRef, useState, type DragEvent } from 'react';
-import { formatBytes } from '../../../lib/format-bytes';
-import { countOf } from '../../../lib/plural';
+import { useRef, type InputHTMLAttributes } from 'react';
+import { collectChosen, type DroppedFile } from '../../../lib/dropped-files';
 
 interface FilePickerProps {
-  files: readonly File[];
-  onAdd: (files: readonly File[]) => void;
-  onRemove: (file: File) => void;
+  onFiles: (files: readonly DroppedFile[]) => void;
+  /** One file only, for a part's next revision. */
+  single?: boolean;
+  /** A line of buttons, where files were chosen already. */
+  small?: boolean;
 }
 
-export function FilePicker({ files, onAdd, onRemove }: FilePickerProps) {
-  const input = useRef<HTMLInputElement>(null);
-  const [over, setOver] = useState(false);
-  const drop = (event: DragEvent): void => {
-    event.preventDefault();
-    setOver(false);
-    onAdd([...event.dataTransfer.files]);
+const accepted = '.stl,.obj,.gz,model/stl,model/obj,application/sla,application/gzip';
+/** Browsers know it; the types of React do not. */
+const folderField = { webkitdirectory: '' } as InputHTMLAttributes<HTMLInputElement>;
+
+export function FilePicker({ onFiles, single = false, small = false }: FilePickerProps) {
+  const files = useRef<HTMLInputElement>(null);
+  const folder = useRef<HTMLInputElement>(null);
+  const take = (input: HTMLInputElement): void => {
+    onFiles(collectChosen(input.files ?? []));
+    input.value = '';
   };
   return (
-    <div>
-      <div
-        className={`drop-place${over ? ' drop-place-over' : ''}`}
-        onDragOver={(event) => {
-          event.preventDefault();
-          setOver(true);
-        }}
-        onDragLeave={() => setOver(false)}
-        onDrop={drop}
-      >
-        <p>
-          Drop STL files here, or{' '}
-          <Button size="small" onClick={() => input.current?.click()}>
-            choose files
+    <div className={small ? 'file-picker-small' : 'drop-place'}>
+      {!small && <p>{single ? 'Drop the new file here, or' : 'Drop meshes or a folder here, or'}</p>}
+      <p className="drop-place-buttons">
+        <Button size={small ? 'small' : 'medium'} onClick={() => files.current?.click()} autoFocus={!small}>
+          {single ? 'Choose the file' : small ? 'Add files' : 'Choose files'}
+        </Button>
+        {!single && (
+          <Button size={small ? 'small' : 'medium'} onClick={() => folder.current?.click()}>
+            {small ? 'Add a folder' : 'Choose a folder'}
           </Button>
-        </p>
-        <p className="soft">Binary or text. One file becomes one part.</p>
-        <input
-          ref={input}
-          type="file"
-          multiple
-          accept=".stl,model/stl,application/sla"
-          className="hidden-visually"
-          tabIndex={-1}
-          aria-label="Mesh files"
-          onChange={(event) => {
-            onAdd([...(event.currentTarget.files ?? [])]);
-            event.currentTarget.value = '';
-          }}
-        />
-      </div>
-      {files.length > 1 && (
-        <p className="soft file-count">
-          {countOf(files.length, 'file')}, {formatBytes(files.reduce((sum, { size }) => sum + size, 0))}
-        </p>
-      )}
-      {files.length > 0 && (
-        <ul className="file-list" aria-label="Chosen files" tabIndex={0}>
-          {files.map((file, index) => (
-            <li key={`${file.name} ${file.size} ${index}`}>
-              <span className="figure file-name">{file.name}</span>
-              <span className="figure soft">{formatBytes(file.size)}</span>
-              <Button size="small" variant="minimal" onClick={() => onRemove(file)} aria-label={`Leave out ${file.name}`}>
-                Leave out
-              </Button>
-            </li>
-          ))}
-        </ul>
-      )}
+        )}
+      </p>
+      {!small && <p className="soft">STL, binary or text, and OBJ; either may be packed with gzip. One file is one part.</p>}
+      <input ref={files} type="file" multiple={!single} accept={accepted} className="hidden-visually" tabIndex={-1} aria-label="Mesh files" onChange={(event) => take(event.currentTarget)} />
+      {!single && <input ref={folder} type="file" multiple {...folderField} className="hidden-visually" tabIndex={-1} aria-label="Folder of meshes" onChange={(event) => take(event.currentTarget)} />}
     </div>
   );
 }

@@ -1,41 +1,86 @@
-import { lengthUnits, type LengthUnit } from '@masswright/units';
+import type { LengthUnit } from '@masswright/units';
+import { useId } from 'react';
+import { writeRoughLength, writeRoughMass } from '../../../lib/rough-figure';
 import { unitTexts } from '../../../lib/unit-texts';
-
-/** 'later' is an answer that a person gives, not one that we assume. */
-export type UnitAnswer = LengthUnit | 'later';
+import type { UnitEvidence } from '../model/unit-evidence';
 
 interface UnitQuestionProps {
-  answer: UnitAnswer | undefined;
-  onAnswer: (answer: UnitAnswer) => void;
-  files: number;
+  /** In the order in which they are shown; without figures while nothing is read. */
+  evidence: readonly UnitEvidence[];
+  answer: LengthUnit | undefined;
+  onAnswer: (answer: LengthUnit) => void;
+  count: number;
 }
 
-/** Mesh files don't say their unit, and a wrong one is wrong by its cube: so it is asked, and none is preselected. */
-export function UnitQuestion({ answer, onAnswer, files }: UnitQuestionProps) {
+function Rough({ figure, unit }: { figure: string; unit: string }) {
   return (
-    <fieldset className="unit-question">
-      <legend>
-        <h3>{files === 1 ? 'What unit is this mesh in?' : 'What unit are these meshes in?'}</h3>
-        <p className="soft">The files do not say. The answer can be changed later; no mass is stated until there is one.</p>
-      </legend>
-      <div className="unit-question-head" aria-hidden="true">
-        <span className="caption">If the unit is</span>
-        <span className="caption">100 in the file is</span>
-        <span className="caption">Usual for</span>
-      </div>
-      {lengthUnits.map((unit) => (
-        <label key={unit} className="unit-option">
-          <input type="radio" name="unit" value={unit} checked={answer === unit} onChange={() => onAnswer(unit)} />
-          <span className="unit-option-name">{unitTexts[unit].name}</span>
-          <span className="figure">{unitTexts[unit].means}</span>
-          <span className="soft">{unitTexts[unit].usual}</span>
-        </label>
-      ))}
-      <label className="unit-option">
-        <input type="radio" name="unit" value="later" checked={answer === 'later'} onChange={() => onAnswer('later')} />
-        <span className="unit-option-name">not known yet</span>
-        <span className="soft unit-option-wide">measured all the same; size and mass follow once you state it</span>
-      </label>
-    </fieldset>
+    <td className="numeric figure">
+      {figure}
+      <span className="unit"> {unit}</span>
+    </td>
+  );
+}
+
+const nothing = { figure: '–', unit: '' };
+const unitsBySize: readonly LengthUnit[] = ['micron', 'mm', 'cm', 'inch', 'foot', 'm'];
+
+/** Mesh files don't say their unit, and a wrong one is wrong by its cube: so it is asked, with what each answer would mean, and none is preselected. */
+export function UnitQuestion({ evidence, answer, onAnswer, count }: UnitQuestionProps) {
+  const name = useId();
+  const single = count === 1;
+  const anyPlausible = evidence.some(({ isPlausible }) => isPlausible);
+  return (
+    <table className="table unit-table" role="radiogroup" aria-label="Unit of the meshes">
+      <thead>
+        <tr>
+          <th scope="col">If {single ? 'the' : 'a'} unit is</th>
+          {!single && (
+            <th scope="col" className="numeric">
+              Smallest
+            </th>
+          )}
+          <th scope="col" className="numeric">
+            {single ? 'Longest side' : 'Median size'}
+          </th>
+          {!single && (
+            <th scope="col" className="numeric">
+              Largest
+            </th>
+          )}
+          <th scope="col" className="numeric">
+            {single ? 'Mass' : 'Median mass'}
+          </th>
+          {!single && (
+            <th scope="col" className="numeric">
+              All together
+            </th>
+          )}
+          <th scope="col">Reads as</th>
+        </tr>
+      </thead>
+      <tbody>
+        {unitsBySize.map((unit) => {
+          const row = evidence.find(({ lengthUnit }) => lengthUnit === unit);
+          const recedes = row !== undefined && anyPlausible && !row.isPlausible && answer !== unit;
+          const mass = (massKg: number | null | undefined) => (massKg == null ? nothing : writeRoughMass(massKg));
+          return (
+            <tr key={unit} className={`unit-row${answer === unit ? ' unit-row-chosen' : ''}${recedes ? ' unit-row-recedes' : ''}`} onClick={() => onAnswer(unit)}>
+              <th scope="row">
+                <label>
+                  <input type="radio" name={name} value={unit} checked={answer === unit} onChange={() => onAnswer(unit)} />
+                  {unitTexts[unit].name}
+                </label>
+              </th>
+              {!single && <Rough {...(row ? writeRoughLength(row.smallestM) : nothing)} />}
+              <Rough {...(row ? writeRoughLength(row.medianM) : nothing)} />
+              {!single && <Rough {...(row ? writeRoughLength(row.largestM) : nothing)} />}
+              <Rough {...mass(row?.medianKg)} />
+              {!single && <Rough {...mass(row?.totalKg)} />}
+              <td>{row?.readsAs ?? '…'}</td>
+            </tr>
+          );
+        })}
+      </tbody>
+    </table>
   );
 }

@@ -1,15 +1,61 @@
+import type { DroppedFile } from '../../../lib/dropped-files';
 import { createStore, useStore } from '../../../lib/store';
+import { describeExcess, separateMeshes } from './drop-rules';
+import { addUploads } from './upload-queue';
 
-/** The dialog may be opened from a button, by files that are dropped on a page, or by a page without parts. */
+/** A part whose file is to be replaced by its next revision. */
+export interface Replacement {
+  partId: string;
+  number: number;
+  name: string;
+}
+
 interface DialogState {
   projectId: string;
-  files: readonly File[];
+  /** Files that don't look like meshes by their names: not sent unless the person says so. */
+  others: readonly DroppedFile[];
+  /** Why the last drop was not taken. */
+  excess?: string;
+  replacement?: Replacement;
 }
 
 const state = createStore<DialogState | undefined>(undefined);
 
-export function openUploadDialog(projectId: string, files: readonly File[] = []): void {
-  state.set({ projectId, files });
+/** The dialog may be opened from a button, by files that are dropped on a page, by a part whose file is to be replaced, or by the tray. */
+export function openUploadDialog(projectId: string, files: readonly DroppedFile[] = [], replacement?: Replacement): void {
+  state.set({ projectId, others: [], replacement });
+  if (files.length > 0) takeFiles(files);
+}
+
+/** Files for the open dialog: meshes are sent at once, what they are is asked meanwhile. */
+export function takeFiles(files: readonly DroppedFile[]): void {
+  const { meshes, others } = separateMeshes(files);
+  const excess = describeExcess(meshes);
+  state.set((open) => open && { ...open, excess, others: excess ? [] : [...open.others, ...others] });
+  if (!excess) send(meshes);
+}
+
+/** The person wants the others to be sent too: what they are is told by their content. */
+export function takeOthers(): void {
+  const others = state.get()?.others ?? [];
+  const excess = describeExcess(others);
+  state.set((open) => open && { ...open, excess, others: excess ? open.others : [] });
+  if (!excess) send(others);
+}
+
+export function leaveOthersOut(): void {
+  state.set((open) => open && { ...open, others: [] });
+}
+
+function send(files: readonly DroppedFile[]): void {
+  const open = state.get();
+  if (!open || files.length === 0) return;
+  const { projectId, replacement } = open;
+  const [first] = files;
+  if (replacement && first) {
+    addUploads(projectId, [{ ...first, decision: { as: 'revision', partId: replacement.partId, reason: 'Replaces the file' } }]);
+    state.set({ ...open, replacement: undefined });
+  } else addUploads(projectId, files);
 }
 
 export function closeUploadDialog(): void {

@@ -1,17 +1,23 @@
 import type { Part } from '@masswright/contracts';
 import { describe, expect, it } from 'vitest';
-import { changeEntries, computeShareDone, describeEntry, isSettled, isUnfinished, type UploadEntry, type UploadEvent } from './upload-entry';
+import { awaitsDecision, changeEntries, isReadyToStore, isSettled, isToBeTold, isUnfinished, nothingStated, writeCompletion, type Stated, type UploadEntry, type UploadEvent } from './upload-entry';
 import { summariseUploads } from './upload-summary';
+import { computeShareDone, describeEntry } from './upload-words';
 
 const entry = (key = 'a'): UploadEntry => ({
   key,
   projectId: 'p',
   fileName: `${key}.stl`,
   sizeBytes: 1000,
-  setting: { lengthUnit: 'mm', densityKgM3: 2700 },
+  dropId: 'drop',
+  folder: '',
   phase: 'waiting',
+  paused: false,
   sentBytes: 0,
+  keptBytes: 0,
+  stated: nothingStated,
 });
+const millimetres: Stated = { lengthUnit: 'mm', material: null, densityKgM3: 2700 };
 
 const part = (id: string): Part => ({
   id,
@@ -19,18 +25,38 @@ const part = (id: string): Part => ({
   projectName: 'Reel',
   number: 1,
   name: 'a',
+  state: 'measuring',
+  deletedAt: null,
+  revisions: [],
+  unitDoubt: null,
+  sameBytes: [],
   can: { edit: true },
   revision: {
     id: 'r',
     letter: 'A',
     fileName: 'a.stl',
+    folder: '',
     sizeBytes: 1000,
+    reason: '',
     createdAt: '2026-11-28T14:06:00Z',
     createdBy: 'Ines Marsh',
     run: { state: 'queued', stage: 'waiting', progress: 0, error: null, finishedAt: null, durationMs: null },
-    setting: { lengthUnit: 'mm', densityKgM3: 2700, axis: { kind: 'mesh', along: 'z' }, drive: null, version: 1, changedAt: '2026-11-28T14:06:00Z', changedBy: 'Ines Marsh' },
+    setting: {
+      lengthUnit: null,
+      densityKgM3: null,
+      densitySpreadKgM3: null,
+      material: null,
+      weighing: null,
+      axis: { kind: 'mesh', along: 'z' },
+      drive: null,
+      version: 1,
+      changedAt: '2026-11-28T14:06:00Z',
+      changedBy: 'Ines Marsh',
+      unitStated: null,
+    },
     sha256: null,
     format: null,
+    compression: null,
     measurement: null,
   },
 });
@@ -42,15 +68,16 @@ function pass(...events: UploadEvent[]): UploadEntry {
   return result;
 }
 
-const stored: UploadEvent = { type: 'stored', key: 'a', part: part('part-1') };
+const stored: UploadEvent = { type: 'stored', key: 'a', part: part('part-1'), told: nothingStated };
+const allSent: UploadEvent = { type: 'all-sent', key: 'a', uploadId: 'upload-1', partHashes: ['ab'] };
 
 describe('an upload', () => {
   it('goes from waiting through sending and storing to a part that is measured', () => {
     expect(describeEntry(pass())).toBe('Waiting');
-    const sending = pass({ type: 'begun', key: 'a' }, { type: 'sent', key: 'a', bytes: 400 });
+    const sending = pass({ type: 'begun', key: 'a' }, { type: 'sent', key: 'a', bytes: 400, keptBytes: 0 });
     expect(sending).toMatchObject({ phase: 'sending', sentBytes: 400 });
     expect(computeShareDone(sending)).toBeCloseTo(0.2);
-    const measuring = pass({ type: 'begun', key: 'a' }, { type: 'all-sent', key: 'a' }, stored, {
+    const measuring = pass({ type: 'begun', key: 'a' }, allSent, stored, {
       type: 'run',
       partId: 'part-1',
       run: { state: 'running', stage: 'measuring', progress: 0.5 },
@@ -63,7 +90,7 @@ describe('an upload', () => {
     expect(computeShareDone(done)).toBe(1);
   });
   it('that is cancelled stays cancelled, whatever arrives late', () => {
-    const late = pass({ type: 'begun', key: 'a' }, { type: 'cancelled', key: 'a' }, { type: 'sent', key: 'a', bytes: 900 }, { type: 'failed', key: 'a', problem: 'x' });
+    const late = pass({ type: 'begun', key: 'a' }, { type: 'cancelled', key: 'a' }, { type: 'sent', key: 'a', bytes: 900, keptBytes: 0 }, { type: 'failed', key: 'a', problem: 'x' });
     expect(late).toMatchObject({ phase: 'cancelled', sentBytes: 0 });
     expect(late.problem).toBeUndefined();
   });
@@ -109,10 +136,53 @@ describe('an upload', () => {
   });
 });
 
+describe('what an upload waits for', () => {
+  const match = { fileName: 'a.stl', partId: 'part-7', number: 7, name: 'Pawl', letter: 'A', storedFileName: 'A.stl', sameCase: false };
+
+  it('is not a part before the server has said whether a part has its name', () => {
+    expect(isReadyToStore(pass({ type: 'begun', key: 'a' }, allSent))).toBe(false);
+    expect(isReadyToStore(pass({ type: 'begun', key: 'a' }, allSent, { type: 'matched', key: 'a', matches: [] }))).toBe(true);
+  });
+  it('waits for the person where a part has its name, and is then what they say', () => {
+    const asked = pass({ type: 'matched', key: 'a', matches: [match] }, { type: 'begun', key: 'a' }, allSent);
+    expect([awaitsDecision(asked), isReadyToStore(asked), describeEntry(asked)]).toEqual([true, false, 'Sent, wants your decision']);
+    const [decided] = changeEntries([asked], { type: 'decided', key: 'a', decision: { as: 'revision', partId: 'part-7', reason: 'thicker wall' } });
+    expect(decided && isReadyToStore(decided)).toBe(true);
+    expect(decided && writeCompletion(decided)).toMatchObject({ revisionOf: { partId: 'part-7', reason: 'thicker wall' }, partHashes: ['ab'] });
+  });
+  it('takes with it what was stated until then; what is stated later, the server is told', () => {
+    const stated: UploadEvent = { type: 'stated', key: 'a', stated: millimetres };
+    expect(writeCompletion(pass(stated)).setting).toEqual({ lengthUnit: 'mm', densityKgM3: 2700 });
+    expect(isToBeTold(pass(stored))).toBe(false);
+    expect(isToBeTold(pass(stored, stated))).toBe(true);
+    expect(isToBeTold(pass(stored, stated, { type: 'told', key: 'a', told: millimetres }))).toBe(false);
+  });
+  it('names a material instead of its density', () => {
+    const material = { id: 'al-6061-t6', name: 'Aluminium 6061-T6' };
+    expect(writeCompletion(pass({ type: 'stated', key: 'a', stated: { lengthUnit: 'inch', material } })).setting).toEqual({ lengthUnit: 'inch', material: { id: 'al-6061-t6' } });
+  });
+  it('a revision keeps the unit that it took over', () => {
+    const revision = part('part-1');
+    revision.revision.letter = 'B';
+    revision.revision.setting.lengthUnit = 'mm';
+    expect(isToBeTold(pass({ type: 'stored', key: 'a', part: revision, told: nothingStated }, { type: 'stated', key: 'a', stated: { lengthUnit: 'inch' } }))).toBe(false);
+  });
+  it('is paused and goes on, but not once it is sent', () => {
+    const paused: UploadEvent = { type: 'paused', key: 'a', paused: true };
+    expect(describeEntry(pass({ type: 'begun', key: 'a' }, paused))).toBe('Paused');
+    expect(pass({ type: 'begun', key: 'a' }, allSent, paused).paused).toBe(false);
+  });
+  it('that was sent but not stored is not sent again, unless the storage has something else', () => {
+    const failed = (unsent: boolean) => pass({ type: 'begun', key: 'a' }, allSent, { type: 'failed', key: 'a', problem: 'x', unsent }, { type: 'tried-again', key: 'a' });
+    expect(failed(false).phase).toBe('sent');
+    expect(failed(true).phase).toBe('waiting');
+  });
+});
+
 describe('all uploads in one line', () => {
   it('count what is under way and what became of the others', () => {
     const list = [entry('a'), { ...entry('b'), phase: 'failed' as const }, pass(stored)];
-    expect(summariseUploads(list)).toMatchObject({ sentence: '3 meshes: 1 being sent, 1 being measured, 1 with a problem', settled: false, wrong: true });
+    expect(summariseUploads(list)).toMatchObject({ sentence: '3 meshes: 1 being sent, 1 being measured, 1 with a problem', settled: false, wrong: true, unitMissing: 2 });
   });
   it('are settled once nothing happens any more', () => {
     expect(summariseUploads([{ ...entry(), phase: 'cancelled' }])).toMatchObject({ settled: true, share: 1 });

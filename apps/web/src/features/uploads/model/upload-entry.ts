@@ -1,40 +1,76 @@
-import type { CompleteUploadRequest, MeasuringRun, Part } from '@masswright/contracts';
+import type { CompleteUploadRequest, IntakeSetting, MeasuringRun, NamedMaterial, NameMatches, Part } from '@masswright/contracts';
+import type { LengthUnit } from '@masswright/units';
+import type { QuickAnswer } from './quick-figures';
 
 /**
- * waiting: chosen, not yet begun. sending: on its way to the storage. storing: all sent, the server makes a part of it.
- * stored: a part; from here on its run says how far it is. failed: can be tried again. cancelled: by the person.
+ * waiting: chosen, not yet begun. sending: on its way to the storage. sent: all of it is there, and a decision of the person is awaited.
+ * storing: the server makes a part of it. stored: a part; from here on its run says how far it is. failed: can be tried again. cancelled: by the person.
  */
-export type UploadPhase = 'waiting' | 'sending' | 'storing' | 'stored' | 'failed' | 'cancelled';
+export type UploadPhase = 'waiting' | 'sending' | 'sent' | 'storing' | 'stored' | 'failed' | 'cancelled';
+
+/** What a person has said of a mesh; null is not said, and never assumed. */
+export interface Stated {
+  lengthUnit: LengthUnit | null;
+  material: NamedMaterial | null;
+  densityKgM3: number | null;
+}
+export const nothingStated: Stated = { lengthUnit: null, material: null, densityKgM3: null };
+
+export type NameMatch = NameMatches['matches'][number];
+export type Decision = { as: 'part' } | { as: 'revision'; partId: string; reason: string };
 
 export interface UploadEntry {
   key: string;
   projectId: string;
+  /** Files that came together are asked about together. */
+  dropId: string;
   fileName: string;
+  folder: string;
   sizeBytes: number;
-  setting: CompleteUploadRequest['setting'];
+  /** Given where two files of the drop would make parts of one name. */
+  partName?: string;
   phase: UploadPhase;
+  paused: boolean;
   sentBytes: number;
+  /** Of those, what was in the storage before and was not sent again. */
+  keptBytes: number;
+  sent?: { uploadId: string; partHashes: string[] };
+  stated: Stated;
+  /** What the server has been told of it. */
+  told?: Stated;
+  /** Parts with a file of that name; undefined while the server is being asked. */
+  matches?: readonly NameMatch[];
+  decision?: Decision;
+  quick?: QuickAnswer;
   /** Why it failed, for people. */
   problem?: string;
-  part?: { id: string; run: Pick<MeasuringRun, 'state' | 'stage' | 'progress'>; problem?: string };
+  part?: { id: string; isRevision: boolean; lengthUnit: LengthUnit | null; sameBytes: number; run: Pick<MeasuringRun, 'state' | 'stage' | 'progress'>; problem?: string };
 }
 
 export type UploadEvent =
   | { type: 'begun'; key: string }
-  | { type: 'sent'; key: string; bytes: number }
-  | { type: 'all-sent'; key: string }
-  | { type: 'stored'; key: string; part: Part }
-  | { type: 'failed'; key: string; problem: string }
+  | { type: 'sent'; key: string; bytes: number; keptBytes: number }
+  | { type: 'all-sent'; key: string; uploadId: string; partHashes: string[] }
+  | { type: 'storing'; key: string }
+  | { type: 'stored'; key: string; part: Part; told: Stated }
+  | { type: 'told'; key: string; told: Stated }
+  /** `unsent`: what the storage has is not this file, so it is to be sent again. */
+  | { type: 'failed'; key: string; problem: string; unsent?: boolean }
   | { type: 'cancelled'; key: string }
+  | { type: 'paused'; key: string; paused: boolean }
   | { type: 'tried-again'; key: string }
+  | { type: 'stated'; key: string; stated: Partial<Stated> }
+  | { type: 'matched'; key: string; matches: readonly NameMatch[] }
+  | { type: 'decided'; key: string; decision: Decision }
+  | { type: 'read-quickly'; key: string; quick: QuickAnswer }
   | { type: 'run'; partId: string; run: Pick<MeasuringRun, 'state' | 'stage' | 'progress'> }
   | { type: 'read'; part: Part };
 
-const running: readonly UploadPhase[] = ['waiting', 'sending', 'storing'];
+const running: readonly UploadPhase[] = ['waiting', 'sending', 'sent', 'storing'];
 
 const isOver = ({ state }: Pick<MeasuringRun, 'state'>): boolean => state === 'done' || state === 'failed';
 
-/** Still to be sent: leaving the page now would lose it. */
+/** Still to be sent, or to be decided about: leaving the page now would lose it. */
 export function isUnfinished(entry: UploadEntry): boolean {
   return running.includes(entry.phase);
 }
@@ -45,9 +81,45 @@ export function isSettled(entry: UploadEntry): boolean {
   return entry.phase !== 'stored' || (entry.part !== undefined && isOver(entry.part.run));
 }
 
-function takePart({ id, revision }: Part): NonNullable<UploadEntry['part']> {
+/** The person has to say whether it is a new part or the next revision of one. */
+export function awaitsDecision(entry: UploadEntry): boolean {
+  return isUnfinished(entry) && (entry.matches?.length ?? 0) > 0 && entry.decision === undefined;
+}
+
+/** All of it is in the storage, and nothing is open that must be decided first. */
+export function isReadyToStore(entry: UploadEntry): boolean {
+  return entry.phase === 'sent' && entry.matches !== undefined && !awaitsDecision(entry);
+}
+
+const isSameStated = (one: Stated, other: Stated): boolean =>
+  one.lengthUnit === other.lengthUnit && one.densityKgM3 === other.densityKgM3 && one.material?.id === other.material?.id;
+
+/** The person has said something since the server was told; a revision keeps what it took over from the one before. */
+export function isToBeTold(entry: UploadEntry): boolean {
+  if (entry.phase !== 'stored' || !entry.part || !entry.told) return false;
+  if (entry.part.isRevision && entry.part.lengthUnit !== null) return false;
+  return !isSameStated(entry.stated, entry.told);
+}
+
+/** What is stated, as a request says it: a material is named, and its density is the library's. */
+export function writeIntakeSetting({ lengthUnit, material, densityKgM3 }: Stated): IntakeSetting {
+  return material ? { lengthUnit, material: { id: material.id } } : { lengthUnit, densityKgM3 };
+}
+
+/** What makes a part of an entry. */
+export function writeCompletion(entry: UploadEntry): CompleteUploadRequest {
+  const { decision } = entry;
+  return {
+    partName: entry.partName,
+    setting: writeIntakeSetting(entry.stated),
+    revisionOf: decision?.as === 'revision' ? { partId: decision.partId, reason: decision.reason } : undefined,
+    partHashes: entry.sent?.partHashes,
+  };
+}
+
+function takePart({ id, revision, sameBytes }: Part): NonNullable<UploadEntry['part']> {
   const { state, stage, progress, error } = revision.run;
-  return { id, run: { state, stage, progress }, problem: error?.message };
+  return { id, isRevision: revision.letter !== 'A', lengthUnit: revision.setting.lengthUnit, sameBytes: sameBytes.length, run: { state, stage, progress }, problem: error?.message };
 }
 
 /** What was heard of a run takes the place of what was known, unless it was said before the end that is known already. */
@@ -64,21 +136,35 @@ function changeEntry(entry: UploadEntry, event: UploadEvent): UploadEntry {
     case 'begun':
       return entry.phase === 'waiting' ? { ...entry, phase: 'sending' } : entry;
     case 'sent':
-      return entry.phase === 'sending' ? { ...entry, sentBytes: Math.min(event.bytes, entry.sizeBytes) } : entry;
+      return entry.phase === 'sending' ? { ...entry, sentBytes: Math.min(event.bytes, entry.sizeBytes), keptBytes: event.keptBytes } : entry;
     case 'all-sent':
-      return entry.phase === 'sending' ? { ...entry, phase: 'storing', sentBytes: entry.sizeBytes } : entry;
-    case 'stored': {
+      return entry.phase === 'sending' ? { ...entry, phase: 'sent', paused: false, sentBytes: entry.sizeBytes, sent: { uploadId: event.uploadId, partHashes: event.partHashes } } : entry;
+    case 'storing':
+      return entry.phase === 'sent' ? { ...entry, phase: 'storing' } : entry;
+    case 'stored':
       // Even after a cancel that came too late: the part exists, and the person must see it.
-      return { ...entry, phase: 'stored', sentBytes: entry.sizeBytes, problem: undefined, part: takePart(event.part) };
-    }
+      return { ...entry, phase: 'stored', paused: false, sentBytes: entry.sizeBytes, problem: undefined, part: takePart(event.part), told: event.told };
+    case 'told':
+      return { ...entry, told: event.told };
     case 'failed':
-      return isUnfinished(entry) ? { ...entry, phase: 'failed', problem: event.problem } : entry;
+      return isUnfinished(entry) ? { ...entry, phase: 'failed', paused: false, problem: event.problem, ...(event.unsent ? { sent: undefined } : {}) } : entry;
     case 'cancelled':
-      return isUnfinished(entry) || entry.phase === 'failed' ? { ...entry, phase: 'cancelled', problem: undefined } : entry;
+      return isUnfinished(entry) || entry.phase === 'failed' ? { ...entry, phase: 'cancelled', paused: false, problem: undefined } : entry;
+    case 'paused':
+      return entry.phase === 'waiting' || entry.phase === 'sending' ? { ...entry, paused: event.paused } : entry;
     case 'tried-again':
-      return entry.phase === 'failed' || entry.phase === 'cancelled' ? { ...entry, phase: 'waiting', sentBytes: 0, problem: undefined } : entry;
+      if (entry.phase === 'failed' && entry.sent) return { ...entry, phase: 'sent', problem: undefined };
+      return entry.phase === 'failed' || entry.phase === 'cancelled' ? { ...entry, phase: 'waiting', sentBytes: 0, keptBytes: 0, sent: undefined, problem: undefined } : entry;
+    case 'stated':
+      return { ...entry, stated: { ...entry.stated, ...event.stated } };
+    case 'matched':
+      return { ...entry, matches: event.matches };
+    case 'decided':
+      return isUnfinished(entry) ? { ...entry, decision: event.decision } : entry;
+    case 'read-quickly':
+      return { ...entry, quick: event.quick };
     case 'run':
-      return takeNews(entry, { id: event.partId, run: event.run, problem: entry.part?.problem });
+      return entry.part ? takeNews(entry, { ...entry.part, id: event.partId, run: event.run }) : entry;
     case 'read':
       return takeNews(entry, takePart(event.part));
   }
@@ -88,43 +174,10 @@ export function changeEntries(entries: readonly UploadEntry[], event: UploadEven
   let changed = false;
   const next = entries.map((entry) => {
     if ('key' in event && entry.key !== event.key) return entry;
+    if (event.type === 'run' && entry.part?.id !== event.partId) return entry;
     const after = changeEntry(entry, event);
     changed ||= after !== entry;
     return after;
   });
   return changed ? next : entries;
-}
-
-const stageWords: Record<MeasuringRun['stage'], string> = {
-  waiting: 'Waiting to be measured',
-  hashing: 'Comparing with known files',
-  reading: 'Reading the file',
-  measuring: 'Measuring',
-  storing: 'Storing the figures',
-};
-
-/** Where an entry is, in words. */
-export function describeEntry(entry: UploadEntry): string {
-  switch (entry.phase) {
-    case 'waiting':
-      return 'Waiting';
-    case 'sending':
-      return 'Sending';
-    case 'storing':
-      return 'Sent, being stored';
-    case 'failed':
-      return 'Not sent';
-    case 'cancelled':
-      return 'Cancelled';
-    case 'stored':
-      if (entry.part?.run.state === 'done') return 'Measured';
-      if (entry.part?.run.state === 'failed') return 'Could not be measured';
-      return stageWords[entry.part?.run.stage ?? 'waiting'];
-  }
-}
-
-/** How far an entry is on its whole way, from 0 to 1; half of the way is sending, half measuring. */
-export function computeShareDone(entry: UploadEntry): number {
-  if (entry.phase === 'stored') return entry.part?.run.state === 'done' ? 1 : 0.5 + (entry.part?.run.progress ?? 0) / 2;
-  return entry.sizeBytes > 0 ? (entry.sentBytes / entry.sizeBytes) * 0.5 : 0;
 }

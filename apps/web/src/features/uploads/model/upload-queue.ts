@@ -1,17 +1,30 @@
-import type { CompleteUploadRequest, ServerEvent } from '@masswright/contracts';
+import { fileNameKey, type ServerEvent } from '@masswright/contracts';
+import pLimit from 'p-limit';
+import { getSentence, isProblem, isWorthAnotherTry } from '../../../lib/problem';
 import { createStore, useStore } from '../../../lib/store';
-import { readPartOfUpload } from '../api/uploads';
-import { changeEntries, isSettled, isUnfinished, type UploadEntry, type UploadEvent } from './upload-entry';
-import type { Transport } from './transport';
+import { completeUpload, findNameMatches, readPartOfUpload, stateSettings } from '../api/uploads';
+import type { DroppedFile } from '../../../lib/dropped-files';
+import { createPace } from './pace';
+import { createQuickReaders } from './quick-figures';
 import { createQuietWatch } from './quiet-watch';
+import type { Shipment, Transport } from './transport';
+import { changeEntries, isReadyToStore, isSettled, isToBeTold, isUnfinished, nothingStated, writeCompletion, writeIntakeSetting, type Decision, type Stated, type UploadEntry, type UploadEvent } from './upload-entry';
 
 /** Lives outside of React: files go on being sent while a person moves about in the application. */
 const entries = createStore<readonly UploadEntry[]>([]);
+/** Why what a person stated could not be stored; by project. */
+const statingProblem = createStore<{ projectId: string; sentence: string } | undefined>(undefined);
 const files = new Map<string, File>();
 let lastKey = 0;
+let lastDrop = 0;
 let transport: Promise<Transport> | undefined;
+const storing = pLimit(4);
+export const pace = createPace();
 
 const apply = (event: UploadEvent): void => entries.set((list) => changeEntries(list, event));
+const find = (key: string): UploadEntry | undefined => entries.get().find((entry) => entry.key === key);
+
+const quickReaders = createQuickReaders((key, quick) => apply({ type: 'read-quickly', key, quick }));
 
 function readAgain(partId: string): void {
   readPartOfUpload(partId).then(
@@ -27,25 +40,56 @@ function getTransport(): Promise<Transport> {
     (module) =>
       new module.Transport({
         onBegun: (key) => apply({ type: 'begun', key }),
-        onSent: (key, bytes) => apply({ type: 'sent', key, bytes }),
-        onAllSent: (key) => apply({ type: 'all-sent', key }),
-        onStored: (key, part) => {
-          apply({ type: 'stored', key, part });
-          // A small mesh is measured before this answer has arrived: what was said about it meanwhile found nobody here to hear it.
-          readAgain(part.id);
+        onSent: (key, bytes, keptBytes) => {
+          pace.note(key, bytes, keptBytes);
+          apply({ type: 'sent', key, bytes, keptBytes });
         },
-        onFailed: (key, problem) => apply({ type: 'failed', key, problem }),
+        onAllSent: (key, uploadId, partHashes) => {
+          pace.forget(key);
+          apply({ type: 'all-sent', key, uploadId, partHashes });
+          storeIfReady(key);
+        },
+        onFailed: (key, problem) => {
+          pace.forget(key);
+          apply({ type: 'failed', key, problem });
+        },
       }),
   );
   return transport;
 }
 
+/** Makes a part of what is wholly sent, unless the person has to decide something first. */
+function storeIfReady(key: string): void {
+  const entry = find(key);
+  if (!entry || !isReadyToStore(entry)) return;
+  apply({ type: 'storing', key });
+  void storing(async () => {
+    const ready = find(key);
+    if (!ready?.sent) return;
+    const told = ready.stated;
+    try {
+      const part = await completeUpload(ready.sent.uploadId, writeCompletion(ready));
+      apply({ type: 'stored', key, part, told });
+      void transport?.then((at) => at.forget(key));
+      files.delete(key);
+      // A small mesh is measured before this answer has arrived: what was said about it meanwhile found nobody here to hear it.
+      readAgain(part.id);
+      tellServer(ready.projectId);
+    } catch (error) {
+      const unsent = isProblem(error, 'upload-incomplete') || isProblem(error, 'conflict');
+      if (unsent) void transport?.then((at) => at.startOver(key));
+      apply({ type: 'failed', key, problem: getSentence(error), unsent });
+    }
+  });
+}
+
 function ship(key: string, how: 'send' | 'retry'): void {
-  const entry = entries.get().find((candidate) => candidate.key === key);
+  const entry = find(key);
   const file = files.get(key);
   if (!entry || !file) return;
+  const shipment: Shipment = { key, file, folder: entry.folder, projectId: entry.projectId };
   getTransport().then(
-    (ready) => ready[how]({ key, file, projectId: entry.projectId, setting: entry.setting }),
+    (ready) => ready[how](shipment),
     () => {
       transport = undefined;
       apply({ type: 'failed', key, problem: 'The part of this page that sends files could not be read. Check the connection and try again.' });
@@ -53,24 +97,137 @@ function ship(key: string, how: 'send' | 'retry'): void {
   );
 }
 
-export function addUploads(projectId: string, chosen: readonly File[], setting: CompleteUploadRequest['setting']): void {
-  const added = chosen.map((file): UploadEntry => {
-    const key = `upload-${(lastKey += 1)}`;
+/** Where a drop has two files of one name, the names of their parts tell their folders too. */
+function findPartName({ file, folder }: DroppedFile, all: readonly DroppedFile[]): string | undefined {
+  const key = fileNameKey(file.name);
+  if (folder === '' || all.filter((other) => fileNameKey(other.file.name) === key).length < 2) return undefined;
+  const name = file.name.replace(/\.gz$/i, '').replace(/\.(stl|obj)$/i, '');
+  return `${name} (${folder})`.slice(0, 200);
+}
+
+async function askForMatches(projectId: string, added: readonly UploadEntry[], triesLeft = 3): Promise<void> {
+  const tell = (matches: Awaited<ReturnType<typeof findNameMatches>>['matches']): void => {
+    for (const { key, fileName } of added) {
+      apply({ type: 'matched', key, matches: matches.filter((match) => match.fileName === fileName) });
+      storeIfReady(key);
+    }
+  };
+  try {
+    tell((await findNameMatches(projectId, [...new Set(added.map(({ fileName }) => fileName))])).matches);
+  } catch (error) {
+    if (triesLeft > 0 && isWorthAnotherTry(error)) setTimeout(() => void askForMatches(projectId, added, triesLeft - 1), 2_000);
+    else tell([]);
+  }
+}
+
+export interface AddedFile extends DroppedFile {
+  /** Known beforehand: the file replaces that of a part. */
+  decision?: Decision;
+}
+
+/** Begins to send files at once; what they are is asked meanwhile. Gives the drop's id. */
+export function addUploads(projectId: string, chosen: readonly AddedFile[]): string {
+  lastDrop += 1;
+  const dropId = `drop ${lastDrop}`;
+  const added = chosen.map((one): UploadEntry => {
+    lastKey += 1;
+    const key = `upload ${lastKey}`;
+    const { file, folder, decision } = one;
     files.set(key, file);
-    return { key, projectId, fileName: file.name, sizeBytes: file.size, setting, phase: 'waiting', sentBytes: 0 };
+    return {
+      key,
+      projectId,
+      dropId,
+      fileName: file.name,
+      folder,
+      sizeBytes: file.size,
+      partName: findPartName(one, chosen),
+      phase: 'waiting',
+      paused: false,
+      sentBytes: 0,
+      keptBytes: 0,
+      stated: nothingStated,
+      ...(decision ? { decision, matches: [] } : {}),
+    };
   });
   entries.set((list) => [...list, ...added]);
-  for (const { key } of added) ship(key, 'send');
+  void transport?.then((ready) => ready.forgetBegun(projectId));
+  void askForMatches(projectId, added.filter(({ matches }) => matches === undefined));
+  for (const { key } of added) {
+    const file = files.get(key);
+    if (file) quickReaders.read({ key, file });
+    ship(key, 'send');
+  }
+  return dropId;
+}
+
+/** What the person says of some files: of those that are parts by now, the server is told; the others take it with them. */
+export function stateUploads(keys: readonly string[], stated: Partial<Stated>): void {
+  const wanted = new Set(keys);
+  for (const key of wanted) apply({ type: 'stated', key, stated });
+  for (const projectId of new Set(entries.get().filter(({ key }) => wanted.has(key)).map((entry) => entry.projectId))) tellServer(projectId);
+}
+
+const telling = new Set<string>();
+
+/** Tells the server what was stated of files that are parts already; parts of which the same was said are told about together. */
+export function tellServer(projectId: string): void {
+  if (telling.has(projectId)) return;
+  const untold = entries.get().filter((entry) => entry.projectId === projectId && isToBeTold(entry));
+  const [first] = untold;
+  if (!first) {
+    statingProblem.set(undefined);
+    return;
+  }
+  const { stated } = first;
+  const same = untold.filter((entry) => JSON.stringify(entry.stated) === JSON.stringify(stated));
+  telling.add(projectId);
+  stateSettings(projectId, { parts: { ids: same.flatMap(({ part }) => part?.id ?? []) }, change: writeIntakeSetting(stated) }).then(
+    () => {
+      telling.delete(projectId);
+      for (const { key } of same) apply({ type: 'told', key, told: stated });
+      tellServer(projectId);
+    },
+    (error: unknown) => {
+      telling.delete(projectId);
+      statingProblem.set({ projectId, sentence: getSentence(error) });
+      if (isWorthAnotherTry(error)) setTimeout(() => tellServer(projectId), 4_000);
+    },
+  );
+}
+
+export function decideUploads(keys: readonly string[], decide: (entry: UploadEntry) => Decision): void {
+  for (const key of keys) {
+    const entry = find(key);
+    if (!entry) continue;
+    apply({ type: 'decided', key, decision: decide(entry) });
+    storeIfReady(key);
+  }
 }
 
 export function retryUpload(key: string): void {
   apply({ type: 'tried-again', key });
-  ship(key, 'retry');
+  if (find(key)?.phase === 'sent') storeIfReady(key);
+  else ship(key, 'retry');
 }
 
-export function cancelOneUpload(key: string): void {
-  apply({ type: 'cancelled', key });
-  void transport?.then((ready) => ready.cancel(key));
+export function pauseUploads(keys: readonly string[], paused: boolean): void {
+  for (const key of keys) {
+    apply({ type: 'paused', key, paused });
+    pace.forget(key);
+    void transport?.then((ready) => (paused ? ready.pause(key) : ready.resume(key)));
+  }
+}
+
+export function cancelUploads(keys: readonly string[]): void {
+  for (const key of keys) {
+    const entry = find(key);
+    if (!entry || entry.phase === 'storing' || entry.phase === 'stored') continue;
+    apply({ type: 'cancelled', key });
+    pace.forget(key);
+    quickReaders.drop(key);
+    void transport?.then((ready) => ready.cancel(key));
+  }
 }
 
 /** Takes what is over off the list; the parts themselves stay, of course. */
@@ -83,7 +240,7 @@ export function clearSettledUploads(): void {
 
 /** Before a person signs out: nothing of theirs may go on, or be seen, after that. */
 export function stopUploads(): void {
-  for (const entry of entries.get()) if (isUnfinished(entry)) cancelOneUpload(entry.key);
+  cancelUploads(entries.get().filter(isUnfinished).map(({ key }) => key));
   entries.set([]);
   files.clear();
 }
@@ -91,8 +248,8 @@ export function stopUploads(): void {
 export function applyRunToUploads({ partId, state, stage, progress }: Extract<ServerEvent, { type: 'run' }>): void {
   if (!entries.get().some((entry) => entry.part?.id === partId)) return;
   apply({ type: 'run', partId, run: { state, stage, progress } });
-  // The event says that it failed, the part says why.
-  if (state === 'failed') readAgain(partId);
+  // The event says that it has ended; the part says why, or where its bytes are already.
+  if (state === 'failed' || state === 'done') readAgain(partId);
 }
 
 /** After a gap in the event stream: asks about all that may have gone on meanwhile. */
@@ -104,7 +261,7 @@ const askBeforeLeaving = (event: BeforeUnloadEvent): void => event.preventDefaul
 
 // The listener is there only while it is needed: a page with one can't be kept by the browser for going back.
 entries.subscribe(() => {
-  if (entries.get().some(isUnfinished)) addEventListener('beforeunload', askBeforeLeaving);
+  if (entries.get().some((entry) => isUnfinished(entry) || isToBeTold(entry))) addEventListener('beforeunload', askBeforeLeaving);
   else removeEventListener('beforeunload', askBeforeLeaving);
 });
 
@@ -114,3 +271,4 @@ entries.subscribe(() => quietWatch.update(entries.get().flatMap((entry) => (entr
 
 export const useUploads = (): readonly UploadEntry[] => useStore(entries);
 export const useUnfinishedUploads = (): number => useUploads().filter(isUnfinished).length;
+export const useStatingProblem = (): { projectId: string; sentence: string } | undefined => useStore(statingProblem);

@@ -1,24 +1,59 @@
 import { countOf } from '../../../lib/plural';
-import { computeShareDone, isSettled, isUnfinished, type UploadEntry } from './upload-entry';
+import { awaitsDecision, isSettled, isUnfinished, type UploadEntry } from './upload-entry';
+import { computeShareDone } from './upload-words';
+
+export interface UploadSummary {
+  sentence: string;
+  share: number;
+  settled: boolean;
+  wrong: boolean;
+  /** Of what is still to be sent. */
+  bytesLeft: number;
+  sentBytes: number;
+  totalBytes: number;
+  sending: number;
+  paused: number;
+  undecided: number;
+  unitMissing: number;
+}
+
+/** Nothing was said of its unit, and it needs one. */
+export function lacksUnit(entry: UploadEntry): boolean {
+  if (entry.phase === 'cancelled' || entry.phase === 'failed') return false;
+  if (entry.decision?.as === 'revision' || entry.part?.isRevision) return false;
+  return entry.stated.lengthUnit === null && entry.part?.run.state !== 'failed';
+}
 
 /** All uploads in one line: how many are under way, and what became of the others. */
-export function summariseUploads(entries: readonly UploadEntry[]): { sentence: string; share: number; settled: boolean; wrong: boolean } {
-  const sending = entries.filter(isUnfinished).length;
+export function summariseUploads(entries: readonly UploadEntry[]): UploadSummary {
+  const unfinished = entries.filter(isUnfinished);
   const measuring = entries.filter((entry) => !isUnfinished(entry) && !isSettled(entry)).length;
   const failed = entries.filter((entry) => entry.phase === 'failed' || entry.part?.run.state === 'failed').length;
   const done = entries.filter((entry) => entry.part?.run.state === 'done').length;
+  const undecided = entries.filter(awaitsDecision).length;
+  const paused = unfinished.filter((entry) => entry.paused).length;
+  const sending = unfinished.length - paused;
   const words = [
     sending > 0 && `${sending} being sent`,
+    paused > 0 && `${paused} paused`,
     measuring > 0 && `${measuring} being measured`,
     done > 0 && `${done} measured`,
     failed > 0 && `${failed} with a problem`,
   ].filter((word) => word !== false);
   const counted = entries.filter((entry) => entry.phase !== 'cancelled' && entry.phase !== 'failed');
   const share = counted.length === 0 ? 1 : counted.reduce((sum, entry) => sum + (isSettled(entry) ? 1 : computeShareDone(entry)), 0) / counted.length;
+  const meshes = countOf(entries.length, 'mesh', 'meshes');
   return {
-    sentence: words.length > 0 ? `${countOf(entries.length, 'mesh', 'meshes')}: ${words.join(', ')}` : countOf(entries.length, 'mesh', 'meshes'),
+    sentence: words.length > 0 ? `${meshes}: ${words.join(', ')}` : meshes,
     share,
-    settled: sending === 0 && measuring === 0,
+    settled: unfinished.length === 0 && measuring === 0,
     wrong: failed > 0,
+    bytesLeft: unfinished.reduce((sum, entry) => sum + entry.sizeBytes - entry.sentBytes, 0),
+    sentBytes: counted.reduce((sum, entry) => sum + entry.sentBytes, 0),
+    totalBytes: counted.reduce((sum, entry) => sum + entry.sizeBytes, 0),
+    sending,
+    paused,
+    undecided,
+    unitMissing: entries.filter(lacksUnit).length,
   };
 }
