@@ -71,10 +71,11 @@ export class SettingsChangesService {
       requireEdit(actor);
       const change = await findSettingsChange(tx, changeId);
       if (change === undefined) throw notFound('change');
-      const reversal = await findReversal(tx, changeId);
-      if (reversal !== undefined) throw new AppError('conflict', `${reversal.byName} has taken this change back already. To have it again, take that back.`);
       const items = await listSettingsChangeItems(tx, changeId);
       const held = await holdParts(tx, items.map(({ partId }) => partId));
+      // Asked only now: of two at once, the second has waited for the first and learns of it.
+      const reversal = await findReversal(tx, changeId);
+      if (reversal !== undefined) throw new AppError('conflict', `${reversal.byName} has taken this change back already. To have it again, take that back.`);
       const settings = await findCurrentSettings(tx, items.map(({ partId }) => partId));
       const { restorable, left } = sortOutRestorable(items, held, settings);
       const steps = restorable.map(({ current, before }) => ({ current, after: restoreSetting(current, before) }));
