@@ -1,5 +1,5 @@
-/** So many looks at a corner that points inwards are allowed for each corner: enough for hundreds of those, and the time stays in proportion to the file. */
-const looksPerCorner = 512;
+/** So many looks at a corner that points inwards are allowed for each corner: enough for some two hundred of those, and the time stays in proportion to the file. */
+const looksPerCorner = 256;
 
 /**
  * Cuts a flat polygon that is not convex into triangles that do not overlap, by clipping ears (Meisters 1975, "Polygons have ears"): a corner that
@@ -16,16 +16,19 @@ export function cutPolygon(vertices: ArrayLike<number>, corners: ArrayLike<numbe
   const after = Int32Array.from({ length: count }, (_, k) => (k === count - 1 ? 0 : k + 1));
   const turn = (i: number, j: number, k: number): number => ((u[j] ?? 0) - (u[i] ?? 0)) * ((v[k] ?? 0) - (v[i] ?? 0)) - ((v[j] ?? 0) - (v[i] ?? 0)) * ((u[k] ?? 0) - (u[i] ?? 0));
   const turnAt = (k: number): number => turn(before[k] ?? 0, k, after[k] ?? 0);
-  const isSame = (i: number, k: number): boolean => u[i] === u[k] && v[i] === v[k];
   // Corners only ever change from pointing inwards to pointing outwards; those that did, and those cut off, are passed over.
   const inward = Array.from({ length: count }, (_, k) => k).filter((k) => turnAt(k) < 0);
   const triangles = new Uint32Array(3 * (count - 2));
   let looks = looksPerCorner * count;
 
   function isEar(i: number, j: number, k: number): boolean {
+    const iu = u[i] ?? 0, iv = v[i] ?? 0, ju = u[j] ?? 0, jv = v[j] ?? 0, ku = u[k] ?? 0, kv = v[k] ?? 0;
+    const leastU = Math.min(iu, ju, ku), greatestU = Math.max(iu, ju, ku), leastV = Math.min(iv, jv, kv), greatestV = Math.max(iv, jv, kv);
+    looks -= inward.length;
     for (const other of inward) {
-      looks -= 1;
-      if (other === i || other === j || other === k || after[other] === -1 || isSame(other, i) || isSame(other, j) || isSame(other, k)) continue;
+      const ou = u[other] ?? 0, ov = v[other] ?? 0;
+      if (ou < leastU || ou > greatestU || ov < leastV || ov > greatestV) continue;
+      if ((ou === iu && ov === iv) || (ou === ju && ov === jv) || (ou === ku && ov === kv) || after[other] === -1) continue;
       if (turn(i, j, other) >= 0 && turn(j, k, other) >= 0 && turn(k, i, other) >= 0 && turnAt(other) < 0) return false;
     }
     return true;

@@ -61,10 +61,10 @@ describe('a polygon that is not convex', () => {
   });
 
   it('with more inward corners than there is time for is fanned and says so, soon', () => {
-    const { facets, soundness } = measureMesh(encode(writePrism(comb(8000), 1)));
-    expect(facets).toBe(2 * (32_002 - 2) + 2 * 32_002);
+    const { facets, soundness } = measureMesh(encode(writePrism(comb(2000), 1)));
+    expect(facets).toBe(2 * (8002 - 2) + 2 * 8002);
     expect(soundness).toMatchObject({ closed: true, oriented: true, defensible: true });
-    expect(soundness.findings).toContainEqual({ kind: 'folded-polygons', count: 2, facets: [0, 32_000] });
+    expect(soundness.findings).toContainEqual({ kind: 'folded-polygons', count: 2, facets: [0, 8000] });
   });
 
   it('of any star-shaped outline, in any plane, is cut into triangles that cover it once', () => {
