@@ -1,45 +1,48 @@
 import { sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/pg-core';
-import { and, eq, inArray, lt } from 'drizzle-orm';
+import { and, desc, eq, inArray, lt } from 'drizzle-orm';
 import { axis, type Setting, type StoredSetting } from '@masswright/contracts';
 import { measurements, measuringRuns, parts, projects, revisions, settings, uploads, users } from '../schema';
 import type { Transaction } from '../tenancy/database';
 
-const nameOf = (column: typeof revisions.createdBy | typeof settings.changedBy | typeof settings.unitStatedBy) =>
-  sql<string>`coalesce((select ${users.name} from ${users} where ${users.id} = ${column}), '')`;
-
-const columns = {
-  part: { id: parts.id, projectId: parts.projectId, projectName: projects.name, number: parts.number, name: parts.name, deletedAt: parts.deletedAt },
-  revision: { id: revisions.id, ordinal: revisions.ordinal, reason: revisions.reason, createdAt: revisions.createdAt },
-  createdByName: nameOf(revisions.createdBy),
-  upload: { id: uploads.id, fileName: uploads.fileName, folder: uploads.folder, sizeBytes: uploads.sizeBytes, sha256: uploads.sha256 },
-  run: measuringRuns,
-  setting: settings,
-  settingChangedByName: nameOf(settings.changedBy),
-  unitStatedByName: nameOf(settings.unitStatedBy),
-  measurement: measurements,
-};
+const nameOf = (column: typeof revisions.createdBy) => sql<string>`coalesce((select ${users.name} from ${users} where ${users.id} = ${column}), '')`;
 
 function selectParts(tx: Transaction) {
+  // Looked up part by part: of a join with the greatest ordinal the planner makes a reading of all revisions that the organisation has.
+  const latest = tx
+    .select({ id: revisions.id, organisationId: revisions.organisationId, ordinal: revisions.ordinal, reason: revisions.reason, createdAt: revisions.createdAt, createdBy: revisions.createdBy, uploadId: revisions.uploadId })
+    .from(revisions)
+    .where(and(eq(revisions.organisationId, parts.organisationId), eq(revisions.partId, parts.id)))
+    .orderBy(desc(revisions.ordinal))
+    .limit(1)
+    .as('latest');
   return tx
-    .select(columns)
+    .select({
+      part: { id: parts.id, projectId: parts.projectId, projectName: projects.name, number: parts.number, name: parts.name, deletedAt: parts.deletedAt },
+      revision: { id: latest.id, ordinal: latest.ordinal, reason: latest.reason, createdAt: latest.createdAt, createdBy: latest.createdBy },
+      upload: { id: uploads.id, fileName: uploads.fileName, folder: uploads.folder, sizeBytes: uploads.sizeBytes, sha256: uploads.sha256 },
+      run: measuringRuns,
+      setting: settings,
+      measurement: measurements,
+    })
     .from(parts)
     .innerJoin(projects, and(eq(projects.organisationId, parts.organisationId), eq(projects.id, parts.projectId)))
-    .innerJoin(
-      revisions,
-      and(
-        eq(revisions.organisationId, parts.organisationId),
-        eq(revisions.partId, parts.id),
-        sql`${revisions.ordinal} = (select max(latest.ordinal) from ${revisions} latest where latest.organisation_id = ${parts.organisationId} and latest.part_id = ${parts.id})`,
-      ),
-    )
-    .innerJoin(uploads, and(eq(uploads.organisationId, revisions.organisationId), eq(uploads.id, revisions.uploadId)))
-    .innerJoin(settings, and(eq(settings.organisationId, revisions.organisationId), eq(settings.revisionId, revisions.id)))
-    .innerJoin(measuringRuns, and(eq(measuringRuns.organisationId, revisions.organisationId), eq(measuringRuns.revisionId, revisions.id)))
+    .innerJoinLateral(latest, sql`true`)
+    .innerJoin(uploads, and(eq(uploads.organisationId, latest.organisationId), eq(uploads.id, latest.uploadId)))
+    .innerJoin(settings, and(eq(settings.organisationId, latest.organisationId), eq(settings.revisionId, latest.id)))
+    .innerJoin(measuringRuns, and(eq(measuringRuns.organisationId, latest.organisationId), eq(measuringRuns.revisionId, latest.id)))
     .leftJoin(measurements, and(eq(measurements.organisationId, measuringRuns.organisationId), eq(measurements.id, measuringRuns.measurementId)));
 }
 
-type SelectedPart = Awaited<ReturnType<typeof selectParts>>[number];
+/** The names of people, by their ids; of those that the organisation may not see, none. Asked for apart: who may see whom is long to decide, row by row. */
+async function findNames(tx: Transaction, ids: readonly (string | null)[]): Promise<Map<string | null, string>> {
+  const wanted = [...new Set(ids)].filter((id) => id !== null);
+  if (wanted.length === 0) return new Map();
+  const rows = await tx.select({ id: users.id, name: users.name }).from(users).where(inArray(users.id, wanted));
+  return new Map(rows.map(({ id, name }) => [id, name]));
+}
+
+type SelectedPart = Awaited<ReturnType<typeof selectParts>>[number] & { createdByName: string; settingChangedByName: string; unitStatedByName: string };
 type MeasurementRow = typeof measurements.$inferSelect;
 
 /** A part with its latest revision, as read from the tables, and what was measured of the last revision before it. */
@@ -49,10 +52,14 @@ export type StoredPart = SelectedPart & { before: { measurement: MeasurementRow;
 export async function findParts(tx: Transaction, partIds: readonly string[]): Promise<StoredPart[]> {
   if (partIds.length === 0) return [];
   const rows = new Map((await selectParts(tx).where(inArray(parts.id, [...partIds]))).map((row) => [row.part.id, row]));
+  const names = await findNames(tx, [...rows.values()].flatMap(({ revision, setting }) => [revision.createdBy, setting.changedBy, setting.unitStatedBy]));
+  const named = (id: string | null): string => names.get(id) ?? '';
   const earlier = await findMeasuredBefore(tx, [...rows.values()].filter(({ revision }) => revision.ordinal > 1).map(({ part }) => part.id));
   return partIds.flatMap((id) => {
     const row = rows.get(id);
-    return row === undefined ? [] : [{ ...row, before: earlier.get(id) ?? null }];
+    if (row === undefined) return [];
+    const { revision, setting } = row;
+    return [{ ...row, createdByName: named(revision.createdBy), settingChangedByName: named(setting.changedBy), unitStatedByName: named(setting.unitStatedBy), before: earlier.get(id) ?? null }];
   });
 }
 
