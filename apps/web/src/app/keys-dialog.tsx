@@ -3,11 +3,18 @@ import { useEffect } from 'react';
 import { closeKeysDialog, openKeysDialog, useKeysDialog } from './keys-dialog-state';
 
 const keys: readonly { press: readonly string[]; effect: string }[] = [
-  { press: ['Ctrl', 'Z'], effect: 'Undo the last change of a setting' },
+  { press: ['/'], effect: 'Filter the parts' },
+  { press: ['↑', '↓'], effect: 'Go from part to part in the list; Page and Home, End go further' },
+  { press: ['Space'], effect: 'Select the part, or leave it out' },
+  { press: ['Shift', '↑', '↓'], effect: 'Select from here to there' },
+  { press: ['Ctrl', 'A'], effect: 'Select all that the filter leaves' },
+  { press: ['Enter'], effect: 'Open the part' },
+  { press: ['Del'], effect: 'Delete what is selected; it can be restored' },
+  { press: ['Ctrl', 'Z'], effect: 'Undo the last change' },
   { press: ['Ctrl', 'Shift', 'Z'], effect: 'Do it again' },
   { press: ['←', '→'], effect: 'Choose another axis, once the axis bar has the focus' },
   { press: ['Tab'], effect: 'Go to the next field or button' },
-  { press: ['Esc'], effect: 'Close a dialog or a menu' },
+  { press: ['Esc'], effect: 'Close a dialog or a menu, clear a selection' },
   { press: ['?'], effect: 'Show these keys' },
 ];
 

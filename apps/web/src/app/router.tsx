@@ -32,6 +32,8 @@ export function createRouter() {
                 { index: true, lazy: () => import('../routes/projects') },
                 { path: 'projects/:projectId', lazy: () => import('../routes/project') },
                 { path: 'projects/:projectId/parts/:partId', lazy: () => import('../routes/part') },
+                { path: 'materials', lazy: () => import('../routes/materials') },
+                { path: 'materials/:materialId', lazy: () => import('../routes/material') },
                 { path: 'people', lazy: () => import('../routes/people') },
                 { path: '*', element: <NotFound /> },
               ],

@@ -46,6 +46,7 @@ function Shell({ organisationId }: { organisationId: string }) {
             <NavLink to="/" end>
               Projects
             </NavLink>
+            <NavLink to="/materials">Materials</NavLink>
             <NavLink to="/people">People</NavLink>
           </nav>
           <AccountMenu />
