@@ -23,6 +23,18 @@ describe('welding corners by their bits', () => {
       expect(weld(corners.map(Math.fround)).vertexCount).toBe(30_000);
     }
   });
+  it('is as quick where the bits of the coordinates were chosen to be the same when folded, a quarter of a million times', () => {
+    // The upper half of each number undoes what the lower one adds: to a hash without secrets all of these are one, and finding each would pass by all before.
+    const fold = (k: number): number => {
+      const view = new DataView(new ArrayBuffer(8));
+      view.setUint32(0, 0x3ff00000 ^ (k << 3));
+      view.setUint32(4, k);
+      return view.getFloat64(0);
+    };
+    const points = 3 * 87_381;
+    const corners = Float64Array.from({ length: 3 * points }, (_, at) => fold(at % 3 === 0 ? Math.floor(at / 3) % 65_536 : at % 3 === 1 ? Math.floor(at / 3 / 65_536) : 0));
+    expect(weld(corners).vertexCount).toBe(points);
+  });
   it('gives back every corner, with as many vertices as there are different points', () => {
     const coordinate = fc.oneof(fc.constantFrom(0, -0, 1, -1, 0.1), fc.double({ noNaN: true, noDefaultInfinity: true }));
     fc.assert(

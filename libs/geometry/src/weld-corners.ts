@@ -20,9 +20,13 @@ export interface Welder {
 /** The table stays at most this full; linear probing slows down beyond. */
 const fullest = 0.7;
 
+/** Any 32 bits. Vertices are numbered as they first occur, so that nothing that comes out depends on them. */
+const drawSecret = (): number => Math.floor(Math.random() * 4_294_967_296) | 0;
+
 /**
  * Gives corners that agree in every bit the same vertex number (-0 counts as +0). Nothing is merged by nearness: a gap of one
- * unit in the last place stays a gap. Open addressing with linear probing, after a mixed hash of the coordinates' bits.
+ * unit in the last place stays a gap. Open addressing with linear probing, after a mixed hash of the coordinates' bits that begins with secrets: a file
+ * made so that all its vertices meet in one slot would otherwise take hours.
  *
  * @param mostFacets how many facets can come; bounds the growth of the arrays, allocates nothing
  * @param expectedFacets how many probably will; lets the table grow in fewer steps
@@ -34,14 +38,16 @@ export function createWelder(mostFacets: number, expectedFacets = mostFacets): W
   let slots = new Uint32Array(4096);
   let facetCount = 0;
   let vertexCount = 0;
+  const seed = drawSecret();
+  const factor = drawSecret() | 1;
   const key = new Float64Array(3);
   const keyBits = new Uint32Array(key.buffer);
 
-  /** Murmur3 (Appleby) over one word a coordinate: its upper half with the lower one turned by three, where binary32 has its last bits. */
+  /** Murmur3 (Appleby) over one word a coordinate: its upper half with the lower one times a secret, turned by three, where binary32 has its last bits. */
   function hashKey(): number {
-    let hash = 0x2545f491;
+    let hash = seed;
     for (let k = 0; k < 6; k += 2) {
-      const low = keyBits[k] ?? 0;
+      const low = Math.imul(keyBits[k] ?? 0, factor);
       let word = Math.imul((keyBits[k + 1] ?? 0) ^ ((low << 3) | (low >>> 29)), 0xcc9e2d51);
       word = Math.imul((word << 15) | (word >>> 17), 0x1b873593);
       hash ^= word;
