@@ -48,11 +48,13 @@ const sortKeys: Record<PartSort, SQL> = {
   changed: sql`${partSummaries.changedAt}`,
 };
 
-function orderBy({ sort, direction }: PartOrder): SQL {
-  return sql`sort_key ${sql.raw(direction === 'ascending' ? 'asc' : 'desc')} nulls last, ${sort === 'number' ? sql`part_id` : sql`number`}`;
-}
+/** These are always there. Said of the others only: "nulls last" keeps an index from giving a descending order. */
+const alwaysThere: readonly PartSort[] = ['number', 'name', 'file', 'state', 'changed'];
 
-const holds = (states: readonly PartState[]): SQL => sql`state = any(${sql.param([...states])}::text[])`;
+function orderBy({ sort, direction }: PartOrder): SQL {
+  const way = sql.raw(`${direction === 'ascending' ? 'asc' : 'desc'}${alwaysThere.includes(sort) ? '' : ' nulls last'}`);
+  return sort === 'number' ? sql`${sortKeys.number} ${way}` : sql`${sortKeys[sort]} ${way}, ${partSummaries.number}`;
+}
 
 export interface ListedParts {
   /** Of the stretch that was asked for, in its order. */
@@ -70,14 +72,13 @@ export async function listPartIds(
   query: PartFilter & PartOrder & { offset: number; limit: number },
 ): Promise<ListedParts> {
   const states = readStates(query);
+  const matching = sql`from ${partSummaries} where ${matchesText(projectId, query)}`;
+  const inStates = states.length === partStates.length ? sql`` : sql`and ${partSummaries.state} = any(${sql.param([...states])}::text[])`;
+  // Read twice, since what is counted needs no order and what is ordered may come out of an index; both see the same moment.
   const { rows } = await tx.execute<{ counts: Partial<Record<PartState, number>> | null; ids: string[]; deleted: number }>(sql`
-    with matching as materialized (
-      select ${partSummaries.partId} as part_id, ${partSummaries.number} as number, ${partSummaries.state} as state, ${sortKeys[query.sort]} as sort_key
-      from ${partSummaries} where ${matchesText(projectId, query)}
-    )
     select
-      (select json_object_agg(state, n) from (select state, count(*)::int as n from matching group by state) by_state) as counts,
-      array(select part_id from matching where ${holds(states)} order by ${orderBy(query)} limit ${query.limit} offset ${query.offset})::text[] as ids,
+      (select json_object_agg(state, n) from (select ${partSummaries.state} as state, count(*)::int as n ${matching} group by ${partSummaries.state}) by_state) as counts,
+      array(select ${partSummaries.partId} ${matching} ${inStates} order by ${orderBy(query)} limit ${query.limit} offset ${query.offset})::text[] as ids,
       (select count(*)::int from ${partSummaries} where ${isOfThisOrganisation(partSummaries)} and ${partSummaries.projectId} = ${projectId} and ${partSummaries.deletedAt} is not null) as deleted`);
   const [row] = rows;
   if (row === undefined) throw new Error('A select of one row gave none.');

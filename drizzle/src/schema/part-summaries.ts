@@ -36,6 +36,8 @@ export const partSummaries = pgTable(
   (table) => [
     // Every list is of one project: a test of uuids, which row-level security lets through to the index, leaves only its rows for the text search.
     index('part_summaries_project_index').on(table.organisationId, table.projectId, table.number),
+    // So that a list by name needs no sorting: comparing names as people count is slow, and it is the order asked for most.
+    index('part_summaries_name_index').on(table.organisationId, table.projectId, sql`(${table.nameKey} collate natural_order)`, table.number),
     index('part_summaries_file_index').on(table.organisationId, table.projectId, table.fileKey),
     // Every list says how many deleted parts there are beside it.
     index('part_summaries_deleted_index').on(table.organisationId, table.projectId).where(sql`${table.deletedAt} is not null`),

@@ -1,0 +1,1 @@
+CREATE INDEX "part_summaries_name_index" ON "part_summaries" USING btree ("organisation_id","project_id",("name_key" collate natural_order),"number");
