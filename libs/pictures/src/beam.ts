@@ -68,25 +68,33 @@ export function computeBeam(input: BeamInput): Picture {
   };
 }
 
-/** The beam without words, for a row of a table. */
-export function computeSmallBeam(minimum: number, maximum: number, centre: number, width = 30): Picture {
-  const height = 14;
-  const x = 1 + computeShare(minimum, maximum, centre) * (width - 2);
+/**
+ * Beams without words for a row of a table, side by side, one for each share: where the centre of mass lies in the box along an axis, from 0 to 1.
+ * One picture and not three: a list has hundreds of them.
+ */
+export function computeSmallBeams(shares: readonly number[], width = 30, gap = 7): Picture {
   return {
-    width,
-    height,
-    shapes: [
-      { kind: 'line', from: [1, 3], to: [width - 1, 3], stroke: 'ink', strokeWidth: 1.6 },
-      {
-        kind: 'polygon',
-        points: [
-          [x, 4],
-          [x + 4, 11],
-          [x - 4, 11],
-        ],
-        fill: 'ink',
-      },
-    ],
-    alternative: '',
+    width: shares.length * (width + gap) - gap,
+    height: smallHeight,
+    shapes: shares.flatMap((share, index) => drawSmallBeam(index * (width + gap), width, computeShare(0, 1, share))),
+    alternative: `Centre of mass in the box: ${shares.map((share, index) => `${'xyz'.charAt(index)} ${Math.round(share * 100)} %`).join(', ')}.`,
   };
+}
+
+const smallHeight = 14;
+
+function drawSmallBeam(left: number, width: number, share: number): Shape[] {
+  const x = left + 1 + share * (width - 2);
+  return [
+    { kind: 'line', from: [left + 1, 3], to: [left + width - 1, 3], stroke: 'ink', strokeWidth: 1.6 },
+    {
+      kind: 'polygon',
+      points: [
+        [x, 4],
+        [x + 4, 11],
+        [x - 4, 11],
+      ],
+      fill: 'ink',
+    },
+  ];
 }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { computeBeam, computePlateCells, computeShare, computeSmallBeam, computeTensorPlate, writeSvg, type Picture, type Shape } from './index';
+import { computeBeam, computePlateCells, computeShare, computeSmallBeams, computeTensorPlate, writeSvg, type Picture, type Shape } from './index';
 
 const ofKind = <Kind extends Shape['kind']>(picture: Picture, kind: Kind): Extract<Shape, { kind: Kind }>[] =>
   picture.shapes.filter((shape): shape is Extract<Shape, { kind: Kind }> => shape.kind === kind);
@@ -23,9 +23,15 @@ describe('beam', () => {
   it('says in words what it draws, with unit', () => {
     expect(beam(2.5).alternative).toBe('Along x the box reaches from -10.0 to 30.0 mm; the centre of mass is at 2.5 mm.');
   });
+  it('small beams stand side by side in one picture that says what it draws', () => {
+    const picture = computeSmallBeams([0, 0.5, 1], 30, 7);
+    expect(picture.width).toBe(104);
+    expect(ofKind(picture, 'polygon').map(({ points }) => points[0]?.[0])).toEqual([1, 52, 103]);
+    expect(picture.alternative).toBe('Centre of mass in the box: x 0 %, y 50 %, z 100 %.');
+  });
   it('a small beam stays within its picture at both ends', () => {
     for (const centre of [0, 1]) {
-      const points = ofKind(computeSmallBeam(0, 1, centre), 'polygon')[0]?.points ?? [];
+      const points = ofKind(computeSmallBeams([centre]), 'polygon')[0]?.points ?? [];
       expect(points[0]?.[0]).toBeGreaterThanOrEqual(1);
       expect(points[0]?.[0]).toBeLessThanOrEqual(29);
     }

@@ -104,9 +104,9 @@ function drawBody({ outline }: ScaleInput, x: number, y: number, width: number, 
     kind: 'rectangle' as const,
     x: x + column * stepX,
     y: y + row * stepY,
-    // A hair wider, so that neighbours leave no seam between them.
-    width: columns * stepX + 0.15,
-    height: rows * stepY + 0.15,
+    // A little larger, so that neighbours leave no seam between them.
+    width: columns * stepX + Math.min(0.5, stepX / 2),
+    height: rows * stepY + Math.min(0.5, stepY / 2),
     fill: 'verdigris' as const,
   }));
 }

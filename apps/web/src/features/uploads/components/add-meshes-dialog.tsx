@@ -50,38 +50,43 @@ interface BodyProps extends AddMeshesDialogProps {
   replacement: Replacement | undefined;
 }
 
+/** What is to be done in the dialog, in this order; the first that wants the person is shown, unless they look at another. */
+const steps = ['unit', 'names', 'files'] as const;
+type Step = (typeof steps)[number];
+
 function Body({ projectId, materials, others, excess, replacement }: BodyProps) {
   const all = useUploads();
   const entries = all.filter((entry) => entry.projectId === projectId);
   const [postponed, setPostponed] = useState<ReadonlySet<string>>(new Set());
   // Asked about together: files that are one drop's question stay in it until it is answered, also when their unit is chosen one by one.
   const [asking, setAsking] = useState<ReadonlySet<string>>(new Set());
-  const lacking = entries.filter((entry) => lacksUnit(entry) && !isRefusal(entry.quick) && !awaitsDecision(entry) && !postponed.has(entry.key));
-  const fresh = lacking.filter(({ key }) => !asking.has(key));
+  const [looksAt, setLooksAt] = useState<Step>();
+  const isAskable = (entry: UploadEntry): boolean => !isRefusal(entry.quick) && !awaitsDecision(entry) && entry.phase !== 'cancelled' && entry.decision?.as !== 'revision' && entry.part?.run.state !== 'failed';
+  const fresh = entries.filter((entry) => isAskable(entry) && lacksUnit(entry) && !postponed.has(entry.key) && !asking.has(entry.key));
   if (fresh.length > 0) setAsking(new Set([...asking, ...fresh.map(({ key }) => key)]));
-  const asked = entries.filter(({ key, phase }) => asking.has(key) && phase !== 'cancelled');
+  const asked = replacement ? [] : entries.filter((entry) => asking.has(entry.key) && isAskable(entry));
+  const undecided = entries.filter(awaitsDecision);
+  const wanted: Step = asked.length > 0 ? 'unit' : undecided.length > 0 ? 'names' : 'files';
+  const counts: Record<Step, number> = { unit: asked.length, names: undecided.length, files: entries.length };
+  const step = looksAt && counts[looksAt] > 0 ? looksAt : wanted;
+  const settle = (): void => {
+    setPostponed(new Set([...postponed, ...asked.map(({ key }) => key)]));
+    setAsking(new Set());
+    setLooksAt(undefined);
+  };
   const showsPicker = entries.length === 0 || replacement !== undefined;
-  const settle = (): void => setAsking(new Set());
   return (
     <>
       <div className="bp6-dialog-body add-meshes-body">
         {excess && <Notice tone="wrong">{excess}</Notice>}
         {others > 0 && <Others count={others} />}
         {showsPicker && <FilePicker onFiles={takeFiles} single={replacement !== undefined} />}
-        <Undecided entries={entries} />
-        {asked.length > 0 && !replacement && (
-          <UnitPanel
-            entries={asked}
-            materials={materials}
-            onAnswered={settle}
-            onLater={() => {
-              setPostponed(new Set([...postponed, ...asked.map(({ key }) => key)]));
-              settle();
-            }}
-          />
-        )}
+        {entries.length > 0 && <Progress entries={entries} />}
+        {entries.length > 0 && <StepBar step={step} counts={counts} onStep={setLooksAt} />}
+        {step === 'unit' && <UnitPanel entries={asked} materials={materials} onAnswered={settle} />}
+        {step === 'names' && <NameMatchQuestion entries={undecided} />}
         <StatingProblem projectId={projectId} />
-        {entries.length > 0 && <Files entries={entries} />}
+        {step === 'files' && entries.length > 0 && <Files entries={entries} />}
       </div>
       <DialogFooter
         actions={
@@ -97,22 +102,45 @@ function Body({ projectId, materials, others, excess, replacement }: BodyProps) 
   );
 }
 
-function Undecided({ entries }: { entries: readonly UploadEntry[] }) {
-  const undecided = entries.filter(awaitsDecision);
-  return undecided.length > 0 ? <NameMatchQuestion entries={undecided} /> : null;
+const stepTexts: Record<Step, (count: number) => string> = {
+  unit: () => 'Unit and material',
+  names: (count) => `Names that parts have, ${count}`,
+  files: (count) => `Files, ${count}`,
+};
+
+function StepBar({ step, counts, onStep }: { step: Step; counts: Record<Step, number>; onStep: (step: Step) => void }) {
+  const shown = steps.filter((one) => counts[one] > 0);
+  if (shown.length < 2) return null;
+  return (
+    <nav className="step-bar" aria-label="What is to be answered">
+      {shown.map((one) => (
+        <button key={one} type="button" className="step-bar-step" aria-current={one === step ? 'step' : undefined} onClick={() => onStep(one)}>
+          {stepTexts[one](counts[one])}
+        </button>
+      ))}
+    </nav>
+  );
+}
+
+function Progress({ entries }: { entries: readonly UploadEntry[] }) {
+  const summary = summariseUploads(entries);
+  const tick = useTick(summary.sending > 0);
+  return <UploadTotals entries={entries} summary={summary} tick={tick} />;
 }
 
 function Others({ count }: { count: number }) {
   return (
-    <Notice tone="plain">
-      {countOf(count, 'file')} of other kinds by {count === 1 ? 'its name' : 'their names'} {count === 1 ? 'was' : 'were'} left out.{' '}
+    <p className="others-line">
+      <span className="soft">
+        {countOf(count, 'file')} that {count === 1 ? 'is' : 'are'} neither STL nor OBJ by name {count === 1 ? 'was' : 'were'} left out.
+      </span>
       <Button size="small" onClick={takeOthers}>
         Send {count === 1 ? 'it' : 'them'} all the same
-      </Button>{' '}
-      <Button size="small" variant="minimal" onClick={leaveOthersOut}>
-        Leave out
       </Button>
-    </Notice>
+      <Button size="small" variant="minimal" onClick={leaveOthersOut}>
+        Dismiss
+      </Button>
+    </p>
   );
 }
 
@@ -130,14 +158,8 @@ function StatingProblem({ projectId }: { projectId: string }) {
 }
 
 function Files({ entries }: { entries: readonly UploadEntry[] }) {
-  const summary = summariseUploads(entries);
-  const tick = useTick(summary.sending > 0);
-  return (
-    <section className="add-meshes-files" aria-label="Files being added">
-      <UploadTotals entries={entries} summary={summary} tick={tick} />
-      <UploadList entries={entries} tick={tick} />
-    </section>
-  );
+  const tick = useTick(entries.some((entry) => entry.phase === 'sending'));
+  return <UploadList entries={entries} tick={tick} />;
 }
 
 function FooterWords({ entries }: { entries: readonly UploadEntry[] }) {

@@ -19,9 +19,7 @@ interface UnitPanelProps {
   /** Files of which nobody has said the unit. */
   entries: readonly UploadEntry[];
   materials: readonly Material[];
-  /** The person wants to answer later. */
-  onLater: () => void;
-  /** Everything is answered. */
+  /** Everything is answered, or is to be answered later. */
   onAnswered: () => void;
 }
 
@@ -39,7 +37,7 @@ function readAnswer({ material, text }: DensityAnswer, materials: readonly Mater
 }
 
 /** The one question of a drop: in which unit the meshes are; with what each answer would mean before the person's eyes. */
-export function UnitPanel({ entries, materials, onLater, onAnswered }: UnitPanelProps) {
+export function UnitPanel({ entries, materials, onAnswered }: UnitPanelProps) {
   const [unit, setUnit] = useState<LengthUnit>();
   const [density, setDensity] = useState<DensityAnswer>({ material: null, text: '' });
   const [byFile, setByFile] = useState<readonly string[]>();
@@ -56,7 +54,7 @@ export function UnitPanel({ entries, materials, onLater, onAnswered }: UnitPanel
   const answerLater = (): void => {
     if (error !== undefined) return setAsked(true);
     if (stated.material || stated.densityKgM3 !== null) stateUploads(keys, stated);
-    onLater();
+    onAnswered();
   };
   const decideByFile = (): void => {
     if (error !== undefined) return setAsked(true);
@@ -78,7 +76,7 @@ export function UnitPanel({ entries, materials, onLater, onAnswered }: UnitPanel
       </p>
       <div className="unit-panel-material">
         <div className="unit-panel-field">
-          <span className="caption">Material</span>
+          <span className="unit-panel-label">Material</span>
           <MaterialPicker label="Material" materials={materials} value={density.material} onChange={(material) => setDensity({ material: material && { id: material.id, name: material.name }, text: '' })} />
         </div>
         <div className="unit-panel-field">

@@ -32,10 +32,12 @@ export function summariseUploads(entries: readonly UploadEntry[]): UploadSummary
   const done = entries.filter((entry) => entry.part?.run.state === 'done').length;
   const undecided = entries.filter(awaitsDecision).length;
   const paused = unfinished.filter((entry) => entry.paused).length;
-  const sending = unfinished.length - paused;
+  const waiting = unfinished.filter((entry) => entry.phase === 'sent' && awaitsDecision(entry)).length;
+  const sending = unfinished.length - paused - waiting;
   const words = [
     sending > 0 && `${sending} being sent`,
     paused > 0 && `${paused} paused`,
+    waiting > 0 && `${waiting} sent and waiting for you`,
     measuring > 0 && `${measuring} being measured`,
     done > 0 && `${done} measured`,
     failed > 0 && `${failed} with a problem`,
