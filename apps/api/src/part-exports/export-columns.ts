@@ -49,7 +49,8 @@ const columns: Record<ExportColumn, Columns> = {
     ...Object.fromEntries((['xx', 'yy', 'zz', 'xy', 'yz', 'zx'] as const).map((element) => [`inertia_${element}_kg_m2`, ofRecord((record) => tensor(record)?.[element])])),
     tensor_point: said('centre of mass', tensor),
     tensor_axes: said('mesh frame', tensor),
-    off_diagonals: ofRecord((record) => tensor(record)?.offDiagonals),
+    // Begun with a name: a text that begins with a minus sign is a formula to a spreadsheet.
+    off_diagonals: ofRecord((record) => tensor(record) && `inertia_xy = ${tensor(record)?.offDiagonals}`),
   },
   moments: {
     principal_moment_1_kg_m2: ofRecord(({ principalMomentsKgM2 }) => principalMomentsKgM2?.[0]),

@@ -22,7 +22,7 @@ export class PartExportsController {
   })
   async export(@SignedIn() context: SignedInContext, @Param('projectId', { schema: id }) projectId: string, @Query({ schema: exportQuery }) query: ExportQuery, @Res() response: Response): Promise<void> {
     const { projectName, pieces } = await this.service.begin(context, projectId, query);
-    const described = { fileName: makeFileName(`${projectName}, parts`, query.format), mediaType: mediaTypes[query.format] };
+    const described = { fileName: makeFileName(`Parts of ${projectName}`, query.format), mediaType: mediaTypes[query.format] };
     await sendPieces(response, pieces, () => describeAttachment(response, described));
   }
 }
