@@ -5,6 +5,7 @@ import { useParams } from 'react-router-dom';
 import { Failure } from '../components/failure';
 import { Loading } from '../components/loading';
 import { Crumbs, PageHeading } from '../components/page';
+import { PageDrop } from '../components/page-drop';
 import { PrintLine } from '../components/print-line';
 import { useMaterialItems } from '../features/materials/api/materials';
 import { usePart } from '../features/parts/api/parts';
@@ -30,7 +31,7 @@ function PartPage({ part }: { part: Part }) {
   const materials = useMaterialItems();
   const [renaming, setRenaming] = useState(false);
   return (
-    <>
+    <PageDrop onFiles={part.can.edit ? (files) => openUploadDialog(part.projectId, files) : undefined}>
       <Crumbs
         crumbs={[
           { label: session.organisation.name, to: '/' },
@@ -61,6 +62,6 @@ function PartPage({ part }: { part: Part }) {
       <PartStatement part={part} editor={editor} state={state} ownName={session.user.name} materials={materials} onReplace={part.can.edit ? () => openUploadDialog(part.projectId, [], { partId: part.id, number: part.number, name: part.name }) : undefined} />
       <AddMeshesDialog projectId={part.projectId} materials={materials} />
       <RenamePartDialog part={part} isOpen={renaming} onClose={() => setRenaming(false)} />
-    </>
+    </PageDrop>
   );
 }
