@@ -23,6 +23,7 @@ interface Expectation {
   /** Nobody signed in. */
   visitor: number;
   body?: (world: World) => unknown;
+  query?: string;
   /** Fills the address's parameters with things of the organisation, made anew for each try where the route uses them up. */
   parameters?: (world: World) => Promise<Record<string, string>> | Record<string, string>;
 }
@@ -47,6 +48,12 @@ const freshMember = async (world: World) => ({ userId: (await addPerson(world, '
 const freshInvitation = async (world: World) => {
   const { id } = await world.administrator.expect<{ id: string }>('POST', '/invitations', { email: `${randomUUID()}@halyard.example`, role: 'reader' });
   return { invitationId: id };
+};
+const alloy = { name: 'Alloy', group: 'aluminium', densityKgM3: 2700, densitySpreadKgM3: 27, spreadBasis: 'judgement', source: '' };
+const freshMaterial = async (world: World) => ({ materialId: (await world.administrator.expect<{ id: string }>('POST', '/materials', { ...alloy, name: randomUUID() })).id });
+const freshChange = async (world: World) => {
+  const request = { parts: { ids: [world.partId] }, change: { densityKgM3: 1 + Math.random() } };
+  return { changeId: (await world.administrator.expect<{ id: string }>('POST', `/projects/${world.projectId}/setting-changes`, request)).id };
 };
 const openUpload = async (world: World) => ({ uploadId: (await world.administrator.expect<{ id: string }>('POST', `/projects/${world.projectId}/uploads`, { fileName: 'a.stl', sizeBytes: 100 })).id });
 const sentUpload = async (world: World) => ({ uploadId: (await world.administrator.send(world.projectId, 'block.stl', block([0, 0, 0], [1, 1, 1]))).id });
@@ -76,6 +83,23 @@ const expected: Record<string, Expectation> = {
   'get /api/v1/projects/:projectId': { ...everyone, foreign: 404, parameters: project },
   'patch /api/v1/projects/:projectId': { ...editors(200), foreign: 404, body: () => ({ name: randomUUID() }), parameters: project },
   'get /api/v1/projects/:projectId/parts': { ...everyone, foreign: 404, parameters: project },
+  'get /api/v1/projects/:projectId/parts/export': { ...everyone, foreign: 404, parameters: project, query: 'format=csv' },
+  'post /api/v1/projects/:projectId/setting-changes': {
+    ...editors(201),
+    foreign: 404,
+    body: ({ partId }) => ({ parts: { ids: [partId] }, change: { densityKgM3: 1 + Math.random() } }),
+    parameters: project,
+  },
+  'post /api/v1/setting-changes/:changeId/undo': { ...editors(201), foreign: 404, parameters: freshChange },
+  // Nothing is meant, so that the walk goes on with its part; who is allowed is told that nothing was moved.
+  'post /api/v1/projects/:projectId/part-deletions': { ...editors(201), foreign: 404, body: () => ({ parts: { filter: { text: 'nothing' } } }), parameters: project },
+  'post /api/v1/projects/:projectId/part-restorations': { ...editors(201), foreign: 404, body: () => ({ parts: { filter: { text: 'nothing' } } }), parameters: project },
+  'get /api/v1/materials': everyone,
+  'post /api/v1/materials': { ...editors(201), body: () => ({ ...alloy, name: randomUUID() }) },
+  'get /api/v1/materials/export': everyone,
+  'post /api/v1/materials/import': { ...editors(200), body: () => ({ csv: `name,density_kg_m3,spread_kg_m3\n${randomUUID()},1,0`, rehearse: false }) },
+  'patch /api/v1/materials/:materialId': { ...editors(200), foreign: 404, body: () => ({ version: 1, densityKgM3: 2 }), parameters: freshMaterial },
+  'get /api/v1/materials/:materialId/parts': { ...everyone, foreign: 404, parameters: freshMaterial },
   'post /api/v1/projects/:projectId/uploads': { ...editors(201), foreign: 404, body: () => ({ fileName: 'a.stl', sizeBytes: 100 }), parameters: project },
   'get /api/v1/projects/:projectId/uploads': { ...editors(200), foreign: 404, parameters: project },
   'post /api/v1/projects/:projectId/name-matches': { ...editors(200), foreign: 404, body: () => ({ fileNames: ['block.stl'] }), parameters: project },
@@ -151,7 +175,7 @@ async function fingerprint(): Promise<string> {
 async function statusOf(user: ApiUser, route: string, expectation: Expectation, given?: Record<string, string>): Promise<number> {
   const [method = '', template = ''] = route.split(' ');
   const parameters = given ?? (await expectation.parameters?.(world)) ?? {};
-  const path = template.replace(/:(\w+)/g, (_, name: string) => parameters[name] ?? '');
+  const path = template.replace(/:(\w+)/g, (_, name: string) => parameters[name] ?? '') + (expectation.query === undefined ? '' : `?${expectation.query}`);
   const body = expectation.body?.(world);
   const headers = {
     Origin: world.api.url,
@@ -219,7 +243,7 @@ describe('the walk', () => {
 
   it('lists of another organisation hold nothing of this one', async () => {
     const ours = [world.projectId, world.administrator.session?.organisation.id, world.memberId, world.administrator.session?.user.email];
-    for (const path of ['/projects', '/members', '/invitations', '/session']) {
+    for (const path of ['/projects', '/members', '/invitations', '/session', '/materials']) {
       const text = JSON.stringify(await people.foreign.get(path));
       for (const thing of ours) expect(text.includes(thing ?? 'nothing to look for'), path).toBe(false);
     }
@@ -227,7 +251,7 @@ describe('the walk', () => {
 
   it('an id that is none, and one that nobody has, are not found', async () => {
     for (const id of ['none', randomUUID(), '..%2f..%2fsession']) {
-      for (const path of [`/projects/${id}`, `/parts/${id}`, `/uploads/${id}`]) {
+      for (const path of [`/projects/${id}`, `/projects/${id}/parts`, `/parts/${id}`, `/uploads/${id}`, `/materials/${id}/parts`]) {
         expect((await people.administrator.ask('GET', path)).status, path).toBe(404);
       }
     }
