@@ -6,12 +6,13 @@ export interface DemoMesh {
   fileName: string;
   partName: string;
   bytes: Uint8Array<ArrayBuffer>;
-  setting: { lengthUnit: LengthUnit; densityKgM3: number };
+  setting: { lengthUnit: LengthUnit; material: { id: string } };
 }
 
-const aluminium = 2700;
-const steel = 7850;
-const acetal = 1410;
+/** Of the library that every installation has. */
+const aluminium = 'al-6061-t6';
+const steel = 'steel-mild';
+const acetal = 'pom';
 
 /** Nine coordinates a facet, in the order of the mesh. */
 function cornersOf(solid: Manifold): number[] {
@@ -66,7 +67,7 @@ export async function makeDemoMeshes(): Promise<DemoMesh[]> {
   const module = await createModule();
   module.setup();
   const reel = modelReel(module);
-  const mm = (densityKgM3: number) => ({ lengthUnit: 'mm' as const, densityKgM3 });
+  const mm = (material: string) => ({ lengthUnit: 'mm' as const, material: { id: material } });
   const seat = cornersOf(reel.seat);
   const spindle = writeBinaryStl(cornersOf(reel.spindle));
   return [
