@@ -1,4 +1,6 @@
-/** "1 part", "2 parts". */
+import { formatCount } from '@masswright/units';
+
+/** "1 part", "2 parts", thousands set off. */
 export function countOf(count: number, one: string, many = `${one}s`): string {
-  return `${count} ${count === 1 ? one : many}`;
+  return `${formatCount(count)} ${count === 1 ? one : many}`;
 }

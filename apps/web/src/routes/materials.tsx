@@ -54,7 +54,7 @@ export function Component() {
         beside={<span className="soft">{countOf(data.items.length - archivedCount, 'material')}, each with how far its density may be off</span>}
         actions={
           <>
-            <a className="bp6-button" href={materialsExportHref} download>
+            <a className="bp6-button material-export" href={materialsExportHref} download>
               Export as CSV
             </a>
             {data.can.create && <Button onClick={() => setAsked({ kind: 'import' })}>Import a CSV</Button>}

@@ -1,4 +1,5 @@
 import { Button } from '@blueprintjs/core';
+import type { PartRow } from '@masswright/contracts';
 import { useState } from 'react';
 import { useParams } from 'react-router-dom';
 import { Failure } from '../components/failure';
@@ -21,6 +22,8 @@ export function Component() {
   return <ProjectPage key={projectId} projectId={projectId} />;
 }
 
+const replaceFile = ({ id, projectId, number, name }: PartRow): void => openUploadDialog(projectId, [], { partId: id, number, name });
+
 function ProjectPage({ projectId }: { projectId: string }) {
   const session = useSignedIn();
   const { data: project, error, refetch } = useProject(projectId);
@@ -37,24 +40,26 @@ function ProjectPage({ projectId }: { projectId: string }) {
   ) : undefined;
   return (
     <PageDrop onFiles={can.addMeshes ? (files) => openUploadDialog(projectId, files) : undefined}>
-      <Crumbs crumbs={[{ label: session.organisation.name, to: '/' }, { label: project.name }]} />
-      <PageHeading
-        title={project.name}
-        beside={<span className="soft">{project.parts === 0 ? 'No parts yet' : countOf(project.parts, 'part')}</span>}
-        actions={
-          <>
-            {can.rename && <Button onClick={() => setRenaming(true)}>Rename</Button>}
-            {add}
-          </>
-        }
-      />
-      <PartList
-        projectId={projectId}
-        canEdit={can.addMeshes}
-        materials={materials}
-        onReplace={can.addMeshes ? (row) => openUploadDialog(projectId, [], { partId: row.id, number: row.number, name: row.name }) : undefined}
-        empty={<NoParts projectId={projectId} add={add} />}
-      />
+      <div className="project-page">
+        <Crumbs crumbs={[{ label: session.organisation.name, to: '/' }, { label: project.name }]} />
+        <PageHeading
+          title={project.name}
+          beside={<span className="soft">{project.parts === 0 ? 'No parts yet' : countOf(project.parts, 'part')}</span>}
+          actions={
+            <>
+              {can.rename && <Button onClick={() => setRenaming(true)}>Rename</Button>}
+              {add}
+            </>
+          }
+        />
+        <PartList
+          projectId={projectId}
+          canEdit={can.addMeshes}
+          materials={materials}
+          onReplace={can.addMeshes ? replaceFile : undefined}
+          empty={<NoParts projectId={projectId} add={add} />}
+        />
+      </div>
       <AddMeshesDialog projectId={projectId} materials={materials} />
       <ProjectNameDialog
         title="Rename the project"

@@ -3,6 +3,7 @@ import { queryOptions, useQueries, useQueryClient, type QueryClient } from '@tan
 import { useState } from 'react';
 import { api, unwrapAs } from '../../../lib/api';
 import { writeQuery, type ListQuery } from '../model/list-address';
+import { computeColumnFractions, joinColumnFractions, type ColumnFractions } from '../model/row-figures';
 import { findStretches, placeRow, stretchRows } from '../model/stretches';
 import { partsKey } from './keys';
 
@@ -29,30 +30,46 @@ export type ListHead = Pick<PartList, 'total' | 'counts' | 'deleted'>;
 export interface ReadList {
   query: ListQuery;
   head: ListHead | undefined;
+  fractions: ColumnFractions;
   getRow: (index: number) => PartRow | undefined;
+  countRead: () => number;
   /** All that are read, with their places. */
   listRead: () => { index: number; row: PartRow }[];
 }
 
+/** A stretch is read anew as a whole, so what follows from it is worked out once: there may be a hundred, and each has a hundred rows. */
+const fractionsOfStretch = new WeakMap<PartList, ColumnFractions>();
+function findFractions(list: PartList): ColumnFractions {
+  const known = fractionsOfStretch.get(list) ?? computeColumnFractions(list.items);
+  fractionsOfStretch.set(list, known);
+  return known;
+}
+
 function openRead(client: QueryClient, projectId: string, query: ListQuery): ReadList {
-  const key = listKey(projectId, query);
-  const stretchOf = (stretch: number): PartList | undefined => client.getQueryData<PartList>([...key, stretch]);
-  const entries = client.getQueryCache().findAll({ queryKey: key }).filter(({ state }) => state.data !== undefined);
-  const latest = entries.reduce<(typeof entries)[number] | undefined>((best, entry) => (best && best.state.dataUpdatedAt >= entry.state.dataUpdatedAt ? best : entry), undefined);
+  const stretches = client
+    .getQueryCache()
+    .findAll({ queryKey: listKey(projectId, query) })
+    .flatMap(({ queryKey, state }) => (state.data === undefined ? [] : [{ stretch: Number(queryKey.at(-1)), list: state.data as PartList, at: state.dataUpdatedAt }]));
+  const lists = new Map(stretches.map(({ stretch, list }) => [stretch, list]));
+  const latest = stretches.reduce<(typeof stretches)[number] | undefined>((best, one) => (best && best.at >= one.at ? best : one), undefined);
   return {
     query,
-    head: latest?.state.data as PartList | undefined,
+    head: latest?.list,
+    fractions: joinColumnFractions(stretches.map(({ list }) => findFractions(list))),
     getRow: (index) => {
       const { stretch, place } = placeRow(index);
-      return stretchOf(stretch)?.items[place];
+      return lists.get(stretch)?.items[place];
     },
+    countRead: () => stretches.reduce((sum, { list }) => sum + list.items.length, 0),
     listRead: () =>
-      entries
-        .map(({ queryKey, state }) => ({ stretch: Number(queryKey.at(-1)), items: (state.data as PartList).items }))
-        .sort((one, other) => one.stretch - other.stretch)
-        .flatMap(({ stretch, items }) => items.map((row, place) => ({ index: stretch * stretchRows + place, row }))),
+      [...lists]
+        .sort(([one], [other]) => one - other)
+        .flatMap(([stretch, { items }]) => items.map((row, place) => ({ index: stretch * stretchRows + place, row }))),
   };
 }
+
+/** Rows are looked up in the cache and not in the results, so what changes there must be told. */
+const notifyOnChangeProps: ('data' | 'error')[] = ['data', 'error'];
 
 /**
  * The rows of a project's list that are looked at, from `first` to `last`; others are read as they come into view. While the first answer to
@@ -64,7 +81,7 @@ export function usePartList(projectId: string, query: ListQuery, range: { first:
   const isShown = writeQuery(shown).toString() === writeQuery(query).toString();
   const before = openRead(client, projectId, shown);
   const wanted = isShown ? findStretches(range.first, range.last, before.head?.total) : [0];
-  const results = useQueries({ queries: wanted.map((stretch) => stretchQuery(projectId, query, stretch)) });
+  const results = useQueries({ queries: wanted.map((stretch) => ({ ...stretchQuery(projectId, query, stretch), notifyOnChangeProps })) });
   if (!isShown && results[0]?.data) setShown(query);
   const failed = results.find(({ error }) => error !== null);
   return {

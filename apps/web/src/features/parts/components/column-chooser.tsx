@@ -1,5 +1,5 @@
 import { Button } from '@blueprintjs/core';
-import { useId, useState, type DragEvent } from 'react';
+import { memo, useId, useState, type DragEvent } from 'react';
 import { PanelButton } from '../../../components/menu-button';
 import { columnIds, getColumn, isStandard, standardColumns, type ColumnId } from '../model/columns';
 
@@ -80,6 +80,6 @@ function Choice({ columns, onChange }: ColumnChooserProps) {
 }
 
 /** Which columns the list has, and in which order. */
-export function ColumnChooser(props: ColumnChooserProps) {
-  return <PanelButton label="Columns">{() => <Choice {...props} />}</PanelButton>;
-}
+export const ColumnChooser = memo(function ColumnChooser({ columns, onChange }: { columns: readonly ColumnId[]; onChange: (change: { columns: readonly ColumnId[] }) => void }) {
+  return <PanelButton label="Columns">{() => <Choice columns={columns} onChange={(chosen) => onChange({ columns: chosen })} />}</PanelButton>;
+});

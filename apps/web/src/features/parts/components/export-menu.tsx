@@ -1,10 +1,11 @@
+import { memo } from 'react';
 import { formatCount } from '@masswright/units';
 import { MenuButton } from '../../../components/menu-button';
 import { chooseExportColumns } from '../model/columns';
 import { writeQuery, type ListView } from '../model/list-address';
 
 /** Saves what the filter leaves, in the order that is shown: as a table with the columns that are shown, or as whole records. */
-export function ExportMenu({ projectId, view, total }: { projectId: string; view: ListView; total: number }) {
+export const ExportMenu = memo(function ExportMenu({ projectId, view, total }: { projectId: string; view: ListView; total: number }) {
   const address = (format: 'csv' | 'json'): string => {
     const query = writeQuery(view);
     query.set('format', format);
@@ -23,4 +24,4 @@ export function ExportMenu({ projectId, view, total }: { projectId: string; view
       ]}
     />
   );
-}
+});

@@ -1,5 +1,5 @@
 import type { PartRow } from '@masswright/contracts';
-import { computeSmallBeam } from '@masswright/pictures';
+import { computeSmallBeams } from '@masswright/pictures';
 import { formatFigure, getLengthUnit } from '@masswright/units';
 import { Link } from 'react-router-dom';
 import { AlignedFigure } from '../../../components/figure';
@@ -23,17 +23,6 @@ interface PartCellProps {
 
 const partPath = (row: PartRow): string => `/projects/${row.projectId}/parts/${row.id}`;
 const Missing = () => <span className="soft">–</span>;
-
-function Beams({ balance }: { balance: readonly number[] }) {
-  const words = balance.map((share, index) => `${'xyz'.charAt(index)} ${Math.round(share * 100)} %`).join(', ');
-  return (
-    <span className="part-beams" role="img" aria-label={`Centre of mass in the box: ${words}`}>
-      {balance.map((share, index) => (
-        <PictureView key={index} picture={computeSmallBeam(0, 1, share)} />
-      ))}
-    </span>
-  );
-}
 
 function StateCell({ row }: { row: PartRow }) {
   const { run } = row.revision;
@@ -101,7 +90,7 @@ export function PartCell({ row, column, fractions, tabIndex }: PartCellProps) {
       return size === undefined ? <Missing /> : <span className="figure" title={size}>{size}</span>;
     }
     case 'beam':
-      return row.balance ? <Beams balance={row.balance} /> : <Missing />;
+      return row.balance ? <PictureView picture={computeSmallBeams(row.balance)} /> : <Missing />;
     case 'soundness':
       return <SoundnessCell row={row} />;
     case 'state':

@@ -1,6 +1,6 @@
 import { InputGroup } from '@blueprintjs/core';
 import { formatCount } from '@masswright/units';
-import { useEffect, useRef, useState } from 'react';
+import { memo, useEffect, useRef, useState } from 'react';
 import type { ListHead } from '../api/part-list';
 import type { ListView } from '../model/list-address';
 import { listChips } from '../model/state-words';
@@ -74,7 +74,7 @@ const nobody: ListHead = {
 };
 
 /** Narrows the list by text and by state. */
-export function PartFilterBar({ view, head, onChange, onText }: PartFilterProps) {
+export const PartFilterBar = memo(function PartFilterBar({ view, head, onChange, onText }: PartFilterProps) {
   const chips = listChips(head ?? nobody, view);
   return (
     <div className="part-filter">
@@ -97,4 +97,4 @@ export function PartFilterBar({ view, head, onChange, onText }: PartFilterProps)
       </div>
     </div>
   );
-}
+});

@@ -4,7 +4,8 @@ import { findFigureRun, getColumn, type ColumnId } from '../model/columns';
 import type { ColumnFractions } from '../model/row-figures';
 import { rowHeight } from '../model/use-virtual-rows';
 import { PartCell } from './part-cell';
-import { findRowNote, RowNote, type RowActions } from './row-note';
+import type { RowActions } from '../model/use-row-actions';
+import { findRowNote, RowNote } from './row-note';
 
 interface PartGridRowProps {
   id: string;

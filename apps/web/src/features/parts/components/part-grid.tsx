@@ -4,14 +4,13 @@ import type { ReadList } from '../api/part-list';
 import { getColumn, type ColumnId } from '../model/columns';
 import { writeQuery } from '../model/list-address';
 import { findPlace, keepPlace } from '../model/list-place';
-import { computeColumnFractions } from '../model/row-figures';
 import { countSelected, isSelected, type Selection } from '../model/selection';
 import { useGridPosition } from '../model/use-grid-position';
 import { useIsPrinting } from '../model/use-is-printing';
 import { rowHeight, useVirtualRows, type RowRange } from '../model/use-virtual-rows';
 import { PartGridHead } from './part-grid-head';
 import { PartGridRow } from './part-grid-row';
-import type { RowActions } from './row-note';
+import type { RowActions } from '../model/use-row-actions';
 import './part-grid.css';
 
 interface PartGridProps {
@@ -39,6 +38,14 @@ function writeTracks(columns: readonly ColumnId[]): CSSProperties {
   return { '--tracks': `${selectWidth}px ${tracks.join(' ')}`, '--least': `${least}px` } as CSSProperties;
 }
 const selectWidth = 54;
+
+/** The same object for as long as it says the same, so that rows needn't be drawn again. */
+function useSteady<Value extends object>(value: Value): Value {
+  const [steady, setSteady] = useState(value);
+  if (JSON.stringify(steady) === JSON.stringify(value)) return steady;
+  setSteady(value);
+  return value;
+}
 
 /** Whether a click was on something that answers it by itself. */
 const isControl = (target: EventTarget): boolean => target instanceof Element && target.closest('a, button, .bp6-popover') !== null;
@@ -78,8 +85,9 @@ export function PartGrid(props: PartGridProps) {
     scrollToTop();
     goToTop();
   });
-  const keep = (offset: number): void => keepPlace(projectId, { query: queryText, offset, current });
-  useEffect(() => keep(scroller.current?.scrollTop ?? 0));
+  /** Noted and never asked for: the answer would have the browser lay out the page on the spot. */
+  const offset = useRef(place.offset);
+  useEffect(() => keepPlace(projectId, { query: queryText, offset: offset.current, current }), [projectId, queryText, current]);
 
   const press = (event: KeyboardEvent): void => {
     if (event.target !== scroller.current && !(event.key === 'Escape' && event.target instanceof Element && event.target.closest('[role=row]'))) return;
@@ -109,9 +117,8 @@ export function PartGrid(props: PartGridProps) {
     if (isBox) scroller.current?.focus({ preventScroll: true });
   };
 
-  const read = list.listRead();
-  const fractions = computeColumnFractions(read.map(({ row }) => row));
-  const shown = isPrinting ? read : Array.from({ length: Math.max(0, last - first + 1) }, (_, step) => ({ index: first + step, row: list.getRow(first + step) }));
+  const fractions = useSteady(list.fractions);
+  const shown = isPrinting ? list.listRead() : Array.from({ length: Math.max(0, last - first + 1) }, (_, step) => ({ index: first + step, row: list.getRow(first + step) }));
   const chosen = countSelected(selection, total);
   return (
     <div
@@ -127,7 +134,10 @@ export function PartGrid(props: PartGridProps) {
       style={writeTracks(columns)}
       onKeyDown={press}
       onClick={click}
-      onScroll={(event) => keep(event.currentTarget.scrollTop)}
+      onScroll={(event) => {
+        offset.current = event.currentTarget.scrollTop;
+        keepPlace(projectId, { query: queryText, offset: offset.current, current });
+      }}
     >
       <PartGridHead
         columns={columns}

@@ -7,19 +7,18 @@ import { ProblemNotice } from '../../../components/problem-notice';
 import { countOf } from '../../../lib/plural';
 import { changeSettings, deleteParts, restoreParts } from '../api/part-changes';
 import { readRowIds, usePartList } from '../api/part-list';
-import { useMeasureAgain, useStateUnit } from '../api/parts';
-import { unitTexts } from '../../../lib/unit-texts';
 import { writeQuery, type ListQuery } from '../model/list-address';
 import { countSelected, nothing, writeSelection, type Selection } from '../model/selection';
 import { useChangeSteps } from '../model/use-change-steps';
+import { placeRow } from '../model/stretches';
 import { useListView } from '../model/use-list-view';
+import { useRowActions } from '../model/use-row-actions';
 import type { RowRange } from '../model/use-virtual-rows';
 import { ColumnChooser } from './column-chooser';
 import { ExportMenu } from './export-menu';
 import { ListGap, ListSkeleton } from './list-gap';
 import { PartFilterBar } from './part-filter';
 import { PartGrid } from './part-grid';
-import type { RowActions } from './row-note';
 import { SelectionBar, type BulkChange } from './selection-bar';
 import { StepLine } from './step-line';
 import './part-list.css';
@@ -43,25 +42,34 @@ function useSelection(query: ListQuery): [Selection, (selection: Selection) => v
   return [made.key === key ? made.selection : nothing, select];
 }
 
+/** The rows in view, told anew only where other stretches of them are to be read. */
+function useStretchRange(): [RowRange, (range: RowRange) => void] {
+  const [range, setRange] = useState<RowRange>({ first: 0, last: 0 });
+  const note = useCallback((next: RowRange) => {
+    const isSame = (one: number, other: number): boolean => placeRow(one).stretch === placeRow(other).stretch;
+    setRange((before) => (isSame(before.first, next.first) && isSame(before.last, next.last) ? before : next));
+  }, []);
+  return [range, note];
+}
+
 /** A project's parts: narrowed, ordered, selected and changed together, with one way back. */
 export function PartList({ projectId, canEdit, materials, empty, onReplace }: PartListProps) {
   const client = useQueryClient();
   const navigate = useNavigate();
   const { view, change } = useListView();
-  const [range, setRange] = useState<RowRange>({ first: 0, last: 0 });
+  const [range, noteRange] = useStretchRange();
   const { list, isTurning, error, retry } = usePartList(projectId, view, range);
   const [selection, select] = useSelection(list.query);
   const { steps, state } = useChangeSteps(projectId);
-  const stateUnit = useStateUnit();
-  const measureAgain = useMeasureAgain();
+  const { actions, error: actionError } = useRowActions(projectId, steps, onReplace);
   const onText = useCallback((text: string) => change({ text }), [change]);
   const total = list.head?.total ?? 0;
   const count = countSelected(selection, total);
   const chosen = () => writeSelection(selection, list.query);
 
-  const changeAll = ({ change: wanted, about, to }: BulkChange, parts = chosen()): Promise<void> =>
+  const changeAll = ({ change: wanted, about, to }: BulkChange): Promise<void> =>
     steps.take(async () => {
-      const done = await changeSettings(projectId, parts, wanted);
+      const done = await changeSettings(projectId, chosen(), wanted);
       return { kind: 'setting', change: done, about, to };
     });
   const move = (kind: 'deleted' | 'restored', parts = chosen()): Promise<void> =>
@@ -70,17 +78,6 @@ export function PartList({ projectId, canEdit, materials, empty, onReplace }: Pa
       select(nothing);
       return { kind, ids };
     });
-  const readAgain = (): void => void client.invalidateQueries({ queryKey: ['parts', projectId] });
-  const actions: RowActions = {
-    onStateUnit: (row, unit) => {
-      const { lengthUnit, version } = row.revision.setting;
-      // Keeping the unit changes no figure: it only says that a person has looked.
-      if (unit === lengthUnit) stateUnit.mutate({ partId: row.id, lengthUnit: unit, version });
-      else void changeAll({ change: { lengthUnit: unit }, about: 'Unit', to: unitTexts[unit].name }, { ids: [row.id] }).then(readAgain);
-    },
-    onMeasureAgain: (row) => measureAgain.mutate(row.id),
-    onReplace,
-  };
   const isEmpty = list.head !== undefined && total === 0 && view.text === '' && view.states === '' && !view.deleted && list.head.deleted === 0 && !isTurning;
   if (isEmpty) return empty;
   return (
@@ -88,12 +85,12 @@ export function PartList({ projectId, canEdit, materials, empty, onReplace }: Pa
       <div className="part-tools screen-only">
         <PartFilterBar view={view} head={list.head} onChange={change} onText={onText} />
         <div className="part-tools-end">
-          <ColumnChooser columns={view.columns} onChange={(columns) => change({ columns })} />
+          <ColumnChooser columns={view.columns} onChange={change} />
           <ExportMenu projectId={projectId} view={view} total={total} />
         </div>
       </div>
       {error !== null && <ProblemNotice error={error} onRetry={retry} />}
-      {(stateUnit.error ?? measureAgain.error) !== null && <ProblemNotice error={stateUnit.error ?? measureAgain.error} />}
+      {actionError !== null && <ProblemNotice error={actionError} />}
       <div className={`part-list-body${isTurning ? ' part-list-turning' : ''}`} aria-busy={isTurning}>
         {list.head === undefined ? (
           error === null && <ListSkeleton columns={view.columns} />
@@ -109,7 +106,7 @@ export function PartList({ projectId, canEdit, materials, empty, onReplace }: Pa
             selection={selection}
             canSelect={canEdit}
             onSelect={select}
-            onRange={setRange}
+            onRange={noteRange}
             readIds={(indices) => readRowIds(client, projectId, list.query, indices)}
             actions={canEdit && !view.deleted ? actions : undefined}
             onOpen={(row) => void navigate(`/projects/${projectId}/parts/${row.id}`)}
@@ -117,7 +114,7 @@ export function PartList({ projectId, canEdit, materials, empty, onReplace }: Pa
           />
         )}
       </div>
-      <PrintedCount read={list.listRead().length} total={total} />
+      <PrintedCount read={list.countRead()} total={total} />
       <footer className="part-foot screen-only">
         <StepLine steps={steps} state={state} />
         <div className="part-foot-line">

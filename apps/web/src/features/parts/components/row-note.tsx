@@ -1,16 +1,10 @@
 import { Button } from '@blueprintjs/core';
 import type { PartRow, UnitDoubt } from '@masswright/contracts';
-import { formatCount, lengthUnits, type LengthUnit } from '@masswright/units';
+import { formatCount, lengthUnits } from '@masswright/units';
 import { MenuButton } from '../../../components/menu-button';
 import { unitTexts } from '../../../lib/unit-texts';
 import { findNote, type RowNote as Note } from '../model/state-words';
-
-export interface RowActions {
-  onStateUnit: (row: PartRow, unit: LengthUnit) => void;
-  onMeasureAgain: (row: PartRow) => void;
-  /** Opens the choice of another file for the part; absent where the page has none. */
-  onReplace?: (row: PartRow) => void;
-}
+import type { RowActions } from '../model/use-row-actions';
 
 /** How a volume stands to the one before, in the words of a row. */
 export function describeRatio({ volumeRatio }: UnitDoubt): string {

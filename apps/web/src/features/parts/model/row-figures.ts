@@ -40,7 +40,7 @@ export function computeRowSize({ sizeM }: PartRow): readonly number[] | null {
 
 export type ColumnFractions = Record<AlignedColumn, number>;
 
-/** The room that each column keeps behind its decimal points. */
+/** The room that each column keeps behind its decimal points for some rows. */
 export function computeColumnFractions(rows: readonly PartRow[]): ColumnFractions {
   const digitsOf = (column: AlignedColumn): number =>
     computeFractionDigits(
@@ -48,4 +48,10 @@ export function computeColumnFractions(rows: readonly PartRow[]): ColumnFraction
       listDigits,
     );
   return { volume: digitsOf('volume'), mass: digitsOf('mass'), moment1: digitsOf('moment1'), moment2: digitsOf('moment2'), moment3: digitsOf('moment3') };
+}
+
+/** The room that suits several groups of rows: the most that one of them needs. */
+export function joinColumnFractions(all: readonly ColumnFractions[]): ColumnFractions {
+  const most = (column: AlignedColumn): number => Math.max(0, ...all.map((fractions) => fractions[column]));
+  return { volume: most('volume'), mass: most('mass'), moment1: most('moment1'), moment2: most('moment2'), moment3: most('moment3') };
 }
