@@ -1,5 +1,6 @@
 export * from './common';
 export * from './event';
+export * from './kept-parts';
 export * from './material';
 export * from './measurement';
 export * from './part';

@@ -2,22 +2,12 @@ import { randomInt } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { ApiUser } from '../../support/api-user';
 import { block, sphere } from '../../support/meshes';
+import { createRandom } from './random';
 import { lockMs, startStack, waitFor, type Stack } from './stack';
 import { addInsisting, expectAllMeasured, type Acknowledged } from './uploads-under-fire';
 
 const seed = Number(process.env['KILL_SEED'] ?? randomInt(2 ** 31));
 console.log(`Rounds of kills with seed ${seed} (KILL_SEED=${seed} repeats them).`);
-
-/** A small generator with a seed, so that a round can be repeated (mulberry32, public domain). */
-function createRandom(start: number): () => number {
-  let state = start >>> 0;
-  return () => {
-    state = (state + 0x6d2b79f5) >>> 0;
-    let mixed = Math.imul(state ^ (state >>> 15), state | 1);
-    mixed ^= mixed + Math.imul(mixed ^ (mixed >>> 7), mixed | 61);
-    return ((mixed ^ (mixed >>> 14)) >>> 0) / 2 ** 32;
-  };
-}
 
 let stack: Stack;
 let user: ApiUser;

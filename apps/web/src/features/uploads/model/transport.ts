@@ -1,11 +1,10 @@
 import AwsS3 from '@uppy/aws-s3';
 import Uppy, { type Body, type Meta, type UppyFile } from '@uppy/core';
-import { cleanFileName, cleanFolder, type OpenUploads, type Upload } from '@masswright/contracts';
+import { choosePartsToKeep, cleanFileName, cleanFolder, type OpenUploads, type Upload } from '@masswright/contracts';
 import pLimit from 'p-limit';
 import { hashBlob } from '../../../lib/file-hash';
 import { ConnectionError, getSentence, ProblemError } from '../../../lib/problem';
 import { cancelUpload, createUpload, grantPart, listOpenUploads, readUpload } from '../api/uploads';
-import { choosePartsToKeep } from './kept-parts';
 
 export interface Shipment {
   key: string;

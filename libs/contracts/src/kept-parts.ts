@@ -1,4 +1,4 @@
-import type { Upload } from '@masswright/contracts';
+import type { Upload } from './upload';
 
 type StoredPart = Upload['storedParts'][number];
 
