@@ -3,24 +3,35 @@ import { and, eq, inArray, lt } from 'drizzle-orm';
 import { measuringRuns, parts, partSummaries, revisions, settings, uploads } from '../schema';
 import type { Transaction } from '../tenancy/database';
 
-/** Marks parts as deleted; those that were already keep their date. Gives those that were not. */
+/** The one thing of a summary that deleting and restoring change; ten thousand parts needn't be summarised anew for it. */
+async function carryOverToSummaries(tx: Transaction, partIds: readonly string[]): Promise<void> {
+  await tx.execute(sql`
+    update part_summaries set deleted_at = parts.deleted_at from parts
+    where parts.organisation_id = part_summaries.organisation_id and parts.id = part_summaries.part_id and part_summaries.part_id = any(${sql.param([...partIds])}::uuid[])`);
+}
+
+/** Marks parts as deleted, in their summaries too; those that were already keep their date. Gives those that were not. */
 export async function markPartsDeleted(tx: Transaction, partIds: readonly string[], deletedBy: string): Promise<string[]> {
   const rows = await tx
     .update(parts)
     .set({ deletedAt: sql`now()`, deletedBy })
     .where(sql`${parts.id} = any(${sql.param([...partIds])}::uuid[]) and ${parts.deletedAt} is null`)
     .returning({ id: parts.id });
-  return rows.map(({ id }) => id);
+  const ids = rows.map(({ id }) => id);
+  await carryOverToSummaries(tx, ids);
+  return ids;
 }
 
-/** Takes the mark of deletion away; gives the parts that had it. */
+/** Takes the mark of deletion away, from their summaries too; gives the parts that had it. */
 export async function unmarkPartsDeleted(tx: Transaction, partIds: readonly string[]): Promise<string[]> {
   const rows = await tx
     .update(parts)
     .set({ deletedAt: null, deletedBy: null })
     .where(sql`${parts.id} = any(${sql.param([...partIds])}::uuid[]) and ${parts.deletedAt} is not null`)
     .returning({ id: parts.id });
-  return rows.map(({ id }) => id);
+  const ids = rows.map(({ id }) => id);
+  await carryOverToSummaries(tx, ids);
+  return ids;
 }
 
 /** Parts of every organisation that were deleted longer ago than they are kept, the oldest first. Needs the relay's scope. */

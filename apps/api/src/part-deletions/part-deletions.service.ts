@@ -1,7 +1,6 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { MovedParts, PartSelection } from '@masswright/contracts';
-import { markPartsDeleted, publishEvent, refreshPartSummaries, unmarkPartsDeleted, type Transaction } from '@masswright/drizzle';
-import { summarisePart } from '@masswright/mechanics';
+import { markPartsDeleted, publishEvent, unmarkPartsDeleted, type Transaction } from '@masswright/drizzle';
 import { selectParts } from '../part-list/select-parts';
 import type { SignedInContext } from '../platform/request-context';
 import { audit, Work } from '../platform/work';
@@ -32,7 +31,6 @@ export class PartDeletionsService {
       const parts = selected.filter(({ id }) => moved.has(id)).sort((a, b) => a.number - b.number);
       if (parts.length === 0) return { ids: [] };
       const ids = parts.map(({ id }) => id);
-      await refreshPartSummaries(tx, organisationId, ids, summarisePart);
       await audit(tx, context, { action, subject: { type: 'project', id: projectId }, after: { parts: parts.map(({ id, number }) => ({ id, number })) } });
       // The projects' counts change too.
       await publishEvent(tx, { organisationId, event: { type: 'project', projectId } });
