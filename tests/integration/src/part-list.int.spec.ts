@@ -17,7 +17,7 @@ let mixedId: string;
 const count = 247;
 
 const list = (projectId: string, query: Record<string, string | number> = {}): Promise<PartList> =>
-  engineer.get<PartList>(`/projects/${projectId}/parts?${new URLSearchParams(Object.entries(query).map(([name, value]) => [name, String(value)])).toString()}`);
+  engineer.get<PartList>(`/projects/${projectId}/parts?${new URLSearchParams(Object.entries(query).map(([name, value]): [string, string] => [name, String(value)])).toString()}`);
 const numbers = ({ items }: PartList): number[] => items.map(({ number }) => number);
 /** Every row, by stretches. */
 async function listAll(projectId: string, query: Record<string, string | number> = {}, limit = 200): Promise<PartRow[]> {
