@@ -1,3 +1,4 @@
+import type { ServerResponse } from 'node:http';
 import type { Response } from 'express';
 
 /** Letters, digits and marks of any script, and a few signs that no file system, shell or header takes for more than a name. */
@@ -19,7 +20,7 @@ export function describeAttachment(response: Response, { fileName, mediaType }: 
  * Sends pieces as they are made, no faster than they are read. The first piece is made before anything is sent, so that a refusal is still a refusal; should
  * a later one fail, the connection is cut: a file that ends without its end can't be taken for whole.
  */
-export async function sendPieces(response: Response, pieces: AsyncIterator<string>, describe: () => void): Promise<void> {
+export async function sendPieces(response: ServerResponse, pieces: AsyncIterator<string>, describe: () => void): Promise<void> {
   let piece = await pieces.next();
   describe();
   const closed = new Promise<void>((resolve) => response.once('close', resolve));
