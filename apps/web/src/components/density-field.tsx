@@ -9,6 +9,8 @@ interface DensityFieldProps {
   ariaLabel?: string;
   /** Said while nothing is typed. */
   emptyHint: string;
+  /** Said in its place, as an error, where a density must be given and none is. */
+  missing?: string;
   /** False while a person is still typing. */
   showError?: boolean;
   onBlur?: () => void;
@@ -16,10 +18,10 @@ interface DensityFieldProps {
 }
 
 /** A density typed with its unit; what was understood is said under it. */
-export function DensityField({ text, onChange, label = 'Density', ariaLabel, emptyHint, showError = true, onBlur, onKeyDown }: DensityFieldProps) {
+export function DensityField({ text, onChange, label = 'Density', ariaLabel, emptyHint, missing, showError = true, onBlur, onKeyDown }: DensityFieldProps) {
   const id = useId();
   const typed = readDensity(text);
-  const error = showError ? typed.error : undefined;
+  const error = (showError ? typed.error : undefined) ?? (text.trim() === '' ? missing : undefined);
   const understood = typed.densityKgM3 ? describeDensity(typed.densityKgM3, text) : text.trim() === '' ? emptyHint : '…';
   return (
     <FormGroup

@@ -82,7 +82,8 @@ export function MaterialPicker({ materials, value, onChange, label, placeholder 
       popoverClassName="material-list-popover"
       className="material-picker"
       content={<MaterialOptions id={id} label={label} groups={groups} marked={marked} chosenId={value?.id} onTake={take} onMark={(material) => setCurrent(options.indexOf(material))} field={input} />}
-      renderTarget={({ isOpen: _, ref, onClick: __, onKeyDown: ___, ...target }) => (
+      // Opening is the field's own affair, and what is said of it, too.
+      renderTarget={({ isOpen: _, ref, onClick: __, onKeyDown: ___, 'aria-expanded': ____, 'aria-haspopup': _____, ...target }) => (
         <span {...target} ref={ref}>
           <InputGroup
             inputRef={input}
@@ -138,7 +139,7 @@ function MaterialOptions({ id, label, groups, marked, chosenId, onTake, onMark, 
       style={{ minWidth: field.current?.offsetWidth }}
       onMouseDown={(event) => event.preventDefault()}
     >
-      <div role="listbox" id={`${id}-list`} aria-label={label}>
+      <div role="listbox" id={`${id}-list`} aria-label={label} className="material-options">
         {groups.map(({ group, name, items }) => (
           <div key={group} role="group" aria-label={name}>
             <p className="caption" aria-hidden="true">

@@ -44,7 +44,8 @@ export function PanelButton({ label, spoken, popup = 'dialog', children, ...butt
       arrow={false}
       placement="bottom-start"
       content={isOpen ? children(close) : <></>}
-      renderTarget={({ isOpen: _, ref, ...target }) => (
+      // What it says of itself belongs to the button, not to the element around it.
+      renderTarget={({ isOpen: _, ref, 'aria-expanded': __, 'aria-haspopup': ___, ...target }) => (
         <span {...target} ref={ref} className="menu-button">
           <Button {...button} aria-haspopup={popup} aria-expanded={isOpen} aria-label={spoken}>
             {label} <span className="menu-button-mark" aria-hidden="true" />

@@ -84,7 +84,7 @@ function MaterialForm({ material, isBusy, error, onSubmit, onClose }: MaterialDi
             onChange={(event) => change({ group: groupSchema.parse(event.currentTarget.value) })}
           />
         </Labelled>
-        <DensityField text={texts.density} onChange={(density) => change({ density })} showError={asked} emptyHint={errors.density ?? 'With its unit: 2.7 g/cm3, 7850 kg/m3.'} />
+        <DensityField text={texts.density} onChange={(density) => change({ density })} showError={asked} missing={errors.density} emptyHint="With its unit: 2.7 g/cm3, 7850 kg/m3." />
         <Field
           label="Spread ±"
           text={texts.spread}

@@ -90,7 +90,7 @@ export const PartFilterBar = memo(function PartFilterBar({ view, head, onChange,
               className={`part-chip${isSingle ? ' part-chip-single' : ''}`}
               onClick={() => onChange({ states: isChosen && isSingle ? '' : states, deleted })}
             >
-              {name} <span className="figure">{head ? formatCount(count) : ''}</span>
+              {name} {head && count !== undefined && <span className="figure">{formatCount(count)}</span>}
             </button>
           );
         })}

@@ -7,7 +7,7 @@ import { ProblemNotice } from '../../../components/problem-notice';
 import { countOf } from '../../../lib/plural';
 import { changeSettings, deleteParts, restoreParts } from '../api/part-changes';
 import { readRowIds, usePartList } from '../api/part-list';
-import { writeQuery, type ListQuery } from '../model/list-address';
+import type { ListQuery } from '../model/list-address';
 import { countSelected, nothing, writeSelection, type Selection } from '../model/selection';
 import { useChangeSteps } from '../model/use-change-steps';
 import { placeRow } from '../model/stretches';
@@ -132,8 +132,9 @@ export function PartList({ projectId, canEdit, materials, empty, onReplace }: Pa
           ) : (
             total > 0 && (
               <p className="soft">
-                <span className="figure">{formatCount(total)}</span> {total === 1 ? 'part' : 'parts'}
-                {writeQuery({ ...list.query, sort: 'number', direction: 'ascending' }).size > 0 && ' that the filter leaves'}. Principal moments are about each centre of mass.
+                <span className="figure">{formatCount(total)}</span> {list.query.deleted && 'deleted '}
+                {total === 1 ? 'part' : 'parts'}
+                {(list.query.text !== '' || list.query.states !== '') && ' that the filter leaves'}. Principal moments are about each centre of mass.
               </p>
             )
           )}

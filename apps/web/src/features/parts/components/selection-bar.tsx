@@ -32,7 +32,7 @@ function MaterialPanel({ materials, onChange }: Pick<SelectionBarProps, 'materia
   const { densityKgM3 } = readDensity(text);
   return (
     <div className="panel">
-      <div>
+      <div className="panel-material">
         <p className="caption">Material</p>
         <MaterialPicker
           label="Material for the selected parts"

@@ -18,7 +18,8 @@ export const wantingStates: readonly PartState[] = partStates.filter((state) => 
 
 export interface StateChip {
   name: string;
-  count: number;
+  /** Undefined where it is not known: among deleted parts only they are counted. */
+  count: number | undefined;
   states: string;
   deleted: boolean;
   /** One state out of a group that stands before it. */
@@ -32,12 +33,13 @@ export function listChips({ counts, deleted }: Pick<PartList, 'counts' | 'delete
   const group = wantingStates.join();
   const isOpen = !chosen.deleted && chosen.states !== '' && chosen.states.split(',').every((state) => (wantingStates as readonly string[]).includes(state));
   const singles = wantingStates.filter((state) => counts[state] > 0 || chosen.states === state);
+  const count = (states: readonly PartState[]): number | undefined => (chosen.deleted ? undefined : sum(counts, states));
   return [
-    { name: 'All', count: sum(counts, partStates), states: '', deleted: false },
-    { name: 'Being measured', count: counts.measuring, states: 'measuring', deleted: false },
-    { name: 'Needs a look', count: sum(counts, wantingStates), states: group, deleted: false },
-    ...(isOpen ? singles.map((state) => ({ name: stateTexts[state].word, count: counts[state], states: state, deleted: false, isSingle: true })) : []),
-    { name: 'Ready', count: counts.ready, states: 'ready', deleted: false },
+    { name: 'All', count: count(partStates), states: '', deleted: false },
+    { name: 'Being measured', count: count(['measuring']), states: 'measuring', deleted: false },
+    { name: 'Needs a look', count: count(wantingStates), states: group, deleted: false },
+    ...(isOpen ? singles.map((state) => ({ name: stateTexts[state].word, count: count([state]), states: state, deleted: false, isSingle: true })) : []),
+    { name: 'Ready', count: count(['ready']), states: 'ready', deleted: false },
     { name: 'Deleted', count: deleted, states: '', deleted: true },
   ];
 }

@@ -56,7 +56,8 @@ export function writeTypedWeighing(weighing: Weighing | null): string {
   return writeSpread(weighing.massKg, weighing.uncertaintyKg, inGrams ? 'g' : 'kg', inGrams ? 1e-3 : 1, 9);
 }
 
-export const describeTypedWeighing = (weighing: Weighing, text: string): string => inOtherWords(writeTypedWeighing(weighing), text);
+/** Only a share is said in other words: what else was typed says the same already. */
+export const describeTypedWeighing = (weighing: Weighing, text: string): string => (text.includes('%') ? inOtherWords(writeTypedWeighing(weighing), text) : '');
 
 /** A difference of masses with its sign, and as a share of the one before. */
 export function describeMassChange(fromKg: number, toKg: number): string {
