@@ -4,6 +4,7 @@ import { useQueryClient } from '@tanstack/react-query';
 import { useCallback, useState, type ReactNode } from 'react';
 import { useNavigate } from 'react-router-dom';
 import { ProblemNotice } from '../../../components/problem-notice';
+import { PrintLine } from '../../../components/print-line';
 import { countOf } from '../../../lib/plural';
 import { changeSettings, deleteParts, restoreParts } from '../api/part-changes';
 import { readRowIds, usePartList } from '../api/part-list';
@@ -147,9 +148,10 @@ export function PartList({ projectId, canEdit, materials, empty, onReplace }: Pa
 /** On paper: rows that were never looked at are not there to be printed. */
 function PrintedCount({ read, total }: { read: number; total: number }) {
   return (
-    <p className="print-only part-printed">
-      {countOf(read, 'part')} of {formatCount(total)}, principal moments about each centre of mass, mass and moments of uniform bodies.
-      {read < total && ` ${formatCount(total - read)} that were not looked at are left out; the export of the list has them all.`}
-    </p>
+    <PrintLine>
+      {countOf(read, 'part')} of {formatCount(total)}
+      {read < total && ` (${formatCount(total - read)} that were not looked at are left out; the export of the list has them all)`}, of uniform bodies, principal moments about each centre of
+      mass
+    </PrintLine>
   );
 }
