@@ -804,7 +804,7 @@ export interface components {
                         progress: number;
                         error: {
                             /** @enum {string} */
-                            code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "too-many-vertices" | "polygon-too-large" | "vertex-missing" | "archive-damaged" | "too-large-expanded" | "file-missing" | "gave-up";
+                            code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "too-many-vertices" | "polygon-too-large" | "vertex-missing" | "archive-damaged" | "too-large-expanded" | "file-missing" | "gave-up" | "took-too-long";
                             message: string;
                             at: {
                                 byte?: number;
@@ -1031,7 +1031,7 @@ export interface components {
                     progress: number;
                     error: {
                         /** @enum {string} */
-                        code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "too-many-vertices" | "polygon-too-large" | "vertex-missing" | "archive-damaged" | "too-large-expanded" | "file-missing" | "gave-up";
+                        code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "too-many-vertices" | "polygon-too-large" | "vertex-missing" | "archive-damaged" | "too-large-expanded" | "file-missing" | "gave-up" | "took-too-long";
                         message: string;
                         at: {
                             byte?: number;
@@ -1388,6 +1388,9 @@ export interface components {
                 name: string;
                 letter: string;
                 storedFileName: string;
+                folder: string;
+                sizeBytes: number;
+                sha256: string | null;
                 sameCase: boolean;
             }[];
         };
@@ -2462,7 +2465,7 @@ export interface operations {
                         file: string;
                         error: {
                             /** @enum {string} */
-                            code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "too-many-vertices" | "polygon-too-large" | "vertex-missing" | "archive-damaged" | "too-large-expanded" | "file-missing" | "gave-up" | "not-measured-yet" | "unit-not-stated";
+                            code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "too-many-vertices" | "polygon-too-large" | "vertex-missing" | "archive-damaged" | "too-large-expanded" | "file-missing" | "gave-up" | "took-too-long" | "not-measured-yet" | "unit-not-stated";
                             message: string;
                             at: {
                                 byte?: number;
@@ -2964,7 +2967,7 @@ export interface operations {
                         file: string;
                         error: {
                             /** @enum {string} */
-                            code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "too-many-vertices" | "polygon-too-large" | "vertex-missing" | "archive-damaged" | "too-large-expanded" | "file-missing" | "gave-up" | "not-measured-yet" | "unit-not-stated";
+                            code: "file-empty" | "format-unknown" | "file-truncated" | "count-contradicts-size" | "number-invalid" | "number-not-finite" | "syntax-invalid" | "facets-none" | "size-differs" | "too-many-facets" | "too-many-vertices" | "polygon-too-large" | "vertex-missing" | "archive-damaged" | "too-large-expanded" | "file-missing" | "gave-up" | "took-too-long" | "not-measured-yet" | "unit-not-stated";
                             message: string;
                             at: {
                                 byte?: number;

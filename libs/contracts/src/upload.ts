@@ -76,6 +76,10 @@ export const nameMatches = z.object({
       name: z.string(),
       letter: z.string(),
       storedFileName: z.string(),
+      folder: z.string(),
+      sizeBytes: z.number().int(),
+      /** Of the stored file; null until it was hashed. */
+      sha256: partHash.nullable(),
       /** false: the names differ in the case of letters. */
       sameCase: z.boolean(),
     }),

@@ -132,6 +132,9 @@ export class UploadsService {
             name: part.name,
             letter: revisionLetter(revision.ordinal),
             storedFileName: upload.fileName,
+            folder: upload.folder,
+            sizeBytes: upload.sizeBytes,
+            sha256: upload.sha256?.toString('hex') ?? null,
             sameCase: upload.fileName === cleanFileName(fileName),
           })),
       );

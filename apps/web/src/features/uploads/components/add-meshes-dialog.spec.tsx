@@ -111,7 +111,7 @@ describe('adding meshes', () => {
     expect(state).toHaveBeenLastCalledWith(['b'], { lengthUnit: 'cm' });
   });
   it('asks whether a file of a known name is the next revision, with the reason, for all at once', () => {
-    const match = (fileName: string) => ({ fileName, partId: `part of ${fileName}`, number: 7, name: 'Pawl', letter: 'A', storedFileName: fileName, sameCase: true });
+    const match = (fileName: string) => ({ fileName, partId: `part of ${fileName}`, number: 7, name: 'Pawl', letter: 'A', storedFileName: fileName, folder: '', sizeBytes: 9, sha256: null, sameCase: true });
     const known = [entry('a', { matches: [match('a.stl')] }), entry('b', { matches: [match('b.stl')] })];
     open(known);
     expect(screen.queryByRole('radio')).toBeNull();

@@ -61,7 +61,7 @@ function Body({ projectId, materials, others, excess, replacement }: BodyProps) 
   // Asked about together: files that are one drop's question stay in it until it is answered, also when their unit is chosen one by one.
   const [asking, setAsking] = useState<ReadonlySet<string>>(new Set());
   const [looksAt, setLooksAt] = useState<Step>();
-  const isAskable = (entry: UploadEntry): boolean => !isRefusal(entry.quick) && !awaitsDecision(entry) && entry.phase !== 'cancelled' && entry.decision?.as !== 'revision' && entry.part?.run.state !== 'failed';
+  const isAskable = (entry: UploadEntry): boolean => !isRefusal(entry.quick) && !awaitsDecision(entry) && entry.phase !== 'cancelled' && entry.phase !== 'present' && entry.decision?.as !== 'revision' && entry.part?.run.state !== 'failed';
   const fresh = entries.filter((entry) => isAskable(entry) && lacksUnit(entry) && !postponed.has(entry.key) && !asking.has(entry.key));
   if (fresh.length > 0) setAsking(new Set([...asking, ...fresh.map(({ key }) => key)]));
   const asked = replacement ? [] : entries.filter((entry) => asking.has(entry.key) && isAskable(entry));

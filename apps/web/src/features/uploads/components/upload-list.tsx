@@ -47,6 +47,11 @@ function UploadActions({ entry }: { entry: UploadEntry }) {
           Cancel
         </Button>
       )}
+      {phase === 'present' && (
+        <Button size="small" variant="minimal" onClick={() => retryUpload(key)} aria-label={`Send ${fileName} all the same`}>
+          Send all the same
+        </Button>
+      )}
       {(phase === 'failed' || phase === 'cancelled') && (
         <Button size="small" onClick={() => retryUpload(key)} aria-label={`Send ${fileName} again`}>
           Try again
@@ -61,10 +66,11 @@ const UploadRow = memo(function UploadRow({ entry }: { entry: UploadEntry; tick:
   const foreseen = isUnfinished(entry) && isRefusal(entry.quick) ? `It can’t be measured: ${entry.quick.error.message}` : undefined;
   const problem = entry.problem ?? entry.part?.problem ?? foreseen;
   const share = computeShareDone(entry);
+  const partId = entry.part?.id ?? entry.presentIn?.partId;
   return (
     <li className="upload-row">
       <span className="figure file-name" title={entry.folder ? `${entry.folder}/${entry.fileName}` : entry.fileName}>
-        {entry.part ? <Link to={`/projects/${entry.projectId}/parts/${entry.part.id}`}>{entry.fileName}</Link> : entry.fileName}
+        {partId ? <Link to={`/projects/${entry.projectId}/parts/${partId}`}>{entry.fileName}</Link> : entry.fileName}
         {entry.folder && <span className="soft upload-folder"> {entry.folder}</span>}
       </span>
       <span className="figure soft upload-bytes">{describeSending(entry)}</span>

@@ -137,7 +137,7 @@ describe('an upload', () => {
 });
 
 describe('what an upload waits for', () => {
-  const match = { fileName: 'a.stl', partId: 'part-7', number: 7, name: 'Pawl', letter: 'A', storedFileName: 'A.stl', sameCase: false };
+  const match = { fileName: 'a.stl', partId: 'part-7', number: 7, name: 'Pawl', letter: 'A', storedFileName: 'A.stl', folder: '', sizeBytes: 9, sha256: null, sameCase: false };
 
   it('is not a part before the server has said whether a part has its name', () => {
     expect(isReadyToStore(pass({ type: 'begun', key: 'a' }, allSent))).toBe(false);

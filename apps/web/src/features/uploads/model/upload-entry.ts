@@ -4,9 +4,9 @@ import type { QuickAnswer } from './quick-figures';
 
 /**
  * waiting: chosen, not yet begun. sending: on its way to the storage. sent: all of it is there, and a decision of the person is awaited.
- * storing: the server makes a part of it. stored: a part; from here on its run says how far it is. failed: can be tried again. cancelled: by the person.
+ * present: a part has this very file, so it is not sent. storing: the server makes a part of it. stored: a part; from here on its run says how far it is. failed: can be tried again. cancelled: by the person.
  */
-export type UploadPhase = 'waiting' | 'sending' | 'sent' | 'storing' | 'stored' | 'failed' | 'cancelled';
+export type UploadPhase = 'waiting' | 'sending' | 'sent' | 'storing' | 'stored' | 'present' | 'failed' | 'cancelled';
 
 /** What a person has said of a mesh; null is not said, and never assumed. */
 export interface Stated {
@@ -41,6 +41,8 @@ export interface UploadEntry {
   /** Parts with a file of that name; undefined while the server is being asked. */
   matches?: readonly NameMatch[];
   decision?: Decision;
+  /** Whose file it is already. */
+  presentIn?: NameMatch;
   quick?: QuickAnswer;
   /** Why it failed, for people. */
   problem?: string;
@@ -61,6 +63,7 @@ export type UploadEvent =
   | { type: 'tried-again'; key: string }
   | { type: 'stated'; key: string; stated: Partial<Stated> }
   | { type: 'matched'; key: string; matches: readonly NameMatch[] }
+  | { type: 'found-present'; key: string; presentIn: NameMatch }
   | { type: 'decided'; key: string; decision: Decision }
   | { type: 'read-quickly'; key: string; quick: QuickAnswer }
   | { type: 'run'; partId: string; run: Pick<MeasuringRun, 'state' | 'stage' | 'progress'> }
@@ -154,11 +157,15 @@ function changeEntry(entry: UploadEntry, event: UploadEvent): UploadEntry {
       return entry.phase === 'waiting' || entry.phase === 'sending' ? { ...entry, paused: event.paused } : entry;
     case 'tried-again':
       if (entry.phase === 'failed' && entry.sent) return { ...entry, phase: 'sent', problem: undefined };
-      return entry.phase === 'failed' || entry.phase === 'cancelled' ? { ...entry, phase: 'waiting', sentBytes: 0, keptBytes: 0, sent: undefined, problem: undefined } : entry;
+      return entry.phase === 'failed' || entry.phase === 'cancelled' || entry.phase === 'present'
+        ? { ...entry, phase: 'waiting', sentBytes: 0, keptBytes: 0, sent: undefined, presentIn: undefined, problem: undefined }
+        : entry;
     case 'stated':
       return { ...entry, stated: { ...entry.stated, ...event.stated } };
     case 'matched':
       return { ...entry, matches: event.matches };
+    case 'found-present':
+      return entry.phase === 'waiting' ? { ...entry, phase: 'present', paused: false, presentIn: event.presentIn } : entry;
     case 'decided':
       return isUnfinished(entry) ? { ...entry, decision: event.decision } : entry;
     case 'read-quickly':

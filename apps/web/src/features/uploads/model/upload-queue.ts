@@ -6,9 +6,10 @@ import { completeUpload, findNameMatches, readPartOfUpload, stateSettings } from
 import type { DroppedFile } from '../../../lib/dropped-files';
 import { createPace } from './pace';
 import { createQuickReaders } from './quick-figures';
+import { createPresenceCheck } from './presence-check';
 import { createQuietWatch } from './quiet-watch';
 import type { Shipment, Transport } from './transport';
-import { changeEntries, isReadyToStore, isSettled, isToBeTold, isUnfinished, nothingStated, writeCompletion, writeIntakeSetting, type Decision, type Stated, type UploadEntry, type UploadEvent } from './upload-entry';
+import { changeEntries, isReadyToStore, isSettled, isToBeTold, isUnfinished, nothingStated, writeCompletion, writeIntakeSetting, type Decision, type NameMatch, type Stated, type UploadEntry, type UploadEvent } from './upload-entry';
 
 /** Lives outside of React: files go on being sent while a person moves about in the application. */
 const entries = createStore<readonly UploadEntry[]>([]);
@@ -89,7 +90,10 @@ function ship(key: string, how: 'send' | 'retry'): void {
   if (!entry || !file) return;
   const shipment: Shipment = { key, file, folder: entry.folder, projectId: entry.projectId };
   getTransport().then(
-    (ready) => ready[how](shipment),
+    (ready) => {
+      ready[how](shipment);
+      if (find(key)?.paused) ready.pause(key);
+    },
     () => {
       transport = undefined;
       apply({ type: 'failed', key, problem: 'The part of this page that sends files could not be read. Check the connection and try again.' });
@@ -105,11 +109,27 @@ function findPartName({ file, folder }: DroppedFile, all: readonly DroppedFile[]
   return `${name} (${folder})`.slice(0, 200);
 }
 
+/** Files of which is being asked whether parts have them; they are sent once that is known. */
+const asking = new Set<string>();
+const findPresence = createPresenceCheck();
+
+/** Only what is missing is sent: a file that a part has already, byte for byte, is not. */
+async function sendUnlessPresent(key: string, matches: readonly NameMatch[]): Promise<void> {
+  const entry = find(key);
+  const file = files.get(key);
+  const presentIn = entry && file && (await findPresence(file, entry.folder, matches));
+  if (!asking.delete(key) || find(key)?.phase !== 'waiting') return;
+  if (!presentIn) return ship(key, 'send');
+  quickReaders.drop(key);
+  apply({ type: 'found-present', key, presentIn });
+}
+
 async function askForMatches(projectId: string, added: readonly UploadEntry[], triesLeft = 3): Promise<void> {
   const tell = (matches: Awaited<ReturnType<typeof findNameMatches>>['matches']): void => {
     for (const { key, fileName } of added) {
-      apply({ type: 'matched', key, matches: matches.filter((match) => match.fileName === fileName) });
-      storeIfReady(key);
+      const own = matches.filter((match) => match.fileName === fileName);
+      apply({ type: 'matched', key, matches: own });
+      void sendUnlessPresent(key, own);
     }
   };
   try {
@@ -125,7 +145,7 @@ export interface AddedFile extends DroppedFile {
   decision?: Decision;
 }
 
-/** Begins to send files at once; what they are is asked meanwhile. Gives the drop's id. */
+/** Begins to send files as soon as it is known which of them are there already; what they are is asked meanwhile. Gives the drop's id. */
 export function addUploads(projectId: string, chosen: readonly AddedFile[]): string {
   lastDrop += 1;
   const dropId = `drop ${lastDrop}`;
@@ -152,12 +172,13 @@ export function addUploads(projectId: string, chosen: readonly AddedFile[]): str
   });
   entries.set((list) => [...list, ...added]);
   void transport?.then((ready) => ready.forgetBegun(projectId));
-  void askForMatches(projectId, added.filter(({ matches }) => matches === undefined));
-  for (const { key } of added) {
+  for (const { key, matches } of added) {
     const file = files.get(key);
     if (file) quickReaders.read({ key, file });
-    ship(key, 'send');
+    if (matches === undefined) asking.add(key);
+    else ship(key, 'send');
   }
+  void askForMatches(projectId, added.filter(({ matches }) => matches === undefined));
   return dropId;
 }
 
@@ -206,6 +227,7 @@ export function decideUploads(keys: readonly string[], decide: (entry: UploadEnt
 }
 
 export function retryUpload(key: string): void {
+  asking.delete(key);
   apply({ type: 'tried-again', key });
   if (find(key)?.phase === 'sent') storeIfReady(key);
   else ship(key, 'retry');

@@ -17,9 +17,12 @@ export interface UploadSummary {
   unitMissing: number;
 }
 
+/** It is a part, or becomes one. */
+const isCounted = ({ phase }: UploadEntry): boolean => phase !== 'cancelled' && phase !== 'failed' && phase !== 'present';
+
 /** Nothing was said of its unit, and it needs one. */
 export function lacksUnit(entry: UploadEntry): boolean {
-  if (entry.phase === 'cancelled' || entry.phase === 'failed') return false;
+  if (!isCounted(entry)) return false;
   if (entry.decision?.as === 'revision' || entry.part?.isRevision) return false;
   return entry.stated.lengthUnit === null && entry.part?.run.state !== 'failed';
 }
@@ -34,15 +37,17 @@ export function summariseUploads(entries: readonly UploadEntry[]): UploadSummary
   const paused = unfinished.filter((entry) => entry.paused).length;
   const waiting = unfinished.filter((entry) => entry.phase === 'sent' && awaitsDecision(entry)).length;
   const sending = unfinished.length - paused - waiting;
+  const present = entries.filter(({ phase }) => phase === 'present').length;
   const words = [
     sending > 0 && `${sending} being sent`,
     paused > 0 && `${paused} paused`,
     waiting > 0 && `${waiting} sent and waiting for you`,
     measuring > 0 && `${measuring} being measured`,
     done > 0 && `${done} measured`,
+    present > 0 && `${present} there already`,
     failed > 0 && `${failed} with a problem`,
   ].filter((word) => word !== false);
-  const counted = entries.filter((entry) => entry.phase !== 'cancelled' && entry.phase !== 'failed');
+  const counted = entries.filter(isCounted);
   const share = counted.length === 0 ? 1 : counted.reduce((sum, entry) => sum + (isSettled(entry) ? 1 : computeShareDone(entry)), 0) / counted.length;
   const meshes = countOf(entries.length, 'mesh', 'meshes');
   return {

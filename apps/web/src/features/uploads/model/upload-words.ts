@@ -21,6 +21,8 @@ export function describeEntry(entry: UploadEntry): string {
       return awaitsDecision(entry) ? 'Sent, wants your decision' : 'Sent, being stored';
     case 'storing':
       return 'Sent, being stored';
+    case 'present':
+      return `There already, as No. ${entry.presentIn?.number ?? ''}`;
     case 'failed':
       return 'Not sent';
     case 'cancelled':
