@@ -40,3 +40,13 @@ export function sphere(radius: number, facets: number): Uint8Array<ArrayBuffer> 
   }
   return writeBinaryStl(corners);
 }
+
+/** The same facets as an OBJ: each corner a vertex of its own. */
+export function writeObj(facets: readonly number[]): Uint8Array<ArrayBuffer> {
+  const lines = ['# written by a test', 'o body'];
+  for (let at = 0; at < facets.length; at += 3) lines.push(`v ${facets[at]} ${facets[at + 1]} ${facets[at + 2]}`);
+  for (let corner = 1; corner <= facets.length / 3; corner += 3) lines.push(`f ${corner} ${corner + 1} ${corner + 2}`);
+  return new TextEncoder().encode(`${lines.join('\n')}\n`);
+}
+
+export const objBlock = (min: Point, max: Point): Uint8Array<ArrayBuffer> => writeObj(blockFacets(min, max));

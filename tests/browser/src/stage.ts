@@ -19,6 +19,8 @@ export interface Stage {
   visit: () => ApiUser;
   /** Requests to foreign hosts, errors on the console, uncaught errors, answers that differ from the api document. */
   faults: string[];
+  /** What the worker said, for finding out why something did not come. */
+  workerLog: () => string;
   close: () => Promise<void>;
 }
 
@@ -78,6 +80,7 @@ export async function openStage(): Promise<Stage> {
     database,
     browser,
     faults,
+    workerLog: worker.log,
     openBrowser: async (options = {}) => {
       const context = await browser.newContext({ baseURL: url, viewport: { width: 1440, height: 900 }, ...options });
       context.on('page', watch);
