@@ -86,6 +86,7 @@ const workerVariables = z.object({
   WORKER_HOST: text('127.0.0.1').default('127.0.0.1'),
   WORKER_PORT: port(4601),
   WORKER_CONCURRENCY: integer(1, 64, 2),
+  MEASURING_LIMIT_MS: integer(1, 86_400_000, 600_000),
   DATABASE_POOL_SIZE: integer(1, 200, 10),
   QUEUE_LOCK_MS: integer(500, 600_000, 30_000),
 });

@@ -108,6 +108,7 @@ export const measuringErrorCodes = [
   'too-large-expanded',
   'file-missing',
   'gave-up',
+  'took-too-long',
 ] as const;
 export const measuringError = z.object({
   code: z.enum(measuringErrorCodes),

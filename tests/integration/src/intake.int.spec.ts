@@ -275,3 +275,17 @@ describe('formats', () => {
     expect(vertices?.revision.run.error?.code).toBe('facets-none');
   });
 });
+
+describe('a file that takes too long', () => {
+  it('is broken off with words, and measured when it is asked for again', async () => {
+    const variables = programEnvironment(database, Number(new URL(api.url).port));
+    await worker.stop();
+    worker = await startTestWorker({ ...variables, MEASURING_LIMIT_MS: '1' });
+    const broken = await engineer.waitForRun((await engineer.addMesh(projectId, 'slow.stl', box(15.5))).id);
+    expect(broken.revision.run.error?.code).toBe('took-too-long');
+    await worker.stop();
+    worker = await startTestWorker(variables);
+    await engineer.expect('POST', `/parts/${broken.id}/run`);
+    expect((await engineer.waitForRun(broken.id)).state).toBe('ready');
+  });
+});

@@ -8,12 +8,20 @@ import type { ThreadTask } from './measure-thread';
 
 type StoredObject = Pick<ThreadTask, 'objectKey' | 'sizeBytes'>;
 
+/** Beyond the base limit a file has so long for each of its bytes: a tenth of the slowest reading that was ever seen. */
+const bytesPerMs = 1_000;
+
+/** A thread was ended because its work took longer than such a file may take. */
+export class TookTooLongError extends Error {
+  override readonly name = 'TookTooLongError';
+}
+
 /** The pool of measuring threads, as many as files are measured at once; kept warm, for starting one takes longer than a small file. */
 @Injectable()
 export class MeasuringThreads implements OnModuleDestroy {
   private readonly pool: Piscina;
 
-  constructor(@InjectWorkerSettings() settings: WorkerSettings) {
+  constructor(@InjectWorkerSettings() private readonly settings: WorkerSettings) {
     this.pool = new Piscina({
       filename: path.join(import.meta.dirname, 'measure-thread.js'),
       minThreads: settings.WORKER_CONCURRENCY,
@@ -27,7 +35,7 @@ export class MeasuringThreads implements OnModuleDestroy {
     await this.pool.destroy();
   }
 
-  /** Measures an object in a thread; the signal ends the thread wherever it is. */
+  /** Measures an object in a thread; the signal ends the thread wherever it is. @throws TookTooLongError */
   async measure(object: StoredObject, onProgress: (progress: MeasuringProgress) => void, signal: AbortSignal): Promise<MeasuringOutcome> {
     return (await this.run('measure', object, onProgress, signal)) as MeasuringOutcome;
   }
@@ -40,9 +48,13 @@ export class MeasuringThreads implements OnModuleDestroy {
   private async run(work: ThreadTask['work'], { objectKey, sizeBytes }: StoredObject, onProgress: (progress: MeasuringProgress) => void, signal: AbortSignal): Promise<unknown> {
     const { port1: ours, port2: theirs } = new MessageChannel();
     ours.on('message', onProgress);
+    const limit = AbortSignal.timeout(Math.min(2_147_483_647, Math.ceil(this.settings.MEASURING_LIMIT_MS + sizeBytes / bytesPerMs)));
     try {
       const task: ThreadTask = { work, objectKey, sizeBytes, progress: theirs };
-      return await this.pool.run(task, { transferList: [theirs], signal });
+      return await this.pool.run(task, { transferList: [theirs], signal: AbortSignal.any([signal, limit]) });
+    } catch (error) {
+      if (limit.aborted && !signal.aborted) throw new TookTooLongError('Measuring took longer than such a file may take.', { cause: error });
+      throw error;
     } finally {
       ours.close();
     }

@@ -22,13 +22,18 @@ import { summarisePart } from '@masswright/mechanics';
 import { HandedBackError, SupersededError, TryAgainError, WaitingError, type JobContext } from '../queue/job-handlers';
 import { LatestOnly } from './latest-only';
 import type { MeasuringOutcome, MeasuringProgress } from './measure-object';
-import { MeasuringThreads } from './measuring-threads';
+import { MeasuringThreads, TookTooLongError } from './measuring-threads';
 
 /** A run taken up so often without an orderly end ends each time with the death of the process: then it is the file that kills it. */
 const mostUnendedTakeUps = 25;
 const gaveUp: MeasuringError = {
   code: 'gave-up',
   message: 'Measuring this file was begun again and again and never came to an end. Export the mesh with fewer facets, or split it, and add it again.',
+  at: null,
+};
+const tookTooLong: MeasuringError = {
+  code: 'took-too-long',
+  message: 'Measuring this file took longer than a file of its size may take, and was broken off. Measure it again when less is going on, or export the mesh with fewer facets.',
   at: null,
 };
 const fileMissing: MeasuringError = {
@@ -64,6 +69,10 @@ export class MeasuringHandler {
     } catch (error) {
       // Whoever took the run up after us does the rest, and says so when it is done.
       if (error instanceof SupersededError) throw error;
+      if (error instanceof TookTooLongError) {
+        await this.refuse(run, null, tookTooLong, context);
+        return;
+      }
       await this.inOrganisation(run, (tx) => handBackRun(tx, run)).catch(() => undefined);
       if (context.signal.aborted) throw new HandedBackError('The process stops.', { cause: error });
       throw error;

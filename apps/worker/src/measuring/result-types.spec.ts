@@ -6,9 +6,9 @@ import { describe, expect, expectTypeOf, it } from 'vitest';
 describe('what geometry returns', () => {
   it('has the types of the contracts, neither more nor less', () => {
     expectTypeOf<geometry.Measurement>().toEqualTypeOf<Measurement>();
-    // The worker has two reasons of its own, which are not about the mesh.
-    expectTypeOf<geometry.MeshErrorCode | 'file-missing' | 'gave-up'>().toEqualTypeOf<MeasuringError['code']>();
-    expect([...geometry.meshErrorCodes, 'file-missing', 'gave-up'].sort()).toEqual([...measuringErrorCodes].sort());
+    // The worker has reasons of its own, which are not about the mesh.
+    expectTypeOf<geometry.MeshErrorCode | 'file-missing' | 'gave-up' | 'took-too-long'>().toEqualTypeOf<MeasuringError['code']>();
+    expect([...geometry.meshErrorCodes, 'file-missing', 'gave-up', 'took-too-long'].sort()).toEqual([...measuringErrorCodes].sort());
     expect([...geometry.findingKinds]).toEqual(finding.shape.kind.options);
   });
   it('is accepted by the contracts as it is, of a sound mesh and of an open one', () => {
