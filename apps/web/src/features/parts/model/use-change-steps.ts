@@ -1,5 +1,4 @@
-import type { QueryClient } from '@tanstack/react-query';
-import { useQueryClient } from '@tanstack/react-query';
+import { useQueryClient, type QueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import { getSentence } from '../../../lib/problem';
 import { useStore } from '../../../lib/store';
@@ -19,14 +18,15 @@ async function readAnew<Answer>(client: QueryClient, projectId: string, answer: 
 /** The steps of one project's list, for as long as its page is open. */
 export function useChangeSteps(projectId: string): { steps: ChangeSteps; state: ChangeStepsState } {
   const client = useQueryClient();
-  const [steps] = useState(() =>
-    createChangeSteps({
+  const [steps] = useState(() => {
+    const created = createChangeSteps({
       undo: (changeId) => readAnew(client, projectId, undoSettingsChange(changeId)),
       remove: (parts) => readAnew(client, projectId, deleteParts(projectId, parts)),
       restore: (parts) => readAnew(client, projectId, restoreParts(projectId, parts)),
       describe: getSentence,
-    }),
-  );
+    });
+    return { ...created, take: (action: Parameters<ChangeSteps['take']>[0]) => created.take(() => readAnew(client, projectId, action())) };
+  });
   useEffect(() => {
     const turn = (event: KeyboardEvent): void => {
       const step = findStep(event);
