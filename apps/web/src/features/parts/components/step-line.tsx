@@ -6,11 +6,15 @@ import { describeLeft, describeStep, type ChangeSteps, type ChangeStepsState } f
 export function StepLine({ steps, state }: { steps: ChangeSteps; state: ChangeStepsState }) {
   const { last, problem, canUndo, canRedo, isBusy } = state;
   const left = last?.step.kind === 'setting' ? describeLeft(last.step.change) : '';
-  const isOpen = last !== undefined || problem !== undefined;
+  const isOpen = isBusy || last !== undefined || problem !== undefined;
   return (
     <div className={isOpen ? 'step-line' : undefined}>
       <div role="status" className="step-line-words">
-        {problem !== undefined ? (
+        {isBusy ? (
+          <StatusTag tone="busy" plain>
+            Changing the parts, and what follows from them
+          </StatusTag>
+        ) : problem !== undefined ? (
           <StatusTag tone="wrong" plain>
             {problem}
           </StatusTag>
@@ -32,7 +36,7 @@ export function StepLine({ steps, state }: { steps: ChangeSteps; state: ChangeSt
           Do again <kbd>Ctrl Shift Z</kbd>
         </Button>
       )}
-      {isOpen && (
+      {isOpen && !isBusy && (
         <Button size="small" variant="minimal" onClick={steps.dismiss}>
           Put away
         </Button>
