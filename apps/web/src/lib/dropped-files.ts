@@ -30,7 +30,7 @@ async function collectEntry(entry: FileSystemEntry, folder: string): Promise<Dro
 export async function collectDrop(transfer: DataTransfer): Promise<DroppedFile[]> {
   const entries = [...transfer.items].filter(({ kind }) => kind === 'file').map((item) => ({ entry: item.webkitGetAsEntry(), file: item.getAsFile() }));
   if (entries.length === 0) return collectChosen(transfer.files);
-  const lists = await Promise.all(entries.map(({ entry, file }) => (entry ? collectEntry(entry, '') : file ? [{ file, folder: '' }] : [])));
+  const lists = await Promise.all(entries.map(async ({ entry, file }) => (entry ? collectEntry(entry, '') : file ? [{ file, folder: '' }] : [])));
   return lists.flat();
 }
 

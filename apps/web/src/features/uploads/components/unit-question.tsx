@@ -62,7 +62,7 @@ export function UnitQuestion({ evidence, answer, onAnswer, count }: UnitQuestion
         {unitsBySize.map((unit) => {
           const row = evidence.find(({ lengthUnit }) => lengthUnit === unit);
           const recedes = row !== undefined && anyPlausible && !row.isPlausible && answer !== unit;
-          const mass = (massKg: number | null | undefined) => (massKg == null ? nothing : writeRoughMass(massKg));
+          const mass = (massKg: number | null | undefined) => (massKg === null || massKg === undefined ? nothing : writeRoughMass(massKg));
           return (
             <tr key={unit} className={`unit-row${answer === unit ? ' unit-row-chosen' : ''}${recedes ? ' unit-row-recedes' : ''}`} onClick={() => onAnswer(unit)}>
               <th scope="row">
