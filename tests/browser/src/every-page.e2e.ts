@@ -4,6 +4,7 @@ import type { BrowserContext, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { password, type ApiUser } from '../../support/api-user';
 import { block } from '../../support/meshes';
+import { answerUnit, chooseFiles, closeDialog, findDialog, meshFile } from './intake-page';
 import { openStage, type Stage } from './stage';
 
 let stage: Stage;
@@ -35,6 +36,8 @@ beforeAll(async () => {
     'open part': await part(add('open.stl', open)),
     'refused part': await part(add('cut.stl', good.slice(0, 300))),
     'part without a unit': await part(add('unitless.stl', block([0, 0, 0], [1, 1, 1]), { lengthUnit: null, densityKgM3: null })),
+    materials: '/materials',
+    'one material': '/materials/al-6061-t6',
     people: '/people',
     'not found': '/projects/00000000-0000-4000-8000-000000000000',
     nowhere: '/no/such/place',
@@ -92,9 +95,49 @@ describe.each(['light', 'dark'] as const)('every page, %s', (colorScheme) => {
       found.push(...(await checkAccess(page, name)));
       expect(await page.title(), name).toMatch(/Masswright/);
     }
+    expect(found).toEqual([]);
+  });
+
+  it('is accessible in each step of adding meshes', async () => {
+    const found: string[] = [];
+    const look = async (step: string) => found.push(...(await checkAccess(page, step)));
+    const dialog = findDialog(page);
     await page.goto(places['project'] ?? '');
     await page.getByRole('button', { name: 'Add meshes' }).first().click();
-    found.push(...(await checkAccess(page, 'adding meshes')));
+    await look('choosing files');
+    await closeDialog(page);
+    const size = colorScheme === 'light' ? 7 : 8;
+    const files = [1, 2].map((count) => meshFile(`${colorScheme} ${count}.stl`, block([0, 0, 0], [size, count, 3])));
+    await chooseFiles(page, [...files, meshFile('letter.stl', new TextEncoder().encode('Dear Sir or Madam')), meshFile('notes.txt', new Uint8Array(9))]);
+    await dialog.getByRole('heading', { name: /What unit/ }).waitFor();
+    await look('the unit');
+    await dialog.getByRole('button', { name: 'Decide file by file' }).click();
+    await look('the unit, file by file');
+    await dialog.getByRole('button', { name: 'Done' }).click();
+    await expect.poll(() => dialog.getByRole('listitem').filter({ hasText: 'Measured' }).count(), { timeout: 30_000 }).toBe(2);
+    await look('the files');
+    await dialog.getByLabel('Mesh files').setInputFiles([meshFile('block.stl', block([0, 0, 0], [size, 9, 9])), meshFile('open.stl', block([0, 0, 0], [size, 9, 8]))]);
+    await dialog.getByRole('heading', { name: '2 files have names that parts have already' }).waitFor();
+    await look('names that parts have');
+    await dialog.getByRole('button', { name: 'New parts, all of them' }).click();
+    await answerUnit(page, 'millimetre');
+    await closeDialog(page);
+    await page.getByRole('region', { name: 'Meshes being added' }).getByRole('button', { name: 'Show' }).click();
+    await look('the tray');
+    expect(found).toEqual([]);
+  });
+
+  it('is accessible in the list with parts selected, a menu open, and a change made', async () => {
+    const found: string[] = [];
+    await page.goto(places['project'] ?? '');
+    await page.getByRole('checkbox', { name: 'Select block', exact: true }).first().click();
+    await page.getByRole('button', { name: 'Unit of the selected parts' }).click();
+    found.push(...(await checkAccess(page, 'the list, a menu open')));
+    await page.getByRole('menuitem', { name: /^inch/ }).click();
+    await page.getByText('Unit of 1 part changed to inch.').waitFor();
+    found.push(...(await checkAccess(page, 'the list, a change made')));
+    await page.keyboard.press('Control+z');
+    await page.getByText('Unit of 1 part put back as before.').waitFor();
     expect(found).toEqual([]);
   });
 });

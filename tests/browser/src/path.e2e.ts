@@ -3,6 +3,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Page } from 'playwright-core';
 import { block, sphere } from '../../support/meshes';
 import { password } from '../../support/api-user';
+import { answerUnit, chooseFiles, closeDialog, meshFile } from './intake-page';
 import { openStage, type Stage } from './stage';
 
 let stage: Stage;
@@ -16,7 +17,6 @@ afterAll(async () => {
   await stage.close();
 });
 
-const file = (name: string, bytes: Uint8Array) => ({ name, mimeType: 'model/stl', buffer: Buffer.from(bytes) });
 /** The first number in a text, thin spaces taken out. */
 const numberIn = (text: string | null): number => Number(/-?\d[\d\u2009]*\.?\d*/.exec(text ?? '')?.[0].replaceAll('\u2009', '') ?? Number.NaN);
 
@@ -40,12 +40,9 @@ describe('the whole path as a person goes it', () => {
   });
 
   it('adds a real binary STL with its unit and density, and reads the handbook’s numbers seconds later', async () => {
-    await page.getByRole('button', { name: 'Add meshes' }).first().click();
-    await page.locator('input[type=file]').setInputFiles(file('block.stl', block([0, 0, 0], [40, 30, 20])));
-    await page.getByRole('radio', { name: /^millimetre/ }).check();
-    await page.getByLabel('Density').fill('2.7 g/cm3');
-    await page.getByRole('button', { name: 'Add 1 mesh' }).click();
-    await page.getByRole('button', { name: 'Close', exact: true }).last().click();
+    await chooseFiles(page, [meshFile('block.stl', block([0, 0, 0], [40, 30, 20]))]);
+    await answerUnit(page, 'millimetre', '2.7 g/cm3');
+    await closeDialog(page);
     await page.getByRole('link', { name: 'block', exact: true }).click();
     await page.getByRole('heading', { name: 'Figures' }).waitFor();
     // m = ρabc = 64.8 g; Ix = m(b² + c²)/12, Iy = m(a² + c²)/12, Iz = m(a² + b²)/12 in kg·mm²: handbook, from memory.
@@ -98,22 +95,22 @@ describe('the whole path as a person goes it', () => {
 describe('several files at once', () => {
   it('good ones become parts; bad ones stay in the list with their reason, through a reload in the midst', async () => {
     await page.getByRole('link', { name: 'Reel, mark 2' }).first().click();
-    await page.getByRole('button', { name: 'Add meshes' }).first().click();
     const good = block([0, 0, 0], [1, 2, 3]);
-    await page.locator('input[type=file]').setInputFiles([
-      file('large.stl', sphere(30, 300_000)),
-      file('good.stl', good),
-      file('cut.stl', good.slice(0, 400)),
-      file('letter.stl', new TextEncoder().encode('Dear Sir or Madam')),
-      file('open.stl', (() => {
+    await chooseFiles(page, [
+      meshFile('large.stl', sphere(30, 300_000)),
+      meshFile('good.stl', good),
+      meshFile('cut.stl', good.slice(0, 400)),
+      meshFile('letter.stl', new TextEncoder().encode('Dear Sir or Madam')),
+      meshFile('open.stl', (() => {
         const bytes = good.slice(0, good.length - 50);
         new DataView(bytes.buffer).setUint32(80, 11, true);
         return bytes;
       })()),
     ]);
-    await page.getByRole('radio', { name: /^inch/ }).check();
-    await page.getByRole('button', { name: 'Add 5 meshes' }).click();
+    await answerUnit(page, 'inch');
     await page.getByText('All are sent.').waitFor({ timeout: 60_000 });
+    // Should something that was stated still be on its way, the page asks before it is left.
+    page.once('dialog', (dialog) => void dialog.accept());
     await page.reload();
     const row = (name: string) => page.getByRole('row').filter({ has: page.getByRole('link', { name, exact: true }) });
     await expect.poll(async () => row('large').textContent(), { timeout: 30_000 }).toContain('Closed');
