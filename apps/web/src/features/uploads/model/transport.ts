@@ -53,6 +53,9 @@ export function describeFailure(error: unknown): string {
   return 'The connection to the storage was lost. What has arrived is kept; try again to send the rest.';
 }
 
+/** What goes wrong is told to the person beside the file; the console has no use for it. */
+const silence = { debug: () => undefined, warn: () => undefined, error: () => undefined };
+
 /**
  * Sends files to the object storage in parts, each part granted by the api for its very hash; the bytes never pass through the api.
  * A file that was begun before, by name, folder and size, goes on: a part is passed over only where the storage has one of the same SHA-256.
@@ -66,7 +69,7 @@ export class Transport {
   private readonly uppy: Uppy<FileMeta, Body>;
 
   constructor(private readonly callbacks: TransportCallbacks) {
-    this.uppy = new Uppy<FileMeta, Body>({ autoProceed: false });
+    this.uppy = new Uppy<FileMeta, Body>({ autoProceed: false, logger: silence });
     this.uppy.use(AwsS3<FileMeta, Body>, {
       limit: requestsAtOnce,
       retryDelays: retryDelaysMs,
