@@ -115,8 +115,8 @@ describe('several files at once', () => {
     const row = (name: string) => page.getByRole('row').filter({ has: page.getByRole('link', { name, exact: true }) });
     await expect.poll(async () => row('large').textContent(), { timeout: 30_000 }).toContain('Closed');
     await expect.poll(async () => row('cut').textContent(), { timeout: 30_000 }).toContain('cut off');
-    await expect.poll(async () => row('letter').textContent()).toContain('Not measured');
-    await expect.poll(async () => row('open').textContent()).toContain('Open');
+    await expect.poll(async () => row('letter').textContent(), { timeout: 30_000 }).toContain('Not measured');
+    await expect.poll(async () => row('open').textContent(), { timeout: 30_000 }).toContain('Open');
     await row('open').getByRole('link').first().click();
     await page.getByText('No figures.').waitFor();
     expect(await page.getByRole('region', { name: 'Figures' }).textContent()).toContain('open at 3 edges');
