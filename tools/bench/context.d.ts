@@ -12,6 +12,15 @@ export interface BenchContext {
   env: Record<string, string>;
   /** Where the api answers; only with "programs". */
   apiUrl: string | undefined;
+  /** The worker that runs from the beginning; only with "programs". */
+  worker: BenchWorker | undefined;
+  /** Starts another worker beside it, for a bench that compares; only with "programs". What is still running at the end is stopped. */
+  startWorker: ((env?: Record<string, string>) => Promise<BenchWorker>) | undefined;
   /** One line of the result. */
   print: (line: string) => void;
+}
+
+export interface BenchWorker {
+  pid: number | undefined;
+  stop: () => Promise<void>;
 }

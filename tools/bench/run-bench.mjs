@@ -54,6 +54,10 @@ export async function runBench(file, print) {
   let env = {};
   /** @type {string | undefined} */
   let apiUrl;
+  /** @type {import('./context.d.ts').BenchWorker | undefined} */
+  let worker;
+  /** @type {import('./context.d.ts').BenchContext['startWorker']} */
+  let startWorker;
   const { folder } = chooseDataFolder('.test/bench', needs.size > 0);
   try {
     if (needs.size > 0) {
@@ -65,14 +69,22 @@ export async function runBench(file, print) {
       env = services.env;
       if (needs.has('programs')) {
         const programEnv = makeEnvironment(services.env, apiPort, workerPort);
-        for (const [kind, port, path] of /** @type {const} */ ([['worker', workerPort, '/health/ready'], ['api', apiPort, '/api/health/ready']])) {
-          const program = await startProgram({ kind, file: `${buildFolder}/apps/${kind}/main.js`, env: programEnv, readyUrl: `http://127.0.0.1:${port}${path}`, logFile: `${folder}/data/${kind}.log`, readyTimeoutMs: 60_000 });
-          stops.unshift(() => program.stop());
-        }
+        let workers = 0;
+        startWorker = async (more = {}) => {
+          workers += 1;
+          const port = workers === 1 ? workerPort : await findFreePort();
+          const program = await startProgram({ kind: 'worker', file: `${buildFolder}/apps/worker/main.js`, env: { ...programEnv, ...more, WORKER_PORT: String(port) }, readyUrl: `http://127.0.0.1:${port}/health/ready`, logFile: `${folder}/data/worker-${workers}.log`, readyTimeoutMs: 60_000 });
+          const stop = async () => void (await program.stop());
+          stops.unshift(stop);
+          return { pid: program.pid, stop };
+        };
+        worker = await startWorker();
+        const api = await startProgram({ kind: 'api', file: `${buildFolder}/apps/api/main.js`, env: programEnv, readyUrl: `http://127.0.0.1:${apiPort}/api/health/ready`, logFile: `${folder}/data/api.log`, readyTimeoutMs: 60_000 });
+        stops.unshift(async () => void (await api.stop()));
         apiUrl = `http://127.0.0.1:${apiPort}`;
       }
     }
-    await bench.run({ env, apiUrl, print });
+    await bench.run({ env, apiUrl, worker, startWorker, print });
   } finally {
     for (const stop of stops) await stop();
     rmSync(`${folder}/data`, { recursive: true, force: true });
