@@ -140,10 +140,13 @@ export async function lockPart(tx: Transaction, partId: string): Promise<{ proje
   return rows[0];
 }
 
-/** Adds a part's next revision with its setting and a queued run; `unitStated` says whether its unit was stated for this very file. */
+/**
+ * Adds a part's next revision with its setting and a queued run; `unitStated` says whether its unit was stated for this very file. `settingVersion` goes
+ * on from the revision before: a change that was made on that one's setting is then never taken for one of this.
+ */
 export async function insertRevision(
   tx: Transaction,
-  added: { organisationId: string; partId: string; uploadId: string; reason: string; createdBy: string; setting: Setting; unitStated: boolean },
+  added: { organisationId: string; partId: string; uploadId: string; reason: string; createdBy: string; setting: Setting; settingVersion: number; unitStated: boolean },
 ): Promise<{ revisionId: string; runId: string; ordinal: number }> {
   const { organisationId, partId, createdBy } = added;
   const [revision] = await tx
@@ -159,7 +162,7 @@ export async function insertRevision(
     .returning({ id: revisions.id, ordinal: revisions.ordinal });
   if (revision === undefined) throw new Error('An insert gave no row.');
   const stated = added.unitStated ? { unitStatedAt: sql`now()`, unitStatedBy: createdBy } : {};
-  await tx.insert(settings).values({ revisionId: revision.id, organisationId, ...writeSetting(added.setting), ...stated, changedBy: createdBy });
+  await tx.insert(settings).values({ revisionId: revision.id, organisationId, ...writeSetting(added.setting), ...stated, version: added.settingVersion, changedBy: createdBy });
   const [run] = await tx.insert(measuringRuns).values({ organisationId, revisionId: revision.id }).returning({ id: measuringRuns.id });
   if (run === undefined) throw new Error('An insert gave no row.');
   return { revisionId: revision.id, runId: run.id, ordinal: revision.ordinal };

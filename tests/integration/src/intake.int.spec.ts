@@ -183,7 +183,11 @@ describe('a next revision', () => {
     expect(next.number).toBe(added.number);
     expect(next.revision).toMatchObject({ letter: 'B', reason: 'boss 1 mm longer' });
     const { densityKgM3, densitySpreadKgM3, material } = set.revision.setting;
-    expect(next.revision.setting).toMatchObject({ lengthUnit: 'mm', densityKgM3, densitySpreadKgM3, material, axis, weighing: null, unitStated: null, version: 1 });
+    expect(next.revision.setting).toMatchObject({ lengthUnit: 'mm', densityKgM3, densitySpreadKgM3, material, axis, weighing: null, unitStated: null });
+    // Who still has the setting of the revision before in view can't change this one by it.
+    expect(next.revision.setting.version).toBe(set.revision.setting.version + 1);
+    const late = await engineer.ask<Problem>('PATCH', `/parts/${added.id}/setting`, { version: set.revision.setting.version, densityKgM3: 1 });
+    expect(late).toMatchObject({ status: 409, body: { code: 'stale-version' } });
     expect(next.revisions.map(({ letter, reason }) => [letter, reason])).toEqual([
       ['B', 'boss 1 mm longer'],
       ['A', ''],
@@ -201,9 +205,9 @@ describe('a next revision', () => {
     expect(next.unitDoubt?.lengthUnit).toBe('inch');
     const row = (await engineer.get<PartList>(`/projects/${projectId}/parts?states=unit-doubt`)).items;
     expect(row.map(({ id }) => id)).toEqual([added.id]);
-    const kept = await engineer.expect<Part>('PATCH', `/parts/${added.id}/setting`, { version: 1, lengthUnit: 'mm' });
+    const kept = await engineer.expect<Part>('PATCH', `/parts/${added.id}/setting`, { version: next.revision.setting.version, lengthUnit: 'mm' });
     expect([kept.state, kept.unitDoubt]).toEqual(['ready', null]);
-    const mended = await engineer.expect<Part>('PATCH', `/parts/${added.id}/setting`, { version: 2, lengthUnit: 'inch' });
+    const mended = await engineer.expect<Part>('PATCH', `/parts/${added.id}/setting`, { version: kept.revision.setting.version, lengthUnit: 'inch' });
     expect(mended.revision.setting).toMatchObject({ lengthUnit: 'inch', unitStated: { by: 'Ines Marsh' } });
   });
 

@@ -1,6 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
-import type { MovedParts, Part, PartList, PartSelection, Project } from '@masswright/contracts';
+import type { MovedParts, Part, PartList, PartSelection, Project, Upload } from '@masswright/contracts';
 import { programEnvironment, startTestApi, type TestApi } from '../../support/api';
 import type { Answer, ApiUser } from '../../support/api-user';
 import { listen } from '../../support/events';
@@ -67,6 +67,8 @@ describe('a deleted part', () => {
     const upload = await engineer.send(projectId, 'next.stl', block([0, 0, 0], [1, 1, 1]));
     const completion = await engineer.ask('POST', `/uploads/${upload.id}/completion`, { setting: { lengthUnit: 'mm', densityKgM3: 1 }, revisionOf: { partId: at(0), reason: '' } });
     expect(completion).toMatchObject({ status: 409, body: { detail: expect.stringContaining('estore it first') as string } });
+    // What was sent is still parts of an upload, not an object that nothing can be added to.
+    expect((await engineer.get<Upload>(`/uploads/${upload.id}`)).storedParts).toHaveLength(1);
     await restore({ ids: [at(0)] });
     expect(await engineer.expect<Part>('PATCH', `/parts/${at(0)}`, { name: 'Other' })).toMatchObject({ name: 'Other', deletedAt: null, can: { edit: true } });
   });

@@ -28,8 +28,16 @@ interface Addition {
   partId: string;
   reason: string;
   setting: Setting;
+  settingVersion: number;
   unitStated: boolean;
   audited: { action: string; after: object };
+}
+
+/** Holds the part that an upload goes on with. @throws AppError where the project has none, or where it is deleted */
+async function holdContinued(tx: Transaction, { projectId }: UploadRow, partId: string): Promise<void> {
+  const held = await lockPart(tx, partId);
+  if (held?.projectId !== projectId) throw notFound('part');
+  requirePresent(held);
 }
 
 /** Turns wholly sent files into parts and revisions. */
@@ -45,9 +53,12 @@ export class UploadCompletionService {
    * answer: the same upload gives the same part.
    */
   async complete(context: SignedInContext, uploadId: string, request: CompleteUploadRequest): Promise<Part> {
-    const upload = await this.work.run(context, (tx, actor) => {
+    const upload = await this.work.run(context, async (tx, actor) => {
       requireEdit(actor);
-      return getUpload(tx, uploadId);
+      const announced = await getUpload(tx, uploadId);
+      // Refused before the storage makes one object of the parts: then the upload is still one that can be gone on with.
+      if (announced.state === 'open' && request.revisionOf !== undefined) await holdContinued(tx, announced, request.revisionOf.partId);
+      return announced;
     });
     if (upload.state === 'cancelled' || upload.state === 'discarded') throw new AppError('conflict', 'This upload was cancelled. Add the file again.');
     if (upload.state === 'open') await completeObject(this.storage, upload, request.partHashes);
@@ -67,9 +78,9 @@ export class UploadCompletionService {
   private async add(tx: Transaction, context: SignedInContext, actor: Actor, upload: UploadRow, request: CompleteUploadRequest): Promise<Part> {
     const { organisationId, userId, requestId } = context;
     const { projectId } = upload;
-    const { partId, reason, setting, unitStated, audited } =
+    const { partId, reason, setting, settingVersion, unitStated, audited } =
       request.revisionOf === undefined ? await this.addPart(tx, organisationId, upload, request) : await this.continuePart(tx, upload, request, request.revisionOf);
-    const { runId, revisionId } = await insertRevision(tx, { organisationId, partId, uploadId: upload.id, reason, createdBy: userId, setting, unitStated });
+    const { runId, revisionId } = await insertRevision(tx, { organisationId, partId, uploadId: upload.id, reason, createdBy: userId, setting, settingVersion, unitStated });
     await addToOutbox(tx, { organisationId, job: 'measurement.run', payload: { organisationId, runId }, requestId });
     await refreshPartSummaries(tx, organisationId, [partId], summarisePart);
     await audit(tx, context, { action: audited.action, subject: { type: 'part', id: partId }, after: { ...audited.after, revisionId, setting } });
@@ -83,14 +94,12 @@ export class UploadCompletionService {
     const name = request.partName ?? nameOfPart(upload.fileName);
     await insertPart(tx, { id, organisationId, projectId: upload.projectId, number, name });
     const setting = await this.state(tx, nothingStated, request);
-    return { partId: id, reason: '', setting, unitStated: setting.lengthUnit !== null, audited: { action: 'part.create', after: { number, name } } };
+    return { partId: id, reason: '', setting, settingVersion: 1, unitStated: setting.lengthUnit !== null, audited: { action: 'part.create', after: { number, name } } };
   }
 
   /** A new revision takes the setting of the one before, but never its weighed mass; what was not stated there is taken from the request. */
   private async continuePart(tx: Transaction, upload: UploadRow, request: CompleteUploadRequest, { partId, reason }: NonNullable<CompleteUploadRequest['revisionOf']>): Promise<Addition> {
-    const held = await lockPart(tx, partId);
-    if (held?.projectId !== upload.projectId) throw notFound('part');
-    requirePresent(held);
+    await holdContinued(tx, upload, partId);
     const stored = await findPart(tx, partId);
     if (stored === undefined) throw notFound('part');
     const before: Setting = { ...readSetting(stored.setting), weighing: null };
@@ -104,7 +113,7 @@ export class UploadCompletionService {
       material: density.material,
     };
     const unitStated = before.lengthUnit === null && setting.lengthUnit !== null;
-    return { partId, reason, setting, unitStated, audited: { action: 'revision.create', after: { reason } } };
+    return { partId, reason, setting, settingVersion: stored.setting.version + 1, unitStated, audited: { action: 'revision.create', after: { reason } } };
   }
 
   private async state(tx: Transaction, before: Setting, { setting: { lengthUnit, ...choice } }: CompleteUploadRequest): Promise<Setting> {
