@@ -13,9 +13,8 @@ import {
   type StorageUse,
   type Upload,
 } from '@masswright/contracts';
-import { addToOutbox, closeUpload, findParts, findPartsByFileName, findProject, holdStoredBytes, insertUpload, listOpenUploads, sumStoredBytes, type Transaction } from '@masswright/drizzle';
+import { addToOutbox, closeUpload, findParts, findPartsByFileName, hasProject, holdStoredBytes, insertUpload, listOpenUploads, sumStoredBytes, type StoredPart, type Transaction } from '@masswright/drizzle';
 import { ObjectStorage } from '@masswright/storage';
-import { revisionLetter } from '../parts/part.presenter';
 import { InjectApiSettings, type ApiSettings } from '../platform/api-settings';
 import { AppError, notFound } from '../platform/app-error';
 import type { SignedInContext } from '../platform/request-context';
@@ -24,7 +23,7 @@ import { requireEdit } from '../projects/project.policy';
 import { formatBytes } from './format-bytes';
 import { countParts, layOutParts, sizeOfPart } from './part-layout';
 import { getUpload, listStoredParts } from './stored-upload';
-import { presentOpenUpload, presentUpload } from './upload.presenter';
+import { presentNameMatch, presentOpenUpload, presentUpload } from './upload.presenter';
 
 const grantSeconds = 3600;
 const contentType = 'application/octet-stream';
@@ -121,23 +120,13 @@ export class UploadsService {
     return this.work.run(context, async (tx, actor) => {
       await this.requireProject(tx, actor, projectId);
       const found = await findPartsByFileName(tx, projectId, [...new Set(fileNames.map(fileNameKey))]);
-      const stored = await findParts(tx, found.map(({ partId }) => partId));
-      const matches = fileNames.flatMap((fileName) =>
-        stored
-          .filter(({ upload }) => fileNameKey(upload.fileName) === fileNameKey(fileName))
-          .map(({ part, revision, upload }) => ({
-            fileName,
-            partId: part.id,
-            number: part.number,
-            name: part.name,
-            letter: revisionLetter(revision.ordinal),
-            storedFileName: upload.fileName,
-            folder: upload.folder,
-            sizeBytes: upload.sizeBytes,
-            sha256: upload.sha256?.toString('hex') ?? null,
-            sameCase: upload.fileName === cleanFileName(fileName),
-          })),
-      );
+      const byKey = new Map<string, StoredPart[]>();
+      for (const stored of await findParts(tx, found.map(({ partId }) => partId))) {
+        const key = fileNameKey(stored.upload.fileName);
+        byKey.set(key, byKey.get(key) ?? []);
+        byKey.get(key)?.push(stored);
+      }
+      const matches = fileNames.flatMap((fileName) => (byKey.get(fileNameKey(fileName)) ?? []).map((stored) => presentNameMatch(fileName, stored)));
       return { matches };
     });
   }
@@ -152,7 +141,7 @@ export class UploadsService {
 
   private async requireProject(tx: Transaction, actor: Actor, projectId: string): Promise<void> {
     requireEdit(actor);
-    if ((await findProject(tx, projectId)) === undefined) throw notFound('project');
+    if (!(await hasProject(tx, projectId))) throw notFound('project');
   }
 
   private checkFileSize(sizeBytes: number): void {
