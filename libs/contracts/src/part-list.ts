@@ -75,7 +75,7 @@ export type ChangeSettingsRequest = z.infer<typeof changeSettingsRequest>;
 
 /**
  * What a bulk change did. It can be taken back once; that is a change of its own, which can be taken back in turn.
- * What somebody else has changed since is left as it is, and named.
+ * What somebody else has changed or deleted since is left as it is, and named.
  */
 export const settingsChange = z.object({
   id,
@@ -84,7 +84,7 @@ export const settingsChange = z.object({
   changed: z.number().int().nonnegative(),
   /** Parts whose setting was so already. */
   unchanged: z.number().int().nonnegative(),
-  /** Parts that were left as they are because their setting was changed meanwhile; the first 100. */
+  /** Parts that were left as they are because their setting was changed meanwhile, or because they are deleted (then `changedBy` is ''); the first 100. */
   left: z.array(z.object({ partId: id, number: z.number().int(), name: z.string(), changedBy: z.string() })),
   /** What this change took back. */
   reverses: id.nullable(),

@@ -105,12 +105,17 @@ describe('one change for many parts', () => {
     expect(await settings()).toEqual(before);
   });
 
-  it('of a part that is deleted is refused with the way out', async () => {
+  it('leaves a part that is deleted as it is and names it; of deleted ones alone it is refused with the way out', async () => {
     await engineer.expect('POST', `/projects/${projectId}/part-deletions`, { parts: { ids: [at(3)] } });
-    const { status, body } = await engineer.ask<{ detail: string }>('POST', `/projects/${projectId}/setting-changes`, { parts: { ids }, change: { lengthUnit: 'm' } });
-    expect([status, body.detail]).toEqual([409, expect.stringContaining('Restore it first')]);
+    const before = await settingOf(at(3));
+    const { status, body } = await change({ ids }, { lengthUnit: 'm' });
+    expect([status, body.changed, body.left]).toMatchObject([201, 21, [{ partId: at(3), number: 4, changedBy: '' }]]);
+    expect(await settingOf(at(3))).toEqual(before);
+    const alone = await engineer.ask<{ detail: string }>('POST', `/projects/${projectId}/setting-changes`, { parts: { ids: [at(3)] }, change: { lengthUnit: 'm' } });
+    expect([alone.status, alone.body.detail]).toEqual([409, expect.stringContaining('Restore it first')]);
     // A filter means the others.
-    expect((await change({ filter: {}, except: [] }, { lengthUnit: 'm' })).body.changed).toBe(21);
+    const filtered = await change({ filter: {}, except: [] }, { lengthUnit: 'cm' });
+    expect([filtered.body.changed, filtered.body.left]).toEqual([21, []]);
   });
 });
 
@@ -158,7 +163,7 @@ describe('taking it back', () => {
     await engineer.addMesh(projectId, 'next.stl', block([0, 0, 0], [1, 1, 1]), { lengthUnit: 'mm', densityKgM3: 1000 }, { revisionOf: { partId: at(4), reason: 'Thicker' } });
     await engineer.expect('POST', `/projects/${projectId}/part-deletions`, { parts: { ids: [at(7)] } });
     const back = await undo(body.id);
-    expect(back.body).toMatchObject({ changed: 19, left: [{ number: 2, partId: at(1), changedBy: 'Ines Marsh' }, { number: 5 }, { number: 8 }] });
+    expect(back.body).toMatchObject({ changed: 19, left: [{ number: 2, partId: at(1), changedBy: 'Ines Marsh' }, { number: 5 }, { number: 8, changedBy: '' }] });
     expect(await settingOf(at(1))).toMatchObject({ lengthUnit: 'm', densityKgM3: 1, version: 3 });
     expect(await settingOf(at(2))).toMatchObject({ lengthUnit: 'mm', version: 3 });
   });

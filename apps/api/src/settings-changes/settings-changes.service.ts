@@ -18,13 +18,12 @@ import {
 import { summarisePart } from '@masswright/mechanics';
 import { prepareDensityChoice } from '../materials/choose-density';
 import { selectParts } from '../part-list/select-parts';
-import { requirePresent } from '../parts/stored-part';
 import { AppError, notFound } from '../platform/app-error';
 import type { SignedInContext } from '../platform/request-context';
 import { audit, Work, type Actor } from '../platform/work';
 import { requireEdit } from '../projects/project.policy';
 import { changeOfSetting, restoreSetting } from './change-of-setting';
-import { sortOutRestorable, type LeftPart } from './sort-out-restorable';
+import { separateDeleted, sortOutRestorable, type LeftPart } from './sort-out-restorable';
 
 /** One setting that is going to be other than it was. */
 interface Step {
@@ -53,15 +52,15 @@ export class SettingsChangesService {
     return this.work.run(context, async (tx, actor) => {
       requireEdit(actor);
       const selected = await selectParts(tx, projectId, parts);
-      for (const part of selected) requirePresent(part);
+      const { present, deleted } = separateDeleted(selected);
       const choose = await prepareDensityChoice(tx, change);
       const now = { at: new Date().toISOString(), by: context.userId };
-      const settings = await findCurrentSettings(tx, selected.map(({ id }) => id));
+      const settings = await findCurrentSettings(tx, present.map(({ id }) => id));
       const steps = settings.flatMap((current) => {
         const after = changeOfSetting(current, change, choose, now);
         return after === undefined ? [] : [{ current, after }];
       });
-      return this.write(tx, context, actor, { projectId, steps, unchanged: settings.length - steps.length, left: [], reverses: null, said: change });
+      return this.write(tx, context, actor, { projectId, steps, unchanged: settings.length - steps.length, left: deleted, reverses: null, said: change });
     });
   }
 

@@ -1,7 +1,19 @@
 import type { SettingsChange } from '@masswright/contracts';
 import type { CurrentSetting, HeldPart, listSettingsChangeItems, SettingBefore } from '@masswright/drizzle';
+import { requirePresent } from '../parts/stored-part';
 
 export type LeftPart = SettingsChange['left'][number];
+
+const leave = ({ id, number, name }: HeldPart, changedBy: string): LeftPart => ({ partId: id, number, name, changedBy });
+
+/** Of parts that are to be changed, those that are there, and those that somebody has deleted meanwhile. @throws AppError conflict where none is there */
+export function separateDeleted(held: readonly HeldPart[]): { present: HeldPart[]; deleted: LeftPart[] } {
+  const present = held.filter(({ deletedAt }) => deletedAt === null);
+  if (present.length === 0) held.forEach(requirePresent);
+  const deleted = held.filter(({ deletedAt }) => deletedAt !== null).sort((one, other) => one.number - other.number);
+  return { present, deleted: deleted.map((part) => leave(part, '')) };
+}
+
 type Item = Awaited<ReturnType<typeof listSettingsChangeItems>>[number];
 
 /**
@@ -19,7 +31,7 @@ export function sortOutRestorable(items: readonly Item[], held: readonly HeldPar
     // Forgotten between the reading and the holding: there is nothing left to name.
     if (part === undefined || current === undefined) continue;
     if (part.deletedAt === null && current.revisionId === revisionId && current.version === versionAfter) restorable.push({ current, before });
-    else left.push({ partId, number: part.number, name: part.name, changedBy: current.changedByName });
+    else left.push(leave(part, part.deletedAt === null ? current.changedByName : ''));
   }
   return { restorable, left };
 }

@@ -10,7 +10,7 @@ function Line({ steps }: { steps: ChangeSteps }) {
 
 function open(): ChangeSteps {
   const moved = (parts: object): Promise<{ ids: string[] }> => Promise.resolve({ ids: 'ids' in parts ? (parts.ids as string[]) : [] });
-  const steps = createChangeSteps({ undo: () => Promise.reject(new Error('unused')), remove: moved, restore: moved, describe: String });
+  const steps = createChangeSteps({ undo: () => Promise.reject(new Error('unused')), remove: moved, restore: moved, isPassing: () => false, describe: String });
   render(<Line steps={steps} />);
   return steps;
 }

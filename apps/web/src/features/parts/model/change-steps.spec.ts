@@ -22,6 +22,7 @@ describe('steps of a list', () => {
       undo: (id) => note(`undo ${id}`, change(`${id}'`, id)),
       remove: (parts) => note('delete', { ids: idsOf(parts) }),
       restore: (parts) => note('restore', { ids: idsOf(parts) }),
+      isPassing: (error) => String(error).includes('connection'),
       describe: String,
     });
   });
@@ -63,14 +64,31 @@ describe('steps of a list', () => {
     expect(steps.get()).toMatchObject({ canUndo: true, canRedo: false });
   });
 
-  it('a refusal is said, and the step is still there', async () => {
+  it('a lost connection is said, and the step is still there', async () => {
     await steps.take(unit('1'));
-    refusal = new Error('It was taken back already.');
+    refusal = new Error('The connection was lost.');
     await steps.undo();
-    expect(steps.get()).toMatchObject({ problem: 'Error: It was taken back already.', canUndo: true, isBusy: false });
+    expect(steps.get()).toMatchObject({ problem: 'Error: The connection was lost.', canUndo: true, isBusy: false });
     refusal = undefined;
     await steps.undo();
     expect(asked).toEqual(['undo 1']);
+  });
+
+  it('a refusal is said, and does not stand before the step behind it', async () => {
+    await steps.take(unit('1'));
+    await steps.take(unit('2'));
+    refusal = new Error('It was taken back already.');
+    await steps.undo();
+    expect(steps.get()).toMatchObject({ problem: 'Error: It was taken back already.', canUndo: true, canRedo: false, isBusy: false });
+    refusal = undefined;
+    await steps.undo();
+    expect(asked).toEqual(['undo 1']);
+  });
+
+  it('of parts that others restored first asks nothing', async () => {
+    await steps.take(() => Promise.resolve({ kind: 'deleted', ids: [] }));
+    await steps.undo();
+    expect(asked).toEqual([]);
   });
 
   it('with nothing to take back, undo asks nothing', async () => {
@@ -81,7 +99,8 @@ describe('steps of a list', () => {
 
   it('names the parts that were left, and because of whom', () => {
     const left = ['Drum', 'Pawl', 'Knob', 'Cover'].map((name, index) => ({ partId: name, number: index, name, changedBy: 'Tom Vale' }));
-    expect(describeLeft({ ...change('1'), left })).toBe('Left as they are, because they were changed meanwhile: Drum (Tom Vale), Pawl (Tom Vale), Knob (Tom Vale) and 1 more.');
+    expect(describeLeft({ ...change('1'), left })).toBe('Left as they are, because they were changed or deleted meanwhile: Drum (Tom Vale), Pawl (Tom Vale), Knob (Tom Vale) and 1 more.');
+    expect(describeLeft({ ...change('1'), left: [{ partId: 'drum', number: 1, name: 'Drum', changedBy: '' }] })).toBe('Left as they are, because they were changed or deleted meanwhile: Drum.');
     expect(describeLeft(change('1'))).toBe('');
   });
 });

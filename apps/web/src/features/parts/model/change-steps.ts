@@ -12,6 +12,8 @@ export interface ChangeRequests {
   undo: (changeId: string) => Promise<SettingsChange>;
   remove: (parts: ChosenParts) => Promise<{ ids: string[] }>;
   restore: (parts: ChosenParts) => Promise<{ ids: string[] }>;
+  /** The same may succeed in a while: the connection, and not the step, was at fault. */
+  isPassing: (error: unknown) => boolean;
   describe: (error: unknown) => string;
 }
 
@@ -42,10 +44,11 @@ export function createChangeSteps(requests: ChangeRequests): ChangeSteps {
   const reverse = async (step: ChangeStep): Promise<ChangeStep> => {
     if (step.kind === 'setting') return { ...step, change: await requests.undo(step.change.id) };
     const move = step.kind === 'deleted' ? requests.restore : requests.remove;
-    const { ids } = await move({ ids: [...step.ids] });
+    // Others may have been first with all of them.
+    const { ids } = step.ids.length === 0 ? step : await move({ ids: [...step.ids] });
     return { kind: step.kind === 'deleted' ? 'restored' : 'deleted', ids };
   };
-  const settle = async (by: 'do' | 'undo' | 'redo', action: () => Promise<ChangeStep>, onDone: (step: ChangeStep) => void): Promise<void> => {
+  const settle = async (by: 'do' | 'undo' | 'redo', action: () => Promise<ChangeStep>, onDone: (step: ChangeStep) => void, onRefused?: () => void): Promise<void> => {
     if (store.get().isBusy) return;
     store.set((state) => ({ ...state, isBusy: true, problem: undefined }));
     try {
@@ -53,16 +56,23 @@ export function createChangeSteps(requests: ChangeRequests): ChangeSteps {
       onDone(step);
       store.set({ last: { step, by }, canUndo: done.length > 0, canRedo: undone.length > 0, isBusy: false });
     } catch (error) {
-      store.set((state) => ({ ...state, isBusy: false, problem: requests.describe(error) }));
+      // What is refused once is refused for good, and must not stand before the steps behind it.
+      if (!requests.isPassing(error)) onRefused?.();
+      store.set((state) => ({ ...state, canUndo: done.length > 0, canRedo: undone.length > 0, isBusy: false, problem: requests.describe(error) }));
     }
   };
   const turn = (by: 'undo' | 'redo', from: ChangeStep[], to: ChangeStep[]): Promise<void> => {
     const step = from.at(-1);
     if (!step) return Promise.resolve();
-    return settle(by, () => reverse(step), (reversed) => {
-      from.pop();
-      to.push(reversed);
-    });
+    return settle(
+      by,
+      () => reverse(step),
+      (reversed) => {
+        from.pop();
+        to.push(reversed);
+      },
+      () => void from.pop(),
+    );
   };
   return {
     get: store.get,
@@ -93,7 +103,7 @@ export function describeStep({ step, by }: NonNullable<ChangeStepsState['last']>
 /** Which parts were left as they are, and because of whom. */
 export function describeLeft({ left }: SettingsChange): string {
   if (left.length === 0) return '';
-  const named = left.slice(0, 3).map(({ name, changedBy }) => `${name} (${changedBy})`);
+  const named = left.slice(0, 3).map(({ name, changedBy }) => (changedBy === '' ? name : `${name} (${changedBy})`));
   const more = left.length > named.length ? ` and ${left.length - named.length} more` : '';
-  return `Left as they are, because they were changed meanwhile: ${named.join(', ')}${more}.`;
+  return `Left as they are, because they were changed or deleted meanwhile: ${named.join(', ')}${more}.`;
 }

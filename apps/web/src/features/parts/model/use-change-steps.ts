@@ -1,6 +1,6 @@
 import { useQueryClient, type QueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
-import { getSentence } from '../../../lib/problem';
+import { getSentence, isWorthAnotherTry } from '../../../lib/problem';
 import { useStore } from '../../../lib/store';
 import { partsKey } from '../api/keys';
 import { deleteParts, restoreParts, undoSettingsChange } from '../api/part-changes';
@@ -23,6 +23,7 @@ export function useChangeSteps(projectId: string): { steps: ChangeSteps; state: 
       undo: (changeId) => readAnew(client, projectId, undoSettingsChange(changeId)),
       remove: (parts) => readAnew(client, projectId, deleteParts(projectId, parts)),
       restore: (parts) => readAnew(client, projectId, restoreParts(projectId, parts)),
+      isPassing: isWorthAnotherTry,
       describe: getSentence,
     });
     return { ...created, take: (action: Parameters<ChangeSteps['take']>[0]) => created.take(() => readAnew(client, projectId, action())) };
