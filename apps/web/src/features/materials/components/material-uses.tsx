@@ -7,6 +7,7 @@ import { Loading } from '../../../components/loading';
 import { ProblemNotice } from '../../../components/problem-notice';
 import { writePlain } from '../../../lib/material-words';
 import { countOf } from '../../../lib/plural';
+import { findStep } from '../../../lib/undo-keys';
 import { materialsKey, useMaterialUses } from '../api/materials';
 import { takeBack, takePresentDensity } from '../api/take-density';
 import { isBehind } from '../model/use-figures';
@@ -40,7 +41,7 @@ function describe({ changes, by }: Done): string {
   const count = changes.reduce((sum, { changed }) => sum + changed, 0);
   const left = changes.flatMap(({ left: names }) => names).map(({ name }) => name);
   const sentence = by === 'undo' ? `${countOf(count, 'part')} put back to the density of before.` : `${countOf(count, 'part')} took the present density.`;
-  return left.length === 0 ? sentence : `${sentence} Left as they are, because they were changed meanwhile: ${left.slice(0, 5).join(', ')}${left.length > 5 ? ` and ${left.length - 5} more` : ''}.`;
+  return left.length === 0 ? sentence : `${sentence} Left as they are, because they were changed or deleted meanwhile: ${left.slice(0, 5).join(', ')}${left.length > 5 ? ` and ${left.length - 5} more` : ''}.`;
 }
 
 /** Which parts are set to a material, and a way to have them follow it. */
@@ -51,8 +52,8 @@ export function MaterialUsesSection({ material, canEdit }: { material: Material;
   const { mutate, isPending } = change;
   useEffect(() => {
     const press = (event: KeyboardEvent): void => {
-      if (!(event.ctrlKey || event.metaKey) || event.key.toLowerCase() !== 'z' || event.target instanceof HTMLInputElement || !done || isPending) return;
-      if (event.shiftKey !== (done.by === 'undo')) return;
+      const step = findStep(event);
+      if (!step || !done || isPending || (step === 'redo') !== (done.by === 'undo')) return;
       event.preventDefault();
       mutate({ by: done.by === 'undo' ? 'redo' : 'undo', run: () => takeBack(done.changes) });
     };

@@ -5,7 +5,7 @@ import { useStore } from '../../../lib/store';
 import { partsKey } from '../api/keys';
 import { deleteParts, restoreParts, undoSettingsChange } from '../api/part-changes';
 import { createChangeSteps, type ChangeSteps, type ChangeStepsState } from './change-steps';
-import { findStep } from './undo-keys';
+import { findStep } from '../../../lib/undo-keys';
 
 /** What was changed is read anew: the list, and pages of parts that were open before. */
 async function readAnew<Answer>(client: QueryClient, projectId: string, answer: Promise<Answer>): Promise<Answer> {

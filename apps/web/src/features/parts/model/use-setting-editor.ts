@@ -6,7 +6,7 @@ import { getSentence, isProblem, isWorthAnotherTry } from '../../../lib/problem'
 import { partKey } from '../api/keys';
 import { changeSetting, keepPart, readPart } from '../api/parts';
 import { createSettingEditor, type SettingEditor, type SettingEditorState } from './setting-editor';
-import { findStep } from './undo-keys';
+import { findStep } from '../../../lib/undo-keys';
 
 /** The editor of one part's setting, for as long as its page is open. */
 export function useSettingEditor(part: Part): { editor: SettingEditor; state: SettingEditorState } {
