@@ -84,7 +84,8 @@ export class MeasuringHandler {
       const taken = await takeRun(tx, runId);
       if (taken === undefined) return undefined;
       const run = { ...taken, organisationId };
-      await this.announce(tx, run, { state: 'running', stage: run.hashFirst ? 'hashing' : 'reading', progress: 0 });
+      // One that only looks again whether its bytes are measured by now is not news; many may, several times a second.
+      if (!run.hashFirst || run.sha256 === null) await this.announce(tx, run, { state: 'running', stage: run.hashFirst ? 'hashing' : 'reading', progress: 0 });
       return run;
     });
   }

@@ -9,7 +9,10 @@ import { InjectLogger } from '../platform/inject-logger';
 const everyMs = 3_600_000;
 const keepDoneWorkDays = 7;
 
-/** Forgets what nobody needs any more: outbox rows long done, counters whose time is over, abandoned uploads, parts deleted long ago. Several workers may do it at once. */
+/**
+ * Forgets what nobody needs any more: outbox rows long done, counters whose time is over, abandoned uploads, parts deleted long ago; and summarises parts
+ * that have no summary. Several workers may do it at once.
+ */
 @Injectable()
 export class Housekeeping implements OnApplicationBootstrap, OnModuleDestroy {
   private timer: NodeJS.Timeout | undefined;
@@ -32,14 +35,21 @@ export class Housekeeping implements OnApplicationBootstrap, OnModuleDestroy {
   }
 
   private async sweep(): Promise<void> {
-    try {
-      await this.database.transaction({ relay: true }, async (tx) => {
+    await this.attempt(() =>
+      this.database.transaction({ relay: true }, async (tx) => {
         await forgetDoneWork(tx, keepDoneWorkDays);
         await sweepAttempts(tx);
-      });
-      await this.abandonedUploads.sweep();
-      await this.deletedParts.forget();
-      await this.missingSummaries.write();
+      }),
+    );
+    await this.attempt(() => this.missingSummaries.write());
+    await this.attempt(() => this.deletedParts.forget());
+    await this.attempt(() => this.abandonedUploads.sweep());
+  }
+
+  /** Each by itself: a storage that can't be reached keeps nobody's parts out of their list until the next time. */
+  private async attempt(work: () => Promise<void>): Promise<void> {
+    try {
+      await work();
     } catch (error) {
       this.logger.warn({ err: error }, 'housekeeping failed; it comes again');
     }
