@@ -29,6 +29,8 @@ interface UnderWay {
   shipment: Shipment;
   upload?: KnownUpload;
   fileId?: string;
+  /** Its upload is asked for, or is there: a pause and its end meanwhile must not ask for a second. */
+  begun?: boolean;
   cancelled?: boolean;
   paused?: boolean;
   keptBytes: number;
@@ -179,7 +181,8 @@ export class Transport {
 
   private async begin(key: string): Promise<void> {
     const entry = this.underWay.get(key);
-    if (!entry || entry.cancelled || entry.paused || entry.fileId) return;
+    if (!entry || entry.cancelled || entry.paused || entry.begun) return;
+    entry.begun = true;
     const { file, folder, projectId } = entry.shipment;
     const known = await this.takeBegun(entry.shipment);
     try {
