@@ -1,6 +1,7 @@
 import { Button, HTMLSelect, InputGroup } from '@blueprintjs/core';
 import { useId, useState } from 'react';
 import { countOf } from '../../../lib/plural';
+import { proposeParts } from '../model/name-matches';
 import { nextLetter } from '../model/next-letter';
 import type { Decision, UploadEntry } from '../model/upload-entry';
 import { decideUploads } from '../model/upload-queue';
@@ -38,9 +39,10 @@ export function NameMatchQuestion({ entries }: { entries: readonly UploadEntry[]
   const [reason, setReason] = useState('');
   const reasonId = useId();
   const keys = entries.map(({ key }) => key);
-  const nextRevision = ({ matches }: UploadEntry): Decision => {
-    const [first] = matches ?? [];
-    return first ? { as: 'revision', partId: first.partId, reason } : { as: 'part' };
+  const proposed = proposeParts(entries);
+  const nextRevision = ({ key }: UploadEntry): Decision => {
+    const partId = proposed.get(key);
+    return partId === undefined ? { as: 'part' } : { as: 'revision', partId, reason };
   };
   const single = entries.length === 1;
   return (
@@ -54,8 +56,8 @@ export function NameMatchQuestion({ entries }: { entries: readonly UploadEntry[]
         <InputGroup id={reasonId} value={reason} onValueChange={setReason} maxLength={500} placeholder="wall 0.4 mm thicker at the boss" />
       </div>
       <p className="match-all">
-        <Button intent="primary" onClick={() => decideUploads(keys, nextRevision)}>
-          {single ? 'Next revision' : 'Next revisions, all of them'}
+        <Button intent="primary" onClick={() => decideUploads([...proposed.keys()], nextRevision)}>
+          {single ? 'Next revision' : proposed.size === entries.length ? 'Next revisions, all of them' : `Next revisions, ${proposed.size} of them`}
         </Button>
         <Button onClick={() => decideUploads(keys, () => ({ as: 'part' }))}>{single ? 'A new part' : 'New parts, all of them'}</Button>
       </p>

@@ -4,6 +4,7 @@ import { getSentence, isProblem, isWorthAnotherTry } from '../../../lib/problem'
 import { createStore, useStore } from '../../../lib/store';
 import { completeUpload, findNameMatches, readPartOfUpload, stateSettings } from '../api/uploads';
 import type { DroppedFile } from '../../../lib/dropped-files';
+import { orderMatches } from './name-matches';
 import { createPace } from './pace';
 import { createQuickReaders } from './quick-figures';
 import { createPresenceCheck } from './presence-check';
@@ -126,8 +127,8 @@ async function sendUnlessPresent(key: string, matches: readonly NameMatch[]): Pr
 
 async function askForMatches(projectId: string, added: readonly UploadEntry[], triesLeft = 3): Promise<void> {
   const tell = (matches: Awaited<ReturnType<typeof findNameMatches>>['matches']): void => {
-    for (const { key, fileName } of added) {
-      const own = matches.filter((match) => match.fileName === fileName);
+    for (const { key, fileName, folder } of added) {
+      const own = orderMatches(matches.filter((match) => match.fileName === fileName), folder);
       apply({ type: 'matched', key, matches: own });
       void sendUnlessPresent(key, own);
     }
