@@ -27,10 +27,12 @@ export function PageDrop({ onFiles, children }: { onFiles: ((files: readonly Dro
       }}
       onDrop={(event) => {
         if (!carriesFiles(event)) return;
+        // What happens in a dialog of the page comes here too, and there the files may have been taken already.
+        const isTaken = event.isDefaultPrevented();
         event.preventDefault();
         depth.current = 0;
         setOver(false);
-        void collectDrop(event.dataTransfer).then(onFiles);
+        if (!isTaken) void collectDrop(event.dataTransfer).then(onFiles);
       }}
     >
       {children}

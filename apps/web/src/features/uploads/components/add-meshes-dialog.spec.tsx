@@ -7,6 +7,7 @@ import { closeUploadDialog, openUploadDialog } from '../model/dialog-state';
 import type { UploadEntry } from '../model/upload-entry';
 import { nothingStated } from '../model/upload-entry';
 import * as queue from '../model/upload-queue';
+import { PageDrop } from '../../../components/page-drop';
 import { AddMeshesDialog } from './add-meshes-dialog';
 
 const aluminium: Material = {
@@ -61,11 +62,21 @@ describe('adding meshes', () => {
     render(
       <QueryClientProvider client={client}>
         <MemoryRouter>
-          <AddMeshesDialog projectId="project" materials={[aluminium]} />
+          <PageDrop onFiles={(files) => openUploadDialog('project', files)}>
+            <AddMeshesDialog projectId="project" materials={[aluminium]} />
+          </PageDrop>
         </MemoryRouter>
       </QueryClientProvider>,
     );
   }
+
+  it('takes what is dropped on it once, though the page below takes drops too', async () => {
+    open([entry('a')]);
+    const file = new File(['solid'], 'dropped.stl');
+    fireEvent.drop(screen.getByRole('heading', { name: 'What unit is this mesh in?' }), { dataTransfer: { types: ['Files'], items: [], files: [file] } });
+    await waitFor(() => expect(add).toHaveBeenCalled());
+    expect(add.mock.calls).toEqual([['project', [{ file, folder: '' }]]]);
+  });
 
   it('asks for the unit with the evidence, and preselects none', () => {
     open([entry('a'), entry('b')]);
