@@ -1,5 +1,5 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
-import { cleanup, fireEvent, render, screen, waitFor } from '@testing-library/react';
+import { act, cleanup, fireEvent, render, screen, waitFor } from '@testing-library/react';
 import type { Material } from '@masswright/contracts';
 import { MemoryRouter } from 'react-router-dom';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
@@ -76,6 +76,16 @@ describe('adding meshes', () => {
     fireEvent.drop(screen.getByRole('heading', { name: 'What unit is this mesh in?' }), { dataTransfer: { types: ['Files'], items: [], files: [file] } });
     await waitFor(() => expect(add).toHaveBeenCalled());
     expect(add.mock.calls).toEqual([['project', [{ file, folder: '' }]]]);
+  });
+
+  it('takes one file for a part’s next revision; of several it sends none and says so', async () => {
+    open([]);
+    const files = ['one.stl', 'two.stl'].map((name) => ({ file: new File(['solid'], name), folder: '' }));
+    act(() => openUploadDialog('project', files, { partId: 'part', number: 7, name: 'Pawl' }));
+    expect(await screen.findByText(/these are 2\. Drop the one that is meant/)).toBeTruthy();
+    expect(add).not.toHaveBeenCalled();
+    act(() => openUploadDialog('project', files.slice(0, 1), { partId: 'part', number: 7, name: 'Pawl' }));
+    expect(add).toHaveBeenCalledExactlyOnceWith('project', [{ ...files[0], decision: { as: 'revision', partId: 'part', reason: 'Replaces the file' } }]);
   });
 
   it('asks for the unit with the evidence, and preselects none', () => {

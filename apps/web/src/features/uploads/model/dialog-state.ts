@@ -30,7 +30,7 @@ export function openUploadDialog(projectId: string, files: readonly DroppedFile[
 /** Files for the open dialog: meshes are sent at once, what they are is asked meanwhile. */
 export function takeFiles(files: readonly DroppedFile[]): void {
   const { meshes, others } = separateMeshes(files);
-  const excess = describeExcess(meshes);
+  const excess = describeSurplus(meshes) ?? describeExcess(meshes);
   state.set((open) => open && { ...open, excess, others: excess ? [] : [...open.others, ...others] });
   if (!excess) send(meshes);
 }
@@ -38,9 +38,15 @@ export function takeFiles(files: readonly DroppedFile[]): void {
 /** The person wants the others to be sent too: what they are is told by their content. */
 export function takeOthers(): void {
   const others = state.get()?.others ?? [];
-  const excess = describeExcess(others);
+  const excess = describeSurplus(others) ?? describeExcess(others);
   state.set((open) => open && { ...open, excess, others: excess ? open.others : [] });
   if (!excess) send(others);
+}
+
+/** One file replaces that of a part: of several, none is chosen for the person. */
+function describeSurplus(files: readonly DroppedFile[]): string | undefined {
+  if (!state.get()?.replacement || files.length < 2) return undefined;
+  return `One file takes the place of a part’s file, and these are ${files.length}. Drop the one that is meant. Nothing was sent.`;
 }
 
 export function leaveOthersOut(): void {
