@@ -103,7 +103,11 @@ describe('bytes that are known', () => {
   });
 
   it('are measured once also when twelve of them come at the same moment, to two workers', async () => {
-    const second = await startTestWorker(programEnvironment(database, Number(new URL(api.url).port)));
+    // A lock that outlasts the test: a run that waited must be handed out again by the outbox, not be found as stalled.
+    const variables = { ...programEnvironment(database, Number(new URL(api.url).port)), QUEUE_LOCK_MS: '600000' };
+    await worker.stop();
+    worker = await startTestWorker(variables);
+    const second = await startTestWorker(variables);
     try {
       const bytes = sphere(31, 60_000);
       const uploads = await Promise.all(Array.from({ length: 12 }, (_, index) => engineer.send(projectId, `twelve ${index}.stl`, bytes)));

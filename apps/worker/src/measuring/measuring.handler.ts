@@ -19,7 +19,7 @@ import {
 import { measuringVersion } from '@masswright/geometry';
 import type { JobPayload } from '@masswright/jobs';
 import { summarisePart } from '@masswright/mechanics';
-import { HandedBackError, SupersededError, TryAgainError, WaitingError, type JobContext } from '../queue/job-handlers';
+import { HandedBackError, SupersededError, TryAgainError, PostponedError, type JobContext } from '../queue/job-handlers';
 import { LatestOnly } from './latest-only';
 import type { MeasuringOutcome, MeasuringProgress } from './measure-object';
 import { MeasuringThreads, TookTooLongError } from './measuring-threads';
@@ -102,7 +102,7 @@ export class MeasuringHandler {
       sha256 = Buffer.from(outcome.sha256);
     }
     const claim = await this.claim(run, sha256, context);
-    if (claim === 'wait') throw new WaitingError('The same bytes are being measured, or may be.', waitForSameBytesMs);
+    if (claim === 'wait') throw new PostponedError('The same bytes are being measured, or may be.', waitForSameBytesMs);
     return claim === 'known';
   }
 

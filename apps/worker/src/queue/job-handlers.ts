@@ -15,9 +15,12 @@ export class TryAgainError extends Error {
   override readonly name = 'TryAgainError';
 }
 
-/** Thrown by a handler that has to wait for the end of another's work: the job is handed out again after a fixed pause. */
-export class WaitingError extends Error {
-  override readonly name = 'WaitingError';
+/**
+ * Thrown by a handler that has to wait for the end of another's work: the job is handed out again after a fixed pause. (The queue library knows errors
+ * by their names and leaves jobs of its own WaitingError, DelayedError and the like where they are: ours must not be called so.)
+ */
+export class PostponedError extends Error {
+  override readonly name = 'PostponedError';
 
   constructor(
     message: string,

@@ -3,7 +3,7 @@ import { isWorkOpen, makeWorkDue, markWorkDone, type Database } from '@masswrigh
 import { isJobName, parseJobPayload, queuedJob, UnknownJobError, type JobName, type QueuedJob, type QueueName } from '@masswright/jobs';
 import type { Logger } from '@masswright/logs';
 import type { WorkerSettings } from '../platform/worker-settings';
-import { HandedBackError, SupersededError, WaitingError, type JobContext, type JobHandlers } from './job-handlers';
+import { HandedBackError, SupersededError, PostponedError, type JobContext, type JobHandlers } from './job-handlers';
 import { redisOptions } from './redis-connection';
 import { queuePrefix } from './work-queues';
 
@@ -103,7 +103,7 @@ export class QueueConsumer {
         log.info('another worker has taken it up');
         return;
       }
-      const isOrderly = error instanceof HandedBackError || error instanceof WaitingError;
+      const isOrderly = error instanceof HandedBackError || error instanceof PostponedError;
       log[isOrderly ? 'info' : 'warn']({ err: error }, isOrderly ? 'handed back' : 'failed; it will be tried again');
       await this.postpone(job, outboxId, this.choosePauseMs(error, envelope.data.handedOut ?? 0), error).catch(() => undefined);
       throw error;
@@ -116,7 +116,7 @@ export class QueueConsumer {
 
   private choosePauseMs(error: unknown, handedOut: number): number {
     if (error instanceof HandedBackError) return 0;
-    if (error instanceof WaitingError) return error.pauseMs;
+    if (error instanceof PostponedError) return error.pauseMs;
     return Math.min(firstPauseMs * 2 ** Math.min(handedOut, 10), longestPauseMs);
   }
 
