@@ -1,6 +1,7 @@
 import { expect } from 'vitest';
 import { Database, findParts, readSummarySource } from '@masswright/drizzle';
-import { computeUnitLengthM, summarisePart } from '@masswright/mechanics';
+import { summarisePart } from '@masswright/mechanics';
+import { convertToMetres } from '@masswright/units';
 import type { TestDatabase } from './test-database';
 
 /** Holds every summary of every organisation against what it should follow from, computed here a second time; none may be missing or left over. */
@@ -25,7 +26,7 @@ export async function expectSummariesToFollow(testDatabase: TestDatabase): Promi
           state,
           deleted_at: part.deletedAt,
           changed_at: revision.createdAt > setting.changedAt ? revision.createdAt : setting.changedAt,
-          length_unit_m: computeUnitLengthM(setting.lengthUnit),
+          length_unit_m: setting.lengthUnit === null ? null : convertToMetres(1, setting.lengthUnit),
           size_m: figures.sizeM === null ? null : Math.max(...figures.sizeM),
           volume_m3: figures.volumeM3,
           mass_kg: figures.massKg,

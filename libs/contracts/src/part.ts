@@ -33,7 +33,6 @@ export type StoredSetting = z.infer<typeof storedSetting>;
  * could be held against. disagrees: the part is not a uniform body of that material, and the tensor can't be scaled from the weight.
  */
 export const weighingVerdict = z.enum(['agrees', 'unchecked', 'disagrees']);
-export type WeighingVerdict = z.infer<typeof weighingVerdict>;
 
 /**
  * What a part wants next; the first that holds, in this order. measuring: queued or running. failed: its file can't be measured.

@@ -1,5 +1,4 @@
 import type { Measurement, MeasuringRun, PartRow, PartState, Setting, StatementRecord, StoredSetting, UnitDoubt } from '@masswright/contracts';
-import { convertToMetres } from '@masswright/units';
 import { computeStatement } from './compute-statement';
 import { findUnitDoubt } from './unit-doubt';
 
@@ -67,9 +66,4 @@ function computeFigures(record: StatementRecord): PartFigures {
     balance: centre === null ? null : [share(0), share(1), share(2)],
     principalMomentsKgM2: record.principalMomentsKgM2,
   };
-}
-
-/** The length of a unit, by which a list sorts. */
-export function computeUnitLengthM(lengthUnit: Setting['lengthUnit']): number | null {
-  return lengthUnit === null ? null : convertToMetres(1, lengthUnit);
 }
