@@ -888,8 +888,7 @@ export interface components {
                     number
                 ] | null;
                 unitDoubt: {
-                    /** @enum {string} */
-                    lengthUnit: "micron" | "mm" | "cm" | "m" | "inch" | "foot";
+                    lengthUnit: ("micron" | "mm" | "cm" | "m" | "inch" | "foot") | null;
                     volumeRatio: number;
                 } | null;
                 sameBytes: number;
@@ -1178,8 +1177,7 @@ export interface components {
                 createdBy: string;
             }[];
             unitDoubt: {
-                /** @enum {string} */
-                lengthUnit: "micron" | "mm" | "cm" | "m" | "inch" | "foot";
+                lengthUnit: ("micron" | "mm" | "cm" | "m" | "inch" | "foot") | null;
                 volumeRatio: number;
             } | null;
             sameBytes: {

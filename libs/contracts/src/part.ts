@@ -43,9 +43,10 @@ export const partStates = ['measuring', 'failed', 'not-defensible', 'unit-missin
 export const partState = z.enum(partStates);
 export type PartState = z.infer<typeof partState>;
 
-/** The volumes of two revisions stand as the cubes of two units do: the unit is probably `lengthUnit`. */
+/** The volumes of two revisions stand as the cubes of two units do. */
 export const unitDoubt = z.object({
-  lengthUnit,
+  /** The unit that brings the two volumes together; null where none of the six does. */
+  lengthUnit: lengthUnit.nullable(),
   /** Volume of this revision over that of the one before, each in the unit that is stated for it. */
   volumeRatio: z.number(),
 });

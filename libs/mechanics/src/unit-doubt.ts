@@ -8,24 +8,30 @@ export interface StatedVolume {
 }
 
 /**
- * How near a ratio of volumes must be to the cube of a ratio of units. The nearest two of those cubes, 16 387 (inch to mm) and 28 317 (foot to cm),
- * stand 1.73 apart, the least is 16.4 (inch to cm): within a quarter either way none is taken for another, and no change of a design is.
+ * How near a ratio of volumes must be to the cube of a ratio of units. Of those cubes the nearest two, 1000 (cm to mm) and 1728 (foot to inch), stand
+ * 1.73 apart, and the least is 16.4 (inch to cm): within a quarter either way none is taken for another, and a revision of the same size for none.
  */
 const nearness = 1.25;
 
+/** The cubes of the ratios of all ordered pairs of different units, without a dimension. */
+const unitRatiosCubed = lengthUnits.flatMap((numerator) =>
+  lengthUnits.filter((unit) => unit !== numerator).map((denominator) => convertToMetres(1, numerator, 3) / convertToMetres(1, denominator, 3)),
+);
+
 /**
- * Whether a revision stands to the one before as if its unit had been mistaken: its volume over the other's is near the cube of the ratio of two of the
- * six units. Gives the unit that would bring the volumes together, or undefined where there is nothing to doubt.
+ * Whether a revision stands to the one before as if its unit had been mistaken: its volume over the other's is near the cube of the ratio of any two of
+ * the six units. Its `lengthUnit` is the unit that brings the volumes together; null where none of the six does: then the unit was
+ * mistaken in another program, or it is the revision before whose unit is wrong. Undefined where there is nothing to doubt.
  */
 export function findUnitDoubt(now: StatedVolume, before: StatedVolume): UnitDoubt | undefined {
-  const cubicMetres = convertToMetres(now.volume, now.lengthUnit, 3);
-  const volumeRatio = cubicMetres / convertToMetres(before.volume, before.lengthUnit, 3);
+  const volumeRatio = convertToMetres(now.volume, now.lengthUnit, 3) / convertToMetres(before.volume, before.lengthUnit, 3);
   if (!(volumeRatio > 0) || !Number.isFinite(volumeRatio)) return undefined;
-  const others = lengthUnits.filter((unit) => unit !== now.lengthUnit);
-  const near = others.find((unit) => {
-    // What the ratio would be, had the mesh been stated in that unit.
-    const ratio = (convertToMetres(now.volume, unit, 3) / cubicMetres) * volumeRatio;
-    return ratio < nearness && ratio > 1 / nearness;
-  });
-  return near === undefined ? undefined : { lengthUnit: near, volumeRatio };
+  if (!unitRatiosCubed.some((cube) => isNear(volumeRatio, cube))) return undefined;
+  const inPlace = lengthUnits.find((unit) => unit !== now.lengthUnit && isNear(convertToMetres(now.volume, unit, 3), convertToMetres(before.volume, before.lengthUnit, 3)));
+  return { lengthUnit: inPlace ?? null, volumeRatio };
+}
+
+function isNear(volume: number, other: number): boolean {
+  const ratio = volume / other;
+  return ratio < nearness && ratio > 1 / nearness;
 }
