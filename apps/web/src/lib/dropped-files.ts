@@ -17,21 +17,31 @@ async function readFolder(reader: FileSystemDirectoryReader): Promise<FileSystem
 const isFile = (entry: FileSystemEntry): entry is FileSystemFileEntry => entry.isFile;
 const isFolder = (entry: FileSystemEntry): entry is FileSystemDirectoryEntry => entry.isDirectory;
 
-async function collectEntry(entry: FileSystemEntry, folder: string): Promise<DroppedFile[]> {
-  if (isFile(entry)) return [{ file: await new Promise<File>((resolve, reject) => entry.file(resolve, reject)), folder }];
-  if (!isFolder(entry)) return [];
-  const below = folder === '' ? entry.name : `${folder}/${entry.name}`;
-  const found: DroppedFile[] = [];
-  for (const child of await readFolder(entry.createReader())) found.push(...(await collectEntry(child, below)));
-  return found;
+/** What a drop holds, and the names of what the browser could not read of it. */
+export interface Dropped {
+  files: DroppedFile[];
+  unreadable: string[];
+}
+
+async function collectEntry(entry: FileSystemEntry, folder: string, dropped: Dropped): Promise<void> {
+  const path = folder === '' ? entry.name : `${folder}/${entry.name}`;
+  try {
+    if (isFile(entry)) dropped.files.push({ file: await new Promise<File>((resolve, reject) => entry.file(resolve, reject)), folder });
+    else if (isFolder(entry)) for (const child of await readFolder(entry.createReader())) await collectEntry(child, path, dropped);
+  } catch {
+    dropped.unreadable.push(path);
+  }
 }
 
 /** Files and folders, with all that is below them, from a drop. To be called while the drop's event is handled: after that the browser has forgotten them. */
-export async function collectDrop(transfer: DataTransfer): Promise<DroppedFile[]> {
+export async function collectDrop(transfer: DataTransfer): Promise<Dropped> {
   const entries = [...transfer.items].filter(({ kind }) => kind === 'file').map((item) => ({ entry: item.webkitGetAsEntry(), file: item.getAsFile() }));
-  if (entries.length === 0) return collectChosen(transfer.files);
-  const lists = await Promise.all(entries.map(async ({ entry, file }) => (entry ? collectEntry(entry, '') : file ? [{ file, folder: '' }] : [])));
-  return lists.flat();
+  const dropped: Dropped = { files: entries.length === 0 ? collectChosen(transfer.files) : [], unreadable: [] };
+  for (const { entry, file } of entries) {
+    if (entry) await collectEntry(entry, '', dropped);
+    else if (file) dropped.files.push({ file, folder: '' });
+  }
+  return dropped;
 }
 
 /** Files from a file field; one that chooses folders says where each lay. */

@@ -31,7 +31,7 @@ function PartPage({ part }: { part: Part }) {
   const materials = useMaterialItems();
   const [renaming, setRenaming] = useState(false);
   return (
-    <PageDrop onFiles={part.can.edit ? (files) => openUploadDialog(part.projectId, files) : undefined}>
+    <PageDrop onFiles={part.can.edit ? (files, unreadable) => openUploadDialog(part.projectId, files, undefined, unreadable) : undefined}>
       <Crumbs
         crumbs={[
           { label: session.organisation.name, to: '/' },

@@ -39,7 +39,7 @@ function ProjectPage({ projectId }: { projectId: string }) {
     </Button>
   ) : undefined;
   return (
-    <PageDrop onFiles={can.addMeshes ? (files) => openUploadDialog(projectId, files) : undefined}>
+    <PageDrop onFiles={can.addMeshes ? (files, unreadable) => openUploadDialog(projectId, files, undefined, unreadable) : undefined}>
       <div className="project-page">
         <Crumbs crumbs={[{ label: session.organisation.name, to: '/' }, { label: project.name }]} />
         <PageHeading

@@ -85,7 +85,7 @@ describe('adding meshes', () => {
     expect(await screen.findByText(/these are 2\. Drop the one that is meant/)).toBeTruthy();
     expect(add).not.toHaveBeenCalled();
     act(() => openUploadDialog('project', files.slice(0, 1), { partId: 'part', number: 7, name: 'Pawl' }));
-    expect(add).toHaveBeenCalledExactlyOnceWith('project', [{ ...files[0], decision: { as: 'revision', partId: 'part', reason: 'Replaces the file' } }]);
+    expect(add).toHaveBeenCalledExactlyOnceWith('project', [{ ...files[0], decision: { as: 'revision', partId: 'part', reason: '' } }]);
   });
 
   it('asks for the unit with the evidence, and preselects none', () => {

@@ -1,12 +1,12 @@
-import { Button, Dialog, DialogFooter } from '@blueprintjs/core';
+import { Button, Dialog, DialogFooter, InputGroup } from '@blueprintjs/core';
 import type { Material } from '@masswright/contracts';
-import { useState, type DragEvent } from 'react';
+import { useId, useState, type DragEvent } from 'react';
 import { Notice } from '../../../components/notice';
 import { collectDrop } from '../../../lib/dropped-files';
 import { formatBytes } from '../../../lib/format-bytes';
 import { countOf } from '../../../lib/plural';
 import { useStorageUse } from '../api/uploads';
-import { closeUploadDialog, leaveOthersOut, takeFiles, takeOthers, useUploadDialog, type Replacement } from '../model/dialog-state';
+import { closeUploadDialog, leaveOthersOut, setReplacementReason, takeFiles, takeOthers, useUploadDialog, type OpenReplacement } from '../model/dialog-state';
 import { isRefusal } from '../model/quick-figures';
 import { awaitsDecision, type UploadEntry } from '../model/upload-entry';
 import { tellServer, useStatingProblem, useUploads } from '../model/upload-queue';
@@ -31,13 +31,13 @@ export function AddMeshesDialog({ projectId, materials }: AddMeshesDialogProps) 
   const isOpen = dialog?.projectId === projectId;
   const drop = (event: DragEvent): void => {
     event.preventDefault();
-    void collectDrop(event.dataTransfer).then(takeFiles);
+    void collectDrop(event.dataTransfer).then(({ files, unreadable }) => takeFiles(files, unreadable));
   };
   return (
     <Dialog title={dialog?.replacement ? `New file for No. ${dialog.replacement.number} ${dialog.replacement.name}` : 'Add meshes'} isOpen={isOpen} onClose={closeUploadDialog} className="add-meshes" canOutsideClickClose={false}>
       {isOpen && (
         <div className="add-meshes-drop" onDragOver={(event) => event.preventDefault()} onDrop={drop}>
-          <Body projectId={projectId} materials={materials} others={dialog.others.length} excess={dialog.excess} replacement={dialog.replacement} />
+          <Body projectId={projectId} materials={materials} others={dialog.others.length} excess={dialog.excess} unreadable={dialog.unreadable} replacement={dialog.replacement} />
         </div>
       )}
     </Dialog>
@@ -47,21 +47,22 @@ export function AddMeshesDialog({ projectId, materials }: AddMeshesDialogProps) 
 interface BodyProps extends AddMeshesDialogProps {
   others: number;
   excess: string | undefined;
-  replacement: Replacement | undefined;
+  unreadable: readonly string[];
+  replacement: OpenReplacement | undefined;
 }
 
 /** What is to be done in the dialog, in this order; the first that wants the person is shown, unless they look at another. */
 const steps = ['unit', 'names', 'files'] as const;
 type Step = (typeof steps)[number];
 
-function Body({ projectId, materials, others, excess, replacement }: BodyProps) {
+function Body({ projectId, materials, others, excess, unreadable, replacement }: BodyProps) {
   const all = useUploads();
   const entries = all.filter((entry) => entry.projectId === projectId);
   const [postponed, setPostponed] = useState<ReadonlySet<string>>(new Set());
   // Asked about together: files that are one drop's question stay in it until it is answered, also when their unit is chosen one by one.
   const [asking, setAsking] = useState<ReadonlySet<string>>(new Set());
   const [looksAt, setLooksAt] = useState<Step>();
-  const isAskable = (entry: UploadEntry): boolean => !isRefusal(entry.quick) && !awaitsDecision(entry) && entry.phase !== 'cancelled' && entry.phase !== 'present' && entry.decision?.as !== 'revision' && entry.part?.run.state !== 'failed';
+  const isAskable = (entry: UploadEntry): boolean => !isRefusal(entry.quick) && !awaitsDecision(entry) && entry.phase !== 'cancelled' && (entry.phase !== 'present' || entry.part?.lengthUnit === null) && entry.decision?.as !== 'revision' && entry.part?.run.state !== 'failed';
   const fresh = entries.filter((entry) => isAskable(entry) && lacksUnit(entry) && !postponed.has(entry.key) && !asking.has(entry.key));
   if (fresh.length > 0) setAsking(new Set([...asking, ...fresh.map(({ key }) => key)]));
   const asked = replacement ? [] : entries.filter((entry) => asking.has(entry.key) && isAskable(entry));
@@ -79,7 +80,9 @@ function Body({ projectId, materials, others, excess, replacement }: BodyProps) 
     <>
       <div className="bp6-dialog-body add-meshes-body">
         {excess && <Notice tone="wrong">{excess}</Notice>}
+        {unreadable.length > 0 && <Notice tone="wrong">The browser could not read {unreadable.join(', ')}. Nothing of {unreadable.length === 1 ? 'it' : 'them'} was sent; look whether {unreadable.length === 1 ? 'it is' : 'they are'} still there and may be read, then drop again.</Notice>}
         {others > 0 && <Others count={others} />}
+        {replacement && <ReplacementReason reason={replacement.reason} />}
         {showsPicker && <FilePicker onFiles={takeFiles} single={replacement !== undefined} />}
         {entries.length > 0 && <Progress entries={entries} />}
         {entries.length > 0 && <StepBar step={step} counts={counts} onStep={setLooksAt} />}
@@ -99,6 +102,16 @@ function Body({ projectId, materials, others, excess, replacement }: BodyProps) 
         <FooterWords entries={entries} />
       </DialogFooter>
     </>
+  );
+}
+
+function ReplacementReason({ reason }: { reason: string }) {
+  const id = useId();
+  return (
+    <div className="match-reason">
+      <label htmlFor={id}>Reason for the revision</label>
+      <InputGroup id={id} value={reason} onValueChange={setReplacementReason} maxLength={500} placeholder="exported anew, with the whole flange" autoFocus />
+    </div>
   );
 }
 

@@ -25,7 +25,7 @@ export function FilePicker({ onFiles, single = false, small = false }: FilePicke
     <div className={small ? 'file-picker-small' : 'drop-place'}>
       {!small && <p>{single ? 'Drop the new file here, or' : 'Drop meshes or a folder here, or'}</p>}
       <p className="drop-place-buttons">
-        <Button size={small ? 'small' : 'medium'} onClick={() => files.current?.click()} autoFocus={!small}>
+        <Button size={small ? 'small' : 'medium'} onClick={() => files.current?.click()} autoFocus={!small && !single}>
           {single ? 'Choose the file' : small ? 'Add files' : 'Choose files'}
         </Button>
         {!single && (
@@ -34,7 +34,7 @@ export function FilePicker({ onFiles, single = false, small = false }: FilePicke
           </Button>
         )}
       </p>
-      {!small && <p className="soft">STL, binary or text, and OBJ; either may be packed with gzip. One file is one part.</p>}
+      {!small && <p className="soft">STL, binary or text, and OBJ; either may be packed with gzip.{single ? '' : ' One file is one part.'}</p>}
       <input ref={files} type="file" multiple={!single} accept={accepted} className="hidden-visually" tabIndex={-1} aria-label="Mesh files" onChange={(event) => take(event.currentTarget)} />
       {!single && <input ref={folder} type="file" multiple {...folderField} className="hidden-visually" tabIndex={-1} aria-label="Folder of meshes" onChange={(event) => take(event.currentTarget)} />}
     </div>

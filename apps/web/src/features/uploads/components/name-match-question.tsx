@@ -9,7 +9,7 @@ import { decideUploads } from '../model/upload-queue';
 const asNew = 'part';
 
 /** What a person chooses for one file: a part's next revision, or a part of its own. */
-function MatchRow({ entry, reason }: { entry: UploadEntry; reason: string }) {
+function MatchRow({ entry, reason, onDecided }: { entry: UploadEntry; reason: string; onDecided: () => void }) {
   const matches = entry.matches ?? [];
   const [choice, setChoice] = useState(matches[0]?.partId ?? asNew);
   const match = matches.find(({ partId }) => partId === choice);
@@ -26,7 +26,13 @@ function MatchRow({ entry, reason }: { entry: UploadEntry; reason: string }) {
           { value: asNew, label: 'a new part' },
         ]}
       />
-      <Button size="small" onClick={() => decideUploads([entry.key], decide)}>
+      <Button
+        size="small"
+        onClick={() => {
+          decideUploads([entry.key], decide);
+          onDecided();
+        }}
+      >
         Add it so
       </Button>
       {match && !match.sameCase && <span className="soft match-note">The names differ in the case of letters: the part has {match.storedFileName}.</span>}
@@ -64,7 +70,8 @@ export function NameMatchQuestion({ entries }: { entries: readonly UploadEntry[]
       {(!single || (entries[0]?.matches?.length ?? 0) > 1 || entries[0]?.matches?.[0]?.sameCase === false) && (
         <ul className="match-list">
           {entries.map((entry) => (
-            <MatchRow key={entry.key} entry={entry} reason={reason} />
+            // The reason of one revision is not that of the next.
+            <MatchRow key={entry.key} entry={entry} reason={reason} onDecided={() => setReason('')} />
           ))}
         </ul>
       )}

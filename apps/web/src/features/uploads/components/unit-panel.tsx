@@ -1,7 +1,7 @@
 import { Button } from '@blueprintjs/core';
 import type { Material, NamedMaterial } from '@masswright/contracts';
 import type { LengthUnit } from '@masswright/units';
-import { useMemo, useState } from 'react';
+import { useEffect, useMemo, useRef, useState } from 'react';
 import { DensityField } from '../../../components/density-field';
 import { MaterialPicker } from '../../../components/material-picker';
 import { readDensity } from '../../../lib/density';
@@ -42,6 +42,12 @@ export function UnitPanel({ entries, materials, onAnswered }: UnitPanelProps) {
   const [density, setDensity] = useState<DensityAnswer>({ material: null, text: '' });
   const [byFile, setByFile] = useState<readonly string[]>();
   const [asked, setAsked] = useState(false);
+  const panel = useRef<HTMLFormElement>(null);
+  useEffect(() => {
+    // The keys that are named below work at once, unless the person is typing elsewhere in the dialog.
+    const focused = document.activeElement;
+    if (!(focused instanceof HTMLInputElement)) panel.current?.querySelector<HTMLInputElement>('input[type=radio]')?.focus();
+  }, []);
   const { densityKgM3, error } = readAnswer(density, materials);
   const keys = entries.map(({ key }) => key);
   const stated = { material: density.material, densityKgM3: density.material ? null : densityKgM3 };
@@ -63,6 +69,7 @@ export function UnitPanel({ entries, materials, onAnswered }: UnitPanelProps) {
   };
   return (
     <form
+      ref={panel}
       noValidate
       className="unit-panel"
       onSubmit={(event) => {
@@ -125,11 +132,12 @@ interface EvidenceProps {
 }
 
 function Evidence({ entries, unit, onUnit, densityKgM3 }: EvidenceProps) {
-  const read = useMemo(() => entries.flatMap(({ quick, fileName }) => (isRead(quick) ? [{ ...quick, fileName }] : [])), [entries]);
+  const read = useMemo(() => entries.flatMap(({ quick, fileName, part }) => (isRead(quick) ? [{ ...quick, fileName, hasInside: part?.isDefensible !== false }] : [])), [entries]);
   const evidence = useMemo(() => computeUnitEvidence(read, densityKgM3), [read, densityKgM3]);
   const median = useMemo(() => findMedianMesh(read), [read]);
   const waiting = entries.filter(({ quick }) => quick === undefined).length;
   const unread = entries.filter(({ quick }) => quick === null).length;
+  const hollow = read.filter(({ hasInside }) => !hasInside).length;
   // Nothing is chosen for the person; the picture shows a unit all the same, and says which.
   const pictured = unit ?? evidence.find(({ isPlausible }) => isPlausible)?.lengthUnit ?? 'mm';
   return (
@@ -140,7 +148,8 @@ function Evidence({ entries, unit, onUnit, densityKgM3 }: EvidenceProps) {
       {median && <UnitPicture mesh={median} fileName={median.fileName} lengthUnit={pictured} />}
       <p className="soft unit-panel-read" role="status">
         {waiting > 0 ? `Read ${entries.length - waiting} of ${countOf(entries.length, 'file')} for this table` : read.length === 0 ? 'None of the files could be read here; the sizes show after they are measured.' : ''}
-        {unread > 0 && read.length > 0 && ` ${countOf(unread, 'file')} too large to be read here`}
+        {unread > 0 && read.length > 0 && ` ${countOf(unread, 'file')} too large to be read here.`}
+        {hollow > 0 && densityKgM3 !== null && ` ${countOf(hollow, 'mesh', 'meshes')} without an inside left out of the masses.`}
       </p>
     </>
   );

@@ -7,13 +7,13 @@ import { describeTimeLeft } from '../model/pace';
 import { isRefusal } from '../model/quick-figures';
 import { awaitsDecision, isSettled, isUnfinished, type UploadEntry } from '../model/upload-entry';
 import { cancelUploads, pace, pauseUploads, retryUpload } from '../model/upload-queue';
-import { computeShareDone, describeEntry } from '../model/upload-words';
+import { computeShareDone, describeEntry, describeSameBytes } from '../model/upload-words';
 import './uploads.css';
 
 function chooseTone(entry: UploadEntry): Tone {
   if (entry.phase === 'failed' || entry.part?.run.state === 'failed') return 'wrong';
   if (entry.phase === 'cancelled' || entry.paused) return 'neutral';
-  if (awaitsDecision(entry)) return 'doubt';
+  if (awaitsDecision(entry) || entry.part?.isDefensible === false) return 'doubt';
   return isSettled(entry) ? 'agreement' : 'busy';
 }
 
@@ -66,6 +66,7 @@ const UploadRow = memo(function UploadRow({ entry }: { entry: UploadEntry; tick:
   const foreseen = isUnfinished(entry) && isRefusal(entry.quick) ? `It can’t be measured: ${entry.quick.error.message}` : undefined;
   const problem = entry.problem ?? entry.part?.problem ?? foreseen;
   const share = computeShareDone(entry);
+  const sameBytes = describeSameBytes(entry);
   const partId = entry.part?.id ?? entry.presentIn?.partId;
   return (
     <li className="upload-row">
@@ -83,6 +84,7 @@ const UploadRow = memo(function UploadRow({ entry }: { entry: UploadEntry; tick:
           {Math.round(share * 100)} %
         </progress>
       )}
+      {sameBytes && <p className="upload-note soft">{sameBytes}</p>}
       {problem && <p className="upload-problem">{problem}</p>}
     </li>
   );

@@ -9,6 +9,7 @@ export interface Replacement {
   number: number;
   name: string;
 }
+export type OpenReplacement = Replacement & { reason: string };
 
 interface DialogState {
   projectId: string;
@@ -16,22 +17,24 @@ interface DialogState {
   others: readonly DroppedFile[];
   /** Why the last drop was not taken. */
   excess?: string;
-  replacement?: Replacement;
+  /** What the browser could not read of the last drop. */
+  unreadable: readonly string[];
+  replacement?: OpenReplacement;
 }
 
 const state = createStore<DialogState | undefined>(undefined);
 
 /** The dialog may be opened from a button, by files that are dropped on a page, by a part whose file is to be replaced, or by the tray. */
-export function openUploadDialog(projectId: string, files: readonly DroppedFile[] = [], replacement?: Replacement): void {
-  state.set({ projectId, others: [], replacement });
-  if (files.length > 0) takeFiles(files);
+export function openUploadDialog(projectId: string, files: readonly DroppedFile[] = [], replacement?: Replacement, unreadable: readonly string[] = []): void {
+  state.set({ projectId, others: [], unreadable, replacement: replacement && { ...replacement, reason: '' } });
+  if (files.length > 0) takeFiles(files, unreadable);
 }
 
 /** Files for the open dialog: meshes are sent at once, what they are is asked meanwhile. */
-export function takeFiles(files: readonly DroppedFile[]): void {
+export function takeFiles(files: readonly DroppedFile[], unreadable: readonly string[] = []): void {
   const { meshes, others } = separateMeshes(files);
   const excess = describeSurplus(meshes) ?? describeExcess(meshes);
-  state.set((open) => open && { ...open, excess, others: excess ? [] : [...open.others, ...others] });
+  state.set((open) => open && { ...open, excess, unreadable, others: excess ? [] : [...open.others, ...others] });
   if (!excess) send(meshes);
 }
 
@@ -49,6 +52,10 @@ function describeSurplus(files: readonly DroppedFile[]): string | undefined {
   return `One file takes the place of a part’s file, and these are ${files.length}. Drop the one that is meant. Nothing was sent.`;
 }
 
+export function setReplacementReason(reason: string): void {
+  state.set((open) => open?.replacement && { ...open, replacement: { ...open.replacement, reason } });
+}
+
 export function leaveOthersOut(): void {
   state.set((open) => open && { ...open, others: [] });
 }
@@ -59,7 +66,7 @@ function send(files: readonly DroppedFile[]): void {
   const { projectId, replacement } = open;
   const [first] = files;
   if (replacement && first) {
-    addUploads(projectId, [{ ...first, decision: { as: 'revision', partId: replacement.partId, reason: 'Replaces the file' } }]);
+    addUploads(projectId, [{ ...first, decision: { as: 'revision', partId: replacement.partId, reason: replacement.reason } }]);
     state.set({ ...open, replacement: undefined });
   } else addUploads(projectId, files);
 }

@@ -27,6 +27,11 @@ describe('what each unit would make of the meshes', () => {
   it('takes the mean of the two in the middle of an even number', () => {
     expect(computeUnitEvidence([box(10, 1, 1), box(30, 1, 1)], null)[1]?.medianM).toBeCloseTo(0.02, 15);
   });
+  it('leaves what encloses nothing out of the masses, not out of the sizes', () => {
+    const mm = computeUnitEvidence([...meshes, { ...box(500, 1, 1), volume: 1e9, hasInside: false }], 2700).find(({ lengthUnit }) => lengthUnit === 'mm');
+    expect(mm?.totalKg).toBeCloseTo(0.1377, 12);
+    expect(mm?.largestM).toBe(0.5);
+  });
   it('says nothing where nothing is read', () => {
     expect(computeUnitEvidence([], 2700)).toEqual([]);
     expect(findMedianMesh([])).toBeUndefined();

@@ -41,13 +41,16 @@ const middle = (sorted: readonly number[]): number => {
 
 export const computeLongestSide = ({ boundingBox: { min, max } }: Pick<FileFigures, 'boundingBox'>): number => Math.max(max[0] - min[0], max[1] - min[1], max[2] - min[2]);
 
+/** `hasInside`: false once it is known that the mesh encloses nothing; what was read as its volume then says nothing. */
+export type ReadMesh = Pick<FileFigures, 'boundingBox' | 'volume'> & { hasInside?: boolean };
+
 /** What each of the six units would make of the meshes, by the size of the unit; nothing while no mesh is read. */
-export function computeUnitEvidence(meshes: readonly Pick<FileFigures, 'boundingBox' | 'volume'>[], densityKgM3: number | null): UnitEvidence[] {
+export function computeUnitEvidence(meshes: readonly ReadMesh[], densityKgM3: number | null): UnitEvidence[] {
   if (meshes.length === 0) return [];
   const sides = meshes.map(computeLongestSide).sort((a, b) => a - b);
-  const volumes = meshes.map(({ volume }) => volume).sort((a, b) => a - b);
+  const volumes = meshes.flatMap(({ volume, hasInside = true }) => (hasInside ? [volume] : [])).sort((a, b) => a - b);
   const total = volumes.reduce((sum, volume) => sum + volume, 0);
-  const mass = (volume: number, unit: LengthUnit): number | null => (densityKgM3 === null ? null : densityKgM3 * convertToMetres(volume, unit, 3));
+  const mass = (volume: number, unit: LengthUnit): number | null => (densityKgM3 === null || volumes.length === 0 ? null : densityKgM3 * convertToMetres(volume, unit, 3));
   return [...lengthUnits]
     .sort((a, b) => convertToMetres(1, a) - convertToMetres(1, b))
     .map((lengthUnit) => {

@@ -188,3 +188,37 @@ describe('all uploads in one line', () => {
     expect(summariseUploads([{ ...entry(), phase: 'cancelled' }])).toMatchObject({ settled: true, share: 1 });
   });
 });
+
+describe('a file that is there already', () => {
+  const match = { fileName: 'a.stl', partId: 'part-7', number: 7, name: 'Pawl', letter: 'A', storedFileName: 'a.stl', folder: '', sizeBytes: 9, sha256: 'aa', sameCase: true };
+  const present = (lengthUnit: 'mm' | null) => {
+    const read = part('part-7');
+    read.revision.setting.lengthUnit = lengthUnit;
+    return pass({ type: 'found-present', key: 'a', presentIn: match, part: read });
+  };
+
+  it('is still asked about where a broken-off drop left its unit unsaid, and the answer is told to its part', () => {
+    expect(summariseUploads([present(null)]).unitMissing).toBe(1);
+    const [answered] = changeEntries([present(null)], { type: 'stated', key: 'a', stated: millimetres });
+    expect(answered && isToBeTold(answered)).toBe(true);
+  });
+  it('is not asked about where its unit was stated', () => {
+    expect(summariseUploads([present('mm')]).unitMissing).toBe(0);
+  });
+});
+
+describe('a next revision whose part was deleted meanwhile', () => {
+  it('is decided anew instead of failing for ever, and need not be sent again', () => {
+    const match = { fileName: 'a.stl', partId: 'part-7', number: 7, name: 'Pawl', letter: 'A', storedFileName: 'a.stl', folder: '', sizeBytes: 9, sha256: null, sameCase: true };
+    const again = pass(
+      { type: 'matched', key: 'a', matches: [match] },
+      { type: 'begun', key: 'a' },
+      allSent,
+      { type: 'decided', key: 'a', decision: { as: 'revision', partId: 'part-7', reason: '' } },
+      { type: 'failed', key: 'a', problem: 'deleted', undecided: true },
+      { type: 'tried-again', key: 'a' },
+    );
+    expect([again.phase, again.decision, isReadyToStore(again)]).toEqual(['sent', undefined, true]);
+    expect(writeCompletion(again).revisionOf).toBeUndefined();
+  });
+});

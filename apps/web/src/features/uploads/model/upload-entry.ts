@@ -46,7 +46,7 @@ export interface UploadEntry {
   quick?: QuickAnswer;
   /** Why it failed, for people. */
   problem?: string;
-  part?: { id: string; isRevision: boolean; lengthUnit: LengthUnit | null; sameBytes: number; run: Pick<MeasuringRun, 'state' | 'stage' | 'progress'>; problem?: string };
+  part?: { id: string; isRevision: boolean; lengthUnit: LengthUnit | null; isDefensible: boolean | null; sameBytes: Part['sameBytes']; run: Pick<MeasuringRun, 'state' | 'stage' | 'progress'>; problem?: string };
 }
 
 export type UploadEvent =
@@ -56,14 +56,14 @@ export type UploadEvent =
   | { type: 'storing'; key: string }
   | { type: 'stored'; key: string; part: Part; told: Stated }
   | { type: 'told'; key: string; told: Stated }
-  /** `unsent`: what the storage has is not this file, so it is to be sent again. */
-  | { type: 'failed'; key: string; problem: string; unsent?: boolean }
+  /** `unsent`: what the storage has is not this file, so it is to be sent again. `undecided`: it could not become what was decided. */
+  | { type: 'failed'; key: string; problem: string; unsent?: boolean; undecided?: boolean }
   | { type: 'cancelled'; key: string }
   | { type: 'paused'; key: string; paused: boolean }
   | { type: 'tried-again'; key: string }
   | { type: 'stated'; key: string; stated: Partial<Stated> }
   | { type: 'matched'; key: string; matches: readonly NameMatch[] }
-  | { type: 'found-present'; key: string; presentIn: NameMatch }
+  | { type: 'found-present'; key: string; presentIn: NameMatch; part: Part | undefined }
   | { type: 'decided'; key: string; decision: Decision }
   | { type: 'read-quickly'; key: string; quick: QuickAnswer }
   | { type: 'run'; partId: string; run: Pick<MeasuringRun, 'state' | 'stage' | 'progress'> }
@@ -99,7 +99,7 @@ const isSameStated = (one: Stated, other: Stated): boolean =>
 
 /** The person has said something since the server was told; a revision keeps what it took over from the one before. */
 export function isToBeTold(entry: UploadEntry): boolean {
-  if (entry.phase !== 'stored' || !entry.part || !entry.told) return false;
+  if ((entry.phase !== 'stored' && entry.phase !== 'present') || !entry.part || !entry.told) return false;
   if (entry.part.isRevision && entry.part.lengthUnit !== null) return false;
   return !isSameStated(entry.stated, entry.told);
 }
@@ -122,7 +122,14 @@ export function writeCompletion(entry: UploadEntry): CompleteUploadRequest {
 
 function takePart({ id, revision, sameBytes }: Part): NonNullable<UploadEntry['part']> {
   const { state, stage, progress, error } = revision.run;
-  return { id, isRevision: revision.letter !== 'A', lengthUnit: revision.setting.lengthUnit, sameBytes: sameBytes.length, run: { state, stage, progress }, problem: error?.message };
+  const isDefensible = revision.measurement?.soundness.defensible ?? null;
+  return { id, isRevision: revision.letter !== 'A', lengthUnit: revision.setting.lengthUnit, isDefensible, sameBytes, run: { state, stage, progress }, problem: error?.message };
+}
+
+/** The part that it was to be a revision of is gone: what is left is to be decided anew. */
+function giveUpDecision({ decision, matches }: UploadEntry): Pick<UploadEntry, 'decision' | 'matches'> {
+  const gone = decision?.as === 'revision' ? decision.partId : undefined;
+  return { decision: undefined, matches: matches?.filter(({ partId }) => partId !== gone) };
 }
 
 /** What was heard of a run takes the place of what was known, unless it was said before the end that is known already. */
@@ -150,7 +157,7 @@ function changeEntry(entry: UploadEntry, event: UploadEvent): UploadEntry {
     case 'told':
       return { ...entry, told: event.told };
     case 'failed':
-      return isUnfinished(entry) ? { ...entry, phase: 'failed', paused: false, problem: event.problem, ...(event.unsent ? { sent: undefined } : {}) } : entry;
+      return isUnfinished(entry) ? { ...entry, phase: 'failed', paused: false, problem: event.problem, ...(event.unsent ? { sent: undefined } : {}), ...(event.undecided ? giveUpDecision(entry) : {}) } : entry;
     case 'cancelled':
       return isUnfinished(entry) || entry.phase === 'failed' ? { ...entry, phase: 'cancelled', paused: false, problem: undefined } : entry;
     case 'paused':
@@ -158,14 +165,14 @@ function changeEntry(entry: UploadEntry, event: UploadEvent): UploadEntry {
     case 'tried-again':
       if (entry.phase === 'failed' && entry.sent) return { ...entry, phase: 'sent', problem: undefined };
       return entry.phase === 'failed' || entry.phase === 'cancelled' || entry.phase === 'present'
-        ? { ...entry, phase: 'waiting', sentBytes: 0, keptBytes: 0, sent: undefined, presentIn: undefined, problem: undefined }
+        ? { ...entry, phase: 'waiting', sentBytes: 0, keptBytes: 0, sent: undefined, presentIn: undefined, part: undefined, told: undefined, problem: undefined }
         : entry;
     case 'stated':
       return { ...entry, stated: { ...entry.stated, ...event.stated } };
     case 'matched':
       return { ...entry, matches: event.matches };
     case 'found-present':
-      return entry.phase === 'waiting' ? { ...entry, phase: 'present', paused: false, presentIn: event.presentIn } : entry;
+      return entry.phase === 'waiting' ? { ...entry, phase: 'present', paused: false, presentIn: event.presentIn, ...(event.part ? { part: takePart(event.part), told: nothingStated } : {}) } : entry;
     case 'decided':
       return isUnfinished(entry) ? { ...entry, decision: event.decision } : entry;
     case 'read-quickly':

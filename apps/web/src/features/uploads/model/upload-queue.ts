@@ -78,9 +78,11 @@ function storeIfReady(key: string): void {
       readAgain(part.id);
       tellServer(ready.projectId);
     } catch (error) {
-      const unsent = isProblem(error, 'upload-incomplete') || isProblem(error, 'conflict');
+      // Of a next revision, a conflict is about its part, which was deleted meanwhile; of a new part, about the upload.
+      const undecided = ready.decision?.as === 'revision' && (isProblem(error, 'conflict') || isProblem(error, 'not-found'));
+      const unsent = !undecided && (isProblem(error, 'upload-incomplete') || isProblem(error, 'conflict'));
       if (unsent) void transport?.then((at) => at.startOver(key));
-      apply({ type: 'failed', key, problem: getSentence(error), unsent });
+      apply({ type: 'failed', key, problem: getSentence(error), unsent, undecided });
     }
   });
 }
@@ -119,10 +121,12 @@ async function sendUnlessPresent(key: string, matches: readonly NameMatch[]): Pr
   const entry = find(key);
   const file = files.get(key);
   const presentIn = entry && file && (await findPresence(file, entry.folder, matches));
+  // Its unit may not have been stated before the drop was broken off.
+  const part = presentIn && (await readPartOfUpload(presentIn.partId).catch(() => undefined));
   if (!asking.delete(key) || find(key)?.phase !== 'waiting') return;
   if (!presentIn) return ship(key, 'send');
-  quickReaders.drop(key);
-  apply({ type: 'found-present', key, presentIn });
+  if (part?.revision.setting.lengthUnit !== null) quickReaders.drop(key);
+  apply({ type: 'found-present', key, presentIn, part });
 }
 
 async function askForMatches(projectId: string, added: readonly UploadEntry[], triesLeft = 3): Promise<void> {
@@ -159,8 +163,8 @@ export function addUploads(projectId: string, chosen: readonly AddedFile[]): str
       key,
       projectId,
       dropId,
-      fileName: file.name,
-      folder,
+      fileName: cleanFileName(file.name),
+      folder: cleanFolder(folder),
       sizeBytes: file.size,
       partName: findPartName(one, chosen),
       phase: 'waiting',

@@ -22,6 +22,7 @@ const isCounted = ({ phase }: UploadEntry): boolean => phase !== 'cancelled' && 
 
 /** Nothing was said of its unit, and it needs one. */
 export function lacksUnit(entry: UploadEntry): boolean {
+  if (entry.phase === 'present') return entry.part?.lengthUnit === null && entry.stated.lengthUnit === null && entry.part.run.state !== 'failed';
   if (!isCounted(entry)) return false;
   if (entry.decision?.as === 'revision' || entry.part?.isRevision) return false;
   return entry.stated.lengthUnit === null && entry.part?.run.state !== 'failed';

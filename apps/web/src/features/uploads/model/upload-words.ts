@@ -28,10 +28,18 @@ export function describeEntry(entry: UploadEntry): string {
     case 'cancelled':
       return 'Cancelled';
     case 'stored':
-      if (entry.part?.run.state === 'done') return entry.part.sameBytes > 0 ? 'Measured before' : 'Measured';
+      if (entry.part?.run.state === 'done') return entry.part.isDefensible === false ? 'Measured: no inside' : entry.part.sameBytes.length > 0 ? 'Measured before' : 'Measured';
       if (entry.part?.run.state === 'failed') return 'Could not be measured';
       return stageWords[entry.part?.run.stage ?? 'waiting'];
   }
+}
+
+/** Where the same bytes are already; undefined where nowhere. */
+export function describeSameBytes({ part, projectId }: UploadEntry): string | undefined {
+  const [first, ...others] = part?.sameBytes ?? [];
+  if (!first) return undefined;
+  const place = first.projectId === projectId ? '' : ` in ${first.projectName}`;
+  return `The same bytes as No. ${first.number} ${first.name}, revision ${first.letter}${place}${others.length > 0 ? ` and ${others.length} more` : ''}: they were not measured again.`;
 }
 
 /** How far an entry is on its whole way, from 0 to 1; half of the way is sending, half measuring. */
