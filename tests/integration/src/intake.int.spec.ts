@@ -119,7 +119,7 @@ describe('bytes that are known', () => {
     } finally {
       await second.stop();
     }
-  });
+  }, 90_000);
 
   it('of another organisation show nowhere: the answers are those to a file that nobody has', async () => {
     const bytes = box(13.5);
@@ -249,11 +249,24 @@ describe('a file that could not be measured', () => {
     expect(['queued', 'running', 'failed']).toContain(again.revision.run.state);
     const still = await engineer.waitForRun(failed.id);
     expect(still.revision.run.error?.code).toBe('file-truncated');
+    expect(still.revision.sha256).toBe(hashOf(box(10).slice(0, 300)));
     expect(await database.look(`select 1 from audit_events where action = 'measurement.refuse' and subject_id = $1`, [still.revision.id])).toHaveLength(2);
     const upload = await engineer.send(projectId, 'hopeless.stl', box(10.25));
     const mended = await engineer.waitForRun((await engineer.complete(upload.id, undefined, { revisionOf: { partId: failed.id, reason: 'exported anew' } })).id);
     expect(mended).toMatchObject({ state: 'ready', revision: { letter: 'B', setting: { lengthUnit: 'mm' } } });
     expect((await engineer.ask('POST', `/parts/${failed.id}/run`)).status).toBe(409);
+  });
+});
+
+describe('a file that is refused while it is read', () => {
+  it('is hashed to its end, so that it is known again when it is dropped once more', async () => {
+    // Refused at its first face, with most of the file still to come.
+    const bytes = new TextEncoder().encode(`v 0 0 0\nv 1 0 0\nv 0 1 0\nf 1 2 99999999999\n${'# and so on\n'.repeat(200_000)}`);
+    const failed = await engineer.waitForRun((await engineer.addMesh(projectId, 'refused.obj', bytes)).id);
+    expect([failed.state, failed.revision.sha256]).toEqual(['failed', hashOf(bytes)]);
+    expect(await database.look(`select 1 from uploads where sha256 = decode($1, 'hex') and organisation_id = (select organisation_id from projects where id = $2)`, [hashOf(bytes), projectId])).toHaveLength(1);
+    const { matches } = await engineer.expect<NameMatches>('POST', `/projects/${projectId}/name-matches`, { fileNames: ['refused.obj'] });
+    expect(matches.map(({ partId, sha256 }) => [partId, sha256])).toEqual([[failed.id, hashOf(bytes)]]);
   });
 });
 
@@ -281,7 +294,7 @@ describe('formats', () => {
     expect(fine?.revision.run.state).toBe('done');
     expect(bomb?.revision.run.state).toBe('failed');
     expect(vertices?.revision.run.error?.code).toBe('facets-none');
-  });
+  }, 90_000);
 });
 
 describe('a file that takes too long', () => {

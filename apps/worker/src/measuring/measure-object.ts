@@ -13,7 +13,7 @@ export interface MeasuringProgress {
 /** measured: what was found. refused: the file can't be measured, and why. interrupted: the storage failed; try again. */
 export type MeasuringOutcome =
   | { kind: 'measured'; sha256: Uint8Array; measurement: Measurement }
-  | { kind: 'refused'; sha256: Uint8Array | null; error: MeasuringError }
+  | { kind: 'refused'; sha256: Uint8Array; error: MeasuringError }
   | { kind: 'interrupted'; code: ObjectStorageErrorCode };
 
 /** hashed: the hash of all bytes. interrupted: as below. */
@@ -37,7 +37,7 @@ export async function hashObject(storage: ObjectStorage, { objectKey }: { object
   }
 }
 
-/** Streams an object once: its bytes are hashed and measured as they come. */
+/** Streams an object once: its bytes are hashed and measured as they come. What is refused is hashed to its end all the same, so that the file is known again. */
 export async function measureObject(
   storage: ObjectStorage,
   object: { objectKey: string; sizeBytes: number },
@@ -46,33 +46,53 @@ export async function measureObject(
   try {
     const hash = createHash('sha256');
     const { stream } = await storage.getObjectStream(object.objectKey);
-    const measurer = createMeasurer({ sizeBytes: object.sizeBytes });
-    let refusal: MeshError | undefined;
+    const attempt = new MeasuringAttempt(object.sizeBytes);
     let bytesRead = 0;
     for await (const chunk of stream as AsyncIterable<Buffer>) {
       hash.update(chunk);
       bytesRead += chunk.length;
-      try {
-        measurer.push(chunk);
-      } catch (error) {
-        if (!(error instanceof MeshError)) throw error;
-        refusal = error;
-        break;
-      }
+      attempt.push(chunk);
       onProgress({ stage: 'reading', bytesRead });
     }
-    if (refusal !== undefined) return { kind: 'refused', sha256: null, error: describe(refusal) };
-    onProgress({ stage: 'measuring', bytesRead });
+    if (!attempt.isRefused) onProgress({ stage: 'measuring', bytesRead });
     const sha256 = hash.digest();
-    try {
-      return { kind: 'measured', sha256, measurement: measurer.finish() };
-    } catch (error) {
-      if (!(error instanceof MeshError)) throw error;
-      return { kind: 'refused', sha256, error: describe(error) };
-    }
+    const result = attempt.finish();
+    return result instanceof MeshError ? { kind: 'refused', sha256, error: describe(result) } : { kind: 'measured', sha256, measurement: result };
   } catch (error) {
     if (error instanceof ObjectStorageError) return { kind: 'interrupted', code: error.code };
     throw error;
+  }
+}
+
+/** A measurer and what became of it: after a refusal it is let go with all that it holds, and what comes still is passed over. */
+class MeasuringAttempt {
+  private state: ReturnType<typeof createMeasurer> | MeshError;
+
+  constructor(sizeBytes: number) {
+    this.state = createMeasurer({ sizeBytes });
+  }
+
+  get isRefused(): boolean {
+    return this.state instanceof MeshError;
+  }
+
+  push(chunk: Uint8Array): void {
+    this.go((measurer) => measurer.push(chunk));
+  }
+
+  finish(): Measurement | MeshError {
+    return this.go((measurer) => measurer.finish());
+  }
+
+  private go<Result>(work: (measurer: ReturnType<typeof createMeasurer>) => Result): Result | MeshError {
+    if (this.state instanceof MeshError) return this.state;
+    try {
+      return work(this.state);
+    } catch (error) {
+      if (!(error instanceof MeshError)) throw error;
+      this.state = error;
+      return error;
+    }
   }
 }
 

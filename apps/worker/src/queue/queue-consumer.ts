@@ -104,7 +104,8 @@ export class QueueConsumer {
         return;
       }
       const isOrderly = error instanceof HandedBackError || error instanceof PostponedError;
-      log[isOrderly ? 'info' : 'warn']({ err: error }, isOrderly ? 'handed back' : 'failed; it will be tried again');
+      if (isOrderly) log.info(error instanceof HandedBackError ? 'handed back' : 'postponed');
+      else log.warn({ err: error }, 'failed; it will be tried again');
       await this.postpone(job, outboxId, this.choosePauseMs(error, envelope.data.handedOut ?? 0), error).catch(() => undefined);
       throw error;
     }
