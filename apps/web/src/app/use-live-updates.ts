@@ -54,6 +54,8 @@ function createEventHandler(client: QueryClient, coalesce: (key: string, action:
         // They say how many parts there are.
         readAgain(...projectKey(event.projectId));
         readAgain(...projectsKey);
+        // And how many parts are set to each material.
+        readAgain(...materialsKey);
         return;
       case 'parts':
         readAgain(...partsKey(event.projectId));
@@ -61,6 +63,7 @@ function createEventHandler(client: QueryClient, coalesce: (key: string, action:
         readAgain('part');
         readAgain(...projectKey(event.projectId));
         readAgain(...projectsKey);
+        readAgain(...materialsKey);
         return;
       case 'materials':
         readAgain(...materialsKey);
