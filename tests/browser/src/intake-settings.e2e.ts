@@ -131,9 +131,9 @@ describe('files of names that parts have', () => {
 
   it('have their unit asked again where the volume fits another one, and each answer is taken', async () => {
     const button = (name: string) => page.getByRole('button', { name });
-    await button('lever: these are inches').click({ timeout: 30_000 });
+    await button('Yes, inches: lever').click({ timeout: 30_000 });
     await expect.poll(() => findRow(page, 'lever').textContent()).toContain('16.20');
-    await button('yoke: keep millimetres').click();
+    await button('Keep millimetres: yoke').click();
     await expect.poll(async () => (await readRow('yoke')).state).toBe('ready');
     expect([(await settingOf('lever')).lengthUnit, (await settingOf('yoke')).lengthUnit]).toEqual(['inch', 'mm']);
   });
@@ -145,12 +145,12 @@ describe('a file that could not be measured', () => {
     await expect.poll(() => findRow(page, 'pawl').textContent({ timeout: 1_000 }).catch(() => ''), { timeout: 30_000 }).toContain('cut off');
     await closeDialog(page);
     const again = page.waitForResponse((response) => response.request().method() === 'POST' && response.url().endsWith('/run'));
-    await findRow(page, 'pawl').getByRole('button', { name: 'Measure again' }).click();
+    await findRow(page, 'pawl').getByRole('button', { name: 'Measure again: pawl' }).click();
     expect((await again).ok()).toBe(true);
     await expect.poll(async () => (await readRow('pawl')).state, { timeout: 20_000 }).toBe('failed');
     await findRow(page, 'pawl').getByRole('link').first().click();
     await page.getByText('This file could not be measured.').waitFor();
-    await page.getByRole('button', { name: 'Replace the file' }).click();
+    await page.getByRole('button', { name: 'Replace the file' }).first().click();
     await findDialog(page).getByLabel('Mesh files').setInputFiles([meshFile('pawl mended.stl', block([0, 0, 0], [9, 9, 9]))]);
     await expect.poll(async () => [(await readRow('pawl')).revision.letter, (await readRow('pawl')).revision.run.state], { timeout: 20_000 }).toEqual(['B', 'done']);
   });

@@ -27,34 +27,44 @@ export function Figure({ value, unit, digits = 6, big = false }: { value: number
   );
 }
 
-/** From here on a column would show more digits than its others have, and grow wide with them. */
-const columnPlainBelow = 1e5;
-
-function splitColumnFigure(value: number, digits: number): FigureParts {
-  const [mantissa = '', power = '0'] = value.toExponential(digits - 1).split('e');
-  if (Math.abs(Number(`${mantissa}e${power}`)) < columnPlainBelow) return splitFigure(value, { digits });
-  const { sign, integer, fraction } = splitFigure(Number(mantissa), { digits });
-  return { sign, integer, fraction, exponent: `×10${[...String(Number(power))].map((digit) => raised[Number(digit)]).join('')}` };
+/** How much room a column's figures take, in digits: before their point, and behind it with the point. */
+export interface FigureRoom {
+  before: number;
+  behind: number;
 }
 
+const writeTail = ({ fraction, exponent }: FigureParts): string => `${fraction ? `.${fraction}` : ''}${exponent}`;
+
 /**
- * A figure of a column whose figures stand under one another at their decimal points. `fractionDigits` is the longest fraction
- * of the column; shorter ones are followed by as much room.
+ * A figure of a column whose figures stand under one another at their decimal points, each written plainly up to nine digits. `behind` is the
+ * room that the column keeps behind its integers, the point with it.
  */
-export function AlignedFigure({ value, digits, fractionDigits }: { value: number; digits: number; fractionDigits: number }) {
+export function AlignedFigure({ value, digits, behind }: { value: number; digits: number; behind: number }) {
   if (!Number.isFinite(value)) return <span className="figure figure-aligned">—</span>;
-  const { sign, integer, fraction, exponent } = splitColumnFigure(value, digits);
-  // A figure has its point only with a fraction: without one, the point's own place is left free too.
-  const room = fractionDigits === 0 ? 0 : fractionDigits + 1 - (fraction ? fraction.length + 1 : 0) - exponent.length;
+  const parts = splitFigure(value, { digits });
   return (
     <span className="figure figure-aligned">
-      <PowerText text={`${sign}${integer}${fraction ? `.${fraction}` : ''}${exponent}`} />
-      {room > 0 && <span className="figure-room" style={{ width: `${room}ch` }} />}
+      {parts.sign}
+      {parts.integer}
+      {behind > 0 && (
+        <span className="figure-tail" style={{ width: `${behind}ch` }}>
+          <PowerText text={writeTail(parts)} />
+        </span>
+      )}
     </span>
   );
 }
 
-/** The longest fraction among the figures of a column. */
-export function computeFractionDigits(values: readonly number[], digits: number): number {
-  return Math.max(0, ...values.filter(Number.isFinite).map((value) => splitColumnFigure(value, digits)).map(({ fraction, exponent }) => (exponent ? 0 : fraction.length)));
+/** The room that all of a column's figures fit into. */
+export function computeFigureRoom(values: readonly number[], digits: number): FigureRoom {
+  const all = values.filter(Number.isFinite).map((value) => splitFigure(value, { digits }));
+  return {
+    before: Math.max(0, ...all.map(({ sign, integer }) => sign.length + integer.length)),
+    behind: Math.max(0, ...all.map((parts) => writeTail(parts).length)),
+  };
+}
+
+/** The room that suits several groups of figures. */
+export function joinFigureRooms(rooms: readonly FigureRoom[]): FigureRoom {
+  return { before: Math.max(0, ...rooms.map(({ before }) => before)), behind: Math.max(0, ...rooms.map(({ behind }) => behind)) };
 }

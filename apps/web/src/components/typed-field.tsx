@@ -1,5 +1,5 @@
 import { FormGroup, InputGroup } from '@blueprintjs/core';
-import { useId, useState, type KeyboardEvent } from 'react';
+import { useId, useState, type KeyboardEvent, type ReactNode } from 'react';
 
 /** What a text means; nothing typed is null. */
 export type ReadField<Value> = { value: Value | null; error?: undefined } | { value?: undefined; error: string };
@@ -13,6 +13,8 @@ interface TypedFieldProps<Value> {
   describe: (value: Value, text: string) => string;
   emptyHint: string;
   placeholder: string;
+  /** What follows from the value; it stands away while what is typed is not that value. */
+  consequence?: ReactNode;
   onChange: (value: Value | null) => void;
 }
 
@@ -20,7 +22,7 @@ interface TypedFieldProps<Value> {
  * A quantity of a setting, typed. What is typed counts as soon as it can be read; half a word is not yet an error while the person is typing,
  * and an emptied field takes the quantity away only when they leave it.
  */
-export function TypedField<Value>({ label, value, write, read, describe, emptyHint, placeholder, onChange }: TypedFieldProps<Value>) {
+export function TypedField<Value>({ label, value, write, read, describe, emptyHint, placeholder, consequence, onChange }: TypedFieldProps<Value>) {
   const id = useId();
   const [text, setText] = useState(() => write(value));
   const [shown, setShown] = useState(() => write(value));
@@ -46,35 +48,40 @@ export function TypedField<Value>({ label, value, write, read, describe, emptyHi
   const meant = read(text);
   const error = isTyping ? undefined : meant.error;
   const understood = meant.error !== undefined ? '…' : meant.value === null ? emptyHint : describe(meant.value, text);
+  // What can't be read changes nothing: said, so that nobody takes the figures below for those of the text.
+  const kept = error && value !== null ? ` Still in force: ${written}.` : '';
   return (
-    <FormGroup
-      intent={error ? 'danger' : 'none'}
-      helperText={
-        <span id={`${id}-helper`} role="status">
-          {error ?? understood}
-        </span>
-      }
-    >
-      <InputGroup
-        value={text}
-        onValueChange={(typed) => {
-          setIsTyping(true);
-          setText(typed);
-          commit(typed, false);
-        }}
-        onBlur={finish}
-        onKeyDown={(event: KeyboardEvent) => {
-          if (event.key === 'Enter') finish();
-        }}
-        placeholder={placeholder}
-        autoComplete="off"
-        spellCheck={false}
-        inputClassName="figure"
+    <>
+      <FormGroup
         intent={error ? 'danger' : 'none'}
-        aria-label={label}
-        aria-invalid={error ? true : undefined}
-        aria-describedby={`${id}-helper`}
-      />
-    </FormGroup>
+        helperText={
+          <span id={`${id}-helper`} role="status">
+            {error ? `${error}${kept}` : understood}
+          </span>
+        }
+      >
+        <InputGroup
+          value={text}
+          onValueChange={(typed) => {
+            setIsTyping(true);
+            setText(typed);
+            commit(typed, false);
+          }}
+          onBlur={finish}
+          onKeyDown={(event: KeyboardEvent) => {
+            if (event.key === 'Enter') finish();
+          }}
+          placeholder={placeholder}
+          autoComplete="off"
+          spellCheck={false}
+          inputClassName="figure"
+          intent={error ? 'danger' : 'none'}
+          aria-label={label}
+          aria-invalid={error ? true : undefined}
+          aria-describedby={`${id}-helper`}
+        />
+      </FormGroup>
+      {meant.error === undefined && meant.value !== null && consequence}
+    </>
   );
 }

@@ -1,7 +1,7 @@
 import type { MaterialUse } from '@masswright/contracts';
 import { fromSi, getUnit, unitTable } from '@masswright/units';
 import { Link } from 'react-router-dom';
-import { AlignedFigure, computeFractionDigits } from '../../../components/figure';
+import { AlignedFigure, computeFigureRoom } from '../../../components/figure';
 import { writePlain } from '../../../lib/material-words';
 import { computeMove } from '../model/use-figures';
 import './materials.css';
@@ -22,7 +22,7 @@ function Mass({ valueKg, fraction, signed = false }: { valueKg: number | null; f
   return (
     <>
       {signed && value > 0 && <span className="figure">+</span>}
-      <AlignedFigure value={value} digits={digits} fractionDigits={fraction} />
+      <AlignedFigure value={value} digits={digits} behind={fraction} />
     </>
   );
 }
@@ -31,10 +31,10 @@ function Mass({ valueKg, fraction, signed = false }: { valueKg: number | null; f
 export function UseTable({ uses, chosen, canChoose, onChoose }: UseTableProps) {
   const moves = uses.map(computeMove);
   const inGrams = (values: readonly (number | null | undefined)[]): number =>
-    computeFractionDigits(
+    computeFigureRoom(
       values.filter((value) => value !== null && value !== undefined).map((value) => fromSi(value, gram)),
       digits,
-    );
+    ).behind;
   const massFraction = inGrams(uses.flatMap(({ massKg, massAtPresentDensityKg }) => [massKg, massAtPresentDensityKg]));
   const moveFraction = inGrams(moves.map((move) => move?.differenceKg));
   const toggle = (id: string): void => {

@@ -3,7 +3,7 @@ import { queryOptions, useQueries, useQueryClient, type QueryClient } from '@tan
 import { useState } from 'react';
 import { api, unwrapAs } from '../../../lib/api';
 import { writeQuery, type ListQuery } from '../model/list-address';
-import { computeColumnFractions, joinColumnFractions, type ColumnFractions } from '../model/row-figures';
+import { computeColumnRooms, joinColumnRooms, type ColumnRooms } from '../model/row-figures';
 import { findStretches, placeRow, stretchRows } from '../model/stretches';
 import { partsKey } from './keys';
 
@@ -30,7 +30,7 @@ export type ListHead = Pick<PartList, 'total' | 'counts' | 'deleted'>;
 export interface ReadList {
   query: ListQuery;
   head: ListHead | undefined;
-  fractions: ColumnFractions;
+  rooms: ColumnRooms;
   getRow: (index: number) => PartRow | undefined;
   countRead: () => number;
   /** All that are read, with their places. */
@@ -38,10 +38,10 @@ export interface ReadList {
 }
 
 /** A stretch is read anew as a whole, so what follows from it is worked out once: there may be a hundred, and each has a hundred rows. */
-const fractionsOfStretch = new WeakMap<PartList, ColumnFractions>();
-function findFractions(list: PartList): ColumnFractions {
-  const known = fractionsOfStretch.get(list) ?? computeColumnFractions(list.items);
-  fractionsOfStretch.set(list, known);
+const roomsOfStretch = new WeakMap<PartList, ColumnRooms>();
+function findRooms(list: PartList): ColumnRooms {
+  const known = roomsOfStretch.get(list) ?? computeColumnRooms(list.items);
+  roomsOfStretch.set(list, known);
   return known;
 }
 
@@ -55,7 +55,7 @@ function openRead(client: QueryClient, projectId: string, query: ListQuery): Rea
   return {
     query,
     head: latest?.list,
-    fractions: joinColumnFractions(stretches.map(({ list }) => findFractions(list))),
+    rooms: joinColumnRooms(stretches.map(({ list }) => findRooms(list))),
     getRow: (index) => {
       const { stretch, place } = placeRow(index);
       return lists.get(stretch)?.items[place];

@@ -15,7 +15,7 @@ import {
   writeTypedDensity,
   writeTypedWeighing,
 } from '../model/typed-density';
-import { describeWeighing } from '../model/weighing-words';
+import { describeDensityInForce, describeWeighing } from '../model/weighing-words';
 import { Fact } from './section';
 
 interface DensityFactsProps {
@@ -53,7 +53,13 @@ function NewerDensity({ draft, materials, statement, canEdit, editor }: Pick<Den
 export function DensityFacts({ editor, state, canEdit, materials, statement }: DensityFactsProps) {
   const { draft } = state;
   const density = pickDensity(draft);
+  const inForce = describeDensityInForce(statement, draft);
   const weighing = draft.weighing && describeWeighing(statement?.weighing, draft);
+  const verdict = weighing && (
+    <p className="weighing-verdict">
+      <StatusTag tone={weighing.tone}>{weighing.word}</StatusTag> {weighing.words}
+    </p>
+  );
   return (
     <>
       {(canEdit || draft.material) && (
@@ -86,6 +92,7 @@ export function DensityFacts({ editor, state, canEdit, materials, statement }: D
         ) : (
           <span className="figure">{density ? writeSpreadDensity(density) : 'not stated'}</span>
         )}
+        {inForce && <p className="density-in-force">{inForce}</p>}
       </Fact>
       {(canEdit || draft.weighing) && (
         <Fact name="Weighed">
@@ -98,15 +105,14 @@ export function DensityFacts({ editor, state, canEdit, materials, statement }: D
               describe={describeTypedWeighing}
               emptyHint="What the scale said, and how sure it is (k = 2)."
               placeholder="0.311 kg ± 0.002 kg"
+              consequence={verdict}
               onChange={(typed) => editor.change({ weighing: typed })}
             />
           ) : (
-            <span className="figure">{writeTypedWeighing(draft.weighing)}</span>
-          )}
-          {weighing && (
-            <p className="weighing-verdict">
-              <StatusTag tone={weighing.tone}>{weighing.word}</StatusTag> {weighing.words}
-            </p>
+            <>
+              <span className="figure">{writeTypedWeighing(draft.weighing)}</span>
+              {verdict}
+            </>
           )}
         </Fact>
       )}

@@ -1,6 +1,6 @@
 import type { PartRow } from '@masswright/contracts';
 import { computeSmallBeams } from '@masswright/pictures';
-import { formatFigure, getLengthUnit } from '@masswright/units';
+import { getLengthUnit } from '@masswright/units';
 import { Link } from 'react-router-dom';
 import { AlignedFigure } from '../../../components/figure';
 import { PictureView } from '../../../components/picture-view';
@@ -8,7 +8,7 @@ import { StatusTag } from '../../../components/status-tag';
 import { formatMoment } from '../../../lib/format-time';
 import { countOf } from '../../../lib/plural';
 import type { ColumnId } from '../model/columns';
-import { computeRowFigure, computeRowSize, listDigits, type ColumnFractions } from '../model/row-figures';
+import { computeRowFigure, listDigits, writeRowSize, type ColumnRooms } from '../model/row-figures';
 import { describeRun } from '../model/run-words';
 import { describeVerdict } from '../model/soundness-words';
 import { stateTexts } from '../model/state-words';
@@ -16,7 +16,7 @@ import { stateTexts } from '../model/state-words';
 interface PartCellProps {
   row: PartRow;
   column: ColumnId;
-  fractions: ColumnFractions;
+  rooms: ColumnRooms;
   /** Of the current row only, so that Tab goes from the list into it and then on. */
   tabIndex: 0 | -1;
 }
@@ -72,7 +72,7 @@ function SoundnessCell({ row: { soundness } }: { row: PartRow }) {
 }
 
 /** What a row says in one of its columns. */
-export function PartCell({ row, column, fractions, tabIndex }: PartCellProps) {
+export function PartCell({ row, column, rooms, tabIndex }: PartCellProps) {
   const { setting } = row.revision;
   switch (column) {
     case 'number':
@@ -86,8 +86,8 @@ export function PartCell({ row, column, fractions, tabIndex }: PartCellProps) {
     case 'unit':
       return setting.lengthUnit ? <span className="figure">{getLengthUnit(setting.lengthUnit).symbol}</span> : <Missing />;
     case 'size': {
-      const size = computeRowSize(row)?.map((extent) => formatFigure(extent, { digits: listDigits })).join(' × ');
-      return size === undefined ? <Missing /> : <span className="figure" title={size}>{size}</span>;
+      const size = writeRowSize(row);
+      return size === null ? <Missing /> : <span className={`figure part-size part-size-${size.setting}`}>{size.text}</span>;
     }
     case 'beam':
       return row.balance ? <PictureView picture={computeSmallBeams(row.balance)} /> : <Missing />;
@@ -111,7 +111,7 @@ export function PartCell({ row, column, fractions, tabIndex }: PartCellProps) {
     case 'moment2':
     case 'moment3': {
       const value = computeRowFigure(row, column);
-      return value === null ? <Missing /> : <AlignedFigure value={value} digits={listDigits} fractionDigits={fractions[column]} />;
+      return value === null ? <Missing /> : <AlignedFigure value={value} digits={listDigits} behind={rooms[column].behind} />;
     }
   }
 }

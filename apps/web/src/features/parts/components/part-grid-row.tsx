@@ -1,18 +1,19 @@
 import type { PartRow } from '@masswright/contracts';
 import { memo, type CSSProperties } from 'react';
 import { findFigureRun, getColumn, type ColumnId } from '../model/columns';
-import type { ColumnFractions } from '../model/row-figures';
+import type { ColumnRooms } from '../model/row-figures';
 import { rowHeight } from '../model/use-virtual-rows';
 import { PartCell } from './part-cell';
 import type { RowActions } from '../model/use-row-actions';
-import { findRowNote, RowNote } from './row-note';
+import { findNote } from '../model/state-words';
+import { RowNote } from './row-note';
 
 interface PartGridRowProps {
   id: string;
   row: PartRow | undefined;
   index: number;
   columns: readonly ColumnId[];
-  fractions: ColumnFractions;
+  rooms: ColumnRooms;
   isCurrent: boolean;
   isSelected: boolean;
   /** Absent where nothing can be done with rows that are selected. */
@@ -27,9 +28,9 @@ const leastNoteWidth = 240;
 /** A doubtful unit shows in the size; all else that follows from it gives way to the question. */
 const isGivenWay = (row: PartRow) => (id: ColumnId) => row.state !== 'unit-doubt' || id !== 'size';
 
-function Cells({ row, columns, fractions, isCurrent, actions, canSpan }: Pick<PartGridRowProps, 'columns' | 'fractions' | 'isCurrent' | 'actions' | 'canSpan'> & { row: PartRow }) {
+function Cells({ row, columns, rooms, isCurrent, actions, canSpan }: Pick<PartGridRowProps, 'columns' | 'rooms' | 'isCurrent' | 'actions' | 'canSpan'> & { row: PartRow }) {
   const tabIndex = isCurrent ? 0 : -1;
-  const note = findRowNote(row);
+  const note = findNote(row);
   const run = note && findFigureRun(columns, isGivenWay(row));
   const isShown = canSpan && run !== undefined && run.width >= leastNoteWidth;
   return columns.map((column, position) => {
@@ -50,7 +51,7 @@ function Cells({ row, columns, fractions, isCurrent, actions, canSpan }: Pick<Pa
         className={`part-cell part-cell-${column}${isNumeric ? ' numeric' : ''}`}
         title={isFigure && note && note.text !== '' ? note.text : undefined}
       >
-        <PartCell row={row} column={column} fractions={fractions} tabIndex={tabIndex} />
+        <PartCell row={row} column={column} rooms={rooms} tabIndex={tabIndex} />
       </div>
     );
   });

@@ -1,7 +1,8 @@
 import type { PartOrder, PartRow } from '@masswright/contracts';
 import { useEffect, useId, useLayoutEffect, useRef, useState, type CSSProperties, type KeyboardEvent, type MouseEvent } from 'react';
 import type { ReadList } from '../api/part-list';
-import { getColumn, type ColumnId } from '../model/columns';
+import { computeColumnWidth, type ColumnId } from '../model/columns';
+import type { ColumnRooms } from '../model/row-figures';
 import { writeQuery } from '../model/list-address';
 import { findPlace, keepPlace } from '../model/list-place';
 import { countSelected, isSelected, type Selection } from '../model/selection';
@@ -31,13 +32,14 @@ interface PartGridProps {
   onDelete: (row: PartRow | undefined) => void;
 }
 
-/** The name takes what the others leave; all others are as wide whatever stands in them. */
-function writeTracks(columns: readonly ColumnId[]): CSSProperties {
-  const tracks = columns.map((id) => (id === 'name' ? `minmax(${getColumn(id).width}px, 1fr)` : `${getColumn(id).width}px`));
-  const least = columns.reduce((sum, id) => sum + getColumn(id).width, selectWidth);
+/** The name takes what the others leave; all others are as wide as the list needs, whatever rows are in view. */
+function writeTracks(columns: readonly ColumnId[], rooms: ColumnRooms): CSSProperties {
+  const widths = columns.map((id) => computeColumnWidth(id, rooms));
+  const tracks = widths.map((width, place) => (columns[place] === 'name' ? `minmax(${width}px, 1fr)` : `${width}px`));
+  const least = widths.reduce((sum, width) => sum + width, selectWidth);
   return { '--tracks': `${selectWidth}px ${tracks.join(' ')}`, '--least': `${least}px` } as CSSProperties;
 }
-const selectWidth = 54;
+const selectWidth = 45;
 
 /** The same object for as long as it says the same, so that rows needn't be drawn again. */
 function useSteady<Value extends object>(value: Value): Value {
@@ -117,7 +119,7 @@ export function PartGrid(props: PartGridProps) {
     if (isBox) scroller.current?.focus({ preventScroll: true });
   };
 
-  const fractions = useSteady(list.fractions);
+  const rooms = useSteady(list.rooms);
   const shown = isPrinting ? list.listRead() : Array.from({ length: Math.max(0, last - first + 1) }, (_, step) => ({ index: first + step, row: list.getRow(first + step) }));
   const chosen = countSelected(selection, total);
   return (
@@ -131,7 +133,7 @@ export function PartGrid(props: PartGridProps) {
       aria-activedescendant={list.getRow(current) && current >= first && current <= last ? `${id}-${current}` : undefined}
       tabIndex={0}
       className="part-grid"
-      style={writeTracks(columns)}
+      style={writeTracks(columns, rooms)}
       onKeyDown={press}
       onClick={click}
       onScroll={(event) => {
@@ -154,7 +156,7 @@ export function PartGrid(props: PartGridProps) {
             row={row}
             index={index}
             columns={columns}
-            fractions={fractions}
+            rooms={rooms}
             isCurrent={index === current}
             isSelected={row !== undefined && isSelected(selection, row.id)}
             canSelect={canSelect}

@@ -8,6 +8,7 @@ import { PrintLine } from '../../../components/print-line';
 import { countOf } from '../../../lib/plural';
 import { changeSettings, deleteParts, restoreParts } from '../api/part-changes';
 import { readRowIds, usePartList } from '../api/part-list';
+import type { BulkChange } from '../model/bulk-change';
 import type { ListQuery } from '../model/list-address';
 import { countSelected, nothing, writeSelection, type Selection } from '../model/selection';
 import { useChangeSteps } from '../model/use-change-steps';
@@ -20,7 +21,7 @@ import { ExportMenu } from './export-menu';
 import { ListGap, ListSkeleton } from './list-gap';
 import { PartFilterBar } from './part-filter';
 import { PartGrid } from './part-grid';
-import { SelectionBar, type BulkChange } from './selection-bar';
+import { SelectionBar } from './selection-bar';
 import { StepLine } from './step-line';
 import './part-list.css';
 
@@ -62,7 +63,7 @@ export function PartList({ projectId, canEdit, materials, empty, onReplace }: Pa
   const { list, isTurning, error, retry } = usePartList(projectId, view, range);
   const [selection, select] = useSelection(list.query);
   const { steps, state } = useChangeSteps(projectId);
-  const { actions, error: actionError } = useRowActions(projectId, steps, onReplace);
+  const { actions, error: actionError } = useRowActions({ projectId, steps, materials, onReplace });
   const onText = useCallback((text: string) => change({ text }), [change]);
   const total = list.head?.total ?? 0;
   const count = countSelected(selection, total);

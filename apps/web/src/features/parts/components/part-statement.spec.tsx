@@ -277,9 +277,25 @@ describe('the statement of a part', () => {
     fireEvent.change(weighed, { target: { value: '16.3 g ± 0.1 g' } });
     expect(text(section('Figures'))).toContain('16.3000 g');
     expect(text(section('Source'))).toContain('Agrees');
+    expect(text(section('Source'))).toContain('In force: 2717 kg/m³, by the weight.');
     fireEvent.change(weighed, { target: { value: '12 g ± 0.1 g' } });
     expect(text(section('Figures'))).toContain('16.2000 g');
     expect(text(section('Source'))).toContain('hollow, filled, or of another');
+    expect(text(section('Source'))).not.toContain('In force');
+  });
+
+  it('a weighing that is refused leaves no verdict beside its error, and says which is still in force', () => {
+    open(block, { setting: { ...metal, ...made, weighing: { massKg: 0.0163, uncertaintyKg: 0.0001 } } });
+    const weighed = screen.getByLabelText('Weighed mass');
+    expect(text(section('Source'))).toContain('Agrees');
+    for (const refused of ['0', '15.0 g']) {
+      fireEvent.change(weighed, { target: { value: refused } });
+      fireEvent.blur(weighed);
+      expect(text(section('Source'))).not.toContain('Agrees');
+      expect(text(section('Source'))).toContain('Still in force: 16.3 ± 0.1 g.');
+    }
+    fireEvent.change(weighed, { target: { value: '16.2 g ± 0.1 g' } });
+    expect(text(section('Source'))).toContain('Agrees');
   });
 
   it('asks how sure the scale is', () => {
@@ -298,12 +314,21 @@ describe('the statement of a part', () => {
       change: { state: 'unit-doubt', unitDoubt: { lengthUnit: 'mm', volumeRatio: 16387.064 }, revisions: [{ ...before, id: 'revision', letter: 'B', reason: 'thicker wall' }, before] },
     });
     const source = text(section('Source'));
-    expect(source).toContain('16387 times that of revision A, as if millimetres had been taken for inches');
+    expect(source).toContain('about 16000 times that of revision A, as if millimetres had been taken for inches');
     expect(source).toContain('taken over from revision A; nobody has stated it for this file');
     expect(source).toContain('thicker wall');
     fireEvent.click(screen.getByRole('button', { name: 'These are millimetres' }));
     expect(editor.get().draft.lengthUnit).toBe('mm');
     expect(screen.queryByText('Is the unit right?')).toBeNull();
+  });
+
+  it('offers all units where the volumes speak for none of them', () => {
+    const before = { id: 'earlier', letter: 'A', fileName: 'block.stl', reason: '', createdAt: '2026-11-27T09:00:00Z', createdBy: 'Ines Marsh' };
+    const editor = open(block, { change: { state: 'unit-doubt', unitDoubt: { lengthUnit: null, volumeRatio: 1e-9 }, revisions: [{ ...before, id: 'revision', letter: 'B' }, before] } });
+    expect(text(section('Source'))).toContain('about a thousand-millionth of that of revision A, as if one unit had been taken for another, but none of the six');
+    fireEvent.click(screen.getByRole('button', { name: 'State the unit' }));
+    fireEvent.click(screen.getByRole('menuitem', { name: /^metre/ }));
+    expect(editor.get().draft.lengthUnit).toBe('m');
   });
 
   it('says where the same bytes are', () => {

@@ -1,20 +1,11 @@
 import { Button } from '@blueprintjs/core';
-import type { ChangeSettingsRequest, Material } from '@masswright/contracts';
+import type { Material } from '@masswright/contracts';
 import { formatCount, lengthUnits } from '@masswright/units';
-import { useState } from 'react';
-import { DensityField } from '../../../components/density-field';
-import { MaterialPicker } from '../../../components/material-picker';
 import { MenuButton, PanelButton } from '../../../components/menu-button';
-import { readDensity, writeDensity } from '../../../lib/density';
 import { unitTexts } from '../../../lib/unit-texts';
 import { axisChoices, computeSimpleAxis } from '../model/axis-choice';
-
-export interface BulkChange {
-  change: ChangeSettingsRequest['change'];
-  /** What is changed, and to what, for the sentence about it. */
-  about: string;
-  to: string;
-}
+import type { BulkChange } from '../model/bulk-change';
+import { DensityPanel } from './density-panel';
 
 interface SelectionBarProps {
   count: number;
@@ -25,37 +16,6 @@ interface SelectionBarProps {
   onDelete: () => void;
   onRestore: () => void;
   onClear: () => void;
-}
-
-function MaterialPanel({ materials, onChange }: Pick<SelectionBarProps, 'materials'> & { onChange: (change: BulkChange) => void }) {
-  const [text, setText] = useState('');
-  const { densityKgM3 } = readDensity(text);
-  return (
-    <div className="panel">
-      <div className="panel-material">
-        <p className="caption">Material</p>
-        <MaterialPicker
-          label="Material for the selected parts"
-          materials={materials}
-          value={null}
-          autoFocus
-          onChange={(material) => material && onChange({ change: { material: { id: material.id } }, about: 'Material', to: material.name })}
-        />
-      </div>
-      <form
-        className="panel-density"
-        onSubmit={(event) => {
-          event.preventDefault();
-          if (densityKgM3) onChange({ change: { densityKgM3, densitySpreadKgM3: null }, about: 'Density', to: writeDensity(densityKgM3) });
-        }}
-      >
-        <DensityField label="or a density" text={text} onChange={setText} emptyHint="With its unit, such as 2.7 g/cm3." />
-        <Button type="submit" disabled={!densityKgM3}>
-          Set the density
-        </Button>
-      </form>
-    </div>
-  );
 }
 
 /** What can be done with the parts that are selected. */
@@ -80,7 +40,8 @@ export function SelectionBar({ count, materials, isBusy, isDeletedView, onChange
           />
           <PanelButton {...small} label="Material" spoken="Material of the selected parts">
             {(close) => (
-              <MaterialPanel
+              <DensityPanel
+                label="Material for the selected parts"
                 materials={materials}
                 onChange={(change) => {
                   close();

@@ -1,13 +1,14 @@
 import { Button, HTMLSelect } from '@blueprintjs/core';
 import { lengthUnit as lengthUnitSchema, type Part } from '@masswright/contracts';
 import { lengthUnits } from '@masswright/units';
+import { MenuButton } from '../../../components/menu-button';
 import { Notice } from '../../../components/notice';
 import { ProblemNotice } from '../../../components/problem-notice';
 import { formatMoment } from '../../../lib/format-time';
 import { unitTexts } from '../../../lib/unit-texts';
 import { useStateUnit } from '../api/parts';
+import { describeRatio } from '../model/doubt-words';
 import type { SettingEditor, SettingEditorState } from '../model/setting-editor';
-import { describeRatio } from './row-note';
 import { Fact } from './section';
 
 interface UnitFactProps {
@@ -32,19 +33,30 @@ function Doubt({ part, editor, state }: UnitFactProps) {
   const { unitDoubt: doubt, can } = part;
   const { saved, draft } = state;
   const { lengthUnit } = saved;
+  const proposed = doubt?.lengthUnit ?? null;
   if (!doubt || lengthUnit === null || draft.lengthUnit !== lengthUnit) return null;
   const before = part.revisions[1];
   return (
     <Notice tone="doubt">
       <p>
-        <b>Is the unit right?</b> Its volume is {describeRatio(doubt)} that of revision {before?.letter ?? 'before'}, as if {unitTexts[doubt.lengthUnit].plural} had been taken for{' '}
-        {unitTexts[lengthUnit].plural}.
+        <b>Is the unit right?</b> Its volume is {describeRatio(doubt)} that of revision {before?.letter ?? 'before'},{' '}
+        {proposed === null
+          ? `as if one unit had been taken for another, but none of the six brings the two volumes together. State the unit, or keep ${unitTexts[lengthUnit].plural}.`
+          : `as if ${unitTexts[proposed].plural} had been taken for ${unitTexts[lengthUnit].plural}.`}
       </p>
       {can.edit && (
         <div className="notice-actions screen-only">
-          <Button size="small" onClick={() => editor.change({ lengthUnit: doubt.lengthUnit })}>
-            These are {unitTexts[doubt.lengthUnit].plural}
-          </Button>
+          {proposed === null ? (
+            <MenuButton
+              size="small"
+              label="State the unit"
+              items={lengthUnits.filter((unit) => unit !== lengthUnit).map((unit) => ({ label: unitTexts[unit].name, note: unitTexts[unit].usual, onChoose: () => editor.change({ lengthUnit: unit }) }))}
+            />
+          ) : (
+            <Button size="small" onClick={() => editor.change({ lengthUnit: proposed })}>
+              These are {unitTexts[proposed].plural}
+            </Button>
+          )}
           <Button size="small" loading={stateUnit.isPending} onClick={() => stateUnit.mutate({ partId: part.id, lengthUnit, version: saved.version })}>
             Keep {unitTexts[lengthUnit].plural}
           </Button>

@@ -1,5 +1,5 @@
 import type { ExportColumn, PartSort } from '@masswright/contracts';
-import { listUnits } from './row-figures';
+import { alignedColumns, listUnits, type AlignedColumn, type ColumnRooms } from './row-figures';
 
 /** Columns that the list of parts can have, in the order in which they are offered. */
 export const columnIds = ['number', 'name', 'revision', 'material', 'unit', 'size', 'volume', 'mass', 'beam', 'moment1', 'moment2', 'moment3', 'soundness', 'state', 'file', 'changed'] as const;
@@ -15,7 +15,7 @@ export interface Column {
   /** What stands at its head, where that is shorter. */
   head?: string;
   unit?: string;
-  /** Fixed, so that nothing moves sideways while rows come and go; the name alone takes what is left. */
+  /** The least; wider only where the figures of the list have more digits. The name alone takes what is left. */
   width: number;
   isNumeric?: boolean;
   /** Figures of the body: empty while something is missing, and then its reason stands in their place. */
@@ -31,7 +31,7 @@ const moment = (number: 1 | 2 | 3): Column => ({
   name: `Principal moment ${number}`,
   head: `I${'₁₂₃'.charAt(number - 1)}`,
   unit: inertia.symbol,
-  width: 100,
+  width: 98,
   isNumeric: true,
   isFigure: true,
   sort: `moment${number}`,
@@ -39,20 +39,20 @@ const moment = (number: 1 | 2 | 3): Column => ({
 });
 
 const all: readonly Column[] = [
-  { id: 'number', name: 'Number', head: 'No.', width: 50, isNumeric: true, sort: 'number', exported: 'number' },
-  { id: 'name', name: 'Part', width: 150, sort: 'name', exported: 'name' },
-  { id: 'revision', name: 'Revision', head: 'Rev', width: 40, exported: 'revision' },
-  { id: 'material', name: 'Material', width: 116, sort: 'material', exported: 'material' },
-  { id: 'unit', name: 'Unit', width: 50, sort: 'unit', exported: 'unit' },
-  { id: 'size', name: 'Size', unit: length.symbol, width: 170, isNumeric: true, isFigure: true, sort: 'size', exported: 'size' },
+  { id: 'number', name: 'Number', head: 'No.', width: 46, isNumeric: true, sort: 'number', exported: 'number' },
+  { id: 'name', name: 'Part', width: 140, sort: 'name', exported: 'name' },
+  { id: 'revision', name: 'Revision', head: 'Rev', width: 36, exported: 'revision' },
+  { id: 'material', name: 'Material', width: 140, sort: 'material', exported: 'material' },
+  { id: 'unit', name: 'Unit', width: 48, sort: 'unit', exported: 'unit' },
+  { id: 'size', name: 'Size', unit: length.symbol, width: 178, isNumeric: true, isFigure: true, sort: 'size', exported: 'size' },
   { id: 'volume', name: 'Volume', unit: volume.symbol, width: 112, isNumeric: true, isFigure: true, sort: 'volume', exported: 'volume' },
-  { id: 'mass', name: 'Mass', unit: mass.symbol, width: 96, isNumeric: true, isFigure: true, sort: 'mass', exported: 'mass' },
-  { id: 'beam', name: 'Balance along x, y and z', head: 'Balance x y z', width: 124, isFigure: true, exported: 'centre' },
+  { id: 'mass', name: 'Mass', unit: mass.symbol, width: 88, isNumeric: true, isFigure: true, sort: 'mass', exported: 'mass' },
+  { id: 'beam', name: 'Balance along x, y and z', head: 'Balance x y z', width: 118, isFigure: true, exported: 'centre' },
   moment(1),
   moment(2),
   moment(3),
-  { id: 'soundness', name: 'Mesh', width: 126, exported: 'soundness' },
-  { id: 'state', name: 'State', width: 178, sort: 'state', exported: 'state' },
+  { id: 'soundness', name: 'Mesh', width: 116, exported: 'soundness' },
+  { id: 'state', name: 'State', width: 172, sort: 'state', exported: 'state' },
   { id: 'file', name: 'File', width: 190, sort: 'file', exported: 'file' },
   { id: 'changed', name: 'Setting changed', head: 'Changed', width: 170, sort: 'changed' },
 ];
@@ -63,6 +63,19 @@ export function getColumn(id: ColumnId): Column {
   const column = byId.get(id);
   if (!column) throw new RangeError(`There is no column ${id}.`);
   return column;
+}
+
+/** Of a digit of the list, and of what stands about a cell's content. */
+const digitWidth = 7.2;
+const cellPadding = 12;
+const isAligned = (id: ColumnId): id is AlignedColumn & ColumnId => (alignedColumns as readonly string[]).includes(id);
+
+/** As wide as its figures need, so that none is cut off. */
+export function computeColumnWidth(id: ColumnId, rooms: ColumnRooms): number {
+  const { width } = getColumn(id);
+  if (!isAligned(id)) return width;
+  const { before, behind } = rooms[id];
+  return Math.max(width, Math.ceil((before + behind) * digitWidth) + cellPadding);
 }
 
 export const isColumnId = (text: string): text is ColumnId => byId.has(text as ColumnId);

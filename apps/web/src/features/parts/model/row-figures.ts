@@ -1,6 +1,6 @@
 import type { PartRow } from '@masswright/contracts';
-import { fromSi, getDisplayUnit } from '@masswright/units';
-import { computeFractionDigits } from '../../../components/figure';
+import { formatFigure, fromSi, getDisplayUnit } from '@masswright/units';
+import { computeFigureRoom, joinFigureRooms, type FigureRoom } from '../../../components/figure';
 
 /** The list shows one family of units; a choice of families comes with the person's settings. */
 const family = 'g-mm';
@@ -38,20 +38,36 @@ export function computeRowSize({ sizeM }: PartRow): readonly number[] | null {
   return sizeM && sizeM.map((extent) => fromSi(extent, listUnits.length));
 }
 
-export type ColumnFractions = Record<AlignedColumn, number>;
+export type ColumnRooms = Record<AlignedColumn, FigureRoom>;
 
-/** The room that each column keeps behind its decimal points for some rows. */
-export function computeColumnFractions(rows: readonly PartRow[]): ColumnFractions {
-  const digitsOf = (column: AlignedColumn): number =>
-    computeFractionDigits(
+const forEachColumn = (room: (column: AlignedColumn) => FigureRoom): ColumnRooms => ({
+  volume: room('volume'),
+  mass: room('mass'),
+  moment1: room('moment1'),
+  moment2: room('moment2'),
+  moment3: room('moment3'),
+});
+
+/** The room that the figures of each column take before and behind their decimal points in some rows. */
+export function computeColumnRooms(rows: readonly PartRow[]): ColumnRooms {
+  return forEachColumn((column) =>
+    computeFigureRoom(
       rows.map((row) => computeRowFigure(row, column)).filter((value) => value !== null),
       listDigits,
-    );
-  return { volume: digitsOf('volume'), mass: digitsOf('mass'), moment1: digitsOf('moment1'), moment2: digitsOf('moment2'), moment3: digitsOf('moment3') };
+    ),
+  );
 }
 
-/** The room that suits several groups of rows: the most that one of them needs. */
-export function joinColumnFractions(all: readonly ColumnFractions[]): ColumnFractions {
-  const most = (column: AlignedColumn): number => Math.max(0, ...all.map((fractions) => fractions[column]));
-  return { volume: most('volume'), mass: most('mass'), moment1: most('moment1'), moment2: most('moment2'), moment3: most('moment3') };
+/** The room that suits several groups of rows. */
+export function joinColumnRooms(all: readonly ColumnRooms[]): ColumnRooms {
+  return forEachColumn((column) => joinFigureRooms(all.map((rooms) => rooms[column])));
+}
+
+/** The three sides of a body in one line, and how small they must be set for that: no figure is ever cut off. */
+export function writeRowSize(row: PartRow): { text: string; setting: 'usual' | 'small' | 'two-lines' } | null {
+  const text = computeRowSize(row)
+    ?.map((extent) => formatFigure(extent, { digits: listDigits }))
+    .join(' × ');
+  if (text === undefined) return null;
+  return { text, setting: text.length <= 24 ? 'usual' : text.length <= 27 ? 'small' : 'two-lines' };
 }

@@ -13,6 +13,7 @@ describe('a selection', () => {
     const most = toggle(everything, 'a');
     expect([isSelected(most, 'a'), isSelected(most, 'never seen'), countSelected(most, 10_000)]).toEqual([false, true, 9_999]);
     expect(writeSelection(most, filter)).toEqual({ filter, except: ['a'] });
+    expect(writeSelection(most, filter, 9)).toEqual({ filter, except: ['a'], expected: 8 });
     expect(countSelected(toggle(most, 'a'), 10_000)).toBe(10_000);
   });
   it('takes a range in, also out of all but some', () => {

@@ -32,11 +32,14 @@ export function toggle(selection: Selection, id: string): Selection {
 }
 
 /** What the api is told of a selection, nothing left to be guessed. */
-export type ChosenParts = { ids: string[] } | { filter: PartFilter; except: string[] };
+export type ChosenParts = { ids: string[] } | { filter: PartFilter; except: string[]; expected?: number };
 
-/** The filter is the one under which all were chosen. */
-export function writeSelection(selection: Selection, { text, states, deleted }: PartFilter): ChosenParts {
-  return selection.kind === 'some' ? { ids: [...selection.ids] } : { filter: { text, states, deleted }, except: [...selection.except] };
+/**
+ * The filter is the one under which all were chosen, `total` how many rows the person sees that it leaves: the api refuses where there are others by then.
+ */
+export function writeSelection(selection: Selection, { text, states, deleted }: PartFilter, total?: number): ChosenParts {
+  if (selection.kind === 'some') return { ids: [...selection.ids] };
+  return { filter: { text, states, deleted }, except: [...selection.except], ...(total === undefined ? {} : { expected: countSelected(selection, total) }) };
 }
 
 /** The rows from one to another, both with them, whichever comes first. */

@@ -1,5 +1,6 @@
 import { partStates, type PartList, type PartRow, type PartState } from '@masswright/contracts';
 import type { Tone } from '../../../components/status-tag';
+import { askUnit } from './doubt-words';
 
 /** What a part's state is called in its row, and the tone of it. */
 export const stateTexts: Record<PartState, { tone: Tone; word: string }> = {
@@ -45,7 +46,7 @@ export function listChips({ counts, deleted }: Pick<PartList, 'counts' | 'delete
 }
 
 /** What stands in a row where its figures would: why there are none, or which of them are in doubt; with what the person can do about it. */
-export type RowNote = { text: string; ask?: 'failed' | 'unit' | 'unit-doubt' };
+export type RowNote = { text: string; ask?: 'failed' | 'unit' | 'unit-doubt' | 'density' };
 
 export function findNote(row: PartRow): RowNote | undefined {
   const { run } = row.revision;
@@ -55,12 +56,13 @@ export function findNote(row: PartRow): RowNote | undefined {
     case 'unit-missing':
       return { text: 'No size and no mass before the unit is stated.', ask: 'unit' };
     case 'density-missing':
-      return { text: 'State a material or a density: then there is a mass.' };
+      return { text: 'State a material or a density: then there is a mass.', ask: 'density' };
     case 'not-defensible':
       return { text: 'No figures: the mesh has no inside that could be defended.' };
     case 'measuring':
       return { text: '' };
     case 'unit-doubt':
+      return row.unitDoubt ? { text: askUnit(row.unitDoubt), ask: 'unit-doubt' } : undefined;
     case 'weight-disagrees':
     case 'ready':
       return undefined;

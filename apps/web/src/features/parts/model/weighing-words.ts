@@ -16,9 +16,16 @@ export function describeWeighing(weighing: StatementRecord['weighing'] | undefin
       return { tone: 'doubt', word: 'Unchecked', words: `It implies ${implied}, and sets the density. No material is named that it could be held against.` };
     case 'disagrees':
       return {
-        tone: 'wrong',
+        tone: 'doubt',
         word: 'Disagrees',
         words: `It implies ${implied}, outside of what ${named} can have. So the part is not a uniform body of that material: hollow, filled, or of another. Its tensor can't be scaled from the weight; mass and moments stay those of the material.`,
       };
   }
+}
+
+/** The density that the mass is by, where the weight and not the field of the density says it; undefined where the field does. */
+export function describeDensityInForce(statement: Pick<StatementRecord, 'densityKgM3' | 'weighing'> | undefined, { densityKgM3 }: Pick<Setting, 'densityKgM3'>): string | undefined {
+  const byWeight = statement?.weighing && statement.weighing.verdict !== 'disagrees' ? statement.densityKgM3 : null;
+  if (byWeight === null || byWeight === densityKgM3) return undefined;
+  return `In force: ${writePlain(byWeight, 4)} kg/m³, by the weight.`;
 }
