@@ -3,6 +3,13 @@ import { z } from 'zod';
 export const id = z.uuid();
 export const timestamp = z.iso.datetime();
 
+const keepable = (text: string): boolean => !/[\0\p{Surrogate}]/u.test(text);
+
+/** Text that is kept, or that what is kept is searched by. The database holds neither the character NUL nor half of a surrogate pair. */
+export function keptText() {
+  return z.string().refine(keepable, 'There is a character in this text that can’t be kept, such as NUL. Take it out, or type the text anew.');
+}
+
 /** Three numbers along the x, y and z axes of the frame that the enclosing object states. */
 export const vector3 = z.tuple([z.number(), z.number(), z.number()]);
 export type Vector3 = z.infer<typeof vector3>;

@@ -1,8 +1,8 @@
 import { z } from 'zod';
-import { id, timestamp } from './common';
+import { id, keptText, timestamp } from './common';
 import { densityKgM3, densitySpreadKgM3 } from './setting';
 
-export const materialName = z.string().trim().min(1, 'Give the material a name.').max(120, 'A name has at most 120 characters.');
+export const materialName = keptText().trim().min(1, 'Give the material a name.').max(120, 'A name has at most 120 characters.');
 /** Families under which materials are listed. */
 export const materialGroups = ['aluminium', 'steel', 'copper', 'titanium', 'other-metal', 'polymer', 'elastomer', 'composite', 'wood', 'glass-ceramic', 'other'] as const;
 export const materialGroup = z.enum(materialGroups);
@@ -19,7 +19,7 @@ const materialFields = z.object({
   densitySpreadKgM3,
   spreadBasis,
   /** Where the density comes from, in words. */
-  source: z.string().trim().max(300, 'A source has at most 300 characters.'),
+  source: keptText().trim().max(300, 'A source has at most 300 characters.'),
 });
 
 /** starter: of the library that every installation has; can't be changed. own: of the organisation. */
@@ -40,7 +40,7 @@ export type MaterialList = z.infer<typeof materialList>;
 
 export const materialListQuery = z.object({
   /** Every word of it must be in the name, the group or the source. */
-  text: z.string().max(200, 'A search has at most 200 characters.').default(''),
+  text: keptText().max(200, 'A search has at most 200 characters.').default(''),
   /** true: archived ones too. */
   archived: z.stringbool().default(false),
 });

@@ -1,10 +1,10 @@
 import { z } from 'zod';
-import { id, timestamp, vector3 } from './common';
+import { id, keptText, timestamp, vector3 } from './common';
 import { lengthUnit, setting, settingChange } from './setting';
 import { meshCompression, measurement, measuringError, meshFormat } from './measurement';
 
-export const partName = z.string().trim().min(1, 'Give the part a name.').max(200, 'A name has at most 200 characters.');
-export const revisionReason = z.string().trim().max(500, 'A reason has at most 500 characters.');
+export const partName = keptText().trim().min(1, 'Give the part a name.').max(200, 'A name has at most 200 characters.');
+export const revisionReason = keptText().trim().max(500, 'A reason has at most 500 characters.');
 
 /** How far the worker is with a file. `progress` runs from 0 to 1 within the whole run. hashing: finding out whether its bytes were measured before. */
 export const measuringRun = z.object({

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { id, timestamp } from './common';
+import { id, keptText, timestamp } from './common';
 
 /** administrator: people and everything else. engineer: projects and parts. reviewer: reads, and signs what is submitted. reader: reads. */
 export const role = z.enum(['administrator', 'engineer', 'reviewer', 'reader']);
@@ -11,9 +11,8 @@ export const emailAddress = z
   .toLowerCase()
   .max(254, 'An e-mail address has at most 254 characters.')
   .pipe(z.email('This is not an e-mail address. It should look like name@company.example.'));
-export const personName = z.string().trim().min(1, 'Give a name.').max(120, 'A name has at most 120 characters.');
-export const organisationName = z
-  .string()
+export const personName = keptText().trim().min(1, 'Give a name.').max(120, 'A name has at most 120 characters.');
+export const organisationName = keptText()
   .trim()
   .min(1, 'Give the organisation a name.')
   .max(120, 'A name has at most 120 characters.');

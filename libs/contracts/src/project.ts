@@ -1,7 +1,7 @@
 import { z } from 'zod';
-import { id, timestamp } from './common';
+import { id, keptText, timestamp } from './common';
 
-export const projectName = z.string().trim().min(1, 'Give the project a name.').max(120, 'A name has at most 120 characters.');
+export const projectName = keptText().trim().min(1, 'Give the project a name.').max(120, 'A name has at most 120 characters.');
 
 export const project = z.object({
   id,

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { lengthUnits } from '@masswright/units';
+import { keptText } from './common';
 
 export const lengthUnit = z.enum(lengthUnits);
 
@@ -35,7 +36,7 @@ export const densityKgM3 = z.number().min(1e-6, 'A density is at least 0.000001 
 export const densitySpreadKgM3 = z.number().min(0, 'A spread is not negative.').max(1e6, 'A spread is at most 1 000 000 kg/m³.');
 
 /** The library's name of a material as it was when the setting was made. */
-export const namedMaterial = z.object({ id: z.string().min(1).max(80), name: z.string() });
+export const namedMaterial = z.object({ id: keptText().min(1).max(80), name: z.string() });
 export type NamedMaterial = z.infer<typeof namedMaterial>;
 
 /** A part on the scale: its mass, and the expanded uncertainty of that (k = 2). */

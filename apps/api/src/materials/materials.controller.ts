@@ -7,6 +7,7 @@ import {
   createMaterialRequest,
   importMaterialsAnswer,
   importMaterialsRequest,
+  keptText,
   material,
   materialList,
   materialListQuery,
@@ -28,7 +29,7 @@ import { MaterialUsesService } from './material-uses.service';
 import { MaterialsService } from './materials.service';
 
 /** A word for a material of the starter library, a uuid for an own one. */
-const materialId = z.string().max(80);
+const materialId = keptText().max(80);
 
 @ApiTags('materials')
 @Controller('materials')
