@@ -287,7 +287,7 @@ export interface paths {
             path?: never;
             cookie?: never;
         };
-        /** What the list of parts shows, as a table or as the records of its statements */
+        /** What the list of parts shows, as a table or as the records of its statements, each with its part’s number, name and revision */
         get: operations["partexports.export"];
         put?: never;
         post?: never;
@@ -913,6 +913,7 @@ export interface components {
                 };
                 /** @default [] */
                 except: string[];
+                expected?: number;
             };
         };
         MovedParts: {
@@ -932,6 +933,7 @@ export interface components {
                 };
                 /** @default [] */
                 except: string[];
+                expected?: number;
             };
         };
         ChangeSettingsRequest: {
@@ -948,6 +950,7 @@ export interface components {
                 };
                 /** @default [] */
                 except: string[];
+                expected?: number;
             };
             change: {
                 lengthUnit?: ("micron" | "mm" | "cm" | "m" | "inch" | "foot") | null;
@@ -2341,7 +2344,7 @@ export interface operations {
         };
         requestBody?: never;
         responses: {
-            /** @description What the list of parts shows, as a table or as the records of its statements */
+            /** @description What the list of parts shows, as a table or as the records of its statements, each with its part’s number, name and revision */
             200: {
                 headers: {
                     [name: string]: unknown;
@@ -2459,6 +2462,11 @@ export interface operations {
                             inertiaKgM2: number;
                             radiusOfGyrationM: number;
                         } | null;
+                        part: {
+                            number: number;
+                            name: string;
+                            revision: string;
+                        };
                     } | {
                         file: string;
                         error: {
@@ -2469,6 +2477,11 @@ export interface operations {
                                 byte?: number;
                                 line?: number;
                             } | null;
+                        };
+                        part: {
+                            number: number;
+                            name: string;
+                            revision: string;
                         };
                     })[];
                 };

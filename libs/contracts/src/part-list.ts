@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { id, timestamp } from './common';
+import { id, keptText, timestamp } from './common';
 import { partRow, partState, partStates } from './part';
 import { settingChange } from './setting';
 
@@ -9,7 +9,7 @@ export type PartSort = z.infer<typeof partSort>;
 
 /** Which parts of a project are meant: those whose number, name, file, folder or material holds every word of `text`, in one of `states`. */
 export const partFilter = z.object({
-  text: z.string().max(200, 'A search has at most 200 characters.').default(''),
+  text: keptText().max(200, 'A search has at most 200 characters.').default(''),
   /** Names of states with commas between; '' means all. */
   states: z
     .string()
@@ -51,7 +51,7 @@ export const exportColumn = z.enum(exportColumns);
 export type ExportColumn = z.infer<typeof exportColumn>;
 export const exportQuery = partFilter.extend(partOrder.shape).extend({
   format: z.enum(['csv', 'json']),
-  /** Names of columns with commas between, for CSV; '' means all. JSON holds whole records. */
+  /** Names of columns with commas between, for CSV; '' means all. JSON holds whole records (`exportedRecord`). */
   columns: z
     .string()
     .default('')
@@ -59,10 +59,13 @@ export const exportQuery = partFilter.extend(partOrder.shape).extend({
 });
 export type ExportQuery = z.infer<typeof exportQuery>;
 
-/** Parts one by one, or all that a filter leaves but some. */
+/**
+ * Parts one by one, or all that a filter leaves but some. `expected` is how many the person saw, the exceptions taken off: where another number is meant by
+ * now, the request is refused with `conflict`, so that nothing happens to parts that came after the look.
+ */
 export const partSelection = z.union([
   z.object({ ids: z.array(id).min(1).max(10_000) }),
-  z.object({ filter: partFilter.extend({ deleted: z.boolean().default(false) }).partial(), except: z.array(id).max(10_000).default([]) }),
+  z.object({ filter: partFilter.extend({ deleted: z.boolean().default(false) }).partial(), except: z.array(id).max(10_000).default([]), expected: z.number().int().nonnegative().optional() }),
 ]);
 export type PartSelection = z.infer<typeof partSelection>;
 

@@ -50,3 +50,9 @@ export const failedRecord = z.object({
   error: measuringError.extend({ code: z.enum([...measuringErrorCodes, 'not-measured-yet', 'unit-not-stated']) }),
 });
 export type FailedRecord = z.infer<typeof failedRecord>;
+
+/** Of which part a record in an export is. */
+const exportedPart = z.object({ number: z.number().int().positive(), name: z.string(), revision: z.string() });
+/** An item of an export: the record with its own keys, or what stands in its place, and beside them one key more that says whose it is. */
+export const exportedRecord = z.union([statementRecord.extend({ part: exportedPart }), failedRecord.extend({ part: exportedPart })]);
+export type ExportedRecord = z.infer<typeof exportedRecord>;

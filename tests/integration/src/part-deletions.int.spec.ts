@@ -91,6 +91,16 @@ describe('a deleted part', () => {
     expect(await list()).toMatchObject({ total: 8, deleted: 0 });
   });
 
+  it('by a filter is refused where other than the expected number of parts match by now', async () => {
+    const before = await list();
+    expect(await remove({ filter: {}, except: [at(0)], expected: 6 })).toMatchObject({ status: 409, body: { code: 'conflict', detail: '7 parts match now; you chose 6. Look again.' } });
+    expect(await list()).toEqual(before);
+    expect((await remove({ filter: {}, except: [at(0)], expected: 7 })).body.ids).toHaveLength(7);
+    expect(await remove({ filter: {}, except: [], expected: 8 })).toMatchObject({ status: 409, body: { detail: '1 part matches now; you chose 8. Look again.' } });
+    expect((await restore({ filter: {}, except: [], expected: 8 })).status).toBe(409);
+    expect((await restore({ filter: {}, except: [], expected: 7 })).body.ids).toHaveLength(7);
+  });
+
   it('deleted again, and restored when it is there, is left as it is', async () => {
     await remove({ ids: [at(0)] });
     const { deletedAt } = await engineer.get<Part>(`/parts/${at(0)}`);

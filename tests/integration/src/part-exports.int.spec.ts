@@ -1,6 +1,6 @@
 import { parse } from 'csv-parse/sync';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { failedRecord, statementRecord, type FailedRecord, type Part, type StatementRecord } from '@masswright/contracts';
+import { exportedRecord, failedRecord, statementRecord, type ExportedRecord, type Part, type StatementRecord } from '@masswright/contracts';
 import { startTestApi, type TestApi } from '../../support/api';
 import type { Answer, ApiUser } from '../../support/api-user';
 import { fillProject } from '../../support/filled-project';
@@ -63,6 +63,12 @@ describe('an export of the list as a table', () => {
     for (const [, name] of rows) expect(name).toContain('lever');
   });
 
+  it('has every column where none is asked for: the density stands beside the mass', async () => {
+    const { body } = await ask('format=csv&text=nothing-has-this');
+    const [header] = parse(body, { bom: true });
+    expect(header).toEqual(expect.arrayContaining(['number', 'name', 'revision', 'sha256', 'material', 'length_unit', 'density_kg_m3', 'mass_kg', 'state']));
+  });
+
   it('is a file to be saved: named after the project, never shown or guessed at, with the mark by which spreadsheets know UTF-8', async () => {
     const { headers } = await ask('format=csv');
     expect(headers.get('content-type')).toBe('text/csv; charset=utf-8');
@@ -85,15 +91,27 @@ describe('an export of the list as a table', () => {
 
 describe('an export of the list as records', () => {
   it('has for each part its record, or in its place why there is none', async () => {
-    const { body } = await ask<(StatementRecord | FailedRecord)[]>('format=json');
+    const { body } = await ask<ExportedRecord[]>('format=json');
     expect(body).toHaveLength(count);
     const codes = body.map((record) => ('error' in record ? record.error.code : 'record'));
     for (const [index, code] of codes.entries()) {
       const number = index + 1;
       expect(code, `part ${number}`).toBe(number === 101 ? 'record' : number % 13 === 0 ? 'not-measured-yet' : number % 17 === 0 ? 'file-truncated' : number % 10 === 0 ? 'unit-not-stated' : 'record');
     }
-    for (const record of body) expect('error' in record ? failedRecord.parse(record) : statementRecord.parse(record)).toEqual(record);
-    expect(body[2]).toEqual(await engineer.get(`/parts/${ids[2]}/statement`));
+    for (const { part, ...record } of body) {
+      expect('error' in record ? failedRecord.parse(record) : statementRecord.parse(record)).toEqual(record);
+      expect(exportedRecord.parse({ part, ...record })).toEqual({ part, ...record });
+    }
+  });
+
+  it('says of each record of which part and revision it is, beside the record’s own keys', async () => {
+    const { body } = await ask<ExportedRecord[]>('format=json');
+    const rows = rowsOf(await ask('format=csv&columns=number,name,revision'));
+    expect(body.map(({ part }) => [String(part.number), part.revision])).toEqual(rows.map(({ number, revision }) => [number, revision]));
+    const third = await engineer.get<Part>(`/parts/${ids[2]}`);
+    const { part, ...record } = body[2] ?? {};
+    expect(part).toEqual({ number: 3, name: third.name, revision: third.revision.letter });
+    expect(record).toEqual(await engineer.get(`/parts/${ids[2]}/statement`));
   });
 
   it('of nothing is an empty array', async () => {

@@ -116,6 +116,9 @@ describe('one change for many parts', () => {
     // A filter means the others.
     const filtered = await change({ filter: {}, except: [] }, { lengthUnit: 'cm' });
     expect([filtered.body.changed, filtered.body.left]).toEqual([21, []]);
+    // Nor, where the person says how many they saw, others than those.
+    const unseen = await engineer.ask<{ detail: string }>('POST', `/projects/${projectId}/setting-changes`, { parts: { filter: {}, except: [], expected: 20 }, change: { lengthUnit: 'm' } });
+    expect([unseen.status, unseen.body.detail]).toEqual([409, '21 parts match now; you chose 20. Look again.']);
   });
 });
 
@@ -166,6 +169,18 @@ describe('taking it back', () => {
     expect(back.body).toMatchObject({ changed: 19, left: [{ number: 2, partId: at(1), changedBy: 'Ines Marsh' }, { number: 5 }, { number: 8, changedBy: '' }] });
     expect(await settingOf(at(1))).toMatchObject({ lengthUnit: 'm', densityKgM3: 1, version: 3 });
     expect(await settingOf(at(2))).toMatchObject({ lengthUnit: 'mm', version: 3 });
+  });
+
+  it('is refused with names where nothing can be put back, and not used up by that', async () => {
+    const { body } = await change({ ids: [at(0), at(1)] }, { lengthUnit: 'm' });
+    const { body: later } = await change({ ids: [at(0)] }, { lengthUnit: 'foot' });
+    await engineer.expect('POST', `/projects/${projectId}/part-deletions`, { parts: { ids: [at(1)] } });
+    const refused = await undo(body.id);
+    expect(refused).toMatchObject({ status: 409, body: { code: 'conflict', detail: expect.stringMatching(/^Nothing was put back, .*\(Ines Marsh\), .*\(deleted\)\.$/) as string } });
+    expect(await settingOf(at(0))).toMatchObject({ lengthUnit: 'foot', version: 3 });
+    await engineer.expect('POST', `/projects/${projectId}/part-restorations`, { parts: { ids: [at(1)] } });
+    expect(await undo(body.id)).toMatchObject({ status: 201, body: { changed: 1, left: [{ number: 1 }], reverses: body.id } });
+    expect((await undo(later.id)).status).toBe(201);
   });
 });
 

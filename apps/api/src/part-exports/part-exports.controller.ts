@@ -2,7 +2,7 @@ import { Controller, Get, Inject, Param, Query, Res } from '@nestjs/common';
 import { ApiTags } from '@nestjs/swagger';
 import type { Response } from 'express';
 import { z } from 'zod';
-import { exportQuery, failedRecord, id, statementRecord, type ExportQuery } from '@masswright/contracts';
+import { exportedRecord, exportQuery, id, type ExportQuery } from '@masswright/contracts';
 import { describeAttachment, makeFileName, sendPieces } from '../platform/attachment';
 import { Operation } from '../platform/operation';
 import { SignedIn, type SignedInContext } from '../platform/request-context';
@@ -17,8 +17,8 @@ export class PartExportsController {
 
   @Get('projects/:projectId/parts/export')
   @Operation({
-    summary: 'What the list of parts shows, as a table or as the records of its statements',
-    file: { 'text/csv': z.string(), 'application/json': z.array(z.union([statementRecord, failedRecord])) },
+    summary: 'What the list of parts shows, as a table or as the records of its statements, each with its part’s number, name and revision',
+    file: { 'text/csv': z.string(), 'application/json': z.array(exportedRecord) },
   })
   async export(@SignedIn() context: SignedInContext, @Param('projectId', { schema: id }) projectId: string, @Query({ schema: exportQuery }) query: ExportQuery, @Res() response: Response): Promise<void> {
     const { projectName, pieces } = await this.service.begin(context, projectId, query);

@@ -1,8 +1,8 @@
 import { Inject, Injectable } from '@nestjs/common';
-import type { ExportQuery, FailedRecord, StatementRecord } from '@masswright/contracts';
+import type { ExportedRecord, ExportQuery, FailedRecord, StatementRecord } from '@masswright/contracts';
 import { findParts, findProject, listPartIds, readSummarySource, type StoredPart } from '@masswright/drizzle';
 import { summarisePart } from '@masswright/mechanics';
-import { presentStatement } from '../parts/part.presenter';
+import { presentStatement, revisionLetter } from '../parts/part.presenter';
 import { notFound } from '../platform/app-error';
 import { byteOrderMark, writeCsv } from '../platform/csv';
 import type { SignedInContext } from '../platform/request-context';
@@ -31,6 +31,12 @@ function readRecord(stored: StoredPart): StatementRecord | FailedRecord {
     presentStatement(stored) ??
     (stored.measurement === null ? because('not-measured-yet', 'This file is not measured yet.') : because('unit-not-stated', 'The unit of this file is not stated, so no figure can be.'))
   );
+}
+
+/** The record with the part that it is of: names of files alone don't tell two records apart. */
+function readExportedRecord(stored: StoredPart): ExportedRecord {
+  const { number, name } = stored.part;
+  return { part: { number, name, revision: revisionLetter(stored.revision.ordinal) }, ...readRecord(stored) };
 }
 
 /** A project's list as a file: what is shown, in its order. */
@@ -70,7 +76,7 @@ async function* writeRecords(batches: AsyncIterable<StoredPart[]>): AsyncGenerat
   let between = '\n';
   for await (const parts of batches) {
     if (parts.length === 0) continue;
-    yield between + parts.map((stored) => JSON.stringify(readRecord(stored))).join(',\n');
+    yield between + parts.map((stored) => JSON.stringify(readExportedRecord(stored))).join(',\n');
     between = ',\n';
   }
   yield '\n]\n';

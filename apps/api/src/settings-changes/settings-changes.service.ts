@@ -23,7 +23,7 @@ import type { SignedInContext } from '../platform/request-context';
 import { audit, Work, type Actor } from '../platform/work';
 import { requireEdit } from '../projects/project.policy';
 import { changeOfSetting, restoreSetting } from './change-of-setting';
-import { separateDeleted, sortOutRestorable, type LeftPart } from './sort-out-restorable';
+import { nothingToRestore, separateDeleted, sortOutRestorable, type LeftPart } from './sort-out-restorable';
 
 /** One setting that is going to be other than it was. */
 interface Step {
@@ -64,7 +64,10 @@ export class SettingsChangesService {
     });
   }
 
-  /** Takes a change back, as far as nobody has changed the same since; doing so is a change of its own, which can be taken back in turn. */
+  /**
+   * Takes a change back, as far as nobody has changed the same since; doing so is a change of its own, which can be taken back in turn. Where nothing can
+   * be put back it is refused, and not used up.
+   */
   undo(context: SignedInContext, changeId: string): Promise<SettingsChange> {
     return this.work.run(context, async (tx, actor) => {
       requireEdit(actor);
@@ -77,6 +80,7 @@ export class SettingsChangesService {
       if (reversal !== undefined) throw new AppError('conflict', `${reversal.byName} has taken this change back already. To have it again, take that back.`);
       const settings = await findCurrentSettings(tx, items.map(({ partId }) => partId));
       const { restorable, left } = sortOutRestorable(items, held, settings);
+      if (restorable.length === 0 && left.length > 0) throw nothingToRestore(left);
       const steps = restorable.map(({ current, before }) => ({ current, after: restoreSetting(current, before) }));
       return this.write(tx, context, actor, { projectId: change.projectId, steps, unchanged: 0, left, reverses: changeId, said: { reverses: changeId } });
     });

@@ -1,6 +1,7 @@
 import type { SettingsChange } from '@masswright/contracts';
 import type { CurrentSetting, HeldPart, listSettingsChangeItems, SettingBefore } from '@masswright/drizzle';
 import { requirePresent } from '../parts/stored-part';
+import { AppError } from '../platform/app-error';
 
 export type LeftPart = SettingsChange['left'][number];
 
@@ -34,4 +35,13 @@ export function sortOutRestorable(items: readonly Item[], held: readonly HeldPar
     else left.push(leave(part, part.deletedAt === null ? current.changedByName : ''));
   }
   return { restorable, left };
+}
+
+const mostSaid = 3;
+
+/** Nothing of a change can be put back: said with the first of the parts, and the change can still be taken back when theirs are. */
+export function nothingToRestore(left: readonly LeftPart[]): AppError {
+  const said = left.slice(0, mostSaid).map(({ name, changedBy }) => (changedBy === '' ? `${name} (deleted)` : `${name} (${changedBy})`));
+  const more = left.length > mostSaid ? ` and ${left.length - mostSaid} more` : '';
+  return new AppError('conflict', `Nothing was put back, because everything was changed or deleted meanwhile: ${said.join(', ')}${more}.`);
 }
