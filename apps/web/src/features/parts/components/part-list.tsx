@@ -7,12 +7,13 @@ import { ProblemNotice } from '../../../components/problem-notice';
 import { PrintLine } from '../../../components/print-line';
 import { countOf } from '../../../lib/plural';
 import { changeSettings, deleteParts, restoreParts } from '../api/part-changes';
-import { readRowIds, usePartList } from '../api/part-list';
+import { readRowIds, usePartCounts, usePartList } from '../api/part-list';
 import type { BulkChange } from '../model/bulk-change';
 import type { ListQuery } from '../model/list-address';
 import { countSelected, nothing, writeSelection, type Selection } from '../model/selection';
 import { useChangeSteps } from '../model/use-change-steps';
 import { placeRow } from '../model/stretches';
+import { useKeptFocus } from '../model/use-kept-focus';
 import { useListView } from '../model/use-list-view';
 import { useRowActions } from '../model/use-row-actions';
 import type { RowRange } from '../model/use-virtual-rows';
@@ -61,13 +62,15 @@ export function PartList({ projectId, canEdit, materials, empty, onReplace }: Pa
   const { view, change } = useListView();
   const [range, noteRange] = useStretchRange();
   const { list, isTurning, error, retry } = usePartList(projectId, view, range);
+  const counts = usePartCounts(projectId, view, list);
   const [selection, select] = useSelection(list.query);
+  const keptFocus = useKeptFocus();
   const { steps, state } = useChangeSteps(projectId);
   const { actions, error: actionError } = useRowActions({ projectId, steps, materials, onReplace });
   const onText = useCallback((text: string) => change({ text }), [change]);
   const total = list.head?.total ?? 0;
   const count = countSelected(selection, total);
-  const chosen = () => writeSelection(selection, list.query);
+  const chosen = () => writeSelection(selection, list.query, total);
 
   const changeAll = ({ change: wanted, about, to }: BulkChange): Promise<void> =>
     steps.take(async () => {
@@ -83,9 +86,9 @@ export function PartList({ projectId, canEdit, materials, empty, onReplace }: Pa
   const isEmpty = list.head !== undefined && total === 0 && view.text === '' && view.states === '' && !view.deleted && list.head.deleted === 0 && !isTurning;
   if (isEmpty) return empty;
   return (
-    <section className="part-list" aria-label="List of parts">
+    <section ref={keptFocus} className="part-list" aria-label="List of parts">
       <div className="part-tools screen-only">
-        <PartFilterBar view={view} head={list.head} onChange={change} onText={onText} />
+        <PartFilterBar view={view} counts={counts} deleted={list.head?.deleted} onChange={change} onText={onText} />
         <div className="part-tools-end">
           <ColumnChooser columns={view.columns} onChange={change} />
           <ExportMenu projectId={projectId} view={view} total={total} />
