@@ -114,7 +114,7 @@ describe.each(['light', 'dark'] as const)('every page, %s', (colorScheme) => {
     await dialog.getByRole('button', { name: 'Decide file by file' }).click();
     await look('the unit, file by file');
     await dialog.getByRole('button', { name: 'Done' }).click();
-    await expect.poll(() => dialog.getByRole('listitem').filter({ hasText: 'Measured' }).count(), { timeout: 30_000 }).toBe(2);
+    await expect.poll(() => dialog.getByRole('listitem').filter({ hasText: /Measured/ }).count(), { timeout: 30_000 }).toBe(2);
     await look('the files');
     await dialog.getByLabel('Mesh files').setInputFiles([meshFile('block.stl', block([0, 0, 0], [size, 9, 9])), meshFile('open.stl', block([0, 0, 0], [size, 9, 8]))]);
     await dialog.getByRole('heading', { name: '2 files have names that parts have already' }).waitFor();
