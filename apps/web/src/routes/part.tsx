@@ -30,6 +30,7 @@ function PartPage({ part }: { part: Part }) {
   const { editor, state } = useSettingEditor(part);
   const materials = useMaterialItems();
   const [renaming, setRenaming] = useState(false);
+  const replace = (): void => openUploadDialog(part.projectId, [], { partId: part.id, number: part.number, name: part.name });
   return (
     <PageDrop onFiles={part.can.edit ? (files, unreadable) => openUploadDialog(part.projectId, files, undefined, unreadable) : undefined}>
       <Crumbs
@@ -52,14 +53,21 @@ function PartPage({ part }: { part: Part }) {
             Revision <b className="figure">{part.revision.letter}</b>
           </span>
         }
-        actions={part.can.edit && <Button onClick={() => setRenaming(true)}>Rename</Button>}
+        actions={
+          part.can.edit && (
+            <>
+              <Button onClick={() => setRenaming(true)}>Rename</Button>
+              <Button onClick={replace}>{part.state === 'failed' ? 'Replace the file' : 'New revision'}</Button>
+            </>
+          )
+        }
       />
       {part.deletedAt !== null && <DeletedNotice part={part} deletedAt={part.deletedAt} canRestore={session.can.createProject} />}
       <PrintLine>
         {session.organisation.name}, {part.projectName}, part {part.number}, revision {part.revision.letter}, setting version {state.saved.version}
         {state.status !== 'saved' && ' with changes that are not saved'}
       </PrintLine>
-      <PartStatement part={part} editor={editor} state={state} ownName={session.user.name} materials={materials} onReplace={part.can.edit ? () => openUploadDialog(part.projectId, [], { partId: part.id, number: part.number, name: part.name }) : undefined} />
+      <PartStatement part={part} editor={editor} state={state} ownName={session.user.name} materials={materials} onReplace={part.can.edit ? replace : undefined} />
       <AddMeshesDialog projectId={part.projectId} materials={materials} />
       <RenamePartDialog part={part} isOpen={renaming} onClose={() => setRenaming(false)} />
     </PageDrop>

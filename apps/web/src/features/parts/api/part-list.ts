@@ -1,5 +1,5 @@
 import type { PartList, PartRow } from '@masswright/contracts';
-import { queryOptions, useQueries, useQueryClient, type QueryClient } from '@tanstack/react-query';
+import { queryOptions, useQueries, useQuery, useQueryClient, type QueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import { api, unwrapAs } from '../../../lib/api';
 import { writeQuery, type ListQuery } from '../model/list-address';
@@ -91,6 +91,12 @@ export function usePartList(projectId: string, query: ListQuery, range: { first:
     error: failed?.error ?? null,
     retry: () => results.forEach(({ error, refetch }) => void (error && refetch())),
   };
+}
+
+/** How many parts are in each state: told with the list, and beside the deleted ones read for themselves. */
+export function usePartCounts(projectId: string, view: ListQuery, list: ReadList): PartList['counts'] | undefined {
+  const beside = useQuery({ ...stretchQuery(projectId, { ...view, states: '', deleted: false }, 0), enabled: view.deleted || list.query.deleted });
+  return list.query.deleted ? beside.data?.counts : list.head?.counts;
 }
 
 /** The ids of rows that stand at some places, read where they are not known yet. */

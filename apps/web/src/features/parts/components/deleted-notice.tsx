@@ -1,13 +1,12 @@
 import { Button } from '@blueprintjs/core';
-import { keepDeletedPartsDays, type Part } from '@masswright/contracts';
+import type { Part } from '@masswright/contracts';
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { Notice } from '../../../components/notice';
 import { ProblemNotice } from '../../../components/problem-notice';
 import { formatDay, formatMoment } from '../../../lib/format-time';
 import { partKey, partsKey } from '../api/keys';
 import { restoreParts } from '../api/part-changes';
-
-const dayMs = 24 * 3600 * 1000;
+import { computeKeptUntil } from '../model/deleted-words';
 
 /** Above a part that was deleted: until when it can be had back, and how. */
 export function DeletedNotice({ part, deletedAt, canRestore }: { part: Part; deletedAt: string; canRestore: boolean }) {
@@ -19,7 +18,7 @@ export function DeletedNotice({ part, deletedAt, canRestore }: { part: Part; del
       await client.invalidateQueries({ queryKey: partKey(part.id) });
     },
   });
-  const until = new Date(Date.parse(deletedAt) + keepDeletedPartsDays * dayMs).toISOString();
+  const until = computeKeptUntil(deletedAt).toISOString();
   return (
     <Notice tone="doubt">
       <p>

@@ -5,9 +5,10 @@ import { Link } from 'react-router-dom';
 import { AlignedFigure } from '../../../components/figure';
 import { PictureView } from '../../../components/picture-view';
 import { StatusTag } from '../../../components/status-tag';
-import { formatMoment } from '../../../lib/format-time';
+import { formatDay, formatMoment } from '../../../lib/format-time';
 import { countOf } from '../../../lib/plural';
 import type { ColumnId } from '../model/columns';
+import { describeDaysLeft } from '../model/deleted-words';
 import { computeRowFigure, listDigits, writeRowSize, type ColumnRooms } from '../model/row-figures';
 import { describeRun } from '../model/run-words';
 import { describeVerdict } from '../model/soundness-words';
@@ -26,6 +27,14 @@ const Missing = () => <span className="soft">–</span>;
 
 function StateCell({ row }: { row: PartRow }) {
   const { run } = row.revision;
+  if (row.deletedAt !== null) {
+    return (
+      <span className="part-deleted" title={`Deleted ${formatMoment(row.deletedAt)}`}>
+        {describeDaysLeft(row.deletedAt)}
+        <span className="soft">deleted {formatDay(row.deletedAt)}</span>
+      </span>
+    );
+  }
   if (row.state === 'measuring') {
     return (
       <span className="part-run">

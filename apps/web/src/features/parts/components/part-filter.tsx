@@ -1,9 +1,8 @@
 import { InputGroup } from '@blueprintjs/core';
 import { formatCount } from '@masswright/units';
 import { memo, useEffect, useRef, useState } from 'react';
-import type { ListHead } from '../api/part-list';
 import type { ListView } from '../model/list-address';
-import { listChips } from '../model/state-words';
+import { listChips, type ChipCounts } from '../model/state-words';
 
 const typingMs = 150;
 
@@ -62,20 +61,15 @@ function TextFilter({ text, onChange }: { text: string; onChange: (text: string)
 
 interface PartFilterProps {
   view: ListView;
-  head: ListHead | undefined;
+  counts: ChipCounts['counts'];
+  deleted: number | undefined;
   onChange: (change: Partial<ListView>) => void;
   onText: (text: string) => void;
 }
 
-const nobody: ListHead = {
-  total: 0,
-  deleted: 0,
-  counts: { measuring: 0, failed: 0, 'not-defensible': 0, 'unit-missing': 0, 'unit-doubt': 0, 'density-missing': 0, 'weight-disagrees': 0, ready: 0 },
-};
-
 /** Narrows the list by text and by state. */
-export const PartFilterBar = memo(function PartFilterBar({ view, head, onChange, onText }: PartFilterProps) {
-  const chips = listChips(head ?? nobody, view);
+export const PartFilterBar = memo(function PartFilterBar({ view, counts, deleted: countDeleted, onChange, onText }: PartFilterProps) {
+  const chips = listChips({ counts, deleted: countDeleted }, view);
   return (
     <div className="part-filter">
       <TextFilter text={view.text} onChange={onText} />
@@ -90,7 +84,7 @@ export const PartFilterBar = memo(function PartFilterBar({ view, head, onChange,
               className={`part-chip${isSingle ? ' part-chip-single' : ''}`}
               onClick={() => onChange({ states: isChosen && isSingle ? '' : states, deleted })}
             >
-              {name} {head && count !== undefined && <span className="figure">{formatCount(count)}</span>}
+              {name} {count !== undefined && <span className="figure">{formatCount(count)}</span>}
             </button>
           );
         })}

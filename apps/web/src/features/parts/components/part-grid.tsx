@@ -6,7 +6,9 @@ import type { ColumnRooms } from '../model/row-figures';
 import { writeQuery } from '../model/list-address';
 import { findPlace, keepPlace } from '../model/list-place';
 import { countSelected, isSelected, type Selection } from '../model/selection';
+import { findEntry, findRowElement, findStepInRow } from '../model/row-controls';
 import { useGridPosition } from '../model/use-grid-position';
+import { useMoreAtSide } from '../model/use-more-at-side';
 import { useIsPrinting } from '../model/use-is-printing';
 import { rowHeight, useVirtualRows, type RowRange } from '../model/use-virtual-rows';
 import { PartGridHead } from './part-grid-head';
@@ -55,6 +57,8 @@ const findIndex = (target: EventTarget): number | undefined => {
   const index = target instanceof Element ? target.closest<HTMLElement>('[data-index]')?.dataset['index'] : undefined;
   return index === undefined ? undefined : Number(index);
 };
+/** What a person reaches in a row by Tab or a press makes the row the current one. */
+const findControlIndex = (target: EventTarget): number | undefined => (isControl(target) ? findIndex(target) : undefined);
 
 export function PartGrid(props: PartGridProps) {
   const { projectId, list, total, columns, onOrder, selection, canSelect, onSelect, onRange, actions } = props;
@@ -91,12 +95,26 @@ export function PartGrid(props: PartGridProps) {
   const offset = useRef(place.offset);
   useEffect(() => keepPlace(projectId, { query: queryText, offset: offset.current, current }), [projectId, queryText, current]);
 
+  const focusGrid = (): void => scroller.current?.focus({ preventScroll: true });
+  /** True where a control of a row, and not the list, answers the key. */
+  const pressInRow = (event: KeyboardEvent<Element>, row: Element): boolean => {
+    if (!(event.target instanceof Element) || event.ctrlKey || event.metaKey || event.altKey) return false;
+    const step = findStepInRow(event.target, row, event.key);
+    if (step === undefined) return false;
+    if (step !== 'own') event.preventDefault();
+    if (step === 'list') focusGrid();
+    else if (step !== 'own') step.focus();
+    return true;
+  };
   const press = (event: KeyboardEvent): void => {
-    if (event.target !== scroller.current && !(event.key === 'Escape' && event.target instanceof Element && event.target.closest('[role=row]'))) return;
+    const inRow = findRowElement(event.target);
+    if (inRow ? pressInRow(event, inRow) : event.target !== scroller.current) return;
     const isCommand = event.ctrlKey || event.metaKey;
     const target = isCommand || event.altKey ? undefined : position.findTarget(event.key);
     const row = list.getRow(current);
-    if (target !== undefined) {
+    const entry = isCommand || event.altKey || inRow ? undefined : findEntry(document.getElementById(`${id}-${current}`), event.key);
+    if (entry) entry.focus();
+    else if (target !== undefined) {
       if (event.shiftKey) position.extendTo(target);
       else position.goTo(target);
     } else if (event.key === ' ') position.toggleAt(current);
@@ -106,6 +124,7 @@ export function PartGrid(props: PartGridProps) {
     else if (event.key === 'Escape') position.clear();
     else return;
     event.preventDefault();
+    if (inRow) focusGrid();
   };
   const click = (event: MouseEvent): void => {
     const index = findIndex(event.target);
@@ -116,55 +135,66 @@ export function PartGrid(props: PartGridProps) {
       position.extendTo(index);
     } else if (isBox || event.ctrlKey || event.metaKey) position.toggleAt(index);
     else position.goTo(index);
-    if (isBox) scroller.current?.focus({ preventScroll: true });
+    if (isBox) focusGrid();
   };
 
   const rooms = useSteady(list.rooms);
   const shown = isPrinting ? list.listRead() : Array.from({ length: Math.max(0, last - first + 1) }, (_, step) => ({ index: first + step, row: list.getRow(first + step) }));
   const chosen = countSelected(selection, total);
+  const hasMore = useMoreAtSide(scroller);
   return (
-    <div
-      ref={scroller}
-      role="grid"
-      aria-label="Parts"
-      aria-rowcount={total + 1}
-      aria-colcount={columns.length + 1}
-      aria-multiselectable={canSelect ? true : undefined}
-      aria-activedescendant={list.getRow(current) && current >= first && current <= last ? `${id}-${current}` : undefined}
-      tabIndex={0}
-      className="part-grid"
-      style={writeTracks(columns, rooms)}
-      onKeyDown={press}
-      onClick={click}
-      onScroll={(event) => {
-        offset.current = event.currentTarget.scrollTop;
-        keepPlace(projectId, { query: queryText, offset: offset.current, current });
-      }}
-    >
-      <PartGridHead
-        columns={columns}
-        order={list.query}
-        onOrder={onOrder}
-        chosen={!canSelect ? undefined : chosen === 0 ? 'none' : chosen >= total ? 'all' : 'some'}
-        onChooseAll={(all) => (all ? position.selectAll() : position.clear())}
-      />
-      <div role="rowgroup" className="part-rows" style={{ height: total * rowHeight }}>
-        {shown.map(({ index, row }) => (
-          <PartGridRow
-            key={row?.id ?? `place ${index}`}
-            id={`${id}-${index}`}
-            row={row}
-            index={index}
-            columns={columns}
-            rooms={rooms}
-            isCurrent={index === current}
-            isSelected={row !== undefined && isSelected(selection, row.id)}
-            canSelect={canSelect}
-            actions={actions}
-            canSpan={!isPrinting}
-          />
-        ))}
-      </div>
+    <div className="part-grid-frame" data-more={hasMore}>
+      <div
+        ref={scroller}
+        role="grid"
+        aria-describedby={`${id}-keys`}
+        aria-label="Parts"
+        aria-rowcount={total + 1}
+        aria-colcount={columns.length + 1}
+        aria-multiselectable={canSelect ? true : undefined}
+        aria-activedescendant={list.getRow(current) && current >= first && current <= last ? `${id}-${current}` : undefined}
+        tabIndex={0}
+        className="part-grid"
+        style={writeTracks(columns, rooms)}
+        onKeyDown={press}
+        onClick={click}
+        onFocus={(event) => {
+          const index = findControlIndex(event.target);
+          if (index !== undefined && index !== current) position.standAt(index);
+        }}
+        onScroll={(event) => {
+          offset.current = event.currentTarget.scrollTop;
+          keepPlace(projectId, { query: queryText, offset: offset.current, current });
+        }}
+      >
+        <PartGridHead
+          columns={columns}
+          order={list.query}
+          onOrder={onOrder}
+          chosen={!canSelect ? undefined : chosen === 0 ? 'none' : chosen >= total ? 'all' : 'some'}
+          onChooseAll={(all) => (all ? position.selectAll() : position.clear())}
+        />
+        <div role="rowgroup" className="part-rows" style={{ height: total * rowHeight }}>
+          {shown.map(({ index, row }) => (
+            <PartGridRow
+              key={row?.id ?? `place ${index}`}
+              id={`${id}-${index}`}
+              row={row}
+              index={index}
+              columns={columns}
+              rooms={rooms}
+              isCurrent={index === current}
+              isSelected={row !== undefined && isSelected(selection, row.id)}
+              canSelect={canSelect}
+              actions={actions}
+              canSpan={!isPrinting}
+            />
+          ))}
+        </div>
+    </div>
+      <span id={`${id}-keys`} className="hidden-visually">
+        Arrow right or F2 goes to what a row asks, Escape back to the list; Space selects.
+      </span>
     </div>
   );
 }

@@ -75,7 +75,7 @@ export function PartStatement({ part, editor, state, ownName, materials, onRepla
             ))}
           </ol>
         </nav>
-        {can.edit && run.state !== 'failed' && <SaveStatus editor={editor} state={state} ownName={ownName} />}
+        {can.edit && <SaveStatus editor={editor} state={state} ownName={ownName} />}
       </aside>
       <article className="statement" aria-label="Statement">
         <SourceSection part={part} editor={editor} state={state} materials={materials} statement={statement} />

@@ -36,17 +36,13 @@ export function SourceSection({ part, editor, state, materials, statement }: Sou
     >
       <dl className="facts">
         <FileFacts part={part} />
-        {run.state !== 'failed' && (
-          <>
-            <UnitFact part={part} editor={editor} state={state} />
-            <DensityFacts editor={editor} state={state} canEdit={part.can.edit} materials={materials} statement={statement} />
-            <Fact name="Setting">
-              <span className="soft">
-                version {state.saved.version}, last changed {formatMoment(state.saved.changedAt)} by {state.saved.changedBy}
-              </span>
-            </Fact>
-          </>
-        )}
+        <UnitFact part={part} editor={editor} state={state} />
+        <DensityFacts editor={editor} state={state} canEdit={part.can.edit} materials={materials} statement={statement} />
+        <Fact name="Setting">
+          <span className="soft">
+            version {state.saved.version}, last changed {formatMoment(state.saved.changedAt)} by {state.saved.changedBy}
+          </span>
+        </Fact>
         {part.revisions.length > 1 && <Revisions part={part} />}
       </dl>
     </Section>

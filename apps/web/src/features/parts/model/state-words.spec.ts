@@ -11,8 +11,9 @@ describe('states of parts', () => {
   it('chips say how many parts each would leave', () => {
     expect(listChips({ counts, deleted: 2 }, { states: '', deleted: false }).map(({ name, count }) => `${name} ${count}`)).toEqual(['All 214', 'Being measured 3', 'Needs a look 12', 'Ready 199', 'Deleted 2']);
   });
-  it('among the deleted, only they are counted', () => {
-    expect(listChips({ counts, deleted: 2 }, { states: '', deleted: true }).filter(({ count }) => count !== undefined).map(({ name, count }) => `${name} ${count}`)).toEqual(['Deleted 2']);
+  it('chips keep their counts among the deleted, and have none before they are read', () => {
+    expect(listChips({ counts, deleted: 2 }, { states: '', deleted: true }).map(({ count }) => count)).toEqual([214, 3, 12, 199, 2]);
+    expect(listChips({ counts: undefined, deleted: 2 }, { states: '', deleted: true }).map(({ count }) => count)).toEqual([undefined, undefined, undefined, undefined, 2]);
   });
   it('single states stand open once their group is chosen, and stay so while one of them is', () => {
     const open = ['Not measured', 'Not defensible', 'Unit missing'];

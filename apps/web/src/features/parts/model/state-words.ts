@@ -19,7 +19,7 @@ export const wantingStates: readonly PartState[] = partStates.filter((state) => 
 
 export interface StateChip {
   name: string;
-  /** Undefined where it is not known: among deleted parts only they are counted. */
+  /** Undefined where it is not known yet. */
   count: number | undefined;
   states: string;
   deleted: boolean;
@@ -29,12 +29,18 @@ export interface StateChip {
 
 const sum = (counts: PartList['counts'], states: readonly PartState[]): number => states.reduce((total, state) => total + counts[state], 0);
 
+export interface ChipCounts {
+  /** Of the parts that are not deleted; undefined before they are read. */
+  counts: PartList['counts'] | undefined;
+  deleted: number | undefined;
+}
+
 /** Ways to narrow the list by state, with how many parts each leaves. Single states stand open once their group, or one of them, is chosen. */
-export function listChips({ counts, deleted }: Pick<PartList, 'counts' | 'deleted'>, chosen: { states: string; deleted: boolean }): StateChip[] {
+export function listChips({ counts, deleted }: ChipCounts, chosen: { states: string; deleted: boolean }): StateChip[] {
   const group = wantingStates.join();
   const isOpen = !chosen.deleted && chosen.states !== '' && chosen.states.split(',').every((state) => (wantingStates as readonly string[]).includes(state));
-  const singles = wantingStates.filter((state) => counts[state] > 0 || chosen.states === state);
-  const count = (states: readonly PartState[]): number | undefined => (chosen.deleted ? undefined : sum(counts, states));
+  const singles = wantingStates.filter((state) => (counts && counts[state] > 0) || chosen.states === state);
+  const count = (states: readonly PartState[]): number | undefined => counts && sum(counts, states);
   return [
     { name: 'All', count: count(partStates), states: '', deleted: false },
     { name: 'Being measured', count: count(['measuring']), states: 'measuring', deleted: false },

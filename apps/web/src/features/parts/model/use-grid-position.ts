@@ -58,6 +58,11 @@ export function useGridPosition(parts: GridPositionParts) {
       anchor.current = undefined;
       goTo(index);
     },
+    /** Where the person has gone by themselves: nothing has to be brought into view. */
+    standAt: (index: number) => {
+      anchor.current = undefined;
+      setCurrent(index);
+    },
     /** Where another list begins. */
     goToTop: () => {
       anchor.current = undefined;
