@@ -168,7 +168,7 @@ describe('a part that was deleted', () => {
     await select('housing');
     await page.getByRole('button', { name: 'Restore' }).click();
     await page.getByText('1 part restored.').waitFor();
-    await page.getByRole('button', { name: 'All', exact: true }).click();
+    await page.getByRole('button', { name: /^All\b/ }).click();
     await findRow(page, 'housing').waitFor();
   });
 
