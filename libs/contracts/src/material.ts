@@ -7,6 +7,20 @@ export const materialName = keptText().trim().min(1, 'Give the material a name.'
 export const materialGroups = ['aluminium', 'steel', 'copper', 'titanium', 'other-metal', 'polymer', 'elastomer', 'composite', 'wood', 'glass-ceramic', 'other'] as const;
 export const materialGroup = z.enum(materialGroups);
 export type MaterialGroup = z.infer<typeof materialGroup>;
+/** The families in words, in the order in which they are listed. A table of materials may name them by these, too. */
+export const materialGroupNames: Record<MaterialGroup, string> = {
+  aluminium: 'Aluminium',
+  steel: 'Iron and steel',
+  copper: 'Copper and its alloys',
+  titanium: 'Titanium',
+  'other-metal': 'Other metals',
+  polymer: 'Polymers',
+  elastomer: 'Elastomers',
+  composite: 'Composites',
+  wood: 'Wood',
+  'glass-ceramic': 'Glass, ceramics and stone',
+  other: 'Other',
+};
 /** source: the source of the density states the spread too. judgement: nobody does, and it is ours or the organisation's estimate. */
 export const spreadBasis = z.enum(['source', 'judgement']);
 export type SpreadBasis = z.infer<typeof spreadBasis>;

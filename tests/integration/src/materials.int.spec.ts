@@ -105,7 +105,7 @@ describe('the library', () => {
     await ears.wait(({ type }) => type === 'materials');
     ears.close();
     await engineer.expect('PATCH', `/materials/${id}`, { version: 1, densityKgM3: 2690 });
-    expect(await database.look(`select action, before, after from audit_events where subject_id = $1 order by id`, [id])).toMatchObject([
+    expect(await database.look(`select action, before, after from audit_events where subject_id = $1 order by created_at`, [id])).toMatchObject([
       { action: 'material.create', after: alloy },
       { action: 'material.change', before: { densityKgM3: 2680.5 }, after: { densityKgM3: 2690 } },
     ]);
@@ -208,6 +208,13 @@ describe('the library as a table', () => {
     for (const { message } of body.errors) expect(message).toMatch(/^[A-Z"].*\.$/u);
     expect(body.errors[4]?.message).toContain('Row 2');
     expect(await own()).toMatchObject([{ name: 'Also good', group: 'other', densitySpreadKgM3: 12, spreadBasis: 'source' }, { name: 'Good', densitySpreadKgM3: 78.5 }]);
+  });
+
+  it('may name its families as the page does, in a column of that name', async () => {
+    const words = ['Polymers', 'polymers', 'polymer', 'POLYMER', 'Iron and steel', 'Glass, ceramics and stone', 'glass-ceramic', 'Glass ceramic', 'Other metals', 'other_metal', ''];
+    const { body } = await take(`name,Family,density_kg_m3,spread_kg_m3\n${words.map((word, index) => `M${String(index).padStart(2, '0')},"${word}",1000,10\n`).join('')}`);
+    expect(body).toMatchObject({ added: words.length, errors: [] });
+    expect((await own()).map(({ group }) => group)).toEqual(['polymer', 'polymer', 'polymer', 'polymer', 'steel', 'glass-ceramic', 'glass-ceramic', 'glass-ceramic', 'other-metal', 'other-metal', 'other']);
   });
 
   it('may come from any spreadsheet: a mark at its head, CRLF, semicolons, tabs, units in the cells', async () => {

@@ -1,5 +1,5 @@
 import { parse } from 'csv-parse/sync';
-import { createMaterialRequest, materialGroups, type CreateMaterialRequest, type ImportMaterialsAnswer } from '@masswright/contracts';
+import { createMaterialRequest, materialGroupNames, materialGroups, type CreateMaterialRequest, type ImportMaterialsAnswer } from '@masswright/contracts';
 import { materialNameKey } from '@masswright/mechanics';
 import { parseQuantity } from '@masswright/units';
 import { byteOrderMark, unguardText, writeCsv } from '../platform/csv';
@@ -16,6 +16,8 @@ const header = ['name', 'group', 'density_kg_m3', 'spread_kg_m3', 'spread_basis'
 /** Columns whose cells carry a unit, beside those whose name does. */
 const known = [...header, 'density', 'spread'] as const;
 type Column = (typeof known)[number];
+/** The page calls a group a family. */
+const otherNames: Readonly<Record<string, Column>> = { family: 'group' };
 const mostRows = 5000;
 
 export function writeMaterialsCsv(materials: readonly KnownMaterial[]): string {
@@ -32,7 +34,7 @@ export function readMaterialsCsv(text: string): { read: ReadMaterial[]; errors: 
   const errors: ImportError[] = [];
   first.forEach((cell, place) => {
     const name = cell.trim().toLowerCase().replace(/[\s-]+/gu, '_');
-    const column = known.find((one) => one === name);
+    const column = known.find((one) => one === (otherNames[name] ?? name));
     if (column !== undefined && !places.has(column)) places.set(column, place);
     else if (name !== '') errors.push({ row: 1, column: cell.trim(), message: column === undefined ? `The column ${cell.trim()} is not known here and is left out. Known are ${known.join(', ')}.` : `The column ${column} is there twice; the first is taken.` });
   });
@@ -81,7 +83,7 @@ function readRow(row: number, cell: Read, isTooLong: boolean, seen: Map<string, 
   const spread = readSpread(cell, density, refuse);
   const parsed = createMaterialRequest.safeParse({
     name: cell('name'),
-    group: (cell('group') || 'other').toLowerCase(),
+    group: readGroup(cell('group')),
     densityKgM3: density ?? 1,
     densitySpreadKgM3: spread ?? 0,
     spreadBasis: (cell('spread_basis') || 'judgement').toLowerCase(),
@@ -95,9 +97,15 @@ function readRow(row: number, cell: Read, isTooLong: boolean, seen: Map<string, 
   return errors.length > 0 || !parsed.success ? { errors } : { row, material: parsed.data };
 }
 
+const foldGroup = (words: string): string => words.toLowerCase().replace(/[\s_-]+/gu, ' ').replace(/s$/u, '');
+const groupsByWords = new Map(materialGroups.flatMap((group) => [[foldGroup(group), group], [foldGroup(materialGroupNames[group]), group]] as const));
+
+/** A group by its own word or by those of the page, in singular or plural; other words are left for the contract to refuse. */
+const readGroup = (words: string): string => (words === '' ? 'other' : (groupsByWords.get(foldGroup(words)) ?? words));
+
 const columnOf: Record<string, string> = { name: 'name', group: 'group', densityKgM3: 'density_kg_m3', densitySpreadKgM3: 'spread_kg_m3', spreadBasis: 'spread_basis', source: 'source' };
 /** Where the contract's own words say too little for a table. */
-const wordsOf: Record<string, string> = { group: `A group is one of ${materialGroups.join(', ')}.`, spreadBasis: 'The basis of a spread is source or judgement.' };
+const wordsOf: Record<string, string> = { group: `A group is one of ${materialGroups.join(', ')}, or is named as on the page, such as ${materialGroupNames.polymer}.`, spreadBasis: 'The basis of a spread is source or judgement.' };
 
 type Refuse = (column: string, message: string) => void;
 

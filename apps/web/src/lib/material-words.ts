@@ -1,20 +1,7 @@
-import type { Material, MaterialGroup } from '@masswright/contracts';
+import { materialGroupNames, type Material, type MaterialGroup } from '@masswright/contracts';
 import { thinSpace } from '@masswright/units';
 
-/** Families of materials in words, in the order in which they are listed. */
-export const materialGroupNames: Record<MaterialGroup, string> = {
-  aluminium: 'Aluminium',
-  steel: 'Iron and steel',
-  copper: 'Copper and its alloys',
-  titanium: 'Titanium',
-  'other-metal': 'Other metals',
-  polymer: 'Polymers',
-  elastomer: 'Elastomers',
-  composite: 'Composites',
-  wood: 'Wood',
-  'glass-ceramic': 'Glass, ceramics and stone',
-  other: 'Other',
-};
+export { materialGroupNames };
 
 /** A number with the digits that it needs and no more, thousands set off. */
 export function writePlain(value: number, digits: number): string {

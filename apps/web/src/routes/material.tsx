@@ -42,7 +42,7 @@ function MaterialPage({ material }: { material: Material }) {
           material.can.edit && (
             <>
               <Button loading={change.isPending && !changing} onClick={() => change.mutate({ materialId: material.id, version: material.version, archived: !isArchived })}>
-                {isArchived ? 'Take back' : 'Archive'}
+                {isArchived ? 'Unarchive' : 'Archive'}
               </Button>
               {!isArchived && <Button onClick={() => setChanging(true)}>Change</Button>}
             </>
@@ -58,7 +58,7 @@ function MaterialPage({ material }: { material: Material }) {
         <dd className="figure">{writeSpreadDensity(material)}</dd>
         <dt>Spread</dt>
         <dd>
-          <span className="figure">± {writePlain((material.densitySpreadKgM3 / material.densityKgM3) * 100, 2)} %</span>{' '}
+          <span className="figure">± {writePlain((material.densitySpreadKgM3 / material.densityKgM3) * 100, 2)} %,</span>{' '}
           <span className="soft">{basisWords[material.spreadBasis]}; every density within it is held to be as likely as any other</span>
         </dd>
         <dt>Source</dt>

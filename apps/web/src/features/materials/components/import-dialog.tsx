@@ -32,6 +32,7 @@ function Outcome({ answer, isDone }: { answer: ImportMaterialsAnswer; isDone: bo
         {formatCount(added)} new, {formatCount(changed)} changed, {formatCount(unchanged)} as {unchanged === 1 ? 'it is' : 'they are'} already
         {errors.length > 0 && `, ${countOf(errors.length, 'error')}`}.
       </p>
+      {errors.length > 0 && <p className="soft">Rows are numbered as in the file: the header is row 1.</p>}
       {errors.length > 0 && (
         <div className="table-frame import-errors" role="region" aria-label="Errors" tabIndex={0}>
           <table className="table">
@@ -90,7 +91,7 @@ function ImportSteps({ onClose }: { onClose: () => void }) {
     <>
       <div className="bp6-dialog-body import-body">
         <p>
-          A CSV file with the columns <code>name</code>, <code>group</code>, <code>density_kg_m3</code>, <code>spread_kg_m3</code>, <code>spread_basis</code> and <code>source</code>, as the export
+          A CSV file with the columns <code>name</code>, <code>group</code> (or <code>family</code>), <code>density_kg_m3</code>, <code>spread_kg_m3</code>, <code>spread_basis</code> and <code>source</code>, as the export
           writes it; or <code>density</code> with a unit in each cell. Own materials of the same name are changed.
         </p>
         <div className="import-choice">

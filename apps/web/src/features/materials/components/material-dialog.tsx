@@ -1,6 +1,7 @@
 import { Button, Dialog, DialogFooter, FormGroup, HTMLSelect, InputGroup } from '@blueprintjs/core';
 import { materialGroups, materialGroup as groupSchema, type CreateMaterialRequest, type Material } from '@masswright/contracts';
-import { useId, useState, type ReactNode } from 'react';
+import { useId, useRef, useState, type ReactNode } from 'react';
+import { flushSync } from 'react-dom';
 import { ChoiceBar } from '../../../components/choice-bar';
 import { DensityField } from '../../../components/density-field';
 import { ProblemNotice } from '../../../components/problem-notice';
@@ -65,13 +66,17 @@ function MaterialForm({ material, isBusy, error, onSubmit, onClose }: MaterialDi
   const change = (changed: Partial<MaterialTexts>): void => setTexts({ ...texts, ...changed });
   const read = readMaterial(texts);
   const errors = asked ? read.errors : {};
+  const form = useRef<HTMLFormElement>(null);
   return (
     <form
+      ref={form}
       noValidate
       onSubmit={(event) => {
         event.preventDefault();
-        setAsked(true);
+        // At once, so that the wrong fields are marked as such when the first of them is looked for.
+        flushSync(() => setAsked(true));
         if (read.material) onSubmit(read.material);
+        else form.current?.querySelector<HTMLElement>('[aria-invalid="true"]')?.focus();
       }}
     >
       <div className="bp6-dialog-body">

@@ -26,7 +26,7 @@ function Density({ value, decimals }: { value: number; decimals: number }) {
   return (
     <span className="figure figure-aligned">
       {text}
-      {room > 0 && <span className="figure-room" style={{ width: `${room}ch` }} />}
+      {room > 0 && <span className="figure-tail" style={{ width: `${room}ch` }} />}
     </span>
   );
 }
@@ -96,8 +96,8 @@ export function MaterialTable({ materials, onChange, onArchive }: MaterialTableP
                         </>
                       )}
                       {material.can.edit && material.archivedAt !== null && (
-                        <Button size="small" aria-label={`Take ${material.name} back`} onClick={() => onArchive(material, false)}>
-                          Take back
+                        <Button size="small" aria-label={`Unarchive ${material.name}`} onClick={() => onArchive(material, false)}>
+                          Unarchive
                         </Button>
                       )}
                     </td>

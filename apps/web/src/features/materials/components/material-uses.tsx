@@ -1,5 +1,5 @@
 import { Button } from '@blueprintjs/core';
-import type { Material, SettingsChange } from '@masswright/contracts';
+import type { Material } from '@masswright/contracts';
 import { formatCount } from '@masswright/units';
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
@@ -10,12 +10,12 @@ import { countOf } from '../../../lib/plural';
 import { findStep } from '../../../lib/undo-keys';
 import { materialsKey, useMaterialUses } from '../api/materials';
 import { takeBack, takePresentDensity } from '../api/take-density';
+import type { DensityOutcome } from '../model/change-each';
 import { isBehind } from '../model/use-figures';
 import { UseTable } from './use-table';
 
 /** What was done last with the parts, and how it came about. */
-interface Done {
-  changes: SettingsChange[];
+interface Done extends DensityOutcome {
   by: 'take' | 'undo' | 'redo';
 }
 
@@ -23,7 +23,7 @@ function useDensityChange(material: Material) {
   const client = useQueryClient();
   const [done, setDone] = useState<Done>();
   const change = useMutation({
-    mutationFn: async ({ by, run }: { by: Done['by']; run: () => Promise<SettingsChange[]> }) => ({ by, changes: await run() }),
+    mutationFn: async ({ by, run }: { by: Done['by']; run: () => Promise<DensityOutcome> }) => ({ by, ...(await run()) }),
     onSuccess: setDone,
     onSettled: () => {
       void client.invalidateQueries({ queryKey: materialsKey });
@@ -88,7 +88,7 @@ export function MaterialUsesSection({ material, canEdit }: { material: Material;
           </span>
         )}
       </header>
-      {change.error && <ProblemNotice error={change.error} />}
+      {(change.error ?? done?.error) ? <ProblemNotice error={change.error ?? done?.error} /> : null}
       <div role="status" className={done ? 'material-line screen-only' : undefined}>
         {done && (
           <>

@@ -8,6 +8,7 @@ import './materials.css';
 
 const gram = getUnit(unitTable.mass, 'g');
 const digits = 4;
+const shareDigits = 2;
 
 interface UseTableProps {
   uses: readonly MaterialUse[];
@@ -16,14 +17,18 @@ interface UseTableProps {
   onChoose: (chosen: ReadonlySet<string>) => void;
 }
 
-function Mass({ valueKg, fraction, signed = false }: { valueKg: number | null; fraction: number; signed?: boolean }) {
-  if (valueKg === null) return <span className="soft">–</span>;
-  const value = fromSi(valueKg, gram);
+function Mass({ valueKg, fraction }: { valueKg: number | null; fraction: number }) {
+  return valueKg === null ? <span className="soft">–</span> : <AlignedFigure value={fromSi(valueKg, gram)} digits={digits} behind={fraction} />;
+}
+
+/** By how much something moves, with its sign; nothing where it doesn't. The sign and the figure are one text: nothing comes between them. */
+function Move({ value, figureDigits, fraction }: { value: number | undefined; figureDigits: number; fraction: number }) {
+  if (value === undefined || value === 0) return <span className="soft">–</span>;
   return (
-    <>
-      {signed && value > 0 && <span className="figure">+</span>}
-      <AlignedFigure value={value} digits={digits} behind={fraction} />
-    </>
+    <span className="use-move">
+      {value > 0 && <span className="figure">+</span>}
+      <AlignedFigure value={value} digits={figureDigits} behind={fraction} />
+    </span>
   );
 }
 
@@ -37,6 +42,8 @@ export function UseTable({ uses, chosen, canChoose, onChoose }: UseTableProps) {
     ).behind;
   const massFraction = inGrams(uses.flatMap(({ massKg, massAtPresentDensityKg }) => [massKg, massAtPresentDensityKg]));
   const moveFraction = inGrams(moves.map((move) => move?.differenceKg));
+  const shares = moves.flatMap((move) => (move === null || move.share === 0 ? [] : [move.share * 100]));
+  const shareFraction = computeFigureRoom(shares, shareDigits).behind;
   const toggle = (id: string): void => {
     const next = new Set(chosen);
     if (!next.delete(id)) next.add(id);
@@ -95,8 +102,10 @@ export function UseTable({ uses, chosen, canChoose, onChoose }: UseTableProps) {
                   <Mass valueKg={use.massKg} fraction={massFraction} />
                 </td>
                 <td className="numeric">{use.massKg !== null && use.massAtPresentDensityKg === null ? <span className="soft">its weight sets it</span> : <Mass valueKg={use.massAtPresentDensityKg} fraction={massFraction} />}</td>
-                <td className="numeric">{move && move.differenceKg !== 0 ? <Mass valueKg={move.differenceKg} fraction={moveFraction} signed /> : <span className="soft">–</span>}</td>
-                <td className="numeric figure">{move && move.share !== 0 ? `${move.share > 0 ? '+' : ''}${writePlain(move.share * 100, 2)}` : '–'}</td>
+                <td className="numeric"><Move value={move ? fromSi(move.differenceKg, gram) : undefined} figureDigits={digits} fraction={moveFraction} /></td>
+                <td className="numeric">
+                  <Move value={move ? move.share * 100 : undefined} figureDigits={shareDigits} fraction={shareFraction} />
+                </td>
               </tr>
             );
           })}

@@ -24,6 +24,13 @@ describe('a material as it is typed', () => {
   it('is refused with a spread beyond the density', () => {
     expect(readMaterial({ ...typed, spread: '120 %' }).errors.spread).toContain('more than the density');
   });
+  it('keeps a spread that was typed as a share a share, also when the density is changed later', () => {
+    const { material } = readMaterial({ ...typed, spread: '1 %' });
+    if (!material) throw new Error('It could not be read.');
+    const written = writeMaterial({ ...material, id: 'x', origin: 'own', version: 1, archivedAt: null, usedByParts: 0, can: { edit: true } });
+    expect(written.spread).toBe('1 %');
+    expect(readMaterial({ ...written, density: '2 g/cm3' }).material?.densitySpreadKgM3).toBeCloseTo(20, 9);
+  });
   it('reads back as it is written', () => {
     const { material } = readMaterial(typed);
     if (!material) throw new Error('It could not be read.');

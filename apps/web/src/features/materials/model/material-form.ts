@@ -19,7 +19,13 @@ export type MaterialErrors = Partial<Record<'name' | 'density' | 'spread' | 'sou
 export const emptyMaterial: MaterialTexts = { name: '', group: 'aluminium', density: '', spread: '', spreadBasis: 'judgement', source: '' };
 
 export function writeMaterial({ name, group, densityKgM3, densitySpreadKgM3, spreadBasis, source }: Material): MaterialTexts {
-  return { name, group, density: writeDensity(densityKgM3), spread: `${Number(densitySpreadKgM3.toPrecision(12))} kg/m³`, spreadBasis, source };
+  return { name, group, density: writeDensity(densityKgM3), spread: writeHalfWidth(densityKgM3, densitySpreadKgM3), spreadBasis, source };
+}
+
+/** As a share where it is a plain one, so that it goes with the density when that is changed. */
+function writeHalfWidth(densityKgM3: number, spreadKgM3: number): string {
+  const percent = Number(((spreadKgM3 / densityKgM3) * 100).toPrecision(2));
+  return spreadKgM3 > 0 && (densityKgM3 * percent) / 100 === spreadKgM3 ? `${percent} %` : `${Number(spreadKgM3.toPrecision(12))} kg/m³`;
 }
 
 /** Half the width of the interval, from a share of the density or from a density itself. */
