@@ -40,9 +40,9 @@ const moment = (number: 1 | 2 | 3): Column => ({
 
 const all: readonly Column[] = [
   { id: 'number', name: 'Number', head: 'No.', width: 46, isNumeric: true, sort: 'number', exported: 'number' },
-  { id: 'name', name: 'Part', width: 132, sort: 'name', exported: 'name' },
+  { id: 'name', name: 'Part', width: 130, sort: 'name', exported: 'name' },
   { id: 'revision', name: 'Revision', head: 'Rev', width: 36, exported: 'revision' },
-  { id: 'material', name: 'Material', width: 140, sort: 'material', exported: 'material' },
+  { id: 'material', name: 'Material', width: 132, sort: 'material', exported: 'material' },
   { id: 'unit', name: 'Unit', width: 48, sort: 'unit', exported: 'unit' },
   { id: 'size', name: 'Size', unit: length.symbol, width: 178, isNumeric: true, isFigure: true, sort: 'size', exported: 'size' },
   { id: 'volume', name: 'Volume', unit: volume.symbol, width: 112, isNumeric: true, isFigure: true, sort: 'volume', exported: 'volume' },
@@ -52,7 +52,7 @@ const all: readonly Column[] = [
   moment(2),
   moment(3),
   { id: 'soundness', name: 'Mesh', width: 126, exported: 'soundness' },
-  { id: 'state', name: 'State', width: 172, sort: 'state', exported: 'state' },
+  { id: 'state', name: 'State', width: 178, sort: 'state', exported: 'state' },
   { id: 'file', name: 'File', width: 190, sort: 'file', exported: 'file' },
   { id: 'changed', name: 'Setting changed', head: 'Changed', width: 170, sort: 'changed' },
 ];
