@@ -101,7 +101,7 @@ describe('a file on its way', () => {
     await openFiles();
     await expect.poll(() => row('pawl.stl').textContent(), { timeout: 60_000 }).toMatch(/Not sent.*The connection to the storage was lost/);
     await page.unroute(`${storageOrigin()}/**`);
-    await press('Send pawl.stl again');
+    await press('Try again: pawl.stl');
     await expect.poll(() => row('pawl.stl').textContent(), { timeout: 30_000 }).toContain('Measured');
     expect(sent).toHaveLength(1);
     expect(await countParts()).toBe(1);

@@ -48,12 +48,12 @@ function UploadActions({ entry }: { entry: UploadEntry }) {
         </Button>
       )}
       {phase === 'present' && (
-        <Button size="small" variant="minimal" onClick={() => retryUpload(key)} aria-label={`Send ${fileName} all the same`}>
+        <Button size="small" variant="minimal" onClick={() => retryUpload(key)} aria-label={`Send all the same: ${fileName}`}>
           Send all the same
         </Button>
       )}
       {(phase === 'failed' || phase === 'cancelled') && (
-        <Button size="small" onClick={() => retryUpload(key)} aria-label={`Send ${fileName} again`}>
+        <Button size="small" onClick={() => retryUpload(key)} aria-label={`Try again: ${fileName}`}>
           Try again
         </Button>
       )}
