@@ -2,19 +2,18 @@ import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
 import { gzipSync } from 'node:zlib';
-import { chromium, type Page } from 'playwright-core';
 import type { PartList } from '@masswright/contracts';
-import { ApiUser, password } from '../tests/support/api-user';
+import { ApiUser } from '../tests/support/api-user';
 import { writeFolder, type FolderFile } from '../tests/support/mesh-folder';
 import { block, sphere, writeObj } from '../tests/support/meshes';
 import type { BenchContext } from '../tools/bench/context';
+import { withSignedInPage } from './browser-session';
 
 export const needs = ['programs'];
 
 const count = 500;
 /** Files with which one worker is held against two. */
 const compared = 150;
-const flags = ['--no-sandbox', '--use-angle=swiftshader', '--enable-unsafe-swiftshader', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync', '--disable-quic'];
 const words = ['bracket', 'housing', 'lever', 'spindle', 'cover', 'flange', 'rib', 'yoke'];
 const mebibyte = 1024 * 1024;
 
@@ -63,35 +62,25 @@ async function waitForMeasured(user: ApiUser, projectId: string, files: number):
   }
 }
 
-async function openProject(page: Page, url: string, email: string, projectId: string): Promise<void> {
-  await page.goto(`${url}/sign-in`);
-  await page.getByLabel('E-mail').fill(email);
-  await page.getByLabel('Password').fill(password);
-  await page.keyboard.press('Enter');
-  await page.getByRole('heading', { name: 'Projects' }).waitFor();
-  await page.goto(`${url}/projects/${projectId}`);
-  await page.getByRole('button', { name: 'Add meshes' }).first().click();
-}
-
 /** A person chooses a folder and answers the question at once; how long until all rows are measured. */
 async function runInBrowser(url: string, user: ApiUser, files: readonly FolderFile[]): Promise<{ seconds: number; answeredAfter: number }> {
   const project = await user.createProject('Five hundred');
   const folder = mkdtempSync(path.join(os.tmpdir(), 'intake-bench-'));
-  const browser = await chromium.launch({ executablePath: '/usr/bin/chromium', args: flags });
   try {
     writeFolder(folder, files);
-    const page = await browser.newPage({ viewport: { width: 1440, height: 900 } });
-    await openProject(page, url, user.session?.user.email ?? '', project.id);
-    const beganAt = performance.now();
-    await page.getByLabel('Folder of meshes').setInputFiles(folder);
-    await page.getByRole('radio', { name: 'millimetre' }).check();
-    await page.getByLabel('Density').fill('2.7 g/cm3');
-    await page.getByRole('button', { name: /^These are millimetres/ }).click();
-    const answeredAfter = (performance.now() - beganAt) / 1000;
-    await waitForMeasured(user, project.id, files.length);
-    return { seconds: (performance.now() - beganAt) / 1000, answeredAfter };
+    return await withSignedInPage(url, user.session?.user.email ?? '', async (page) => {
+      await page.goto(`${url}/projects/${project.id}`);
+      await page.getByRole('button', { name: 'Add meshes' }).first().click();
+      const beganAt = performance.now();
+      await page.getByLabel('Folder of meshes').setInputFiles(folder);
+      await page.getByRole('radio', { name: 'millimetre' }).check();
+      await page.getByLabel('Density').fill('2.7 g/cm3');
+      await page.getByRole('button', { name: /^These are millimetres/ }).click();
+      const answeredAfter = (performance.now() - beganAt) / 1000;
+      await waitForMeasured(user, project.id, files.length);
+      return { seconds: (performance.now() - beganAt) / 1000, answeredAfter };
+    });
   } finally {
-    await browser.close();
     rmSync(folder, { recursive: true, force: true });
   }
 }

@@ -3,6 +3,7 @@ import { partSorts, type PartList } from '@masswright/contracts';
 import { ApiUser } from '../tests/support/api-user';
 import { fillProject, type Look } from '../tests/support/filled-project';
 import type { BenchContext } from '../tools/bench/context';
+import { withSignedInPage } from './browser-session';
 
 export const needs = ['programs'];
 
@@ -68,6 +69,36 @@ async function measureChanges(user: ApiUser, projectId: string, print: BenchCont
   await time('the restoration', `/projects/${projectId}/part-restorations`, { parts: all });
 }
 
+/** The most rows that the page may hold, and the longest task while scrolling. */
+const barRows = 60;
+const barTaskMs = 100;
+
+/** Turns the wheel over the list as a person does who looks for something: how long tasks of the page are (the browser tells those over 50 ms), and how many rows it holds. */
+async function measureScrolling(url: string, user: ApiUser, projectId: string, print: BenchContext['print']): Promise<void> {
+  await withSignedInPage(url, user.session?.user.email ?? '', async (page) => {
+    await page.goto(`${url}/projects/${projectId}`);
+    await page.getByRole('row').nth(10).waitFor();
+    // What the page does by itself after it has opened is not scrolling.
+    await page.waitForTimeout(2_000);
+    await page.evaluate(() => {
+      const tasks: number[] = [];
+      Object.assign(window, { tasks });
+      new PerformanceObserver((list) => tasks.push(...list.getEntries().map(({ duration }) => duration))).observe({ type: 'longtask' });
+    });
+    let rows = 0;
+    await page.mouse.move(700, 500);
+    for (let turn = 0; turn < 120; turn++) {
+      await page.mouse.wheel(0, (turn % 30 === 29 ? -40_000 : 400) * ((turn % 7) + 1));
+      await page.waitForTimeout(60);
+      rows = Math.max(rows, await page.getByRole('row').count());
+    }
+    await page.waitForTimeout(500);
+    const tasks = await page.evaluate(() => (window as unknown as { tasks: number[] }).tasks);
+    const longest = Math.max(0, ...tasks);
+    print(`scrolling through ${parts} rows, 120 turns of the wheel: ${tasks.length} tasks over 50 ms, the longest ${longest.toFixed(0)} ms, ${(longest / barTaskMs).toFixed(2)} × the bar; at most ${rows} rows in the page, ${(rows / barRows).toFixed(2)} × the bar of ${barRows}`);
+  });
+}
+
 /** A project of ten thousand parts in an organisation of two hundred thousand: how long the list's answers take, with their counts. */
 export async function run({ env, apiUrl, print }: BenchContext): Promise<void> {
   const [adminUrl, applicationUrl] = [env['TEST_DATABASE_ADMIN_URL'], env['TEST_DATABASE_URL']];
@@ -96,6 +127,7 @@ export async function run({ env, apiUrl, print }: BenchContext): Promise<void> {
       if (p95 > worst.ms) Object.assign(worst, { name, ms: p95 });
       print(`${name}: median ${quantile(times, 0.5).toFixed(0)} ms, p95 ${p95.toFixed(0)} ms, ${(p95 / barMs).toFixed(2)} × the bar of ${barMs} ms`);
     }
+    await measureScrolling(apiUrl, user, projectId, print);
     await measureChanges(user, projectId, print);
     print(`all ${all.length} answers: median ${quantile(all, 0.5).toFixed(0)} ms, p95 ${quantile(all, 0.95).toFixed(0)} ms, ${(quantile(all, 0.95) / barMs).toFixed(2)} × the bar; worst p95 ${worst.ms.toFixed(0)} ms (${worst.name}), ${(worst.ms / barMs).toFixed(2)} × the bar`);
   } finally {
