@@ -1,6 +1,6 @@
 import { sql } from 'drizzle-orm';
 import { and, eq, inArray, isNull, ne, or } from 'drizzle-orm';
-import type { Integrals, Measurement, MeasuringError, MeasuringRun, Symmetric3, Vector3 } from '@masswright/contracts';
+import type { Finding, Integrals, Measurement, MeasuringError, MeasuringRun, Soundness, Symmetric3, Vector3 } from '@masswright/contracts';
 import { measurements, measuringRuns, parts, revisions, uploads } from '../schema';
 import type { Transaction } from '../tenancy/database';
 import { isOfThisOrganisation } from '../tenancy/of-this-organisation';
@@ -79,7 +79,7 @@ export type MeasuringClaim = { kind: 'known'; measurementId: string } | { kind: 
 export async function claimMeasuring(tx: Transaction, run: TakenRun, sha256: Buffer, measuringVersion: string): Promise<MeasuringClaim> {
   await holdFileSize(tx, run.sizeBytes);
   await tx.update(uploads).set({ sha256 }).where(eq(uploads.id, run.uploadId));
-  const measurementId = await findMeasurement(tx, sha256, measuringVersion);
+  const measurementId = await findWholeMeasurement(tx, sha256, measuringVersion);
   if (measurementId !== undefined) return { kind: 'known', measurementId };
   if (await isBeingMeasured(tx, run, sha256)) return { kind: 'wait' };
   const claimed = await tx.update(measuringRuns).set({ stage: 'measuring' }).where(held(run)).returning({ id: measuringRuns.id });
@@ -151,72 +151,71 @@ export function presentMeasurement(row: MeasurementRow): Measurement {
   const volume: Integrals | null =
     row.volume === null
       ? null
-      : { content: row.volume, centreFromOrigin: vectorOf(row.volumeCentreFromOrigin), second: symmetricOf(row.volumeSecond) };
+      : { content: row.volume, centreFromOrigin: vectorOf(row.volumeCentreFromOrigin), second: symmetricOf(row.volumeSecond), errorBound: row.volumeErrorBound };
   return {
     measuringVersion: row.measuringVersion,
     format: row.format,
     compression: row.compression,
+    declaredUnit: row.declaredUnit,
+    declaredMaterials: row.declaredMaterials,
+    examined: row.examined,
     facets: row.facets,
     origin: vectorOf(row.origin),
     boundingBox: { min: vectorOf(row.boxMin), max: vectorOf(row.boxMax) },
     volume,
-    surface: { content: row.area, centreFromOrigin: vectorOf(row.areaCentreFromOrigin), second: symmetricOf(row.areaSecond) },
-    soundness: {
-      closed: row.closed,
-      oriented: row.oriented,
-      outward: row.outward,
-      turned: row.turned,
-      boundaryEdges: row.boundaryEdges,
-      nonManifoldEdges: row.nonManifoldEdges,
-      degenerateFacets: row.degenerateFacets,
-      duplicateFacets: row.duplicateFacets,
-      defensible: row.defensible,
-      findings: row.findings,
-    },
+    surface: { content: row.area, centreFromOrigin: vectorOf(row.areaCentreFromOrigin), second: symmetricOf(row.areaSecond), errorBound: row.areaErrorBound },
+    soundness: presentSoundness(row),
+    shells: row.listedShells,
+    openings: row.openings,
+    polygonVolume: row.polygonVolume,
+    facetDoubt: row.facetDoubt,
   };
 }
 
-/** Keeps a measurement, once an organisation, file and measuring version; gives the id of the one that is kept. */
+function presentSoundness(row: MeasurementRow): Soundness {
+  const { closed, oriented, outward, turned, boundaryEdges, nonManifoldEdges, nonManifoldVertices, degenerateFacets, duplicateFacets, shells, cavities, selfIntersections, defensible } = row;
+  // Measuring version m1 kept no lines.
+  const findings = row.findings.map((finding) => ({ ...finding, lines: (finding as Partial<Finding>).lines ?? [] }));
+  return { closed, oriented, outward, turned, boundaryEdges, nonManifoldEdges, nonManifoldVertices, degenerateFacets, duplicateFacets, shells, cavities, selfIntersections, defensible, findings };
+}
+
+function rowOf({ volume, surface, soundness, boundingBox, shells, ...measurement }: Measurement) {
+  return {
+    ...measurement,
+    boxMin: boundingBox.min,
+    boxMax: boundingBox.max,
+    volume: volume?.content ?? null,
+    volumeCentreFromOrigin: volume?.centreFromOrigin ?? null,
+    volumeSecond: volume === null ? null : listOf(volume.second),
+    volumeErrorBound: volume?.errorBound ?? 0,
+    area: surface.content,
+    areaCentreFromOrigin: surface.centreFromOrigin,
+    areaSecond: listOf(surface.second),
+    areaErrorBound: surface.errorBound,
+    ...soundness,
+    listedShells: shells,
+  };
+}
+
+/**
+ * Keeps a measurement, once an organisation, file and measuring version; gives the id of the one that is kept. One of which only the integrals stood
+ * gives way to one that was examined; after that nothing of it changes.
+ */
 export async function keepMeasurement(
   tx: Transaction,
   kept: { organisationId: string; sha256: Buffer; measurement: Measurement },
 ): Promise<string> {
   const { organisationId, sha256, measurement } = kept;
-  const { soundness } = measurement;
+  const row = rowOf(measurement);
   const [inserted] = await tx
     .insert(measurements)
-    .values({
-      organisationId,
-      sha256,
-      measuringVersion: measurement.measuringVersion,
-      format: measurement.format,
-      compression: measurement.compression,
-      facets: measurement.facets,
-      origin: measurement.origin,
-      boxMin: measurement.boundingBox.min,
-      boxMax: measurement.boundingBox.max,
-      volume: measurement.volume?.content ?? null,
-      volumeCentreFromOrigin: measurement.volume?.centreFromOrigin ?? null,
-      volumeSecond: measurement.volume === null ? null : listOf(measurement.volume.second),
-      area: measurement.surface.content,
-      areaCentreFromOrigin: measurement.surface.centreFromOrigin,
-      areaSecond: listOf(measurement.surface.second),
-      closed: soundness.closed,
-      oriented: soundness.oriented,
-      outward: soundness.outward,
-      turned: soundness.turned,
-      defensible: soundness.defensible,
-      boundaryEdges: soundness.boundaryEdges,
-      nonManifoldEdges: soundness.nonManifoldEdges,
-      degenerateFacets: soundness.degenerateFacets,
-      duplicateFacets: soundness.duplicateFacets,
-      findings: soundness.findings,
-    })
+    .values({ organisationId, sha256, ...row })
     .onConflictDoNothing({ target: [measurements.organisationId, measurements.sha256, measurements.measuringVersion] })
     .returning({ id: measurements.id });
   if (inserted !== undefined) return inserted.id;
   const id = await findMeasurement(tx, sha256, measurement.measuringVersion);
   if (id === undefined) throw new Error('A measurement conflicts with one that cannot be seen.');
+  if (measurement.examined !== 'integrals') await tx.update(measurements).set(row).where(and(eq(measurements.id, id), eq(measurements.examined, 'integrals')));
   return id;
 }
 
@@ -241,6 +240,21 @@ async function findMeasurement(tx: Transaction, sha256: Buffer, measuringVersion
   return row?.id;
 }
 
+/** The id of the organisation's measurement of a file that nothing remains to be examined of. */
+async function findWholeMeasurement(tx: Transaction, sha256: Buffer, measuringVersion: string): Promise<string | undefined> {
+  const [row] = await tx
+    .select({ id: measurements.id })
+    .from(measurements)
+    .where(and(eq(measurements.sha256, sha256), eq(measurements.measuringVersion, measuringVersion), ne(measurements.examined, 'integrals')));
+  return row?.id;
+}
+
+/** Gives a run the measurement whose integrals stand, while the rest is examined; false when another worker has taken it up since. */
+export async function showFigures(tx: Transaction, run: Pick<TakenRun, 'runId' | 'fence'>, measurementId: string): Promise<boolean> {
+  const rows = await tx.update(measuringRuns).set({ stage: 'examining', measurementId }).where(held(run)).returning({ id: measuringRuns.id });
+  return rows.length > 0;
+}
+
 /** Ends a run with its measurement; false when another worker has taken it up since, and then nothing may be committed. */
 export async function finishRun(tx: Transaction, run: Pick<TakenRun, 'runId' | 'fence'>, measurementId: string): Promise<boolean> {
   const rows = await tx
@@ -257,6 +271,7 @@ export async function failRun(tx: Transaction, run: Pick<TakenRun, 'runId' | 'fe
     .update(measuringRuns)
     .set({
       state: 'failed',
+      measurementId: null,
       errorCode: error.code,
       errorMessage: error.message,
       errorByte: error.at?.byte ?? null,

@@ -14,7 +14,7 @@ import {
   uniqueIndex,
   uuid,
 } from 'drizzle-orm/pg-core';
-import type { Axis, Finding, MeasuringRun, MeshCompression, MeshFormat, Setting } from '@masswright/contracts';
+import type { Axis, FacetDoubt, Finding, MeasuringRun, Measurement, MeshCompression, MeshFormat, Openings, Setting, Shell } from '@masswright/contracts';
 import { at, bytea, createdAt, ofOrganisation, primaryId } from './columns';
 import { organisations, users } from './people';
 
@@ -185,6 +185,9 @@ export const measurements = pgTable(
     measuringVersion: text('measuring_version').notNull(),
     format: text('format').$type<MeshFormat>().notNull(),
     compression: text('compression').$type<MeshCompression>(),
+    declaredUnit: text('declared_unit').$type<Measurement['declaredUnit']>(),
+    declaredMaterials: jsonb('declared_materials').$type<string[]>().notNull().default([]),
+    examined: text('examined').$type<Measurement['examined']>().notNull().default('whole'),
     facets: integer('facets').notNull(),
     origin: doublePrecision('origin').array().notNull(),
     boxMin: doublePrecision('box_min').array().notNull(),
@@ -194,24 +197,37 @@ export const measurements = pgTable(
     volumeCentreFromOrigin: doublePrecision('volume_centre_from_origin').array(),
     /** xx, yy, zz, xy, yz, zx about the centroid, all with a plus sign. */
     volumeSecond: doublePrecision('volume_second').array(),
+    /** Measuring version m1 stated none; its tests demanded 1e-13 of the volume and 1e-12 of the surface. */
+    volumeErrorBound: doublePrecision('volume_error_bound').notNull().default(1e-13),
     area: doublePrecision('area').notNull(),
     areaCentreFromOrigin: doublePrecision('area_centre_from_origin').array().notNull(),
     areaSecond: doublePrecision('area_second').array().notNull(),
-    closed: boolean('closed').notNull(),
+    areaErrorBound: doublePrecision('area_error_bound').notNull().default(1e-12),
+    /** What is null was not examined, here and below. */
+    closed: boolean('closed'),
     oriented: boolean('oriented').notNull(),
     outward: boolean('outward').notNull(),
     turned: boolean('turned').notNull(),
     defensible: boolean('defensible').notNull(),
-    boundaryEdges: integer('boundary_edges').notNull(),
-    nonManifoldEdges: integer('non_manifold_edges').notNull(),
-    degenerateFacets: integer('degenerate_facets').notNull(),
-    duplicateFacets: integer('duplicate_facets').notNull(),
+    boundaryEdges: integer('boundary_edges'),
+    nonManifoldEdges: integer('non_manifold_edges'),
+    degenerateFacets: integer('degenerate_facets'),
+    duplicateFacets: integer('duplicate_facets'),
+    nonManifoldVertices: integer('non_manifold_vertices'),
+    shells: integer('shells'),
+    cavities: integer('cavities'),
+    selfIntersections: integer('self_intersections'),
+    listedShells: jsonb('listed_shells').$type<Shell[]>(),
+    openings: jsonb('openings').$type<Openings>(),
+    polygonVolume: doublePrecision('polygon_volume').notNull().default(0),
+    facetDoubt: jsonb('facet_doubt').$type<FacetDoubt>(),
     findings: jsonb('findings').$type<Finding[]>().notNull(),
     createdAt: createdAt(),
   },
   (table) => [
     unique('measurements_organisation_id_id_key').on(table.organisationId, table.id),
     unique('measurements_file_key').on(table.organisationId, table.sha256, table.measuringVersion),
+    check('measurements_examined_is_known', sql`${table.examined} in ('integrals', 'whole', 'limited')`),
   ],
 );
 
@@ -253,10 +269,10 @@ export const measuringRuns = pgTable(
       foreignColumns: [measurements.organisationId, measurements.id],
     }),
     check('measuring_runs_state_is_known', sql`${table.state} in ('queued', 'running', 'done', 'failed')`),
-    check('measuring_runs_stage_is_known', sql`${table.stage} in ('waiting', 'hashing', 'reading', 'measuring', 'storing')`),
+    check('measuring_runs_stage_is_known', sql`${table.stage} in ('waiting', 'hashing', 'reading', 'measuring', 'examining', 'storing')`),
     check(
       'measuring_runs_end_has_a_reason',
-      sql`(${table.state} = 'done') = (${table.measurementId} is not null) and (${table.state} = 'failed') = (${table.errorCode} is not null)`,
+      sql`(${table.state} <> 'done' or ${table.measurementId} is not null) and (${table.state} <> 'failed' or ${table.measurementId} is null) and (${table.state} = 'failed') = (${table.errorCode} is not null)`,
     ),
   ],
 );

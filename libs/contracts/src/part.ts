@@ -9,7 +9,7 @@ export const revisionReason = keptText().trim().max(500, 'A reason has at most 5
 /** How far the worker is with a file. `progress` runs from 0 to 1 within the whole run. hashing: finding out whether its bytes were measured before. */
 export const measuringRun = z.object({
   state: z.enum(['queued', 'running', 'done', 'failed']),
-  stage: z.enum(['waiting', 'hashing', 'reading', 'measuring', 'storing']),
+  stage: z.enum(['waiting', 'hashing', 'reading', 'measuring', 'examining', 'storing']),
   progress: z.number().min(0).max(1),
   error: measuringError.nullable(),
   finishedAt: timestamp.nullable(),

@@ -23,3 +23,11 @@ export function extendBox({ min, max }: BoundingBox, { corners, count }: FacetBa
     max[k] = greatest;
   }
 }
+
+/** Length of a box's diagonal, in its unit. Scaled, so that squares of large and of small numbers stay in range. */
+export function findDiagonal({ min, max }: BoundingBox): number {
+  const x = max[0] - min[0], y = max[1] - min[1], z = max[2] - min[2];
+  const scale = Math.max(x, y, z);
+  if (!(scale > 0)) return 0;
+  return scale * Math.sqrt((x / scale) * (x / scale) + (y / scale) * (y / scale) + (z / scale) * (z / scale));
+}

@@ -7,21 +7,26 @@
 export interface FacetSums {
   readonly high: Float64Array;
   readonly low: Float64Array;
-  /** Sum of the sizes of the products that make up d, which bounds the rounding of the volume sums. */
-  determinantSize: number;
-  /** The same for |n| and the surface sums. */
-  crossSize: number;
+  /** What bounds the rounding of the sums; see `sizes`. */
+  readonly sizes: Float64Array;
 }
 
 /** Places of the integrals: 0 is ∫1, then x, y, z, then the second moments. The surface's follow the body's. */
 export const places = { x: 1, y: 2, z: 3, xx: 4, yy: 5, zz: 6, xy: 7, yz: 8, zx: 9 } as const;
 export const sumsOfBody = 0;
 export const sumsOfSurface = 10;
-const sumCount = 20;
+export const sumCount = 20;
+
+/**
+ * Places of the sizes. `determinant`: sum over facets of the sizes of the products that make up d; `determinantSecond`: the same, each times the trace of
+ * its second moments. `cross` and `crossSecond`: the same for |n|.
+ */
+export const sizes = { determinant: 0, determinantSecond: 1, cross: 2, crossSecond: 3 } as const;
+export const sizeCount = 4;
 
 export function createFacetSums(): FacetSums {
-  return { high: new Float64Array(sumCount), low: new Float64Array(sumCount), determinantSize: 0, crossSize: 0 };
+  return { high: new Float64Array(sumCount), low: new Float64Array(sumCount), sizes: new Float64Array(sizeCount) };
 }
 
-/** Adds facets to the sums: nine coordinates each, in the mesh frame, less `origin` = [x, y, z]. */
+/** Adds facets to the sums: nine coordinates each, in the mesh frame, less `origin` = [x, y, z]. The count is a multiple of 16 but for the last call. */
 export type FacetIntegrator = (sums: FacetSums, origin: ArrayLike<number>, corners: Float64Array, count: number) => void;

@@ -9,9 +9,10 @@ const divisors = { body: [6, 24, 120], surface: [2, 6, 24] } as const;
  * Turns sums about the local origin into integrals about their own centroid, in double-double, each result rounded once.
  * Where the content is zero the centroid is put at the origin.
  *
+ * @param errorBound of the sums, by `computeErrorBound`
  * @param sign -1 where every facet is to be read the other way round
  */
-export function finishIntegrals(sums: FacetSums, of: 'body' | 'surface', sign: 1 | -1 = 1): Integrals {
+export function finishIntegrals(sums: FacetSums, of: 'body' | 'surface', errorBound: number, sign: 1 | -1 = 1): Integrals {
   const first = of === 'body' ? sumsOfBody : sumsOfSurface;
   const [contentDivisor, firstDivisor, secondDivisor] = divisors[of];
   // 0 content, 1–3 ∫x…, 4–6 centroid, 7 one second moment, 8 the shift, 9 and 10 spare.
@@ -46,5 +47,6 @@ export function finishIntegrals(sums: FacetSums, of: 'body' | 'surface', sign: 1
       yz: second(places.yz, 1, 2),
       zx: second(places.zx, 2, 0),
     },
+    errorBound,
   };
 }

@@ -1,65 +1,83 @@
-import { sumsOfSurface, type FacetIntegrator, type FacetSums } from './facet-sums';
+import { sizes, sumsOfSurface, type FacetIntegrator, type FacetSums } from './facet-sums';
 
-/** Facets summed plainly before the block is folded into the compensated sums. A batch is a multiple of it. */
-const blockFacets = 16;
+/** Facets summed plainly before the block is folded into the compensated sums, half of them in each lane. A batch is a multiple of it. */
+export const blockFacets = 16;
 
 /**
- * The usual kernel: binary64 with edge-form determinants, plain sums in blocks of 16 facets, blocks folded by two-sum in the order of the file.
- * The roundings of one facet and one block are within `blockedRoundings` · 2⁻⁵³ of `determinantSize` (and of `crossSize` for the surface).
- * This file is the whole of the kernel; another one must add to the same FacetSums.
+ * The usual kernel: binary64 with edge-form determinants, plain sums in blocks of 16 facets in two lanes (facets at even and at odd places of the block),
+ * lanes folded by two-sum in the order of the file. It is the reference of the kernel in assembly/, which has to give the same bits: every expression
+ * there is associated as it is here.
  */
 export const integrateBlocked: FacetIntegrator = (sums, origin, corners, count) => {
   for (let begin = 0; begin < count; begin += blockFacets) {
-    addBlock(sums, origin, corners, begin, Math.min(begin + blockFacets, count));
+    const end = Math.min(begin + blockFacets, count);
+    addLane(begin, end, origin, corners, even);
+    addLane(begin + 1, end, origin, corners, odd);
+    foldLanes(sums);
   }
 };
 
-/** Block sum 16, edges 2, products, differences and sums of the determinant 6. */
-export const blockedRoundings = blockFacets + 8;
+/** Plain sums of one lane: the twenty of FacetSums, then the four sizes. */
+const even = new Float64Array(24);
+const odd = new Float64Array(24);
+const sizesAt = 20;
 
-function addBlock(sums: FacetSums, origin: ArrayLike<number>, corners: Float64Array, begin: number, end: number): void {
+function addLane(begin: number, end: number, origin: ArrayLike<number>, corners: Float64Array, lane: Float64Array): void {
   const ox = origin[0] ?? 0;
   const oy = origin[1] ?? 0;
   const oz = origin[2] ?? 0;
   let v = 0, vx = 0, vy = 0, vz = 0, vxx = 0, vyy = 0, vzz = 0, vxy = 0, vyz = 0, vzx = 0;
   let s = 0, sx = 0, sy = 0, sz = 0, sxx = 0, syy = 0, szz = 0, sxy = 0, syz = 0, szx = 0;
-  let determinantSize = 0;
-  let crossSize = 0;
-  for (let facet = begin, at = 9 * begin; facet < end; facet++, at += 9) {
-    const ax = (corners[at] ?? 0) - ox, ay = (corners[at + 1] ?? 0) - oy, az = (corners[at + 2] ?? 0) - oz;
-    const bx = (corners[at + 3] ?? 0) - ox, by = (corners[at + 4] ?? 0) - oy, bz = (corners[at + 5] ?? 0) - oz;
-    const cx = (corners[at + 6] ?? 0) - ox, cy = (corners[at + 7] ?? 0) - oy, cz = (corners[at + 8] ?? 0) - oz;
+  let determinant = 0, determinantSecond = 0, cross = 0, crossSecond = 0;
+  for (let facet = begin; facet < end; facet += 2) {
+    const at = 9 * facet;
+    const px = corners[at] ?? 0, py = corners[at + 1] ?? 0, pz = corners[at + 2] ?? 0;
+    const qx = corners[at + 3] ?? 0, qy = corners[at + 4] ?? 0, qz = corners[at + 5] ?? 0;
+    const rx = corners[at + 6] ?? 0, ry = corners[at + 7] ?? 0, rz = corners[at + 8] ?? 0;
+    const ax = px - ox, ay = py - oy, az = pz - oz;
+    const bx = qx - ox, by = qy - oy, bz = qz - oz;
+    const cx = rx - ox, cy = ry - oy, cz = rz - oz;
     // Edges of the coordinates themselves: between neighbours they are exact, however far the facet is from the origin.
-    const ex = (corners[at + 3] ?? 0) - (corners[at] ?? 0), ey = (corners[at + 4] ?? 0) - (corners[at + 1] ?? 0), ez = (corners[at + 5] ?? 0) - (corners[at + 2] ?? 0);
-    const fx = (corners[at + 6] ?? 0) - (corners[at] ?? 0), fy = (corners[at + 7] ?? 0) - (corners[at + 1] ?? 0), fz = (corners[at + 8] ?? 0) - (corners[at + 2] ?? 0);
+    const ex = qx - px, ey = qy - py, ez = qz - pz;
+    const fx = rx - px, fy = ry - py, fz = rz - pz;
     const p1 = ey * fz, q1 = ez * fy, p2 = ez * fx, q2 = ex * fz, p3 = ex * fy, q3 = ey * fx;
     const nx = p1 - q1, ny = p2 - q2, nz = p3 - q3;
     const size1 = Math.abs(p1) + Math.abs(q1), size2 = Math.abs(p2) + Math.abs(q2), size3 = Math.abs(p3) + Math.abs(q3);
-    determinantSize += Math.abs(ax) * size1 + Math.abs(ay) * size2 + Math.abs(az) * size3;
-    crossSize += size1 + size2 + size3;
-
+    const dSize = Math.abs(ax) * size1 + Math.abs(ay) * size2 + Math.abs(az) * size3;
+    const lSize = size1 + size2 + size3;
     const d = ax * nx + ay * ny + az * nz;
     const l = Math.sqrt(nx * nx + ny * ny + nz * nz);
     const tx = ax + bx + cx, ty = ay + by + cy, tz = az + bz + cz;
-    const xx = tx * tx + ax * ax + bx * bx + cx * cx;
-    const yy = ty * ty + ay * ay + by * by + cy * cy;
-    const zz = tz * tz + az * az + bz * bz + cz * cz;
-    const xy = tx * ty + ax * ay + bx * by + cx * cy;
-    const yz = ty * tz + ay * az + by * bz + cy * cz;
-    const zx = tz * tx + az * ax + bz * bx + cz * cx;
+    const xx = tx * tx + ax * ax + (bx * bx + cx * cx);
+    const yy = ty * ty + ay * ay + (by * by + cy * cy);
+    const zz = tz * tz + az * az + (bz * bz + cz * cz);
+    const xy = tx * ty + ax * ay + (bx * by + cx * cy);
+    const yz = ty * tz + ay * az + (by * bz + cy * cz);
+    const zx = tz * tx + az * ax + (bz * bx + cz * cx);
+    const trace = xx + yy + zz;
     v += d; vx += d * tx; vy += d * ty; vz += d * tz;
     vxx += d * xx; vyy += d * yy; vzz += d * zz; vxy += d * xy; vyz += d * yz; vzx += d * zx;
     s += l; sx += l * tx; sy += l * ty; sz += l * tz;
     sxx += l * xx; syy += l * yy; szz += l * zz; sxy += l * xy; syz += l * yz; szx += l * zx;
+    determinant += dSize; determinantSecond += dSize * trace;
+    cross += lSize; crossSecond += lSize * trace;
   }
-  sums.determinantSize += determinantSize;
-  sums.crossSize += crossSize;
-  const { high, low } = sums;
-  fold(high, low, 0, v); fold(high, low, 1, vx); fold(high, low, 2, vy); fold(high, low, 3, vz);
-  fold(high, low, 4, vxx); fold(high, low, 5, vyy); fold(high, low, 6, vzz); fold(high, low, 7, vxy); fold(high, low, 8, vyz); fold(high, low, 9, vzx);
+  lane[0] = v; lane[1] = vx; lane[2] = vy; lane[3] = vz; lane[4] = vxx; lane[5] = vyy; lane[6] = vzz; lane[7] = vxy; lane[8] = vyz; lane[9] = vzx;
   const o = sumsOfSurface;
-  fold(high, low, o, s); fold(high, low, o + 1, sx); fold(high, low, o + 2, sy); fold(high, low, o + 3, sz);
-  fold(high, low, o + 4, sxx); fold(high, low, o + 5, syy); fold(high, low, o + 6, szz); fold(high, low, o + 7, sxy); fold(high, low, o + 8, syz); fold(high, low, o + 9, szx);
+  lane[o] = s; lane[o + 1] = sx; lane[o + 2] = sy; lane[o + 3] = sz; lane[o + 4] = sxx; lane[o + 5] = syy; lane[o + 6] = szz; lane[o + 7] = sxy; lane[o + 8] = syz; lane[o + 9] = szx;
+  lane[sizesAt + sizes.determinant] = determinant; lane[sizesAt + sizes.determinantSecond] = determinantSecond;
+  lane[sizesAt + sizes.cross] = cross; lane[sizesAt + sizes.crossSecond] = crossSecond;
+}
+
+function foldLanes(sums: FacetSums): void {
+  const { high, low } = sums;
+  for (let place = 0; place < high.length; place++) {
+    fold(high, low, place, even[place] ?? 0);
+    fold(high, low, place, odd[place] ?? 0);
+  }
+  for (let place = 0; place < sums.sizes.length; place++) {
+    sums.sizes[place] = (sums.sizes[place] ?? 0) + ((even[sizesAt + place] ?? 0) + (odd[sizesAt + place] ?? 0));
+  }
 }
 
 /** Adds a value to a sum and keeps what the rounding took away (Knuth's two-sum). */

@@ -1,5 +1,5 @@
 import { add, copy, createRegisters, differ, multiply, put, squareRoot, subtract, type Registers } from './double-double';
-import { sumsOfBody, sumsOfSurface, type FacetIntegrator, type FacetSums } from './facet-sums';
+import { sizes, sumsOfBody, sumsOfSurface, type FacetIntegrator, type FacetSums } from './facet-sums';
 
 /**
  * The careful kernel, for meshes whose volume is small against what cancels in it (thin plates, needles, narrow gaps): exact differences and
@@ -9,9 +9,6 @@ export const integrateDoubleDouble: FacetIntegrator = (sums, origin, corners, co
   const r = createRegisters(registerCount);
   for (let facet = 0; facet < count; facet++) addFacet(r, sums, origin, corners, 9 * facet);
 };
-
-/** Roundings of one facet in units of 2⁻¹⁰⁰ of `determinantSize`. */
-export const doubleDoubleRoundings = 64;
 
 // Registers: corners less origin A, B, C; edges E, F; normal N; weights D and L; their sum S; six products P; some spare.
 const A = 0, B = 3, C = 6, E = 9, F = 12, N = 15, D = 18, L = 19, S = 20, P = 23, T = 29, U = 30, SUM = 31;
@@ -31,13 +28,15 @@ function addFacet(r: Registers, sums: FacetSums, origin: ArrayLike<number>, corn
   }
   put(r, D, 0);
   put(r, L, 0);
+  let dSize = 0;
+  let lSize = 0;
   for (let k = 0; k < 3; k++) {
     const i = (k + 1) % 3, j = (k + 2) % 3;
     multiply(r, T, E + i, F + j);
     multiply(r, U, E + j, F + i);
     const size = Math.abs(r[2 * T] ?? 0) + Math.abs(r[2 * U] ?? 0);
-    sums.crossSize += size;
-    sums.determinantSize += Math.abs(r[2 * (A + k)] ?? 0) * size;
+    lSize += size;
+    dSize += Math.abs(r[2 * (A + k)] ?? 0) * size;
     subtract(r, N + k, T, U);
     multiply(r, T, A + k, N + k);
     add(r, D, D, T);
@@ -48,6 +47,14 @@ function addFacet(r: Registers, sums: FacetSums, origin: ArrayLike<number>, corn
   computeProducts(r);
   addWeighted(r, sums, sumsOfBody, D);
   addWeighted(r, sums, sumsOfSurface, L);
+  addSizes(sums, dSize, lSize, (r[2 * P] ?? 0) + (r[2 * P + 2] ?? 0) + (r[2 * P + 4] ?? 0));
+}
+
+function addSizes({ sizes: kept }: FacetSums, dSize: number, lSize: number, trace: number): void {
+  kept[sizes.determinant] = (kept[sizes.determinant] ?? 0) + dSize;
+  kept[sizes.determinantSecond] = (kept[sizes.determinantSecond] ?? 0) + dSize * trace;
+  kept[sizes.cross] = (kept[sizes.cross] ?? 0) + lSize;
+  kept[sizes.crossSecond] = (kept[sizes.crossSecond] ?? 0) + lSize * trace;
 }
 
 /** P = s_i s_j + a_i a_j + b_i b_j + c_i c_j for xx, yy, zz, xy, yz, zx. */

@@ -1,10 +1,10 @@
-import { emptyBox, extendBox } from './bounding-box';
+import { emptyBox, extendBox, findDiagonal } from './bounding-box';
 import type { FacetBatch } from './facet-batch';
 import { isDegenerate, isNormalContradicting } from './facet-shape';
 import { createFacetSums } from './facet-sums';
-import { finishIntegrals } from './finish-integrals';
+import { finishBody, sumSelection, turnIntegrals } from './integrate-body';
 import { integrateBlocked } from './integrate-blocked';
-import { chooseOpenSums, chooseSums } from './integrate-mesh';
+import { integrateDoubleDouble } from './integrate-double-double';
 import type { ReadingLimits } from './limits';
 import { findingFacets, measuringVersion, type Measurement, type Vector3 } from './measurement';
 import { createMeshReader } from './mesh-reader';
@@ -57,13 +57,9 @@ export function createMeasurer(options: MeasurerOptions): Measurer {
     const { format, compression, facets, trailingBytes, solids, nonzeroAttributes, nonPlanarPolygons, foldedPolygons } = reader.finish();
     const mesh = (welder ?? beginWelding()).finish();
     const connections = checkConnections(mesh);
-    const { min, max } = boundingBox;
-    const extent = Math.max(max[0] - min[0], max[1] - min[1], max[2] - min[2]);
-    const chosen =
-      connections.closed && connections.oriented
-        ? chooseSums(sums, mesh, origin, extent)
-        : chooseOpenSums(sums, mesh, origin, [(min[0] + max[0]) / 2, (min[1] + max[1]) / 2, (min[2] + max[2]) / 2]);
-    const soundness = judgeSoundness(connections, chosen.sign, {
+    const diagonal = findDiagonal(boundingBox);
+    const body = finishBody(sums, diagonal, () => sumSelection(integrateDoubleDouble, mesh, origin));
+    const soundness = judgeSoundness(connections, body.volumeSign, {
       'degenerate-facets': degenerate,
       'contradicting-normals': contradicting,
       'trailing-bytes': { count: trailingBytes, facets: [] },
@@ -76,12 +72,19 @@ export function createMeasurer(options: MeasurerOptions): Measurer {
       measuringVersion,
       format,
       compression,
+      declaredUnit: null,
+      declaredMaterials: [],
+      examined: 'whole',
       facets,
       origin,
       boundingBox,
-      volume: soundness.defensible ? finishIntegrals(chosen.body, 'body', soundness.turned ? -1 : 1) : null,
-      surface: finishIntegrals(chosen.surface, 'surface'),
+      volume: soundness.defensible ? (soundness.turned ? turnIntegrals(body.volume) : body.volume) : null,
+      surface: body.surface,
       soundness,
+      shells: null,
+      openings: null,
+      polygonVolume: 0,
+      facetDoubt: null,
     };
   }
 

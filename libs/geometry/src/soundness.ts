@@ -53,12 +53,16 @@ export function judgeSoundness(connections: Connections, volumeSign: -1 | 0 | 1,
     turned,
     boundaryEdges: count('boundary-edges'),
     nonManifoldEdges: count('crowded-edges'),
+    nonManifoldVertices: null,
+    shells: null,
+    cavities: null,
+    selfIntersections: null,
     degenerateFacets: count('degenerate-facets'),
     duplicateFacets: count('duplicate-facets'),
     defensible: integrable && volumeSign !== 0,
     findings: findingKinds.flatMap((kind): Finding[] => {
       const occurrence = occurrences[kind];
-      return occurrence === undefined || occurrence.count === 0 ? [] : [{ kind, ...occurrence }];
+      return occurrence === undefined || occurrence.count === 0 ? [] : [{ kind, lines: [], ...occurrence }];
     }),
   };
 }

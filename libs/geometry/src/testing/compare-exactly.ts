@@ -26,7 +26,7 @@ export function findDiagonal({ min, max }: { min: Vector3; max: Vector3 }): numb
   return Math.hypot(max[0] - min[0], max[1] - min[1], max[2] - min[2]);
 }
 
-export function computeErrors(found: Integrals, exact: Integrals, diagonal: number): Errors {
+export function computeErrors(found: Omit<Integrals, 'errorBound'>, exact: Omit<Integrals, 'errorBound'>, diagonal: number): Errors {
   const inertia = Math.abs(exact.content) * diagonal * diagonal;
   return {
     volume: Math.abs(found.content - exact.content) / Math.abs(exact.content),

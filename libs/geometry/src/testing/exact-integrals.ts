@@ -28,7 +28,7 @@ function findRoot(square: bigint): bigint {
 }
 
 /** Area, centroid less `origin` and second moments of a surface: every root to 200 bits, the rest exact. */
-export function integrateSurfaceExactly(corners: ArrayLike<number>, origin: Vector3): Integrals {
+export function integrateSurfaceExactly(corners: ArrayLike<number>, origin: Vector3): Omit<Integrals, 'errorBound'> {
   const exponent = findCommonExponent([...Array.from(corners), ...origin]);
   const o = origin.map((coordinate) => toInteger(coordinate, exponent)) as [bigint, bigint, bigint];
   let content = 0n;

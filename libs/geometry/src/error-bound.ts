@@ -1,0 +1,55 @@
+import { sizes, sumsOfBody, sumsOfSurface, type FacetSums } from './facet-sums';
+
+/**
+ * Roundings of a kernel in units of its roundoff: of the content relative to the products that make it up, of the first and of the second moments relative to
+ * those times lengths.
+ */
+export interface KernelRoundings {
+  readonly roundoff: number;
+  readonly content: number;
+  readonly first: number;
+  readonly second: number;
+}
+
+/**
+ * The usual kernel. Content: 7 sums of a lane's eight facets; of the determinant two differences of an edge, a product and a difference, the corner's own
+ * difference, a product and two sums. First moments: the sum of three corners, within √3 of the root of their squares (6), and a product more. Second moments: a square of the sum of corners
+ * within √3 of their squares' sum (11), the sums of squares (6) and a product. The folding by two-sum rounds in the square of the roundoff.
+ */
+export const blockedRoundings: KernelRoundings = { roundoff: 2 ** -53, content: 15, first: 22, second: 33 };
+
+/** The careful kernel: every operation of double-double is within 2⁻¹⁰⁰ (Joldes, Muller & Popescu 2017), sums over all facets included up to 2³² of them. */
+export const doubleDoubleRoundings: KernelRoundings = { roundoff: 2 ** -100, content: 64, first: 96, second: 128 };
+
+/** Each figure is rounded twice at most on its way out. */
+const finishing = 2 * 2 ** -53;
+
+/**
+ * A bound on what rounding does to the integrals that are finished from sums, in the natural scale: content relative to itself, centroid to the diagonal,
+ * second moments about the centroid to content times diagonal². Infinite where the content may be zero.
+ *
+ * @param diagonal of the box of what is integrated; the local origin lies in that box
+ */
+export function computeErrorBound(sums: FacetSums, of: 'body' | 'surface', diagonal: number, { roundoff, content, first, second }: KernelRoundings): number {
+  const [at, sizeAt, secondAt, firstDivisor, secondDivisor, contentDivisor] =
+    of === 'body' ? [sumsOfBody, sizes.determinant, sizes.determinantSecond, 24, 120, 6] : [sumsOfSurface, sizes.cross, sizes.crossSecond, 6, 24, 2];
+  const total = Math.abs((sums.high[at] ?? 0) + (sums.low[at] ?? 0)) / contentDivisor;
+  const size = sums.sizes[sizeAt] ?? 0;
+  const sizeSecond = sums.sizes[secondAt] ?? 0;
+  const contentError = (content * roundoff * size) / contentDivisor / total;
+  if (!(contentError < 1)) return Infinity;
+  // By Cauchy and Schwarz, sizes times the length of the sum of corners are at most this.
+  const firstError = (first * roundoff * Math.sqrt(size) * Math.sqrt(sizeSecond)) / firstDivisor / total / diagonal;
+  const secondError = (second * roundoff * sizeSecond) / secondDivisor / total / diagonal / diagonal;
+  const centre = findCentre(sums, at, firstDivisor, total) / diagonal;
+  const centreError = (firstError + contentError * centre) / (1 - contentError);
+  // Second moments are shifted by first moment times centre: each brings its error times the other's size.
+  const shiftedError = secondError + (firstError + centreError) * centre + firstError * centreError;
+  return Math.max(contentError, centreError, shiftedError) + finishing;
+}
+
+/** Distance of the centroid from the local origin. */
+function findCentre(sums: FacetSums, at: number, firstDivisor: number, total: number): number {
+  const [x = 0, y = 0, z = 0] = sums.high.subarray(at + 1, at + 4);
+  return Math.sqrt(x * x + y * y + z * z) / firstDivisor / total;
+}

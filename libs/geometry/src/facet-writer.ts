@@ -1,0 +1,43 @@
+import { batchFacets, createFacetBatch, flushFacets, type FacetSink } from './facet-batch';
+import { tooManyFacets } from './format-reader';
+import type { MeshFormat } from './measurement';
+import type { MeshPlace } from './mesh-error';
+
+/** Hands facets on in batches, and counts them. */
+export interface FacetWriter {
+  /** Adds the facet of three vertices, in that order; `vertices` has three coordinates each. */
+  add(vertices: ArrayLike<number>, a: number, b: number, c: number): void;
+  /** Throws a MeshError where so many more facets would be too many. */
+  checkRoom(facets: number, at: MeshPlace): void;
+  /** Hands on the last batch. */
+  finish(): void;
+  readonly count: number;
+}
+
+/** A writer for formats that list vertices and let facets name them. Their facets have no normals of their own. */
+export function createFacetWriter(format: MeshFormat, maximumFacets: number, sink: FacetSink): FacetWriter {
+  const batch = createFacetBatch();
+  let count = 0;
+
+  return {
+    add(vertices, a, b, c) {
+      const { corners } = batch;
+      const at = 9 * batch.count;
+      for (let k = 0; k < 3; k++) {
+        corners[at + k] = vertices[3 * a + k] ?? 0;
+        corners[at + 3 + k] = vertices[3 * b + k] ?? 0;
+        corners[at + 6 + k] = vertices[3 * c + k] ?? 0;
+      }
+      batch.count += 1;
+      count += 1;
+      if (batch.count === batchFacets) flushFacets(batch, sink);
+    },
+    checkRoom(facets, at) {
+      if (count + facets > maximumFacets) throw tooManyFacets(maximumFacets, format, at);
+    },
+    finish: () => flushFacets(batch, sink),
+    get count() {
+      return count;
+    },
+  };
+}
