@@ -78,11 +78,7 @@ export const PartGridRow = memo(function PartGridRow(props: PartGridRowProps) {
       {row ? (
         <Cells {...props} row={row} />
       ) : (
-        columns.map((column, position) => (
-          <div key={column} role="gridcell" aria-colindex={position + 2} className={`part-cell part-cell-${column}`}>
-            <span className="part-waiting" />
-          </div>
-        ))
+        <div role="gridcell" aria-colindex={2} aria-colspan={columns.length} className="part-cell part-cell-waiting" />
       )}
     </div>
   );

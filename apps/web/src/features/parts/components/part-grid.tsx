@@ -9,6 +9,7 @@ import { countSelected, isSelected, type Selection } from '../model/selection';
 import { findEntry, findRowElement, findStepInRow } from '../model/row-controls';
 import { useGridPosition } from '../model/use-grid-position';
 import { useMoreAtSide } from '../model/use-more-at-side';
+import { useFilledRows } from '../model/use-filled-rows';
 import { useIsPrinting } from '../model/use-is-printing';
 import { rowHeight, useVirtualRows, type RowRange } from '../model/use-virtual-rows';
 import { PartGridHead } from './part-grid-head';
@@ -138,6 +139,7 @@ export function PartGrid(props: PartGridProps) {
     if (isBox) focusGrid();
   };
 
+  const isFilled = useFilledRows(range);
   const rooms = useSteady(list.rooms);
   const shown = isPrinting ? list.listRead() : Array.from({ length: Math.max(0, last - first + 1) }, (_, step) => ({ index: first + step, row: list.getRow(first + step) }));
   const chosen = countSelected(selection, total);
@@ -179,7 +181,7 @@ export function PartGrid(props: PartGridProps) {
             <PartGridRow
               key={row?.id ?? `place ${index}`}
               id={`${id}-${index}`}
-              row={row}
+              row={isPrinting || isFilled(index) ? row : undefined}
               index={index}
               columns={columns}
               rooms={rooms}
