@@ -8,14 +8,14 @@ export interface FacetWriter {
   /** Adds the facet of three vertices, in that order; `vertices` has three coordinates each. */
   add(vertices: ArrayLike<number>, a: number, b: number, c: number): void;
   /** Throws a MeshError where so many more facets would be too many. */
-  checkRoom(facets: number, at: MeshPlace): void;
+  checkRoom(facets: number): void;
   /** Hands on the last batch. */
   finish(): void;
   readonly count: number;
 }
 
-/** A writer for formats that list vertices and let facets name them. Their facets have no normals of their own. */
-export function createFacetWriter(format: MeshFormat, maximumFacets: number, sink: FacetSink): FacetWriter {
+/** A writer for formats that list vertices and let facets name them. Their facets have no normals of their own. `getPlace` says where the file is being read, for a refusal. */
+export function createFacetWriter(format: MeshFormat, maximumFacets: number, sink: FacetSink, getPlace: () => MeshPlace): FacetWriter {
   const batch = createFacetBatch();
   let count = 0;
 
@@ -32,8 +32,8 @@ export function createFacetWriter(format: MeshFormat, maximumFacets: number, sin
       count += 1;
       if (batch.count === batchFacets) flushFacets(batch, sink);
     },
-    checkRoom(facets, at) {
-      if (count + facets > maximumFacets) throw tooManyFacets(maximumFacets, format, at);
+    checkRoom(facets) {
+      if (count + facets > maximumFacets) throw tooManyFacets(maximumFacets, format, getPlace());
     },
     finish: () => flushFacets(batch, sink),
     get count() {

@@ -12,12 +12,12 @@ import { measurePolygonDoubt } from './polygon-doubt';
 /** A mesh of vertices, and of polygons that name them. Vertices keep binary64. */
 export interface PolygonMesh {
   /** Throws a MeshError where the vertices become too many. */
-  addVertex(x: number, y: number, z: number, at: MeshPlace): void;
+  addVertex(x: number, y: number, z: number): void;
   beginPolygon(): void;
   /** Adds a corner, the number (from 0) of a vertex that is there. Throws a MeshError where the corners become too many. */
-  addCorner(vertex: number, at: MeshPlace): void;
+  addCorner(vertex: number): void;
   /** Hands on the triangles of a polygon of three corners or more. Throws a MeshError where the facets become too many. */
-  endPolygon(at: MeshPlace): void;
+  endPolygon(): void;
   /** Hands on the last facets. */
   finish(): FileRemarks;
   readonly vertexCount: number;
@@ -30,29 +30,31 @@ export interface PolygonMesh {
  * Cuts polygons into triangles in the order of the file: each as a fan from its first corner or, where that fan would fold back on itself, by its ears.
  *
  * @param sink takes the facets
+ * @param getPlace where the file is being read, for a refusal
  */
-export function createPolygonMesh(format: MeshFormat, limits: ReadingLimits, sink: FacetSink): PolygonMesh {
-  const writer = createFacetWriter(format, limits.maximumFacets, sink);
+export function createPolygonMesh(format: MeshFormat, limits: ReadingLimits, sink: FacetSink, getPlace: () => MeshPlace): PolygonMesh {
+  const writer = createFacetWriter(format, limits.maximumFacets, sink, getPlace);
   const remarks = noRemarks();
   let vertices = new Float64Array(3 * 1024);
   let vertexCount = 0;
   let polygon = new Uint32Array(64);
   let corners = 0;
 
-  function addVertex(x: number, y: number, z: number, at: MeshPlace): void {
+  function addVertex(x: number, y: number, z: number): void {
     if (vertexCount === limits.maximumVertices) {
-      throw new MeshError('too-many-vertices', `The mesh (${formatNames[format]}) has more than ${spellCount(vertexCount)} vertices, the most that can be examined here. Reduce it or split it into parts.`, at);
+      throw new MeshError('too-many-vertices', `The mesh (${formatNames[format]}) has more than ${spellCount(vertexCount)} vertices, the most that can be examined here. Reduce it or split it into parts.`, getPlace());
     }
-    const place = 3 * vertexCount;
-    if (vertices.length < place + 3) vertices = growArray(vertices, place + 3, 3 * limits.maximumVertices);
-    vertices[place] = x;
-    vertices[place + 1] = y;
-    vertices[place + 2] = z;
+    const at = 3 * vertexCount;
+    if (vertices.length < at + 3) vertices = growArray(vertices, at + 3, 3 * limits.maximumVertices);
+    vertices[at] = x;
+    vertices[at + 1] = y;
+    vertices[at + 2] = z;
     vertexCount += 1;
   }
 
-  function addCorner(vertex: number, at: MeshPlace): void {
+  function addCorner(vertex: number): void {
     if (corners === limits.maximumPolygonCorners) {
+      const at = getPlace();
       const where = at.line === undefined ? 'A polygon' : `The polygon in line ${spellCount(at.line)}`;
       throw new MeshError('polygon-too-large', `${where} of this ${formatNames[format]} mesh has more than ${spellCount(corners)} corners, the most that are read of one. Triangulate the mesh and export it again.`, at);
     }
@@ -61,8 +63,8 @@ export function createPolygonMesh(format: MeshFormat, limits: ReadingLimits, sin
     corners += 1;
   }
 
-  function endPolygon(at: MeshPlace): void {
-    writer.checkRoom(corners - 2, at);
+  function endPolygon(): void {
+    writer.checkRoom(corners - 2);
     const triangles = corners > 3 ? cutFolded() : undefined;
     for (let k = 2; k < corners; k++) {
       if (triangles === undefined) writer.add(vertices, polygon[0] ?? 0, polygon[k - 1] ?? 0, polygon[k] ?? 0);

@@ -12,12 +12,12 @@ import { createStatementScanner } from './scan-statements';
 const mostVertexNumbers = 8;
 
 /**
- * Reads the facets of an OBJ file, pushed in chunks of any size. All objects and groups are one mesh. Coordinates keep binary64. Of a vertex only x, y and z count: a fourth number is a weight in free-form
- * curves and surfaces, which polygons do not use, or the beginning of a colour. Throws a MeshError with the line for what does not belong there, and for
- * free-form surfaces, which would be missing from the mesh.
+ * Reads the facets of an OBJ file, pushed in chunks of any size. All objects and groups are one mesh. Coordinates keep binary64. Of a vertex only x,
+ * y and z count: a fourth number is a weight in free-form curves and surfaces, which polygons do not use, or the beginning of a colour. Throws a
+ * MeshError with the line for what does not belong there, and for free-form surfaces, which would be missing from the mesh.
  */
 export function createObjReader(limits: ReadingLimits, sink: FacetSink): FormatReader {
-  const mesh = createPolygonMesh('obj', limits, sink);
+  const mesh = createPolygonMesh('obj', limits, sink, () => ({ line: scanner.line }));
   const vertex: [number, number, number] = [0, 0, 0];
   let numbers = 0;
   let statement: 'none' | 'vertex' | 'face' = 'none';
@@ -58,7 +58,7 @@ export function createObjReader(limits: ReadingLimits, sink: FacetSink): FormatR
   }
 
   function takeCorner(bytes: Uint8Array, start: number, end: number): void {
-    mesh.addCorner(findVertex(bytes, start, end), { line: scanner.line });
+    mesh.addCorner(findVertex(bytes, start, end));
   }
 
   /** The vertex that a corner such as `12`, `12/7`, `12//3` or `-1/-1/-1` names: what stands before the first slash, counted from 1 or back from the last. */
@@ -93,12 +93,12 @@ export function createObjReader(limits: ReadingLimits, sink: FacetSink): FormatR
 
   function endVertex(): void {
     if (numbers < 3) refuse('syntax-invalid', `The vertex in line ${spellCount(scanner.line)} has ${spellCounted(numbers, 'coordinate')}; three belong to it. Export the mesh again.`);
-    mesh.addVertex(...vertex, { line: scanner.line });
+    mesh.addVertex(vertex[0], vertex[1], vertex[2]);
   }
 
   function endPolygon(): void {
     if (mesh.corners < 3) refuse('syntax-invalid', `The polygon in line ${spellCount(scanner.line)} has ${spellCounted(mesh.corners, 'corner')}; it needs three at least. Export the mesh again.`);
-    mesh.endPolygon({ line: scanner.line });
+    mesh.endPolygon();
   }
 
   function refuse(code: MeshErrorCode, message: string): never {
