@@ -90,7 +90,7 @@ async function measureScrolling(url: string, user: ApiUser, projectId: string, p
     for (let turn = 0; turn < 120; turn++) {
       await page.mouse.wheel(0, (turn % 30 === 29 ? -40_000 : 400) * ((turn % 7) + 1));
       await page.waitForTimeout(60);
-      rows = Math.max(rows, await page.getByRole('row').count());
+      rows = Math.max(rows, await page.evaluate(() => document.querySelectorAll('[role=row]').length));
     }
     await page.waitForTimeout(500);
     const tasks = await page.evaluate(() => (window as unknown as { tasks: number[] }).tasks);

@@ -18,5 +18,7 @@ export async function listProjects(env, target) {
 
 /** @param {NodeJS.ProcessEnv} env @param {string[]} targets @param {{ cached: boolean }} options */
 export function runTargets(env, targets, { cached }) {
-  return runNx(env, ['run-many', '-t', ...targets, '--outputStyle=static', `--parallel=${Math.max(1, os.availableParallelism())}`, ...(cached ? [] : ['--skip-nx-cache'])]);
+  // Nx says `development` where nobody says anything, and the pages would be built with React's slow half.
+  const mode = targets.includes('build') ? { NODE_ENV: 'production' } : {};
+  return runNx({ ...env, ...mode }, ['run-many', '-t', ...targets, '--outputStyle=static', `--parallel=${Math.max(1, os.availableParallelism())}`, ...(cached ? [] : ['--skip-nx-cache'])]);
 }

@@ -139,7 +139,7 @@ export function PartGrid(props: PartGridProps) {
     if (isBox) focusGrid();
   };
 
-  const isFilled = useFilledRows(range);
+  const filled = useFilledRows(range, (index) => list.getRow(index) !== undefined);
   const rooms = useSteady(list.rooms);
   const shown = isPrinting ? list.listRead() : Array.from({ length: Math.max(0, last - first + 1) }, (_, step) => ({ index: first + step, row: list.getRow(first + step) }));
   const chosen = countSelected(selection, total);
@@ -181,7 +181,7 @@ export function PartGrid(props: PartGridProps) {
             <PartGridRow
               key={row?.id ?? `place ${index}`}
               id={`${id}-${index}`}
-              row={isPrinting || isFilled(index) ? row : undefined}
+              row={isPrinting || filled.has(index) ? row : undefined}
               index={index}
               columns={columns}
               rooms={rooms}

@@ -4,32 +4,31 @@ import type { RowRange } from './use-virtual-rows';
 /** So many rows are filled in between two pictures of the page; a row has some forty elements. */
 const rowsAtOnce = 6;
 
-/** The rows of `filled` that are still in the page, and beside them up to `most` more: below first, since that is where most go. Empty ranges have `last` before `first`. */
-export function growFilled(filled: RowRange, range: RowRange, most: number): RowRange {
-  let first = Math.max(filled.first, range.first);
-  let last = Math.min(filled.last, range.last);
-  if (first > last) {
-    first = range.first;
-    last = range.first - 1;
+/** The rows in the page that were filled before, and up to `most` more of those that were read, from above. What was not read yet is not filled, and comes in its turn when it is. */
+export function growFilled(filled: ReadonlySet<number>, { first, last }: RowRange, isRead: (index: number) => boolean, most: number): Set<number> {
+  const grown = new Set<number>();
+  for (let index = first; index <= last; index++) if (filled.has(index) && isRead(index)) grown.add(index);
+  for (let index = first, left = most; index <= last && left > 0; index++) {
+    if (grown.has(index) || !isRead(index)) continue;
+    grown.add(index);
+    left -= 1;
   }
-  const below = Math.min(most, range.last - last);
-  const above = Math.min(most - below, first - range.first);
-  return { first: first - above, last: last + below };
+  return grown;
 }
 
-const isSame = (one: RowRange, two: RowRange): boolean => one.first === two.first && one.last === two.last;
+const isSame = (one: ReadonlySet<number>, two: ReadonlySet<number>): boolean => one.size === two.size && [...one].every((index) => two.has(index));
 
 /**
  * Which of the rows in the page show what they say. The rest keep their place for some pictures longer: filling a whole screen in one
  * go would hold up the wheel.
  */
-export function useFilledRows({ first, last }: RowRange): (index: number) => boolean {
-  const [filled, setFilled] = useState<RowRange>({ first, last: first - 1 });
-  const shown = growFilled(filled, { first, last }, rowsAtOnce);
+export function useFilledRows(range: RowRange, isRead: (index: number) => boolean): ReadonlySet<number> {
+  const [filled, setFilled] = useState<ReadonlySet<number>>(new Set());
+  const shown = growFilled(filled, range, isRead, rowsAtOnce);
   useEffect(() => {
     if (isSame(shown, filled)) return undefined;
     const frame = requestAnimationFrame(() => setFilled(shown));
     return () => cancelAnimationFrame(frame);
   });
-  return (index) => index >= shown.first && index <= shown.last;
+  return shown;
 }
