@@ -148,7 +148,7 @@ describe('one facet over and over', () => {
     const { soundness } = measurer.finish();
     expect(process.memoryUsage().heapUsed - before).toBeLessThan(40 * megabyte);
     expect(soundness.duplicateFacets).toBe(999_999);
-    expect(soundness.findings.at(-1)).toEqual({ kind: 'duplicate-facets', count: 999_999, facets: Array.from({ length: 20 }, (_, k) => k + 1) });
+    expect(soundness.findings.at(-1)).toMatchObject({ kind: 'duplicate-facets', count: 999_999, facets: Array.from({ length: 20 }, (_, k) => k + 1) });
   });
 });
 

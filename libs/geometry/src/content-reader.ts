@@ -1,12 +1,17 @@
 import { createUtf16Decoder } from './decode-utf16';
 import { decidingBytes, detectFormat, facetBytes, headerBytes, type Detected } from './detect-format';
 import type { FacetSink } from './facet-batch';
-import { tooManyFacets, type FileRemarks, type FormatReader } from './format-reader';
+import { formatNames, tooManyFacets, type FileRemarks, type FormatReader } from './format-reader';
 import { createInflater } from './inflate-gzip';
 import type { ReadingLimits } from './limits';
 import type { MeshCompression, MeshFormat } from './measurement';
 import { MeshError } from './mesh-error';
+import { createThreeMfReader } from './3mf/read-3mf';
+import { createGlbReader } from './gltf/read-glb';
+import { createGltfReader } from './gltf/read-gltf';
+import { createPlyReader } from './ply/read-ply';
 import { createObjReader } from './read-obj';
+import { createOffReader } from './read-off';
 import { createAsciiStlReader } from './read-stl-ascii';
 import { createBinaryStlReader } from './read-stl-binary';
 
@@ -85,44 +90,87 @@ function beginReading(detected: Detected, options: ContentOptions): ContentReade
       return unwrap('gzip', options, (take) => createInflater(limits, take));
     case 'utf-16':
       return unwrap('utf-16', options, (take) => createUtf16Decoder(detected.bigEndian, take));
-    case 'stl-ascii':
-      return read('stl-ascii', createAsciiStlReader(limits, onFacets), estimateFacets(options, facetBytes, facetBytes));
-    case 'obj':
-      return read('obj', createObjReader(limits, onFacets), estimateFacets(options, leastObjBytes, usualObjBytes));
     case 'stl-binary': {
-      if (options.wrap === 'utf-16') throw new MeshError('format-unknown', 'This begins like text in UTF-16, but it is not text. Give the mesh itself, saved as STL or OBJ.', { byte: 0 });
+      if (options.wrap === 'utf-16') throw new MeshError('format-unknown', 'This begins like text in UTF-16, but it is not text. Give the mesh itself.', { byte: 0 });
       const { declaredFacets } = detected;
       // Where the size is known it agrees with the count, and nothing needs to be read to know that the mesh is too large.
       if (sizeBytes !== null && declaredFacets > limits.maximumFacets) throw tooManyFacets(limits.maximumFacets, 'stl-binary', { byte: headerBytes + facetBytes * limits.maximumFacets });
       return read('stl-binary', createBinaryStlReader(declaredFacets, limits.maximumFacets, onFacets), estimateFacets(options, facetBytes, facetBytes));
     }
+    default: {
+      const { format } = detected;
+      if (options.wrap === 'utf-16' && !wordFormats.has(format)) throw new MeshError('format-unknown', `This is ${formatNames[format]} in UTF-16, which that format can't be in. Export the mesh again.`, { byte: 0 });
+      return read(format, createFormatReader(format, limits, onFacets), estimateFacets(options, ...bytesPerFacet[format]));
+    }
   }
 }
 
-/** A polygon may name the same one-digit vertex over and over: two bytes for a facet more. */
-const leastObjBytes = 2;
-/** A facet and its half of a vertex, shortly written. */
-const usualObjBytes = 40;
+function createFormatReader(format: Exclude<MeshFormat, 'stl-binary'>, limits: ReadingLimits, sink: FacetSink): FormatReader {
+  switch (format) {
+    case 'stl-ascii':
+      return createAsciiStlReader(limits, sink);
+    case 'obj':
+      return createObjReader(limits, sink);
+    case 'ply-ascii':
+    case 'ply-binary':
+      return createPlyReader(format, limits, sink);
+    case 'off':
+      return createOffReader(limits, sink);
+    case '3mf':
+      return createThreeMfReader(limits, sink);
+    case 'gltf':
+      return createGltfReader(limits, sink);
+    case 'glb':
+      return createGlbReader(limits, sink);
+  }
+}
+
+/** Formats that may be in UTF-16: every word of them that counts is ASCII. */
+const wordFormats: ReadonlySet<MeshFormat> = new Set<MeshFormat>(['stl-ascii', 'obj', 'ply-ascii', 'off']);
+
+/** The fewest bytes that a facet more can take, and how many it usually takes; what can place one piece many times has no fewest. */
+const bytesPerFacet: Readonly<Record<Exclude<MeshFormat, 'stl-binary'>, [least: number, usual: number]>> = {
+  'stl-ascii': [facetBytes, facetBytes],
+  // A polygon may name the same one-digit vertex over and over: two bytes for a facet more. A facet and its half of a vertex, shortly written.
+  obj: [2, 40],
+  'ply-ascii': [2, 40],
+  'ply-binary': [1, 19],
+  off: [2, 40],
+  '3mf': [0, 16],
+  gltf: [0, 24],
+  glb: [0, 18],
+};
 
 function estimateFacets({ sizeBytes, limits: { maximumFacets } }: ContentOptions, leastBytes: number, usualBytes: number): FacetsToCome {
   if (sizeBytes === null) return { most: maximumFacets, expected: 0 };
-  const most = (bytes: number): number => Math.min(maximumFacets, Math.max(1, Math.floor(sizeBytes / bytes)));
+  const most = (bytes: number): number => (bytes === 0 ? maximumFacets : Math.min(maximumFacets, Math.max(1, Math.floor(sizeBytes / bytes))));
   return { most: most(leastBytes), expected: most(usualBytes) };
 }
 
 function read(format: MeshFormat, reader: FormatReader, facetsToCome: FacetsToCome): ContentReader {
   return {
-    push: (bytes) => reader.push(bytes),
-    finish() {
-      const remarks = reader.finish();
-      if (reader.facetsRead > 0) return { format, compression: null, facets: reader.facetsRead, ...remarks };
-      throw new MeshError('facets-none', `The file is an ${format === 'obj' ? 'OBJ' : 'STL'} mesh without a single facet. Check that something was selected when it was exported.`);
-    },
+    push: (bytes) => withFormat(format, () => reader.push(bytes)),
+    finish: () =>
+      withFormat(format, () => {
+        const remarks = reader.finish();
+        if (reader.facetsRead > 0) return { format, compression: null, facets: reader.facetsRead, ...remarks };
+        throw new MeshError('facets-none', `The file (${formatNames[format]}) is a mesh without a single facet. Check that something was selected when it was exported.`);
+      }),
     get facetsRead() {
       return reader.facetsRead;
     },
     facetsToCome,
   };
+}
+
+/** Has a refusal say what format was being read. */
+function withFormat<Result>(format: MeshFormat, run: () => Result): Result {
+  try {
+    return run();
+  } catch (error) {
+    if (error instanceof MeshError) error.format = format;
+    throw error;
+  }
 }
 
 type Unwrapper = Pick<ContentReader, 'push'> & { finish: () => void };

@@ -1,3 +1,4 @@
+import type { MeshFormat } from './measurement';
 import { MeshError, spellCount, spellCounted } from './mesh-error';
 import { openingStatements } from './obj-statements';
 import { findStranger } from './strangers';
@@ -11,7 +12,7 @@ export const facetBytes = 50;
 const slackBytes = facetBytes;
 
 /** What a file is: a mesh, with the number of facets that its header declares where it has one, or what a mesh is packed in. */
-export type Detected = { format: 'stl-ascii' | 'obj' } | { format: 'stl-binary'; declaredFacets: number } | { format: 'gzip' } | { format: 'utf-16'; bigEndian: boolean };
+export type Detected = { format: Exclude<MeshFormat, 'stl-binary'> } | { format: 'stl-binary'; declaredFacets: number } | { format: 'gzip' } | { format: 'utf-16'; bigEndian: boolean };
 
 /** Comments and blanks, then the word of an OBJ statement; or nothing but comments as far as one can see. */
 const objOpening = new RegExp(`^(\\s|#[^\\r\\n]*[\\r\\n])*((${openingStatements.join('|')})\\s|#[^\\r\\n]*$)`);
@@ -24,7 +25,14 @@ const isText = (bytes: Uint8Array): boolean => bytes.every((byte) => byte >= 32 
 
 const isObjOpening = (start: string): boolean => objOpening.test(start) || (start.includes('#') && onlyComments.test(start));
 
-const askForMesh = 'Give the mesh itself, saved as STL or OBJ; either may be packed with gzip.';
+/** How an OFF file begins, with the prefixes that say what a vertex has beside its place. */
+const offOpening = /^(\s|#[^\r\n]*[\r\n])*(ST)?C?N?4?n?OFF\s/;
+/** The first words of a PLY file; the line with its format comes before any element. */
+const plyOpening = /^ply\s*[\r\n]/;
+const plyFormat = /[\r\n]\s*format\s+(\w+)/;
+
+const readFormats = 'STL, OBJ, PLY, OFF, 3MF or glTF';
+const askForMesh = `Give the mesh itself, saved as ${readFormats}; it may be packed with gzip.`;
 
 /**
  * Tells what a file is by its content, never by its name. Binary STL that begins with "solid" is common, so the size decides first where it is known: it
@@ -39,16 +47,16 @@ export function detectFormat(beginning: Uint8Array, sizeBytes: number | null): D
   const declaredFacets = beginning.length >= headerBytes ? new DataView(beginning.buffer, beginning.byteOffset).getUint32(headerBytes - 4, true) : undefined;
   if (declaredFacets !== undefined && sizeBytes !== null && fitsSize(declaredFacets, sizeBytes)) return { format: 'stl-binary', declaredFacets };
 
-  const textual = detectText(beginning);
-  if (textual !== undefined) return textual;
+  const told = detectText(beginning) ?? detectBinary(beginning);
+  if (told !== undefined) return told;
   const text = isText(beginning);
   if (declaredFacets !== undefined && sizeBytes === null && !text && looksLikeFacets(beginning)) return { format: 'stl-binary', declaredFacets };
   if (beginning[0] === 0x1f && beginning[1] === 0x8b) return { format: 'gzip' };
 
   const stranger = findStranger(latin1(beginning), text);
-  if (stranger !== undefined) throw new MeshError('format-unknown', `This looks like ${stranger}, not like an STL or OBJ mesh. ${askForMesh}`, { byte: 0 });
+  if (stranger !== undefined) throw new MeshError('format-unknown', `This looks like ${stranger}, not like a mesh. ${askForMesh}`, { byte: 0 });
   if (text) {
-    throw new MeshError('format-unknown', 'This is text, but neither an STL mesh (that would begin with the word "solid") nor an OBJ mesh (one of "v", "f" or the like). Export the mesh as STL or OBJ.', { line: 1 });
+    throw new MeshError('format-unknown', `This is text, but no mesh: STL would begin with the word "solid", OBJ with one of "v", "f" or the like, PLY with "ply" and OFF with "OFF". ${askForMesh}`, { line: 1 });
   }
   if (declaredFacets === undefined) {
     throw new MeshError('format-unknown', `The file has ${spellCounted(beginning.length, 'byte')}; the shortest STL file with a facet has ${headerBytes + facetBytes}. Export the mesh again.`, { byte: 0 });
@@ -64,7 +72,23 @@ function detectText(beginning: Uint8Array): Detected | undefined {
   if (!isText(beginning)) return undefined;
   const start = latin1(beginning).replace(/^\xef\xbb\xbf/, '');
   if (/^\s*solid(\s|$)/i.test(start)) return { format: 'stl-ascii' };
-  return isObjOpening(start) ? { format: 'obj' } : undefined;
+  if (isObjOpening(start)) return { format: 'obj' };
+  if (plyOpening.test(start)) return { format: findPlyFormat(start) };
+  if (offOpening.test(start)) return { format: 'off' };
+  return /^\s*\{/.test(start) ? { format: 'gltf' } : undefined;
+}
+
+/** A mesh that says in its first bytes what it is, and that no mesh of another format would begin with. */
+function detectBinary(beginning: Uint8Array): Detected | undefined {
+  const start = latin1(beginning);
+  // A version, and a method of packing, that exist.
+  if (start.startsWith('glTF') && (beginning[4] ?? 0) < 16 && start.slice(5, 8) === '\0\0\0') return { format: 'glb' };
+  if (start.startsWith('PK\x03\x04') && (beginning[5] ?? 0) === 0 && (beginning[9] ?? 0) === 0) return { format: '3mf' };
+  return plyOpening.test(start) && plyFormat.test(start) ? { format: findPlyFormat(start) } : undefined;
+}
+
+function findPlyFormat(start: string): 'ply-ascii' | 'ply-binary' {
+  return plyFormat.exec(start)?.[1]?.startsWith('binary') === true ? 'ply-binary' : 'ply-ascii';
 }
 
 function fitsSize(declared: number, sizeBytes: number): boolean {

@@ -1,6 +1,6 @@
 import { MeshError } from './mesh-error';
 
-type NumberArray = Float64Array<ArrayBuffer> | Uint32Array<ArrayBuffer>;
+type NumberArray = Float64Array<ArrayBuffer> | Uint32Array<ArrayBuffer> | Int32Array<ArrayBuffer> | Uint8Array<ArrayBuffer>;
 
 /** A copy of at least `needed` elements, twice as long as before but never longer than `most` (the number that can come at all). */
 export function growArray<Kind extends NumberArray>(array: Kind, needed: number, most: number): Kind {

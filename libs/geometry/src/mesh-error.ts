@@ -1,3 +1,5 @@
+import type { MeshFormat } from './measurement';
+
 /** The closed list of reasons for which a mesh file is refused. */
 export const meshErrorCodes = [
   'file-empty',
@@ -27,6 +29,8 @@ export interface MeshPlace {
 /** A file that cannot be measured. The message says in words what is wrong and what to do about it. */
 export class MeshError extends Error {
   override readonly name = 'MeshError';
+  /** Of the mesh, once that is known. */
+  format: MeshFormat | null = null;
 
   constructor(
     readonly code: MeshErrorCode,

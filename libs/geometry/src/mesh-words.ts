@@ -4,6 +4,9 @@ import { isNonFiniteWord, parseDecimal } from './parse-decimal';
 /** Binary STL can hold no larger coordinate, and the fifth power of this one still fits binary64. */
 const largestCoordinate = 3.4028234663852886e38;
 
+/** Whether a number is finite, and no larger than what is taken for a coordinate. */
+export const isCoordinate = (value: number): boolean => value <= largestCoordinate && value >= -largestCoordinate;
+
 /**
  * The coordinate that bytes[start, end) write; undefined where the word is not even like a number. Throws a MeshError for a slip in a number, one
  * that is not finite, and one beyond 3.4e38.
@@ -16,7 +19,7 @@ export function parseCoordinate(bytes: Uint8Array, start: number, end: number, l
     refuseNumber(bytes, start, end, line, format);
     return undefined;
   }
-  if (number > largestCoordinate || number < -largestCoordinate) {
+  if (!isCoordinate(number)) {
     throw new MeshError('number-not-finite', `A coordinate in line ${spellCount(line)} is larger than 3.4e38, the most that is taken from ${format}. Export the mesh again.`, { line });
   }
   return number;

@@ -149,7 +149,7 @@ describe('OBJ files that are refused', () => {
     ['a call for another file', `${vertexLines}call other.obj\n${faceLines}`, 'syntax-invalid', /calls for another file/, { line: 9 }],
     ['free-form surfaces alone', `${vertexLines}cstype bezier\ndeg 3 3\nsurf 0 1 0 1 1 2 3 4\nend\n`, 'facets-none', /free-form surfaces \(the first in line 11\) but no facets/, { line: 11 }],
     ['free-form surfaces beside facets', `${blockObj}cstype bezier\ndeg 3 3\nsurf 0 1 0 1 1 2 3 4\nend\n`, 'syntax-invalid', /beside its facets/, { line: 17 }],
-    ['vertices alone', vertexLines, 'facets-none', /OBJ mesh without a single facet/, null],
+    ['vertices alone', vertexLines, 'facets-none', /\(OBJ\) is a mesh without a single facet/, null],
     ['points and lines alone', `${vertexLines}p 1\nl 1 2\n`, 'facets-none', /without a single facet/, null],
     ['a comment alone', '# nothing\n', 'facets-none', /without a single facet/, null],
     ['a control character', `${vertexLines}#${'-'.repeat(1200)}\nf 1 3 \x01 2\n`, 'syntax-invalid', /control character \(code 1\)/, { line: 10 }],

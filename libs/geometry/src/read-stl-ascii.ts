@@ -35,7 +35,7 @@ export function createAsciiStlReader(limits: ReadingLimits, sink: FacetSink): Fo
   let numbers = 0;
   // Whether the name after "endsolid" has the word "solid" in it: another solid may have begun on the same line.
   let solidInName = false;
-  const scanner = createWordScanner(limits, takeWord, takeLineEnd);
+  const scanner = createWordScanner('STL', limits, takeWord, takeLineEnd);
 
   function takeLineEnd(): void {
     if (expected === 'solid-name') expected = 'facet';

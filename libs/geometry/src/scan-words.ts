@@ -13,15 +13,20 @@ export interface WordScanner {
 /**
  * Cuts bytes into words at white space, in chunks of any size. A word inside one chunk is handed on in place; one that straddles chunks is
  * put together in a small buffer. Line ends (LF, CRLF, CR) are told apart from other white space.
+ *
+ * @param format as a sentence names it
+ * @param firstLine the number of the line that the first byte stands in
  */
 export function createWordScanner(
+  format: string,
   { maximumWordBytes, maximumLineBytes }: Pick<ReadingLimits, 'maximumWordBytes' | 'maximumLineBytes'>,
   takeWord: (bytes: Uint8Array, start: number, end: number) => void,
   takeLineEnd: () => void,
+  firstLine = 1,
 ): WordScanner {
   const carry = new Uint8Array(maximumWordBytes);
   let carried = 0;
-  let line = 1;
+  let line = firstLine;
   // Bytes of this line in chunks before; where in this chunk its count begins, and which word ends.
   let lineBytes = 0;
   let lineStart = 0;
@@ -37,12 +42,12 @@ export function createWordScanner(
 
   function checkLength(length: number): void {
     if (length <= maximumWordBytes) return;
-    throw new MeshError('syntax-invalid', `Line ${spellCount(line)} has a word of more than ${spellCounted(maximumWordBytes, 'character')}: this is not an STL mesh, or it was damaged.`, { line });
+    throw new MeshError('syntax-invalid', `Line ${spellCount(line)} has a word of more than ${spellCounted(maximumWordBytes, 'character')}: this is not ${format === 'PLY' ? 'a' : 'an'} ${format} mesh, or it was damaged.`, { line });
   }
 
   function checkLine(at: number): void {
     if (lineBytes + at - lineStart <= maximumLineBytes) return;
-    throw new MeshError('syntax-invalid', `Line ${spellCount(line)} goes on for more than ${spellCounted(maximumLineBytes, 'byte')} without a facet, the most that is read of one line of STL. Export the mesh again.`, { line });
+    throw new MeshError('syntax-invalid', `Line ${spellCount(line)} goes on for more than ${spellCounted(maximumLineBytes, 'byte')} without a facet, the most that is read of one line of ${format}. Export the mesh again.`, { line });
   }
 
   function restartLine(at: number): void {

@@ -8,22 +8,19 @@ const strangers: readonly (readonly [beginning: RegExp | string, name: string])[
   [/^(II\*\0|MM\0\*)/, 'a TIFF picture'],
   [/^[^]{4}ftyp/, 'a film or a HEIC picture'],
   [/^%PDF/, 'a PDF document'],
-  ['PK\x03\x04', 'a ZIP archive (a 3MF file is one too)'],
   [/^[^]{257}ustar/, 'a tar archive'],
   [/^BZh\d/, 'a bzip2 archive'],
   [/^\xfd7zXZ\0/, 'an xz archive'],
   [/^\x28\xb5\x2f\xfd/, 'a Zstandard archive'],
   [/^7z\xbc\xaf/, 'a 7z archive'],
   [/^Rar!/, 'a RAR archive'],
-  [/^glTF/, 'a binary glTF model'],
-  [/^ply\r?\n/, 'a PLY mesh'],
+  [/^(ST)?C?N?4?n?OFF\s+BINARY/, 'a binary OFF mesh, of which only the one in words is read'],
+  ['PK\x05\x06', 'an empty ZIP archive'],
   [/^ISO-10303-21/, 'a STEP model'],
   ['\xd0\xcf\x11\xe0', 'a document of an office or drawing program'],
 ];
 const textualStrangers: typeof strangers = [
   [/^\s*</, 'an XML, SVG or HTML document'],
-  [/^\s*\{/, 'a JSON document'],
-  [/^\s*(C|N|ST|4|n)*OFF\s/, 'an OFF mesh'],
 ];
 
 /** What else a file looks like by its first bytes, one character each; undefined where nothing is known that begins so. */
