@@ -1,0 +1,144 @@
+import type { WeldedMesh } from '../weld-corners';
+import { createFacetTree, type FacetTree } from './facet-tree';
+import { locatePoint, type Location, type Probe } from './locate-point';
+import { visitBox } from './search-tree';
+import { createPairList, haveSameCorners, visitMeetings, type Meeting, type PairList } from './self-intersections';
+import type { ShellFigures } from './shell-figures';
+import { facetsOfShell, noShell, type ShellTable } from './shells';
+
+export interface Overlaps {
+  /** Null where the mesh was not examined to the end. */
+  selfIntersections: PairList | null;
+  /** Shells that pass through others. */
+  shells: Set<number>;
+  /** Facets of different shells that pass through each other. */
+  meetings: PairList;
+}
+
+export interface OverlapSearch {
+  mesh: WeldedMesh;
+  /** Facets from here on were added to close gaps, and are held against none. */
+  fileFacets: number;
+  /** Over all facets of the shells. */
+  tree: FacetTree;
+  shells: ShellTable;
+  figures: ShellFigures;
+  /** Facets that are read the other way round. */
+  flips: Uint8Array | undefined;
+  /** Pairs of shells whose boxes meet; undefined where there are too many. */
+  closePairs: readonly (readonly [number, number])[] | undefined;
+  maximumIntersectionFacets: number;
+}
+
+/**
+ * Which facets pass through each other, and which shells. Up to the limit all facets are held against all; beyond it only those in the boxes that shells have
+ * in common, if they are no more than that.
+ */
+export function findOverlaps(search: OverlapSearch): Overlaps {
+  const { mesh, shells, tree, flips, fileFacets } = search;
+  const isWhole = fileFacets <= search.maximumIntersectionFacets;
+  const overlaps: Overlaps = { selfIntersections: createPairList(mesh), shells: new Set(), meetings: createPairList(mesh) };
+  const contacts: Contacts = new Map();
+  const visit = (meeting: Meeting): void => noteMeeting(search, overlaps, contacts, meeting);
+  if (isWhole) {
+    const wanted = (one: number, two: number): boolean => one < fileFacets && two < fileFacets;
+    if (!visitMeetings(mesh, tree, flips, wanted, visit)) overlaps.selfIntersections = null;
+  } else {
+    overlaps.selfIntersections = null;
+    const common = findCommonFacets(search);
+    const wanted = (one: number, two: number): boolean => shells.shellOf[one] !== shells.shellOf[two];
+    if (common.length > 0) visitMeetings(mesh, createFacetTree(mesh, common), flips, wanted, visit);
+  }
+  settleContacts(search, overlaps, contacts);
+  return overlaps;
+}
+
+/** Facets of one shell that touch another, by both shells; each facet with one that it touches. */
+type Contacts = Map<number, { shell: number; other: number; facets: Map<number, number> }>;
+
+/** So many touching facets of a pair of shells are asked on which side they lie. */
+const mostContacts = 2000;
+
+function noteMeeting({ mesh, shells, figures }: OverlapSearch, overlaps: Overlaps, contacts: Contacts, { one, two, relation }: Meeting): void {
+  const passes = relation === 'crossing' || relation === 'upon';
+  if (passes && !haveSameCorners(mesh, one, two)) overlaps.selfIntersections?.add(one, two);
+  const a = shells.shellOf[one] ?? noShell, b = shells.shellOf[two] ?? noShell;
+  if (a === b || !encloses(shells, figures, a) || !encloses(shells, figures, b)) return;
+  if (passes) {
+    overlaps.shells.add(a).add(b);
+    overlaps.meetings.add(one, two);
+    return;
+  }
+  if (relation === 'against') return;
+  for (const [shell, other, facet, touched] of [[a, b, one, two], [b, a, two, one]] as const) {
+    const key = shell * shells.count + other;
+    const contact = contacts.get(key) ?? { shell, other, facets: new Map<number, number>() };
+    if (contact.facets.size === 0) contacts.set(key, contact);
+    if (contact.facets.size < mostContacts) contact.facets.set(facet, touched);
+  }
+}
+
+const encloses = ({ open }: ShellTable, { signs }: ShellFigures, shell: number): boolean => shell !== noShell && open[shell] === 0 && signs[shell] !== 0;
+
+/**
+ * Surfaces may pass through each other along their edges alone, so that no facet passes through another. Then some of the facets that touch lie within the
+ * other shell and some outside.
+ */
+function settleContacts({ mesh, tree, shells }: OverlapSearch, overlaps: Overlaps, contacts: Contacts): void {
+  const known = new Map<number, Location>();
+  const locate = (probe: Probe): Location => {
+    const location = ('vertex' in probe ? known.get(probe.vertex) : undefined) ?? locatePoint(mesh, tree, shells, probe);
+    if ('vertex' in probe) known.set(probe.vertex, location);
+    return location;
+  };
+  for (const key of [...contacts.keys()].sort((one, two) => one - two)) {
+    const contact = contacts.get(key);
+    if (contact === undefined || (overlaps.shells.has(contact.shell) && overlaps.shells.has(contact.other))) continue;
+    let inside: number | undefined;
+    let outside: number | undefined;
+    for (const facet of contact.facets.keys()) {
+      const side = findFacetSide(mesh, facet, contact.other, locate);
+      if (side === 'inside') inside ??= facet;
+      else if (side === 'outside') outside ??= facet;
+      if (inside !== undefined && outside !== undefined) break;
+    }
+    if (inside === undefined || outside === undefined) continue;
+    overlaps.shells.add(contact.shell).add(contact.other);
+    overlaps.meetings.add(inside, contact.facets.get(inside) ?? inside);
+  }
+}
+
+/** Where a facet lies that does not pass through a shell: by the first of its points that isn't on the surface of it. */
+function findFacetSide({ corners }: WeldedMesh, facet: number, shell: number, locate: (probe: Probe) => Location): 'inside' | 'outside' | 'upon' {
+  const [a, b, c] = [corners[3 * facet] ?? 0, corners[3 * facet + 1] ?? 0, corners[3 * facet + 2] ?? 0];
+  for (const probe of [{ vertex: a }, { vertex: b }, { vertex: c }, { inside: [a, b, c] as const }]) {
+    const { windings, touched } = locate(probe);
+    if (!touched.has(shell)) return windings.has(shell) ? 'inside' : 'outside';
+  }
+  return 'upon';
+}
+
+/** Facets in the boxes that two shells have in common; none where there are more than the limit. */
+function findCommonFacets({ tree, shells, figures, closePairs, fileFacets, maximumIntersectionFacets }: OverlapSearch): Uint32Array {
+  const found = new Set<number>();
+  for (const [one, two] of closePairs ?? []) {
+    if (!encloses(shells, figures, one) || !encloses(shells, figures, two)) continue;
+    const common = new Float64Array(6);
+    for (let k = 0; k < 6; k++) {
+      const p = figures.boxes[6 * one + k] ?? 0, q = figures.boxes[6 * two + k] ?? 0;
+      common[k] = k < 3 ? Math.max(p, q) : Math.min(p, q);
+    }
+    const complete = visitBox(tree, common, (facet) => {
+      const shell = shells.shellOf[facet];
+      if (facet < fileFacets && (shell === one || shell === two)) found.add(facet);
+      return found.size <= maximumIntersectionFacets;
+    });
+    if (!complete) return new Uint32Array(0);
+  }
+  return Uint32Array.from(found).sort();
+}
+
+/** All facets that belong to shells: those for which a tree is made. */
+export function listShellFacets(shells: ShellTable): Uint32Array {
+  return shells.count === 1 ? facetsOfShell(shells, 0) : shells.facets.slice().sort();
+}
