@@ -2,24 +2,25 @@ import type { Symmetric3, Vector3 } from '../../measurement';
 import type { Corners, Point } from '../../testing/shapes';
 
 /** Area of a mesh, and volume, first and second moments of its body about a point, by plain sums of tetrahedra with an apex there. */
-export function sumMesh(corners: Corners, about: Point): { volume: number; area: number; first: Vector3; second: Symmetric3 } {
-  let volume = 0, area = 0;
-  const first = [0, 0, 0], second = [0, 0, 0, 0, 0, 0];
-  const pairs = [[0, 0], [1, 1], [2, 2], [0, 1], [1, 2], [2, 0]] as const;
+export function sumMesh(corners: Corners, [ox, oy, oz]: Point): { volume: number; area: number; first: Vector3; second: Symmetric3 } {
+  let volume = 0, area = 0, x = 0, y = 0, z = 0, xx = 0, yy = 0, zz = 0, xy = 0, yz = 0, zx = 0;
   for (let at = 0; at < corners.length; at += 9) {
-    const p = Array.from({ length: 9 }, (_, k) => (corners[at + k] ?? NaN) - (about[k % 3] ?? NaN)) as [number, number, number, number, number, number, number, number, number];
-    const [ux, uy, uz, vx, vy, vz] = [p[3] - p[0], p[4] - p[1], p[5] - p[2], p[6] - p[0], p[7] - p[1], p[8] - p[2]];
-    const [nx, ny, nz] = [uy * vz - uz * vy, uz * vx - ux * vz, ux * vy - uy * vx];
-    const d = p[0] * nx + p[1] * ny + p[2] * nz;
-    const s = [0, 1, 2].map((k) => (p[k] ?? NaN) + (p[k + 3] ?? NaN) + (p[k + 6] ?? NaN));
+    const at3 = (k: number): number => (corners[at + k] ?? NaN) - (k % 3 === 0 ? ox : k % 3 === 1 ? oy : oz);
+    const ax = at3(0), ay = at3(1), az = at3(2), bx = at3(3), by = at3(4), bz = at3(5), cx = at3(6), cy = at3(7), cz = at3(8);
+    const nx = (by - ay) * (cz - az) - (bz - az) * (cy - ay), ny = (bz - az) * (cx - ax) - (bx - ax) * (cz - az), nz = (bx - ax) * (cy - ay) - (by - ay) * (cx - ax);
+    const d = ax * nx + ay * ny + az * nz;
+    const sx = ax + bx + cx, sy = ay + by + cy, sz = az + bz + cz;
     volume += d / 6;
     area += Math.sqrt(nx * nx + ny * ny + nz * nz) / 2;
-    for (const k of [0, 1, 2]) first[k] = (first[k] ?? 0) + (d * (s[k] ?? NaN)) / 24;
-    for (const [k, [i, j]] of pairs.entries()) {
-      const own = [0, 3, 6].reduce((sum, corner) => sum + (p[corner + i] ?? NaN) * (p[corner + j] ?? NaN), 0);
-      second[k] = (second[k] ?? 0) + (d * ((s[i] ?? NaN) * (s[j] ?? NaN) + own)) / 120;
-    }
+    x += (d * sx) / 24;
+    y += (d * sy) / 24;
+    z += (d * sz) / 24;
+    xx += (d * (sx * sx + ax * ax + bx * bx + cx * cx)) / 120;
+    yy += (d * (sy * sy + ay * ay + by * by + cy * cy)) / 120;
+    zz += (d * (sz * sz + az * az + bz * bz + cz * cz)) / 120;
+    xy += (d * (sx * sy + ax * ay + bx * by + cx * cy)) / 120;
+    yz += (d * (sy * sz + ay * az + by * bz + cy * cz)) / 120;
+    zx += (d * (sz * sx + az * ax + bz * bx + cz * cx)) / 120;
   }
-  const [xx = NaN, yy = NaN, zz = NaN, xy = NaN, yz = NaN, zx = NaN] = second;
-  return { volume, area, first: first as Vector3, second: { xx, yy, zz, xy, yz, zx } };
+  return { volume, area, first: [x, y, z], second: { xx, yy, zz, xy, yz, zx } };
 }
