@@ -58,7 +58,8 @@ const bundledIntoPages = [
 ];
 
 export default tseslint.config(
-  { ignores: ['**/dist/**', '**/node_modules/**', '**/.nx/**', '**/.data/**', '**/.test/**', 'coverage/**', '**/*.generated.ts'] },
+  // AssemblyScript looks like TypeScript and is none.
+  { ignores: ['libs/geometry/assembly/**', '**/dist/**', '**/node_modules/**', '**/.nx/**', '**/.data/**', '**/.test/**', 'coverage/**', '**/*.generated.ts'] },
   js.configs.recommended,
   ...tseslint.configs.recommendedTypeChecked.map((config) => ({ ...config, files: ['**/*.{ts,tsx}'] })),
   {

@@ -1,4 +1,4 @@
-// Writes what is generated from the code and committed: the OpenAPI document and the types of the web's client.
+// Writes what is generated from the code and committed: the OpenAPI document, the types of the web's client, and geometry's compiled kernels.
 // `--check` only compares and fails where something is out of date.
 import { spawnSync } from 'node:child_process';
 import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
@@ -17,16 +17,30 @@ function run([program, ...parameters], environment = {}) {
   if (result.status !== 0) throw new Error(`${program} ${parameters.join(' ')} failed.`);
 }
 
+/** Memory is fixed: the kernels' state and a batch of facets fit into six pages of 64 KiB. */
+const kernelFlags = ['-O3', '--noAssert', '--runtime', 'stub', '--enable', 'simd', '--initialMemory', '6', '--maximumMemory', '6'];
+
+/** The WebAssembly module as a source file, so that browsers and threads take it with the code. @param {string} target */
+function compileKernels(target) {
+  const compiled = path.join(work, 'kernels.wasm');
+  run(['npx', 'asc', 'libs/geometry/assembly/index.ts', ...kernelFlags, '-o', compiled]);
+  const base64 = readFileSync(compiled).toString('base64');
+  writeFileSync(target, `/* Compiled from assembly/ by \`npm run generate\`; not to be edited. */\nexport const compiledKernel =\n  '${base64}';\n`);
+}
+
 try {
   const document = path.join(work, 'openapi.json');
   const types = path.join(work, 'schema.generated.ts');
   run(['npx', 'vite', 'build', 'apps/api', '--outDir', path.join(root, 'node_modules/.cache/openapi')], { BUILD_DIR: '' });
   run(['node', path.join(root, 'node_modules/.cache/openapi/openapi.js'), document]);
   run(['npx', 'openapi-typescript', document, '--output', types]);
+  const kernels = path.join(work, 'kernel.generated.ts');
+  compileKernels(kernels);
   /** @type {[string, string][]} what was generated, and where it is kept */
   const pairs = [
     [document, path.join(client, 'openapi.json')],
     [types, path.join(client, 'schema.generated.ts')],
+    [kernels, path.join(root, 'libs/geometry/src/kernel/kernel.generated.ts')],
   ];
   const read = (/** @type {string} */ file) => {
     try {

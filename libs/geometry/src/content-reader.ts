@@ -13,6 +13,7 @@ import { createPlyReader } from './ply/read-ply';
 import { createObjReader } from './read-obj';
 import { createOffReader } from './read-off';
 import { createAsciiStlReader } from './read-stl-ascii';
+import type { PackedFacetSink } from './packed-facets';
 import { createBinaryStlReader } from './read-stl-binary';
 
 export interface ContentSummary extends FileRemarks {
@@ -39,6 +40,8 @@ export interface ContentOptions {
   sizeBytes: number | null;
   limits: ReadingLimits;
   onFacets: FacetSink;
+  /** Takes the facets of a binary STL file as they are, in place of `onFacets`. */
+  packed?: PackedFacetSink | undefined;
   /** What this content came out of. */
   wrap?: 'gzip' | 'utf-16';
 }
@@ -95,7 +98,7 @@ function beginReading(detected: Detected, options: ContentOptions): ContentReade
       const { declaredFacets } = detected;
       // Where the size is known it agrees with the count, and nothing needs to be read to know that the mesh is too large.
       if (sizeBytes !== null && declaredFacets > limits.maximumFacets) throw tooManyFacets(limits.maximumFacets, 'stl-binary', { byte: headerBytes + facetBytes * limits.maximumFacets });
-      return read('stl-binary', createBinaryStlReader(declaredFacets, limits.maximumFacets, onFacets), estimateFacets(options, facetBytes, facetBytes));
+      return read('stl-binary', createBinaryStlReader(declaredFacets, limits.maximumFacets, onFacets, options.packed), estimateFacets(options, facetBytes, facetBytes));
     }
     default: {
       const { format } = detected;

@@ -1,4 +1,4 @@
-export { createMeasurer, measureMesh, type Measurer, type MeasurerOptions } from './measurer';
+export { createIntegralsPass, createMeasurer, measureMesh, type IntegralsPass, type Measurer, type MeasurerOptions } from './measurer';
 export { findingKinds, measuringVersion } from './measurement';
 export type { Finding, FindingKind, Integrals, Measurement, MeshCompression, MeshFormat, Soundness, Symmetric3, Vector3 } from './measurement';
 export { MeshError, meshErrorCodes, type MeshErrorCode, type MeshPlace } from './mesh-error';

@@ -1,9 +1,8 @@
 import { batchFacets } from './facet-batch';
 import { computeErrorBound, blockedRoundings, doubleDoubleRoundings } from './error-bound';
-import { createFacetSums, sumsOfBody, type FacetIntegrator, type FacetSums } from './facet-sums';
+import { sumsOfBody, type FacetSums } from './facet-sums';
 import { finishIntegrals } from './finish-integrals';
-import { integrateBlocked } from './integrate-blocked';
-import { integrateDoubleDouble } from './integrate-double-double';
+import { carefulKernel, usualKernel, type Kernel } from './kernel/summing';
 import type { Integrals, Vector3 } from './measurement';
 import type { WeldedMesh } from './weld-corners';
 
@@ -58,7 +57,7 @@ export function finishBody(usual: FacetSums, diagonal: number, sumCarefully: () 
  * @param diagonal of that box: the natural scale of error bounds
  */
 export function integrateBody(mesh: WeldedMesh, origin: Vector3, diagonal: number, selection: FacetSelection = {}): BodyIntegrals {
-  return finishBody(sumSelection(integrateBlocked, mesh, origin, selection), diagonal, () => sumSelection(integrateDoubleDouble, mesh, origin, selection));
+  return finishBody(sumSelection(usualKernel, mesh, origin, selection), diagonal, () => sumSelection(carefulKernel, mesh, origin, selection));
 }
 
 /** The same integrals with every facet read the other way round: volume and moments change their sign, the centroid stays. */
@@ -74,8 +73,8 @@ export function turnIntegrals({ content, centreFromOrigin, second, errorBound }:
 }
 
 /** Sums over facets of a welded mesh by a kernel, batch by batch. */
-export function sumSelection(integrate: FacetIntegrator, mesh: WeldedMesh, origin: Vector3, { facets, turned, added }: FacetSelection = {}): FacetSums {
-  const sums = createFacetSums();
+export function sumSelection(kernel: Kernel, mesh: WeldedMesh, origin: Vector3, { facets, turned, added }: FacetSelection = {}): FacetSums {
+  const summing = kernel(origin);
   const batch = new Float64Array(9 * batchFacets);
   const own = facets === undefined ? mesh.facetCount : facets.length;
   const total = own + (added === undefined ? 0 : added.length / 9);
@@ -85,9 +84,9 @@ export function sumSelection(integrate: FacetIntegrator, mesh: WeldedMesh, origi
       if (begin + k < own) copyFacet(mesh, facets === undefined ? begin + k : (facets[begin + k] ?? 0), turned, batch, 9 * k);
       else if (added !== undefined) batch.set(added.subarray(9 * (begin + k - own), 9 * (begin + k - own) + 9), 9 * k);
     }
-    integrate(sums, origin, batch, count);
+    summing.add(batch, count);
   }
-  return sums;
+  return summing.finish();
 }
 
 function copyFacet({ corners, coordinates }: WeldedMesh, facet: number, turned: Uint8Array | undefined, batch: Float64Array, to: number): void {

@@ -1,6 +1,7 @@
 import { createContentReader, type ContentSummary, type FacetsToCome } from './content-reader';
 import type { FacetSink } from './facet-batch';
 import { completeLimits, type ReadingLimits } from './limits';
+import type { PackedFacetSink } from './packed-facets';
 import { MeshError, spellCounted } from './mesh-error';
 
 export interface MeshReaderOptions extends Partial<ReadingLimits> {
@@ -8,6 +9,8 @@ export interface MeshReaderOptions extends Partial<ReadingLimits> {
   sizeBytes: number;
   /** Takes the facets in the order of the file. */
   onFacets: FacetSink;
+  /** Takes the facets of a binary STL file as they are, in place of `onFacets`. */
+  packed?: PackedFacetSink | undefined;
 }
 
 export type MeshSummary = ContentSummary;
@@ -24,8 +27,8 @@ export interface MeshReader {
  * Reads a mesh file that is pushed in chunks of any size; what comes out does not depend on the sizes. Memory is constant for STL: a batch of facets
  * and the pieces that straddle chunks; of OBJ the vertices are kept. `push` and `finish` throw a MeshError; after that the reader is of no more use.
  */
-export function createMeshReader({ sizeBytes, onFacets, ...limits }: MeshReaderOptions): MeshReader {
-  const content = createContentReader({ sizeBytes, limits: completeLimits(limits), onFacets });
+export function createMeshReader({ sizeBytes, onFacets, packed, ...limits }: MeshReaderOptions): MeshReader {
+  const content = createContentReader({ sizeBytes, limits: completeLimits(limits), onFacets, packed });
   let received = 0;
 
   return {

@@ -1,4 +1,5 @@
 import { checkDeclaredFacets, facetBytes, headerBytes } from './detect-format';
+import type { NotFinite, PackedFacetSink } from './packed-facets';
 import { batchFacets, createFacetBatch, flushFacets, type FacetSink } from './facet-batch';
 import { noRemarks, tooManyFacets, type FormatReader } from './format-reader';
 import { findingFacets } from './measurement';
@@ -8,8 +9,10 @@ import { MeshError, spellCount } from './mesh-error';
  * Reads the facets of a binary STL file, pushed in chunks of any size: little-endian, 84 bytes of header, then for each facet a normal,
  * three corners and a 16-bit attribute. Whether the declared number of facets fits the size of the file is checked at the end, since the size of
  * a packed one is not known before; fewer bytes than a facet's after the last are passed over.
+ *
+ * @param packed takes the facets as they are, in place of `sink`; then nothing is noticed beside them
  */
-export function createBinaryStlReader(facets: number, maximumFacets: number, sink: FacetSink): FormatReader {
+export function createBinaryStlReader(facets: number, maximumFacets: number, sink: FacetSink, packed?: PackedFacetSink): FormatReader {
   const batch = createFacetBatch();
   const carry = new Uint8Array(facetBytes);
   const carryView = new DataView(carry.buffer);
@@ -43,15 +46,31 @@ export function createBinaryStlReader(facets: number, maximumFacets: number, sin
     if (batch.count === batchFacets) flushFacets(batch, sink);
   }
 
+  function takeFacets(bytes: Uint8Array, view: DataView, at: number, count: number): void {
+    if (packed === undefined) for (let n = 0; n < count; n++) readFacet(view, at + n * facetBytes);
+    else {
+      refuseNotFinite(packed.add(bytes, at, count));
+      read += count;
+    }
+  }
+
+  function refuseNotFinite(found: NotFinite | undefined): void {
+    if (found !== undefined) throw refuseCoordinate(found);
+  }
+
   function refuseFacet(view: DataView, at: number): never {
     for (let k = 0; k < 9; k++) {
       const coordinate = view.getFloat32(at + 12 + 4 * k, true);
       if (Number.isFinite(coordinate)) continue;
-      const byte = headerBytes + facetBytes * read + 12 + 4 * k;
-      const which = `Corner ${Math.floor(k / 3) + 1} of facet ${spellCount(read + 1)} (of ${spellCount(facets)})`;
-      throw new MeshError('number-not-finite', `${which} has ${Number.isNaN(coordinate) ? 'a coordinate that is not a number' : 'an infinite coordinate'}. Export the mesh again.`, { byte });
+      throw refuseCoordinate({ facet: read, place: k, coordinate });
     }
     throw new MeshError('number-not-finite', `Facet ${spellCount(read + 1)} has a coordinate that is not finite.`);
+  }
+
+  function refuseCoordinate({ facet, place, coordinate }: NotFinite): MeshError {
+    const which = `Corner ${Math.floor(place / 3) + 1} of facet ${spellCount(facet + 1)} (of ${spellCount(facets)})`;
+    const what = Number.isNaN(coordinate) ? 'a coordinate that is not a number' : 'an infinite coordinate';
+    return new MeshError('number-not-finite', `${which} has ${what}. Export the mesh again.`, { byte: headerBytes + facetBytes * facet + 12 + 4 * place });
   }
 
   function push(bytes: Uint8Array): void {
@@ -65,12 +84,12 @@ export function createBinaryStlReader(facets: number, maximumFacets: number, sin
       at += taken;
       if (carried < facetBytes) return;
       carried = 0;
-      if (read < wanted) readFacet(carryView, 0);
+      if (read < wanted) takeFacets(carry, carryView, 0, 1);
     }
     const whole = Math.min(wanted - read, Math.floor((bytes.length - at) / facetBytes));
     if (whole > 0) {
-      const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
-      for (let n = 0; n < whole; n++, at += facetBytes) readFacet(view, at);
+      takeFacets(bytes, new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength), at, whole);
+      at += whole * facetBytes;
     }
     if (at === bytes.length) return;
     if (read === maximumFacets && facets > maximumFacets) throw tooManyFacets(maximumFacets, 'stl-binary', { byte: headerBytes + facetBytes * maximumFacets });
@@ -83,7 +102,8 @@ export function createBinaryStlReader(facets: number, maximumFacets: number, sin
   return {
     push,
     finish() {
-      flushFacets(batch, sink);
+      if (packed === undefined) flushFacets(batch, sink);
+      else refuseNotFinite(packed.finish());
       remarks.trailingBytes = checkDeclaredFacets(facets, received);
       return remarks;
     },
