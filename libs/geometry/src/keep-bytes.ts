@@ -32,5 +32,5 @@ export function createByteStore(format: MeshFormat, maximumBytes: number): ByteS
 /** Throws a MeshError where a file would place so many facets of so few bytes. */
 export function checkPlacedFacets(facets: number, bytes: number, format: MeshFormat, { maximumFacetsPerByte, freePlacedFacets }: Pick<ReadingLimits, 'maximumFacetsPerByte' | 'freePlacedFacets'>): void {
   if (facets <= freePlacedFacets + maximumFacetsPerByte * bytes) return;
-  throw new MeshError('too-large-expanded', `The file (${formatNames[format]}) places its pieces so often that more than ${spellCounted(Math.floor(freePlacedFacets + maximumFacetsPerByte * bytes), 'facet')} come of its ${spellCounted(bytes, 'byte')}. Export fewer copies.`, { byte: bytes });
+  throw new MeshError('too-large-expanded', `The file (${formatNames[format]}) places its pieces so often that more than ${spellCounted(Math.floor(freePlacedFacets + maximumFacetsPerByte * bytes), 'facet')} come of its ${spellCounted(bytes, 'byte')}. Export fewer copies.`, { byte: 0 });
 }

@@ -39,7 +39,7 @@ export function createXmlScanner(part: string, { maximumLineBytes, maximumDepth 
     depth += 1;
     if (depth > maximumDepth) refuse(`has elements more than ${maximumDepth} deep in one another`);
     lastElement = parser.position;
-    handler.open(name, attributes as Attributes);
+    handler.open(name, attributes);
   });
   parser.on('closetag', () => {
     depth -= 1;

@@ -99,7 +99,7 @@ function addDeltas(channel: number, deltas: Uint8Array, spacing: number, byte: n
     } else {
       const delta = d0 | (d1 << 8) | (d2 << 16) | (d3 << 24);
       const before = p0 | (p1 << 8) | (p2 << 16) | (p3 << 24);
-      const value = (channel & 15) === 2 ? before ^ ((delta << turn) | (delta >>> ((32 - turn) & 31))) : addHalves(before, delta);
+      const value = (channel & 15) === 2 ? before ^ ((delta >>> turn) | (delta << ((32 - turn) & 31))) : addHalves(before, delta);
       p0 = value & 255;
       p1 = (value >>> 8) & 255;
       p2 = (value >>> 16) & 255;
@@ -209,16 +209,14 @@ export function decodeMeshoptIndices(source: Uint8Array, count: number): Uint32A
   return cursor.at === end ? target : undefined;
 }
 
-/** Turns 24 bits of a number and 8 of a power of two into binary32, in place: filter "EXPONENTIAL". False where a power is beyond what is allowed. */
-export function applyExponentialFilter(bytes: Uint8Array<ArrayBuffer>): boolean {
+/** Turns 24 bits of a number and 8 of a power of two into binary32, in place: filter "EXPONENTIAL". */
+export function applyExponentialFilter(bytes: Uint8Array<ArrayBuffer>): void {
   const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
-  const power = new DataView(new ArrayBuffer(4));
+  const power = new DataView(new ArrayBuffer(8));
   for (let at = 0; at + 4 <= bytes.length; at += 4) {
     const stored = view.getInt32(at, true);
-    const exponent = stored >> 24;
-    if (exponent < -100 || exponent > 100) return false;
-    power.setInt32(0, (exponent + 127) << 23);
-    view.setFloat32(at, power.getFloat32(0) * ((stored << 8) >> 8), true);
+    // The exponent of a binary64 number with nothing else in it.
+    power.setInt32(0, ((stored >> 24) + 1023) << 20);
+    view.setFloat32(at, power.getFloat64(0) * ((stored << 8) >> 8), true);
   }
-  return true;
 }

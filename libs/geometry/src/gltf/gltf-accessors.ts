@@ -111,7 +111,7 @@ export function openPositions(accessor: JsonObject, views: GltfViews, sizeBytes:
     },
     placeOf(vertex) {
       const { elements, at } = find(vertex);
-      return elements?.start == null ? null : elements.start + elements.offset + elements.stride * at;
+      return elements === undefined || elements.start === null ? null : elements.start + elements.offset + elements.stride * at;
     },
   };
 }

@@ -107,8 +107,8 @@ function unpackMeshopt(packed: JsonObject, bytes: Uint8Array, count: number, str
   const filter = packed.text('filter') ?? 'NONE';
   if (mode === 'ATTRIBUTES') {
     const target = decodeMeshoptAttributes(bytes, count, stride);
-    if (filter === 'EXPONENTIAL') return target !== undefined && applyExponentialFilter(target) ? target : undefined;
-    if (filter === 'NONE') return target;
+    if (filter === 'EXPONENTIAL' && target !== undefined) applyExponentialFilter(target);
+    if (filter === 'EXPONENTIAL' || filter === 'NONE') return target;
     return packed.refuse('syntax-invalid', `In this glTF model, ${packed.name} packs positions as what they are not ("${filter.slice(0, 24)}"). Export it again.`, 'filter');
   }
   const indices = mode === 'TRIANGLES' ? decodeMeshoptTriangles(bytes, count) : mode === 'INDICES' ? decodeMeshoptIndices(bytes, count) : packed.refuse('syntax-invalid', `In this glTF model, ${packed.name} is packed in a way that is not read. Export it without packing.`, 'mode');

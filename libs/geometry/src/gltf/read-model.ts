@@ -24,8 +24,16 @@ export interface ReadGltf {
   facets: number;
 }
 
-interface Placement extends PlacedMesh {
+/** A mesh that was opened once, however often it is placed. */
+interface OpenedMesh {
   primitives: readonly GltfPrimitive[];
+  facets: number;
+  /** Its shape may be mixed with others. */
+  morphs: boolean;
+}
+
+interface Placement extends PlacedMesh {
+  opened: OpenedMesh;
 }
 
 /**
@@ -39,24 +47,34 @@ export function readGltfModel({ format, json, chunk, sizeBytes }: GltfSource, li
   const model = parseGltfJson(json.bytes, json.start);
   checkAsset(model);
   const views = createGltfViews(model, chunk, sizeBytes, limits);
-  const opened = new Map<number, GltfPrimitive[]>();
-  const placements = placeNodes(model, limits).map((placed): Placement => {
-    const primitives = opened.get(placed.mesh) ?? openPrimitives(model.item('meshes', placed.mesh), model, views, sizeBytes);
-    opened.set(placed.mesh, primitives);
-    return { ...placed, primitives };
-  });
-  const shown = placements.filter(({ primitives }) => primitives.length > 0);
-  checkMorphing(model, shown);
-  const facets = shown.reduce((sum, { primitives }) => primitives.reduce((more, primitive) => more + primitive.facets, sum), 0);
+  const meshes = new Map<number, OpenedMesh>();
+  const openMesh = (index: number): OpenedMesh => {
+    const known = meshes.get(index);
+    if (known !== undefined) return known;
+    const primitives = openPrimitives(model.item('meshes', index), model, views, sizeBytes);
+    const opened = { primitives, facets: primitives.reduce((sum, { facets }) => sum + facets, 0), morphs: primitives.some(({ owner }) => owner.count('targets') > 0) };
+    meshes.set(index, opened);
+    return opened;
+  };
+  const placements = placeNodes(model, limits)
+    .map((placed): Placement => ({ ...placed, opened: openMesh(placed.mesh) }))
+    .filter(({ opened }) => opened.facets > 0);
+  for (const placement of placements) checkMorphing(model, placement);
+  const facets = placements.reduce((sum, { opened }) => sum + opened.facets, 0);
   if (facets > limits.maximumFacets) throw tooManyFacets(limits.maximumFacets, format, { byte: json.start });
   checkPlacedFacets(facets, sizeBytes, format, limits);
 
   const writer = createFacetWriter(format, limits.maximumFacets, sink, () => ({ byte: json.start }));
-  for (const { primitives, affine } of shown) for (const primitive of primitives) writeFacets(primitive, affine, writer, `(${formatNames[format]})`);
+  for (const { opened, affine } of placements) for (const primitive of opened.primitives) writeFacets(primitive, affine, writer, `(${formatNames[format]})`);
   writer.finish();
-  const materials = new Set(shown.flatMap(({ primitives }) => primitives.map(({ material }) => material).filter((material) => material !== undefined)));
-  const names = [...materials].sort((one, two) => one - two).map((material) => model.item('materials', material).text('name') ?? '');
-  return { remarks: { ...noRemarks(), declaredUnit: 'm', declaredMaterials: listMaterialNames(names) }, facets: writer.count };
+  return { remarks: { ...noRemarks(), declaredUnit: 'm', declaredMaterials: listMaterials(model, [...meshes.values()]) }, facets: writer.count };
+}
+
+/** Names of the materials that meshes have, in the order in which the model lists them. */
+function listMaterials(model: JsonObject, meshes: readonly OpenedMesh[]): string[] {
+  const used = new Set(meshes.flatMap(({ primitives }) => primitives.map(({ material }) => material).filter((material) => material !== undefined)));
+  const ascending = [...used].sort((one, two) => one - two);
+  return listMaterialNames(ascending.map((material) => model.item('materials', material).text('name') ?? ''));
 }
 
 /** Extensions that say nothing about the shape of a body, and those that are read. */
@@ -73,23 +91,22 @@ function checkAsset(model: JsonObject): void {
 }
 
 /** Throws a MeshError where a mesh does not have its own shape but one that is mixed of it and others. */
-function checkMorphing(model: JsonObject, placements: readonly Placement[]): void {
-  for (const { node, mesh, primitives } of placements) {
-    if (!primitives.some(({ owner }) => owner.count('targets') > 0)) continue;
-    const owner = node.has('weights') ? node : model.item('meshes', mesh);
-    if (owner.numbers('weights', owner.count('weights'))?.some((weight) => weight !== 0) === true) {
-      owner.refuse('syntax-invalid', `In this glTF model, ${owner.name} has a shape mixed of several (morph targets), which is not read. Export the body as it stands.`, 'weights');
-    }
+function checkMorphing(model: JsonObject, { node, mesh, opened }: Placement): void {
+  if (!opened.morphs) return;
+  const owner = node.has('weights') ? node : model.item('meshes', mesh);
+  if (owner.numbers('weights', owner.count('weights'))?.some((weight) => weight !== 0) === true) {
+    owner.refuse('syntax-invalid', `In this glTF model, ${owner.name} has a shape mixed of several (morph targets), which is not read. Export the body as it stands.`, 'weights');
   }
 }
 
-function writeFacets({ positions, indices, facets, cornerOf, owner }: GltfPrimitive, affine: Affine, writer: FacetWriter, format: string): void {
+function writeFacets(primitive: GltfPrimitive, affine: Affine, writer: FacetWriter, format: string): void {
+  const { positions, indices, facets, owner } = primitive;
   const stored = new Float64Array(3);
   const placed = new Float64Array(9);
   const mirrors = findDeterminant(affine) < 0;
   for (let facet = 0; facet < facets; facet++) {
     for (const k of [0, 1, 2] as const) {
-      const corner = cornerOf(facet, k);
+      const corner = primitive.cornerOf(facet, k);
       const vertex = indices === undefined ? corner : indices.get(corner);
       if (vertex >= positions.count) {
         const message = `In this mesh ${format}, ${owner.name} has the corner ${spellCount(vertex)}, but its vertices are numbered from 0 to ${spellCount(positions.count - 1)}. Export it again.`;

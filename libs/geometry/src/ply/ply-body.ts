@@ -44,6 +44,7 @@ export function createPlyBody({ elements }: PlyHeader, mesh: PolygonMesh, refuse
   let inList = false;
 
   const current = (): PlyProperty | undefined => rows[element]?.properties[property];
+  const isList = (): boolean => typeof current()?.countType === 'string';
   const describe = (): string => `${rows[element]?.name.slice(0, 24) ?? ''} ${spellCount(row + 1)} of ${spellCount(rows[element]?.count ?? 0)}`;
 
   function take(value: number): void {
@@ -51,7 +52,7 @@ export function createPlyBody({ elements }: PlyHeader, mesh: PolygonMesh, refuse
     if (inList) {
       if (role === 'corners') mesh.addCorner(checkCorner(value));
       left -= 1;
-    } else if (current()?.countType != null) beginList(value, role);
+    } else if (isList()) beginList(value, role);
     else if (role !== 'none' && role !== 'corners') point[role] = checkCoordinate(value);
     inList = left > 0;
     if (!inList) endProperty();
