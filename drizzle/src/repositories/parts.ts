@@ -98,6 +98,8 @@ export function readSetting(row: SettingRow): Setting {
     weighing: weighedMassKg === null || weighedMassUncertaintyKg === null ? null : { massKg: weighedMassKg, uncertaintyKg: weighedMassUncertaintyKg },
     axis: axis.parse(row.axis),
     drive: speedRadPerS === null || timeS === null ? null : { speedRadPerS, timeS },
+    asMade: row.asMade,
+    shellDensities: row.shellDensities,
   };
 }
 
@@ -115,6 +117,8 @@ export function writeSetting(setting: Setting) {
     axis: setting.axis,
     driveSpeedRadPerS: drive?.speedRadPerS ?? null,
     driveTimeS: drive?.timeS ?? null,
+    asMade: setting.asMade ?? null,
+    shellDensities: setting.shellDensities ?? [],
   };
 }
 

@@ -14,7 +14,7 @@ import {
   uniqueIndex,
   uuid,
 } from 'drizzle-orm/pg-core';
-import type { Axis, FacetDoubt, Finding, MeasuringRun, Measurement, MeshCompression, MeshFormat, Openings, Setting, Shell } from '@masswright/contracts';
+import type { AsMade, Axis, FacetDoubt, Finding, MeasuringRun, Measurement, MeshCompression, MeshFormat, Openings, Setting, Shell, ShellDensity } from '@masswright/contracts';
 import { at, bytea, createdAt, ofOrganisation, primaryId } from './columns';
 import { organisations, users } from './people';
 
@@ -157,6 +157,8 @@ export const settings = pgTable(
     axis: jsonb('axis').$type<Axis>().notNull(),
     driveSpeedRadPerS: doublePrecision('drive_speed_rad_per_s'),
     driveTimeS: doublePrecision('drive_time_s'),
+    asMade: jsonb('as_made').$type<AsMade>(),
+    shellDensities: jsonb('shell_densities').$type<ShellDensity[]>().notNull().default([]),
     version: integer('version').notNull().default(1),
     changedAt: at('changed_at').notNull().defaultNow(),
     changedBy: uuid('changed_by').notNull().references(() => users.id),

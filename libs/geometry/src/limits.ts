@@ -5,6 +5,8 @@
 export interface ReadingLimits {
   /** Facets of the mesh; polygons count as the triangles that they are cut into. Refused as `too-many-facets`. */
   maximumFacets: number;
+  /** Meshes of more facets are measured as far as constant memory allows (`createIntegralsPass`), and not examined. */
+  maximumExaminedFacets: number;
   /** Vertices of a format that lists them apart from its facets. Refused as `too-many-vertices`. */
   maximumVertices: number;
   /** Corners of one polygon. Refused as `polygon-too-large`. */
@@ -34,8 +36,10 @@ export interface ReadingLimits {
 }
 
 export const defaultLimits: Readonly<ReadingLimits> = {
-  // 1 GB of binary STL; about 1 GB of memory while its edges are sorted.
-  maximumFacets: 20_000_000,
+  // 2.5 GB of binary STL.
+  maximumFacets: 50_000_000,
+  // 250 MB of binary STL; some 800 MB of memory while its edges are sorted.
+  maximumExaminedFacets: 4_000_000,
   // A closed mesh has half as many vertices as facets; seams may list one several times. 24 bytes each: 480 MB.
   maximumVertices: 20_000_000,
   // A flat face with a fine outline has thousands. Its corners are kept until it ends: 256 kB.

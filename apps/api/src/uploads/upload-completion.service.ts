@@ -22,6 +22,8 @@ const nothingStated: Setting = {
   weighing: null,
   axis: { kind: 'mesh', along: 'z' },
   drive: null,
+  asMade: null,
+  shellDensities: [],
 };
 
 interface Addition {
@@ -102,7 +104,8 @@ export class UploadCompletionService {
     await holdContinued(tx, upload, partId);
     const stored = await findPart(tx, partId);
     if (stored === undefined) throw notFound('part');
-    const before: Setting = { ...readSetting(stored.setting), weighing: null };
+    // The weighed mass was that of another part, and the shells were those of another mesh.
+    const before: Setting = { ...readSetting(stored.setting), weighing: null, shellDensities: [] };
     const asked = await this.state(tx, before, request);
     const density = before.densityKgM3 === null ? asked : before;
     const setting: Setting = {

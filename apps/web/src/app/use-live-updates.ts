@@ -5,7 +5,7 @@ import { startBrowserStream } from '../features/events/model/browser-stream';
 import { createCoalescer, type GatheredAction } from '../features/events/model/coalesce';
 import { materialsKey } from '../features/materials/api/materials';
 import { partKey, partsKey } from '../features/parts/api/keys';
-import { applyRun } from '../features/parts/api/run-events';
+import { applyRun, beginsExamination } from '../features/parts/api/run-events';
 import { peopleKey } from '../features/people/api/people';
 import { projectKey, projectsKey } from '../features/projects/api/projects';
 import { sessionKey } from '../features/session/api/session';
@@ -68,13 +68,16 @@ function createEventHandler(client: QueryClient, coalesce: (key: string, action:
       case 'materials':
         readAgain(...materialsKey);
         return;
-      case 'run':
+      case 'run': {
+        // Its figures stand as soon as the rest is examined, and are read then, and again at the end.
+        const isNews = event.state === 'done' || event.state === 'failed' || beginsExamination(client, event);
         applyRun(client, event);
         applyRunToUploads(event);
-        if (event.state === 'done' || event.state === 'failed') {
+        if (isNews) {
           readAgain(...partKey(event.partId));
           readAgain(...partsKey(event.projectId));
         }
+      }
     }
   };
 }

@@ -3,8 +3,8 @@ import { MessageChannel } from 'node:worker_threads';
 import { Injectable, type OnModuleDestroy } from '@nestjs/common';
 import { Piscina } from 'piscina';
 import { InjectWorkerSettings, storageOptions, type WorkerSettings } from '../platform/worker-settings';
-import type { HashingOutcome, MeasuringOutcome, MeasuringProgress } from './measure-object';
-import type { ThreadTask } from './measure-thread';
+import type { HashingOutcome, MeasuringOutcome } from './measure-object';
+import type { ThreadNews, ThreadTask } from './measure-thread';
 
 type StoredObject = Pick<ThreadTask, 'objectKey' | 'sizeBytes'>;
 
@@ -36,21 +36,21 @@ export class MeasuringThreads implements OnModuleDestroy {
   }
 
   /** Measures an object in a thread; the signal ends the thread wherever it is. @throws TookTooLongError */
-  async measure(object: StoredObject, onProgress: (progress: MeasuringProgress) => void, signal: AbortSignal): Promise<MeasuringOutcome> {
-    return (await this.run('measure', object, onProgress, signal)) as MeasuringOutcome;
+  async measure(object: StoredObject, onNews: (news: ThreadNews) => void, signal: AbortSignal): Promise<MeasuringOutcome> {
+    return (await this.run('measure', object, onNews, signal)) as MeasuringOutcome;
   }
 
   /** Finds out an object's hash in a thread. */
-  async hash(object: StoredObject, onProgress: (progress: MeasuringProgress) => void, signal: AbortSignal): Promise<HashingOutcome> {
-    return (await this.run('hash', object, onProgress, signal)) as HashingOutcome;
+  async hash(object: StoredObject, onNews: (news: ThreadNews) => void, signal: AbortSignal): Promise<HashingOutcome> {
+    return (await this.run('hash', object, onNews, signal)) as HashingOutcome;
   }
 
-  private async run(work: ThreadTask['work'], { objectKey, sizeBytes }: StoredObject, onProgress: (progress: MeasuringProgress) => void, signal: AbortSignal): Promise<unknown> {
+  private async run(work: ThreadTask['work'], { objectKey, sizeBytes }: StoredObject, onNews: (news: ThreadNews) => void, signal: AbortSignal): Promise<unknown> {
     const { port1: ours, port2: theirs } = new MessageChannel();
-    ours.on('message', onProgress);
+    ours.on('message', onNews);
     const limit = AbortSignal.timeout(Math.min(2_147_483_647, Math.ceil(this.settings.MEASURING_LIMIT_MS + sizeBytes / bytesPerMs)));
     try {
-      const task: ThreadTask = { work, objectKey, sizeBytes, progress: theirs };
+      const task: ThreadTask = { work, objectKey, sizeBytes, news: theirs };
       return await this.pool.run(task, { transferList: [theirs], signal: AbortSignal.any([signal, limit]) });
     } catch (error) {
       if (limit.aborted && !signal.aborted) throw new TookTooLongError('Measuring took longer than such a file may take.', { cause: error });

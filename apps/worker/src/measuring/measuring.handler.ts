@@ -12,6 +12,7 @@ import {
   recordAudit,
   refreshPartSummaries,
   setUploadHash,
+  showFigures,
   takeRun,
   type TakenRun,
   type Transaction,
@@ -21,7 +22,8 @@ import type { JobPayload } from '@masswright/jobs';
 import { summarisePart } from '@masswright/mechanics';
 import { HandedBackError, SupersededError, TryAgainError, PostponedError, type JobContext } from '../queue/job-handlers';
 import { LatestOnly } from './latest-only';
-import type { MeasuringOutcome, MeasuringProgress } from './measure-object';
+import { isReadTwice, type FirstFigures, type MeasuringOutcome, type MeasuringProgress } from './measure-object';
+import type { ThreadNews } from './measure-thread';
 import { MeasuringThreads, TookTooLongError } from './measuring-threads';
 
 /** A run taken up so often without an orderly end ends each time with the death of the process: then it is the file that kills it. */
@@ -41,12 +43,15 @@ const fileMissing: MeasuringError = {
   message: 'The stored file is gone from the storage. Add the file again; if it happens again, tell whoever runs this installation.',
   at: null,
 };
-/** Share of a run's time that reading takes, for the progress bar; what is left is finishing. */
+/** Shares of a run's time, for the progress bar: what is left is finishing. A file that is examined apart is read twice. */
 const readingShare = 0.8;
+const firstReadingShare = 0.4;
+const examiningShare = 0.9;
 /** So long a run waits before it looks again whether the same bytes are measured by now. */
 const waitForSameBytesMs = 400;
 
-type Held = TakenRun & { organisationId: string };
+/** `figures`: what stands already of a file that is examined yet. */
+type Held = TakenRun & { organisationId: string; figures?: FirstFigures };
 
 /** Measures a revision's file: takes the run up, has a thread stream the object, and keeps what came of it. */
 @Injectable()
@@ -70,7 +75,7 @@ export class MeasuringHandler {
       // Whoever took the run up after us does the rest, and says so when it is done.
       if (error instanceof SupersededError) throw error;
       if (error instanceof TookTooLongError) {
-        await this.refuse(run, null, tookTooLong, context);
+        await (run.figures ? this.keep(run, withoutExamination(run.figures), context) : this.refuse(run, null, tookTooLong, context));
         return;
       }
       await this.inOrganisation(run, (tx) => handBackRun(tx, run)).catch(() => undefined);
@@ -94,7 +99,7 @@ export class MeasuringHandler {
   private async isSettledByHash(run: Held, context: JobContext): Promise<boolean> {
     let { sha256 } = run;
     if (sha256 === null) {
-      const outcome = await this.inThread(run, (onProgress) => this.threads.hash(run, onProgress, context.signal));
+      const outcome = await this.inThread(run, context, (onNews) => this.threads.hash(run, onNews, context.signal));
       if (outcome.kind === 'interrupted') {
         await this.settle(run, outcome, context);
         return true;
@@ -115,17 +120,37 @@ export class MeasuringHandler {
     });
   }
 
-  private measure(run: Held, { signal }: JobContext): Promise<MeasuringOutcome> {
-    return this.inThread(run, (onProgress) => this.threads.measure(run, onProgress, signal));
+  private measure(run: Held, context: JobContext): Promise<MeasuringOutcome> {
+    return this.inThread(run, context, (onNews) => this.threads.measure(run, onNews, context.signal));
   }
 
-  private async inThread<Outcome>(run: Held, work: (onProgress: (progress: MeasuringProgress) => void) => Promise<Outcome>): Promise<Outcome> {
+  private async inThread<Outcome>(run: Held, context: JobContext, work: (onNews: (news: ThreadNews) => void) => Promise<Outcome>): Promise<Outcome> {
     const notes = new LatestOnly((progress: MeasuringProgress) => this.note(run, progress));
+    let figures = Promise.resolve();
     try {
-      return await work((progress) => notes.push(progress));
+      return await work((news) => {
+        if (news.kind === 'progress') notes.push(news.progress);
+        // Whoever took the run up meanwhile has figures of its own; any other failure is that of the end, which is yet to come.
+        else figures = this.show(run, news.figures, context).catch(() => undefined);
+      });
     } finally {
+      await figures;
       await notes.settle();
     }
+  }
+
+  /** Lets people see the figures while the rest is examined. */
+  private async show(run: Held, figures: FirstFigures, { requestId }: JobContext): Promise<void> {
+    const sha256 = Buffer.from(figures.sha256);
+    await this.inOrganisation(run, async (tx) => {
+      await setUploadHash(tx, run.uploadId, sha256);
+      const measurementId = await keepMeasurement(tx, { organisationId: run.organisationId, sha256, measurement: figures.measurement });
+      if (!(await showFigures(tx, run, measurementId))) throw new SupersededError();
+      await refreshPartSummaries(tx, run.organisationId, [run.partId], summarisePart);
+      await this.audit(tx, run, requestId, 'measurement.show', { measurementId });
+      await this.announce(tx, run, { state: 'running', stage: 'examining', progress: firstReadingShare });
+    });
+    run.figures = figures;
   }
 
   private async note(run: Held, { stage: noted, bytesRead }: MeasuringProgress): Promise<void> {
@@ -140,8 +165,10 @@ export class MeasuringHandler {
   private computeProgress(run: Held, stage: MeasuringProgress['stage'], bytesRead: number): number {
     const share = bytesRead / Math.max(1, run.sizeBytes);
     const hashingShare = run.hashFirst ? 0.3 : 0;
+    const read = isReadTwice(run) ? firstReadingShare : readingShare;
     if (stage === 'hashing') return hashingShare * share;
-    return stage === 'reading' ? hashingShare + (readingShare - hashingShare) * share : readingShare;
+    if (stage === 'examining') return read + (examiningShare - read) * share;
+    return stage === 'reading' ? hashingShare + (read - hashingShare) * share : read;
   }
 
   private async settle(run: Held, outcome: MeasuringOutcome, context: JobContext): Promise<void> {
@@ -158,7 +185,7 @@ export class MeasuringHandler {
     }
   }
 
-  private async keep(run: Held, { sha256, measurement }: Extract<MeasuringOutcome, { kind: 'measured' }>, { requestId }: JobContext): Promise<void> {
+  private async keep(run: Held, { sha256, measurement }: FirstFigures, { requestId }: JobContext): Promise<void> {
     const hash = Buffer.from(sha256);
     await this.inOrganisation(run, async (tx) => {
       await setUploadHash(tx, run.uploadId, hash);
@@ -197,4 +224,9 @@ export class MeasuringHandler {
     const { organisationId, projectId, partId } = run;
     return publishEvent(tx, { organisationId, event: { type: 'run', projectId, partId, ...state } });
   }
+}
+
+/** What is kept of a file whose examination took too long: the figures stand. */
+function withoutExamination({ sha256, measurement }: FirstFigures): FirstFigures {
+  return { sha256, measurement: { ...measurement, examined: 'limited' } };
 }

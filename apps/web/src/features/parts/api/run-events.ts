@@ -18,3 +18,13 @@ export function applyRun(client: QueryClient, event: RunEvent): void {
       : list,
   );
 }
+
+/** Whether an event is the first of a part's examination that this page hears of. */
+export function beginsExamination(client: QueryClient, event: RunEvent): boolean {
+  if (event.stage !== 'examining' || event.state !== 'running') return false;
+  const isKnown = (run: MeasuringRun): boolean => run.state === 'running' && run.stage === 'examining';
+  const part = client.getQueryData<Part>(partKey(event.partId));
+  if (part !== undefined) return !isKnown(part.revision.run);
+  const lists = client.getQueriesData<PartList>({ queryKey: partsKey(event.projectId) });
+  return lists.some(([, list]) => list?.items.some((row) => row.id === event.partId && !isKnown(row.revision.run)));
+}
