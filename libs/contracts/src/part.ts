@@ -79,7 +79,7 @@ export const partRow = z.object({
   revision: revisionHead,
   /** Null until the file is measured. */
   soundness: z
-    .object({ defensible: z.boolean(), closed: z.boolean(), oriented: z.boolean(), turned: z.boolean() })
+    .object({ defensible: z.boolean(), closed: z.boolean().nullable(), oriented: z.boolean(), turned: z.boolean() })
     .nullable(),
   /** Null where the unit is not stated or the file is not measured. */
   sizeM: vector3.nullable(),
