@@ -1,13 +1,14 @@
 import { readdirSync, readFileSync, statSync } from 'node:fs';
 import { createRequire } from 'node:module';
 import path from 'node:path';
-import { OBJLoader } from 'three-stdlib';
+import { OBJLoader, PLYLoader } from 'three-stdlib';
 import { describe, expect, it } from 'vitest';
 import { measureMesh } from './measurer';
 import { MeshError } from './mesh-error';
 import { createMeshReader } from './mesh-reader';
 import { compareExactly } from './testing/compare-exactly';
 import { oddities, soundAndBroken } from './testing/public-models';
+import { scenes } from './testing/public-scenes';
 import type { Corners } from './testing/shapes';
 
 /** What a file gives: facets, volume (null where not defensible) and findings, or the code of its refusal. */
@@ -50,15 +51,15 @@ describe('the files of a public collection of oddities', () => {
   const folder = '/usr/share/assimp/models';
 
   it('stand in the table, every one', () => {
-    const found = listFiles(folder, (name) => /^(STL|OBJ|invalid)\//.test(name) || /\.(stl|obj)$/i.test(name));
-    expect(found.sort()).toEqual(oddities.map(([file]) => file).sort());
+    const found = listFiles(folder, (name) => /^(STL|OBJ|PLY|OFF|3MF|glTF2?|invalid)\//.test(name) || /\.(stl|obj)$/i.test(name));
+    expect(found.sort()).toEqual([...oddities, ...scenes].map(([file]) => file).sort());
   });
 
-  it.each(oddities)('%s: %s', (file, outcome) => {
+  it.each([...oddities, ...scenes])('%s: %s', (file, outcome) => {
     expect(measureFile(path.join(folder, file))).toBe(outcome);
   });
 
-  it.each(oddities.filter(([, outcome]) => outcome.includes('volume')))('%s: the figures are those of exact arithmetic', (file) => {
+  it.each([...oddities, ...scenes].filter(([, outcome]) => outcome.includes('volume')))('%s: the figures are those of exact arithmetic', (file) => {
     const name = path.join(folder, file);
     const errors = compareExactly(measureMesh(readFileSync(name)), readCorners(name));
     expect(Math.max(errors.volume, errors.centre, errors.second)).toBeLessThan(1e-13);
@@ -72,6 +73,18 @@ describe('the files of a public collection of oddities', () => {
     const scene: unknown = new OBJLoader().parse(text);
     // It keeps binary32, and no sign of zero.
     expect(Float32Array.from(readCorners(name), (coordinate) => coordinate + 0)).toEqual(Float32Array.from(findPositions(scene as Branch), (coordinate) => coordinate + 0));
+  });
+
+  // Quadrilaterals are cut along their other diagonal there.
+  const quadrilateral = ['PLY/cube.ply', 'PLY/cube_uv.ply'];
+  it.each(scenes.filter(([file, outcome]) => outcome.startsWith('ply') && !quadrilateral.includes(file)))('%s: its facets are those of another reader (three-stdlib), in the same order', (file) => {
+    const name = path.join(folder, file);
+    const bytes = Uint8Array.from(readFileSync(name));
+    const geometry: unknown = new PLYLoader().parse(bytes.buffer);
+    const { attributes, index } = geometry as { attributes: { position: { array: ArrayLike<number> } }; index: { array: ArrayLike<number> } };
+    const positions = attributes.position.array;
+    const expected = Array.from(index.array).flatMap((vertex) => [0, 1, 2].map((k) => (positions[3 * vertex + k] ?? NaN) + 0));
+    expect(Float32Array.from(readCorners(name), (coordinate) => coordinate + 0)).toEqual(Float32Array.from(expected));
   });
 
   it.each(differing.slice(1))('%s: its one polygon is cut into triangles that cover it once', (file) => {
