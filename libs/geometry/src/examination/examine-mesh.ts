@@ -1,4 +1,4 @@
-import type { BoundingBox } from '../bounding-box';
+import { findDiagonal, type BoundingBox } from '../bounding-box';
 import { integrateBody, turnIntegrals, type BodyIntegrals } from '../integrate-body';
 import type { FindingKind, Integrals, Openings, Shell, Soundness, Vector3 } from '../measurement';
 import type { WeldedMesh } from '../weld-corners';
@@ -53,14 +53,14 @@ export function examineMesh(mesh: WeldedMesh, context: ExaminationContext): Exam
   const notes = createNotes(mesh);
   for (const [kind, occurrence] of Object.entries(remarks) as [FindingKind, Occurrence][]) notes.addOccurrence(kind, occurrence);
   const { min, max } = boundingBox;
-  const diagonal = Math.sqrt((max[0] - min[0]) * (max[0] - min[0]) + (max[1] - min[1]) * (max[1] - min[1]) + (max[2] - min[2]) * (max[2] - min[2]));
+  const diagonal = findDiagonal(boundingBox);
   const middle: Vector3 = [min[0] + (max[0] - min[0]) / 2, min[1] + (max[1] - min[1]) / 2, min[2] + (max[2] - min[2]) / 2];
 
   let table = createEdgeTable(mesh);
   let unusual = findUnusualEdges(mesh, table);
   checkEdges(notes, table, unusual);
   checkVertices(notes, table);
-  checkDuplicates(notes, table);
+  const duplicates = checkDuplicates(notes, table);
   const flipped = checkOrientation(notes, table);
   const closed = notes.count('boundary-edges') === 0;
   const oriented = closed && notes.count('unbalanced-edges') === 0;
@@ -77,7 +77,7 @@ export function examineMesh(mesh: WeldedMesh, context: ExaminationContext): Exam
   const encloses = oriented || mended !== undefined;
   const isWholeNegative = encloses && body.volumeSign < 0;
   const shells = findShells(work, table, unusual, mended?.joined);
-  const found = examineShells(notes, work, shells, { fileFacets: mesh.facetCount, diagonal, isWholeNegative, flipped, maximumIntersectionFacets });
+  const found = examineShells(notes, work, shells, { fileFacets: mesh.facetCount, diagonal, isWholeNegative, flipped, duplicates, maximumIntersectionFacets });
   const read = readBody(notes, mesh, mended, body, found, origin, diagonal);
   if (encloses && read.volumeSign === 0) notes.add('no-volume');
 
@@ -92,9 +92,12 @@ export function examineMesh(mesh: WeldedMesh, context: ExaminationContext): Exam
     selfIntersections: found.selfIntersections,
     defensible: encloses && read.volumeSign !== 0 && notes.count('overlapping-shells') === 0,
   });
+  const integrateShell = (facets: Uint32Array): Pick<BodyIntegrals, 'volume' | 'surface'> =>
+    // A body of one shell was integrated already.
+    closed && facets.length === mesh.facetCount ? { volume: read.volume, surface: body.surface } : integrateBody(work, origin, diagonal, { facets, turned: found.turned });
   return {
     soundness,
-    shells: listShells(work, mesh.facetCount, found.judged, kinds, found.turned, origin, diagonal),
+    shells: listShells(mesh.facetCount, found.judged, kinds, integrateShell),
     openings: open?.openings ?? null,
     volume: soundness.defensible ? read.volume : null,
     turned: found.turned?.slice(0, mesh.facetCount) ?? null,

@@ -23,6 +23,8 @@ export interface ShellContext {
   isWholeNegative: boolean;
   /** Facets that are turned against their neighbours. */
   flipped: Uint8Array | undefined;
+  /** Groups of facets with the same corners. */
+  duplicates: readonly (readonly number[])[];
   maximumIntersectionFacets: number;
 }
 
@@ -31,14 +33,14 @@ export function examineShells(notes: Notes, mesh: WeldedMesh, shells: ShellTable
   const { fileFacets, maximumIntersectionFacets } = context;
   const figures = findShellFigures(mesh, shells, context.diagonal);
   const closePairs = shells.count > 1 ? findClosePairs(figures.boxes) : [];
-  const needsTree = shells.count > 0 && (fileFacets <= maximumIntersectionFacets || closePairs === undefined || closePairs.length > 0);
+  const needsTree = shells.count > 0 && (fileFacets <= maximumIntersectionFacets || context.duplicates.length > 0 || closePairs === undefined || closePairs.length > 0);
   const tree = needsTree ? createFacetTree(mesh, listShellFacets(shells)) : undefined;
   const asked = closePairs === undefined ? Array.from({ length: shells.count }, (_, shell) => shell) : listInner(figures.boxes, closePairs);
   const containers = tree === undefined ? [] : findContainers(mesh, tree, shells, figures, asked.filter((shell) => shells.open[shell] === 0));
   const reading = readShells(shells, figures, containers, context.isWholeNegative);
   const turned = spreadTurns(shells, reading.turned);
   const flips = combine(turned, context.flipped);
-  const overlaps = tree && findOverlaps({ mesh, fileFacets, tree, shells, figures, flips, closePairs, maximumIntersectionFacets });
+  const overlaps = tree && findOverlaps({ mesh, fileFacets, tree, shells, figures, flips, duplicates: context.duplicates, closePairs, maximumIntersectionFacets });
   const overlapping = new Set([...(overlaps?.shells ?? []), ...reading.misplaced]);
   noteShells(notes, shells, reading.turned, overlapping, reading.misplaced);
   overlaps?.meetings.note(notes, 'overlapping-shells');

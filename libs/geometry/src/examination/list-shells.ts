@@ -1,6 +1,5 @@
-import { integrateBody } from '../integrate-body';
+import type { BodyIntegrals } from '../integrate-body';
 import { listedShells, type Shell, type ShellKind, type Vector3 } from '../measurement';
-import type { WeldedMesh } from '../weld-corners';
 import { findParent, type ShellReading } from './judge-shells';
 import type { ShellFigures } from './shell-figures';
 import { facetsOfShell, type ShellTable } from './shells';
@@ -30,10 +29,10 @@ export function findKinds({ shells, figures, reading, overlapping }: JudgedShell
 /**
  * The shells in the order of the file, with their own integrals; the largest of them where there are too many to be listed.
  *
- * @param mesh with the facets that close it, if there are any, from `fileFacets` on
- * @param turned facets of that mesh that are read the other way round
+ * @param fileFacets facets from here on were added to close the mesh
+ * @param integrate over some facets, as they are read
  */
-export function listShells(mesh: WeldedMesh, fileFacets: number, judged: JudgedShells, kinds: readonly ShellKind[], turned: Uint8Array | undefined, origin: Vector3, diagonal: number): Shell[] {
+export function listShells(fileFacets: number, judged: JudgedShells, kinds: readonly ShellKind[], integrate: (facets: Uint32Array) => Pick<BodyIntegrals, 'volume' | 'surface'>): Shell[] {
   const { shells, figures, containers, reading } = judged;
   const listed = chooseListed(shells, figures);
   const placeOf = new Map(listed.map((shell, place) => [shell, place]));
@@ -41,8 +40,8 @@ export function listShells(mesh: WeldedMesh, fileFacets: number, judged: JudgedS
     const all = facetsOfShell(shells, shell);
     const facets = all.filter((facet) => facet < fileFacets);
     const kind = kinds[shell] ?? 'open';
-    const own = integrateBody(mesh, origin, diagonal, { facets, turned });
-    const body = facets.length === all.length || kind === 'open' ? own : integrateBody(mesh, origin, diagonal, { facets: all, turned });
+    const own = integrate(facets);
+    const body = facets.length === all.length || kind === 'open' ? own : integrate(all);
     const parent = findParent(figures, containers[shell] ?? []);
     const box = Array.from(figures.boxes.subarray(6 * shell, 6 * shell + 6), (bound) => bound + 0);
     return {

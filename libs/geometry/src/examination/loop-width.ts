@@ -34,7 +34,9 @@ export function findSeamWidth(mesh: WeldedMesh, one: readonly number[], two: rea
     distance = found;
     nearest = k;
   }
-  return Math.max(distance, zip(points.length, (k) => at(points, k), others.length, (k) => at(others, nearest + k), points.length + others.length, most));
+  // The second loop begins where it is nearest to the beginning of the first, within one of its edges as a rule.
+  const around = [nearestOnSegment(begin, at(others, nearest), at(others, nearest + 1)), ...others.slice(nearest + 1), ...others.slice(0, nearest + 1)];
+  return Math.max(distance, zip(points.length, (k) => at(points, k), around.length, (k) => at(around, k), points.length + around.length, most));
 }
 
 const at = (points: readonly Vector3[], k: number): Vector3 => points[k % points.length] ?? [0, 0, 0];
@@ -70,10 +72,14 @@ function findEnds(points: readonly Vector3[]): Set<number> {
 const subtract = (p: Vector3, q: Vector3): Vector3 => [p[0] - q[0], p[1] - q[1], p[2] - q[2]];
 const dot = (p: Vector3, q: Vector3): number => p[0] * q[0] + p[1] * q[1] + p[2] * q[2];
 
-export function distanceToSegment(point: Vector3, from: Vector3, to: Vector3): number {
-  const edge = subtract(to, from), reach = subtract(point, from);
+function nearestOnSegment(point: Vector3, from: Vector3, to: Vector3): Vector3 {
+  const edge = subtract(to, from);
   const square = dot(edge, edge);
-  const share = square > 0 ? Math.min(1, Math.max(0, dot(reach, edge) / square)) : 0;
-  const rest: Vector3 = [reach[0] - share * edge[0], reach[1] - share * edge[1], reach[2] - share * edge[2]];
+  const share = square > 0 ? Math.min(1, Math.max(0, dot(subtract(point, from), edge) / square)) : 0;
+  return [from[0] + share * edge[0], from[1] + share * edge[1], from[2] + share * edge[2]];
+}
+
+function distanceToSegment(point: Vector3, from: Vector3, to: Vector3): number {
+  const rest = subtract(point, nearestOnSegment(point, from, to));
   return Math.sqrt(dot(rest, rest));
 }

@@ -25,6 +25,8 @@ export interface OverlapSearch {
   figures: ShellFigures;
   /** Facets that are read the other way round. */
   flips: Uint8Array | undefined;
+  /** Groups of facets with the same corners. */
+  duplicates: readonly (readonly number[])[];
   /** Pairs of shells whose boxes meet; undefined where there are too many. */
   closePairs: readonly (readonly [number, number])[] | undefined;
   maximumIntersectionFacets: number;
@@ -50,6 +52,7 @@ export function findOverlaps(search: OverlapSearch): Overlaps {
     if (common.length > 0) visitMeetings(mesh, createFacetTree(mesh, common), flips, wanted, visit);
   }
   settleContacts(search, overlaps, contacts);
+  noteDoubled(search, overlaps);
   return overlaps;
 }
 
@@ -60,8 +63,9 @@ type Contacts = Map<number, { shell: number; other: number; facets: Map<number, 
 const mostContacts = 2000;
 
 function noteMeeting({ mesh, shells, figures }: OverlapSearch, overlaps: Overlaps, contacts: Contacts, { one, two, relation }: Meeting): void {
+  if (haveSameCorners(mesh, one, two)) return;
   const passes = relation === 'crossing' || relation === 'upon';
-  if (passes && !haveSameCorners(mesh, one, two)) overlaps.selfIntersections?.add(one, two);
+  if (passes) overlaps.selfIntersections?.add(one, two);
   const a = shells.shellOf[one] ?? noShell, b = shells.shellOf[two] ?? noShell;
   if (a === b || !encloses(shells, figures, a) || !encloses(shells, figures, b)) return;
   if (passes) {
@@ -79,6 +83,33 @@ function noteMeeting({ mesh, shells, figures }: OverlapSearch, overlaps: Overlap
 }
 
 const encloses = ({ open }: ShellTable, { signs }: ShellFigures, shell: number): boolean => shell !== noShell && open[shell] === 0 && signs[shell] !== 0;
+
+/**
+ * Two facets with the same corners that face the same way count the space behind them twice, whether they belong to two shells or to one: bodies of which one is
+ * inside out may share faces so that nothing tells them apart.
+ */
+function noteDoubled({ mesh, shells, figures, flips, duplicates }: OverlapSearch, overlaps: Overlaps): void {
+  for (const group of duplicates) {
+    const first: [number | undefined, number | undefined] = [undefined, undefined];
+    for (const facet of group) {
+      const shell = shells.shellOf[facet] ?? noShell;
+      if (!encloses(shells, figures, shell)) continue;
+      const facing = findFacing(mesh, facet) ^ (flips?.[facet] ?? 0) ? 1 : 0;
+      const other = first[facing];
+      first[facing] ??= facet;
+      if (other === undefined) continue;
+      overlaps.shells.add(shell).add(shells.shellOf[other] ?? shell);
+      overlaps.meetings.add(other, facet);
+    }
+  }
+}
+
+/** 1 where the greatest corner of a facet follows its least one, else 0. */
+function findFacing({ corners }: WeldedMesh, facet: number): number {
+  const [a, b, c] = [corners[3 * facet] ?? 0, corners[3 * facet + 1] ?? 0, corners[3 * facet + 2] ?? 0];
+  const least = Math.min(a, b, c), greatest = Math.max(a, b, c);
+  return (a === least ? b : b === least ? c : a) === greatest ? 1 : 0;
+}
 
 /**
  * Surfaces may pass through each other along their edges alone, so that no facet passes through another. Then some of the facets that touch lie within the

@@ -41,7 +41,7 @@ function findSideExactly(points: Points, a: number, b: number, c: number, d: num
     const corner = corners[Math.floor(k / 3)] ?? 0;
     counts[k] = writeDifference(points[3 * corner + (k % 3)] ?? 0, points[3 * d + (k % 3)] ?? 0, differences[k] ?? spare);
   }
-  return -signOfDeterminant();
+  return 0 - signOfDeterminant();
 }
 
 /** The sign of the determinant whose rows are `differences`. */
@@ -74,7 +74,7 @@ export function findSideOfInside(points: Points, a: number, b: number, c: number
     const corner = corners[Math.floor(k / 3)] ?? 0;
     counts[k] = writeInsideDifference(points, corner, inside, k % 3, differences[k] ?? spare);
   }
-  return -signOfDeterminant();
+  return 0 - signOfDeterminant();
 }
 
 /** out = coordinate of a corner less that of the point inside a facet. */

@@ -5,8 +5,11 @@ import { keptPlaces, type Notes } from './notes';
 import { relateFacets, type FacetRelation } from './relate-facets';
 import { visitClosePairs } from './search-tree';
 
-/** Pairs of facets whose boxes meet that are looked at before a mesh is given up as too entangled: half a minute's work. A sound mesh has some ten a facet. */
-export const mostClosePairs = 60_000_000;
+/**
+ * Pairs of facets whose boxes meet that are looked at before a mesh is given up as too entangled: some seconds' work. A sound mesh has some ten a facet; all facets
+ * about one corner meet, so that a fan of 7,000 is given up, too.
+ */
+export const mostClosePairs = 30_000_000;
 
 export interface Meeting {
   one: number;
