@@ -47,6 +47,21 @@ export const weighing = z.object({
 export type Weighing = z.infer<typeof weighing>;
 
 /**
+ * How far the part as made may differ from the part as drawn, every value up to that as likely as any other.
+ * scale: all lengths longer or shorter by this share of themselves, about the centroid (shrinkage). offset: the surface further out or in by this length along
+ * its normal (machining, coating, layers of a print).
+ */
+export const asMade = z.discriminatedUnion('kind', [
+  z.object({ kind: z.literal('scale'), spread: z.number().min(0, 'A spread is not negative.').max(0.5, 'A spread of scale is at most 50 %.') }),
+  z.object({ kind: z.literal('offset'), spreadM: z.number().min(0, 'A spread is not negative.').max(1, 'An offset is at most a metre.') }),
+]);
+export type AsMade = z.infer<typeof asMade>;
+
+/** A shell, by its place in the measurement's list, with a density of its own; left out where that is null. */
+export const shellDensity = z.object({ shell: z.number().int().nonnegative().max(199), densityKgM3: densityKgM3.nullable() });
+export type ShellDensity = z.infer<typeof shellDensity>;
+
+/**
  * What turns a measurement into a statement. Null means: not stated yet, and no figure that needs it is given.
  * `densityKgM3` is the one that was typed, or the named material's at the time when it was chosen; a weighing may set another
  * (`resolveDensity` of mechanics), and never outlives its revision.
@@ -59,6 +74,10 @@ export const setting = z.object({
   weighing: weighing.nullable(),
   axis,
   drive: drive.nullable(),
+  /** Null, or left out as in what was stored before there was one: nothing is said of how the part is made. */
+  asMade: asMade.nullable().optional(),
+  /** Shells that are not of the part's density. Left out, as in what was stored before there were any: none. */
+  shellDensities: z.array(shellDensity).max(200).optional(),
 });
 export type Setting = z.infer<typeof setting>;
 
@@ -79,5 +98,7 @@ export const settingChange = densityChoice.extend({
   weighing: weighing.nullable().optional(),
   axis: axis.optional(),
   drive: drive.nullable().optional(),
+  asMade: asMade.nullable().optional(),
+  shellDensities: z.array(shellDensity).max(200).optional(),
 });
 export type SettingChange = z.infer<typeof settingChange>;

@@ -11,3 +11,7 @@ export * from './principal-axes';
 export * from './resolve-density';
 export * from './tensor';
 export * from './unit-doubt';
+export * from './shell-bodies';
+export * from './uncertainty/compute-uncertainty';
+export * from './uncertainty/round-by-uncertainty';
+export * from './weigh-measurement';

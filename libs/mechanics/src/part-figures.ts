@@ -1,5 +1,5 @@
-import type { Measurement, MeasuringRun, PartRow, PartState, Setting, StatementRecord, StoredSetting, UnitDoubt } from '@masswright/contracts';
-import { computeStatement } from './compute-statement';
+import type { Measurement, MeasuringRun, PartRow, PartState, Setting, StoredSetting, UnitDoubt } from '@masswright/contracts';
+import { computeFigures, type MeasuredFigures } from './compute-figures';
 import { findUnitDoubt } from './unit-doubt';
 
 /** What a row of a list says of a part in figures; all null while the unit is not stated or the file not measured. */
@@ -25,11 +25,11 @@ const noFigures: PartFigures = { sizeM: null, volumeM3: null, massKg: null, bala
 
 /** Summarises a part for a list: its state, its figures, and whether its unit is in doubt. The same function for browser, server and worker. */
 export function summarisePart({ run, setting, measurement, before }: PartSource): PartSummary {
-  const record = measurement === null ? undefined : computeStatement(measurement, setting, { file: '', sha256: '' });
+  const figures = measurement === null || setting.lengthUnit === null ? undefined : computeFigures(measurement, setting, setting.lengthUnit);
   const unitDoubt = computeUnitDoubt(setting, measurement, before);
   return {
-    state: chooseState(run, setting, measurement, record, unitDoubt),
-    figures: record === undefined ? noFigures : computeFigures(record),
+    state: chooseState(run, setting, measurement, figures, unitDoubt),
+    figures: figures === undefined ? noFigures : presentFigures(figures),
     unitDoubt,
   };
 }
@@ -42,28 +42,26 @@ function computeUnitDoubt(setting: PartSource['setting'], measurement: Measureme
   return findUnitDoubt({ volume: now.content, lengthUnit: setting.lengthUnit }, { volume: then.content, lengthUnit: before.lengthUnit }) ?? null;
 }
 
-function chooseState(run: PartSource['run'], setting: Setting, measurement: Measurement | null, record: StatementRecord | undefined, unitDoubt: UnitDoubt | null): PartState {
+function chooseState(run: PartSource['run'], setting: Setting, measurement: Measurement | null, figures: MeasuredFigures | undefined, unitDoubt: UnitDoubt | null): PartState {
   if (run.state === 'failed') return 'failed';
   if (run.state !== 'done' || measurement === null) return 'measuring';
   if (!measurement.soundness.defensible) return 'not-defensible';
-  if (setting.lengthUnit === null || record === undefined) return 'unit-missing';
+  if (setting.lengthUnit === null || figures === undefined) return 'unit-missing';
   if (unitDoubt !== null) return 'unit-doubt';
-  if (record.densityKgM3 === null) return 'density-missing';
-  return record.weighing?.verdict === 'disagrees' ? 'weight-disagrees' : 'ready';
+  if (figures.body === null) return 'density-missing';
+  return figures.weighing?.verdict === 'disagrees' ? 'weight-disagrees' : 'ready';
 }
 
-function computeFigures(record: StatementRecord): PartFigures {
-  const { min, max } = record.boundingBoxM;
-  const centre = record.centreOfMassM;
+function presentFigures({ boundingBoxM: { min, max }, centreOfMassM: centre, volumeM3, body, principal }: MeasuredFigures): PartFigures {
   const share = (k: 0 | 1 | 2): number => {
     const span = max[k] - min[k];
     return centre === null || !(span > 0) ? 0.5 : (centre[k] - min[k]) / span;
   };
   return {
     sizeM: [max[0] - min[0], max[1] - min[1], max[2] - min[2]],
-    volumeM3: record.volumeM3,
-    massKg: record.massKg,
+    volumeM3,
+    massKg: body?.massKg ?? null,
     balance: centre === null ? null : [share(0), share(1), share(2)],
-    principalMomentsKgM2: record.principalMomentsKgM2,
+    principalMomentsKgM2: principal?.moments ?? null,
   };
 }

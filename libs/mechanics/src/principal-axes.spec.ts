@@ -88,6 +88,7 @@ describe('principal moments and axes', () => {
 });
 
 describe('which axes are unique', () => {
+  const tolerance = { lowerKgM2: 3e-6, upperKgM2: 3e-6 };
   it.each([
     [[1, 2, 3], 'distinct'],
     [[2, 2, 3], 'disc-like'],
@@ -99,10 +100,11 @@ describe('which axes are unique', () => {
     [[0, 0, 0], 'ball'],
     [[0, 1, 1], 'rod-like'],
   ] as [Vector3, string][])('%j is %s', (moments, kind) => {
-    expect(classifyAxes(moments)).toBe(kind);
+    expect(classifyAxes(moments, tolerance)).toBe(kind);
   });
-  it('the resolution is the caller\'s to choose', () => {
-    expect(classifyAxes([2, 2.01, 3], 0.01)).toBe('disc-like');
-    expect(classifyAxes([2, 2 + 2e-7, 3], 1e-9)).toBe('distinct');
+  it('each pair is held against the uncertainty of its own difference', () => {
+    expect(classifyAxes([2, 2.01, 2.02], { lowerKgM2: 0.02, upperKgM2: 0 })).toBe('disc-like');
+    expect(classifyAxes([2, 2.01, 2.02], { lowerKgM2: 0, upperKgM2: 0.02 })).toBe('rod-like');
+    expect(classifyAxes([2, 2.01, 2.02], { lowerKgM2: 0.02, upperKgM2: 0.02 })).toBe('ball');
   });
 });

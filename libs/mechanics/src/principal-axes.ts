@@ -88,18 +88,11 @@ function findPowerOfTwo(size: number): number {
 }
 
 /**
- * Float32 coordinates carry 2⁻²⁴ of their size, and a moment a few times that: moments nearer than this share of the largest
- * cannot be told apart in a binary STL file.
+ * Which axes are unique: where two moments differ by no more than their difference is uncertain (kg·m²), any axis in their plane serves as well.
  */
-export const momentResolution = 1e-6;
-
-/**
- * Which axes are unique: where two moments differ by no more than `resolution` times the largest, any axis in their plane serves as well.
- */
-export function classifyAxes([first, second, third]: Vector3, resolution = momentResolution): AxesKind {
-  const tolerance = resolution * third;
-  const lowerEqual = second - first <= tolerance;
-  const upperEqual = third - second <= tolerance;
+export function classifyAxes([first, second, third]: Vector3, { lowerKgM2, upperKgM2 }: { lowerKgM2: number; upperKgM2: number }): AxesKind {
+  const lowerEqual = second - first <= lowerKgM2;
+  const upperEqual = third - second <= upperKgM2;
   if (lowerEqual && upperEqual) return 'ball';
   if (lowerEqual) return 'disc-like';
   return upperEqual ? 'rod-like' : 'distinct';

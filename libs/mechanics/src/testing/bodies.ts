@@ -33,19 +33,47 @@ export const makeBlock = (massKg: number, [a, b, c]: Vector3, centreOfMassM: Vec
   inertiaAtCentreOfMassKgM2: makeDiagonal((massKg * (b * b + c * c)) / 12, (massKg * (c * c + a * a)) / 12, (massKg * (a * a + b * b)) / 12),
 });
 
-/** A measurement of a sound mesh with these integrals. */
+/**
+ * A measurement of a sound mesh with these integrals. Its surface is that of a ball of the same volume, for lack of anything better;
+ * nothing of it is in doubt but the digits of its coordinates.
+ */
 export function makeMeasurement(content: number, centreFromOrigin: Vector3, second: Symmetric3, origin: Vector3 = [0, 0, 0]): Measurement {
-  const volume: Integrals = { content, centreFromOrigin, second };
+  const volume: Integrals = { content, centreFromOrigin, second, errorBound: 1e-15 };
+  const radius = Math.cbrt((3 * content) / (4 * Math.PI));
+  const area = 4 * Math.PI * radius * radius;
+  const third = (area * radius * radius) / 3;
   return {
-    measuringVersion: 'm1',
+    measuringVersion: 'm2',
     format: 'stl-binary',
     compression: null,
+    declaredUnit: null,
+    declaredMaterials: [],
+    examined: 'whole',
     facets: 12,
     origin,
     boundingBox: { min: [-1, -2, -3], max: [1, 2, 3] },
     volume,
-    surface: volume,
-    soundness: { closed: true, oriented: true, outward: true, turned: false, boundaryEdges: 0, nonManifoldEdges: 0, degenerateFacets: 0, duplicateFacets: 0, defensible: true, findings: [] },
+    surface: { content: area, centreFromOrigin, second: { xx: third, yy: third, zz: third, xy: 0, yz: 0, zx: 0 }, errorBound: 1e-15 },
+    soundness: {
+      closed: true,
+      oriented: true,
+      outward: true,
+      turned: false,
+      boundaryEdges: 0,
+      nonManifoldEdges: 0,
+      nonManifoldVertices: 0,
+      degenerateFacets: 0,
+      duplicateFacets: 0,
+      shells: 1,
+      cavities: 0,
+      selfIntersections: 0,
+      defensible: true,
+      findings: [],
+    },
+    shells: null,
+    openings: null,
+    polygonVolume: 0,
+    facetDoubt: null,
   };
 }
 
@@ -79,4 +107,15 @@ export const toMatrix = ({ xx, yy, zz, xy, yz, zx }: Symmetric3): [Vector3, Vect
 export function compareTensors(one: Tensor, two: Tensor): number {
   const [a, b] = [toMatrix(one).flat(), toMatrix(two).flat()];
   return Math.max(...a.map((element, k) => Math.abs(element - (b[k] ?? NaN)))) / Math.max(...a.map(Math.abs), ...b.map(Math.abs), Number.MIN_VALUE);
+}
+
+/** Numbers in [0, 1), the same for the same seed (mulberry32). */
+export function createDraw(seed: number): () => number {
+  let state = seed | 0;
+  return () => {
+    state = (state + 0x6d2b79f5) | 0;
+    let word = Math.imul(state ^ (state >>> 15), 1 | state);
+    word = (word + Math.imul(word ^ (word >>> 7), 61 | word)) ^ word;
+    return ((word ^ (word >>> 14)) >>> 0) / 4_294_967_296;
+  };
 }
