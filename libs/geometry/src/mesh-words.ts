@@ -42,3 +42,6 @@ export function quoteWord(bytes: Uint8Array, start: number, end: number): string
   const word = String.fromCharCode(...bytes.subarray(start, Math.min(end, start + 24))).replace(/[^\x20-\x7e]/g, '?');
   return `"${word}${end - start > 24 ? '…' : ''}"`;
 }
+
+/** A text of the file for a message: so many characters at most, and nothing that can't be seen. */
+export const showText = (text: string, most: number): string => `${text.slice(0, most).replace(/[\p{C}\ufffd]/gu, '?')}${text.length > most ? '…' : ''}`;

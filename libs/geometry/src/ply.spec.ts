@@ -81,9 +81,9 @@ describe('PLY files that are refused', () => {
     return bytes;
   };
   const cases: [name: string, file: string | Uint8Array<ArrayBuffer>, code: string, sentence: RegExp, at: object][] = [
-    ['an index beyond the vertices', square.replace('3 0 2 3', '3 0 2 4'), 'vertex-missing', /The face 2 of 2 of this PLY mesh has the corner 4, but its vertices are numbered from 0 to 3/, { line: 15 }],
-    ['a negative index', square.replace('3 0 2 3', '3 0 2 -1'), 'vertex-missing', /corner -1/, { line: 15 }],
-    ['an index with a fraction', square.replace('3 0 2 3', '3 0 2 1.5'), 'vertex-missing', /corner 1\.5/, { line: 15 }],
+    ['an index beyond the vertices', square.replace('3 0 2 3', '3 0 2 4'), 'vertex-missing', /The face 2 of 2 of this PLY mesh has the corner “4”, but its vertices are numbered from 0 to 3/, { line: 15 }],
+    ['a negative index', square.replace('3 0 2 3', '3 0 2 -1'), 'vertex-missing', /corner “-1”/, { line: 15 }],
+    ['an index with a fraction', square.replace('3 0 2 3', '3 0 2 1.5'), 'vertex-missing', /corner “1\.5”/, { line: 15 }],
     ['a face of two corners', square.replace('3 0 2 3', '2 0 2'), 'syntax-invalid', /has 2 corners; a polygon needs three/, { line: 15 }],
     ['a line that is too short', square.replace('1 1 0', '1 1'), 'syntax-invalid', /Line 12 of this PLY file ends before vertex 3 of 4 is whole/, { line: 12 }],
     ['a line that is too long', square.replace('1 1 0', '1 1 0 0'), 'syntax-invalid', /Line 12 of this PLY file has more values/, { line: 12 }],
@@ -115,8 +115,8 @@ describe('PLY files that are refused', () => {
     ['a binary file that was cut off', binary.subarray(0, -3), 'file-truncated', /\(binary PLY\) ends before face 12 of 12 is whole/, { byte: binary.length - 3 }],
     ['a binary file with NaN', patched(8 * 4, (view, at) => view.setFloat64(at, NaN, true)), 'number-not-finite', /vertex 2 of 8/, { byte: bodyAt + 32 }],
     ['a binary file with an infinite number', patched(0, (view, at) => view.setFloat64(at, -Infinity, true)), 'number-not-finite', /vertex 1 of 8/, { byte: bodyAt }],
-    ['a binary file with an index beyond the vertices', patched(8 * 24 + 1, (view, at) => view.setInt32(at, 8, true)), 'vertex-missing', /face 1 of 12 of this PLY mesh has the corner 8/, { byte: bodyAt + 193 }],
-    ['a binary file with a negative index', patched(8 * 24 + 1, (view, at) => view.setInt32(at, -1, true)), 'vertex-missing', /corner -1/, { byte: bodyAt + 193 }],
+    ['a binary file with an index beyond the vertices', patched(8 * 24 + 1, (view, at) => view.setInt32(at, 8, true)), 'vertex-missing', /face 1 of 12 of this PLY mesh has the corner “8”/, { byte: bodyAt + 193 }],
+    ['a binary file with a negative index', patched(8 * 24 + 1, (view, at) => view.setInt32(at, -1, true)), 'vertex-missing', /corner “-1”/, { byte: bodyAt + 193 }],
   ];
 
   it.each(cases)('%s', (_name, file, code, sentence, at) => {

@@ -2,7 +2,7 @@ import { composeAffine, findDeterminant, identity, mapPoint, type Affine } from 
 import type { FacetWriter } from '../facet-writer';
 import type { ReadingLimits } from '../limits';
 import { MeshError, spellCount, type MeshErrorCode } from '../mesh-error';
-import { isCoordinate } from '../mesh-words';
+import { isCoordinate, showText } from '../mesh-words';
 import { isInsideOut } from './check-fill';
 import type { ModelObject, ModelPart, Reference } from './model-part';
 
@@ -83,7 +83,7 @@ export function placeObjects(root: ModelPart, getPart: (name: string) => ModelPa
 }
 
 function refuse({ name }: ModelPart, line: number, code: MeshErrorCode, what: string): never {
-  throw new MeshError(code, `Line ${spellCount(line)} of ${name.slice(0, 60)} in this 3MF file ${what}. Export it again.`, { line });
+  throw new MeshError(code, `Line ${spellCount(line)} of ${showText(name, 60)} in this 3MF file ${what}. Export it again.`, { line });
 }
 
 function writeObject({ object, part, children }: Resolved, affine: Affine, writer: FacetWriter): void {

@@ -5,6 +5,7 @@ import { noRemarks, tooManyFacets, type FileRemarks, type FormatReader } from '.
 import { checkPlacedFacets, createByteStore } from '../keep-bytes';
 import type { ReadingLimits } from '../limits';
 import { MeshError } from '../mesh-error';
+import { showText } from '../mesh-words';
 import { openZip, type ZipArchive } from '../zip/open-zip';
 import { findRootPart } from './find-root-part';
 import type { ModelPart } from './model-part';
@@ -47,7 +48,7 @@ function readArchive(archive: ZipArchive, limits: ReadingLimits, write: (placed:
     archive.read(name, (bytes) => reader.push(bytes));
     const part = reader.finish();
     const unit = parts.get(rootName.toLowerCase())?.unit ?? part.unit;
-    if (part.unit !== unit) throw new MeshError('syntax-invalid', `In this 3MF file, ${name.slice(0, 60)} is in another unit than the model that it belongs to. Export it again.`, { line: 1 });
+    if (part.unit !== unit) throw new MeshError('syntax-invalid', `In this 3MF file, ${showText(name, 60)} is in another unit than the model that it belongs to. Export it again.`, { line: 1 });
     parts.set(name.toLowerCase(), part);
     return part;
   }
@@ -62,6 +63,6 @@ function readArchive(archive: ZipArchive, limits: ReadingLimits, write: (placed:
     solids: Math.max(1, placed.bodies),
     declaredUnit: root.unit,
     declaredMaterials: listMaterialNames(placed.materials),
-    leftOut: placed.leftOut.map((type) => `objects of type “${type.slice(0, 24)}”`),
+    leftOut: placed.leftOut.map((type) => `objects of type “${showText(type, 24)}”`),
   };
 }

@@ -1,6 +1,7 @@
 import { growArray } from '../grow-array';
 import type { ReadingLimits } from '../limits';
 import { MeshError, spellCount, type MeshErrorCode } from '../mesh-error';
+import { showText } from '../mesh-words';
 import { tooManyFacets } from '../format-reader';
 import { findPartName } from './find-root-part';
 import type { ModelObject, ModelPart, Reference } from './model-part';
@@ -45,7 +46,7 @@ export function createModelPartReader(name: string, totals: ModelTotals, limits:
   function openModel(element: string, attributes: Attributes): void {
     prefixes = readPrefixes(element, attributes);
     if (prefixes === undefined) return refuse('is no model of the 3MF core specification');
-    if (prefixes.unread !== undefined) refuse(`requires ${prefixes.unread.slice(0, 80)}, which is not read`);
+    if (prefixes.unread !== undefined) refuse(`requires ${showText(prefixes.unread, 80)}, which is not read`);
     part.unit = parseUnit(attributes['unit']) ?? refuse('has a unit that 3MF does not have');
     places.push('model');
   }
@@ -115,7 +116,7 @@ export function createModelPartReader(name: string, totals: ModelTotals, limits:
     if (number !== undefined) return number;
     if (text === undefined) return refuse('has a vertex without x, y or z');
     const finite = /^\s*[+-]?(nan|inf|infinity|\d[\d.]*e\+?\d+)\s*$/i.test(text) ? 'number-not-finite' : 'number-invalid';
-    return refuseAs(finite, `has the coordinate “${text.slice(0, 24).replace(/[^\x20-\x7e]/g, '?')}”, which is not a number, or not below 3.4e38. Export it again`);
+    return refuseAs(finite, `has the coordinate “${showText(text, 24)}”, which is not a number, or not below 3.4e38. Export it again`);
   }
 
   function addTriangle(to: ModelObject, attributes: Attributes): void {
@@ -134,7 +135,7 @@ export function createModelPartReader(name: string, totals: ModelTotals, limits:
   function corner(of: ModelObject, text: string | undefined): number {
     const vertex = parseWhole(text);
     if (vertex !== undefined && vertex < of.vertexCount) return vertex;
-    return refuseAs('vertex-missing', `has the corner “${(text ?? '').slice(0, 24).replace(/[^\x20-\x7e]/g, '?')}”, but the vertices of its object are numbered from 0 to ${spellCount(of.vertexCount - 1)}. Export it again`);
+    return refuseAs('vertex-missing', `has the corner “${showText(text ?? '', 24)}”, but the vertices of its object are numbered from 0 to ${spellCount(of.vertexCount - 1)}. Export it again`);
   }
 
   function readReference(attributes: Attributes, known: Prefixes): Reference {
@@ -150,7 +151,7 @@ export function createModelPartReader(name: string, totals: ModelTotals, limits:
   }
 
   function refuseAs(code: MeshErrorCode, what: string): never {
-    throw new MeshError(code, `Line ${spellCount(scanner.line)} of ${name.slice(0, 60)} in this 3MF file ${what}.`, { line: scanner.line });
+    throw new MeshError(code, `Line ${spellCount(scanner.line)} of ${showText(name, 60)} in this 3MF file ${what}.`, { line: scanner.line });
   }
 
   return {

@@ -1,4 +1,5 @@
 import { MeshError, spellCount, type MeshErrorCode } from '../mesh-error';
+import { showText } from '../mesh-words';
 import { findJsonPlace, type JsonPath } from './find-json-place';
 
 /** An object of the JSON of a glTF model. What it is asked for is checked, and refused with its place where it is something else. */
@@ -33,7 +34,7 @@ const isObject = (value: unknown): value is Record<string, unknown> => typeof va
 const isWhole = (value: unknown): value is number => typeof value === 'number' && Number.isSafeInteger(value) && value >= 0;
 
 function spellPath(path: JsonPath): string {
-  return path.length === 0 ? 'The document' : path.map((step, k) => (typeof step === 'number' ? `[${step}]` : `${k > 0 ? '.' : ''}${step.slice(0, 40)}`)).join('');
+  return path.length === 0 ? 'The document' : path.map((step, k) => (typeof step === 'number' ? `[${step}]` : `${k > 0 ? '.' : ''}${showText(step, 40)}`)).join('');
 }
 
 /**

@@ -1,5 +1,6 @@
 import type { ReadingLimits } from '../limits';
 import { MeshError, spellCount, spellCounted } from '../mesh-error';
+import { showText } from '../mesh-words';
 import { applyExponentialFilter, decodeMeshoptAttributes, decodeMeshoptIndices, decodeMeshoptTriangles } from './decode-meshopt';
 import type { JsonObject } from './gltf-json';
 
@@ -90,7 +91,7 @@ function openBuffer(buffer: JsonObject, chunk: BinaryChunk | null): Bytes {
 function readDataUri(uri: string, buffer: JsonObject): Uint8Array {
   const head = /^data:[^,]{0,200};base64,/.exec(uri)?.[0];
   if (head === undefined) {
-    const name = uri.startsWith('data:') ? 'in a way of writing that is not read' : `in another file (“${uri.slice(0, 60).replace(/[^\x20-\x7e]/g, '?')}”)`;
+    const name = uri.startsWith('data:') ? 'in a way of writing that is not read' : `in another file (“${showText(uri, 60)}”)`;
     return buffer.refuse('syntax-invalid', `This glTF model keeps its numbers ${name}; a mesh has to be in one file. Export it as GLB, or with everything embedded.`, 'uri');
   }
   try {
@@ -109,7 +110,7 @@ function unpackMeshopt(packed: JsonObject, bytes: Uint8Array, count: number, str
     const target = decodeMeshoptAttributes(bytes, count, stride);
     if (filter === 'EXPONENTIAL' && target !== undefined) applyExponentialFilter(target);
     if (filter === 'EXPONENTIAL' || filter === 'NONE') return target;
-    return packed.refuse('syntax-invalid', `In this glTF model, ${packed.name} packs positions as what they are not ("${filter.slice(0, 24)}"). Export it again.`, 'filter');
+    return packed.refuse('syntax-invalid', `In this glTF model, ${packed.name} packs positions as what they are not ("${showText(filter, 24)}"). Export it again.`, 'filter');
   }
   const indices = mode === 'TRIANGLES' ? decodeMeshoptTriangles(bytes, count) : mode === 'INDICES' ? decodeMeshoptIndices(bytes, count) : packed.refuse('syntax-invalid', `In this glTF model, ${packed.name} is packed in a way that is not read. Export it without packing.`, 'mode');
   if (indices === undefined || (stride !== 2 && stride !== 4)) return undefined;

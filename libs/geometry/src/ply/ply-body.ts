@@ -1,5 +1,5 @@
 import { spellCount, spellCounted, type MeshErrorCode } from '../mesh-error';
-import { isCoordinate } from '../mesh-words';
+import { isCoordinate, showText } from '../mesh-words';
 import type { PolygonMesh } from '../polygon-mesh';
 import type { PlyElement, PlyHeader, PlyProperty, PlyType } from './ply-header';
 
@@ -45,7 +45,7 @@ export function createPlyBody({ elements }: PlyHeader, mesh: PolygonMesh, refuse
 
   const current = (): PlyProperty | undefined => rows[element]?.properties[property];
   const isList = (): boolean => typeof current()?.countType === 'string';
-  const describe = (): string => `${rows[element]?.name.slice(0, 24) ?? ''} ${spellCount(row + 1)} of ${spellCount(rows[element]?.count ?? 0)}`;
+  const describe = (): string => `${showText(rows[element]?.name ?? '', 24)} ${spellCount(row + 1)} of ${spellCount(rows[element]?.count ?? 0)}`;
 
   function take(value: number): void {
     const role = roles[element]?.[property] ?? 'none';
@@ -59,7 +59,7 @@ export function createPlyBody({ elements }: PlyHeader, mesh: PolygonMesh, refuse
   }
 
   function beginList(value: number, role: Role): void {
-    if (!Number.isInteger(value) || value < 0) refuse('syntax-invalid', `The ${describe()} of this PLY mesh has a list of ${value} values. Export the mesh again.`);
+    if (!Number.isInteger(value) || value < 0) refuse('syntax-invalid', `The ${describe()} of this PLY mesh has a list of “${value}” values. Export the mesh again.`);
     left = value;
     if (role === 'corners') mesh.beginPolygon();
   }
@@ -72,7 +72,7 @@ export function createPlyBody({ elements }: PlyHeader, mesh: PolygonMesh, refuse
 
   function checkCorner(value: number): number {
     if (Number.isInteger(value) && value >= 0 && value < mesh.vertexCount) return value;
-    return refuse('vertex-missing', `The ${describe()} of this PLY mesh has the corner ${value}, but its vertices are numbered from 0 to ${spellCount(mesh.vertexCount - 1)}. Export the mesh again.`);
+    return refuse('vertex-missing', `The ${describe()} of this PLY mesh has the corner “${value}”, but its vertices are numbered from 0 to ${spellCount(mesh.vertexCount - 1)}. Export the mesh again.`);
   }
 
   function endProperty(): void {

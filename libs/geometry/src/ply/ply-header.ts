@@ -1,4 +1,5 @@
 import { MeshError, spellCount } from '../mesh-error';
+import { showText } from '../mesh-words';
 
 /** Numbers as PLY stores them, by their older names. */
 export type PlyType = 'char' | 'uchar' | 'short' | 'ushort' | 'int' | 'uint' | 'float' | 'double';
@@ -62,7 +63,7 @@ export function createPlyHeaderParser(): PlyHeaderParser {
 
   function takeElement(name: string | undefined, count: string | undefined): void {
     if (name === undefined || count === undefined || !/^\d{1,15}$/.test(count)) refuse('has an element without a name or number');
-    if (elements.some((element) => element.name === name)) refuse(`has the element "${name.slice(0, 24)}" for a second time`);
+    if (elements.some((element) => element.name === name)) refuse(`has the element "${showText(name, 24)}" for a second time`);
     elements.push({ name, count: Number(count), properties: [] });
   }
 

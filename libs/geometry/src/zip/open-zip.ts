@@ -1,6 +1,7 @@
 import { Inflate } from 'pako';
 import type { ReadingLimits } from '../limits';
 import { MeshError, spellCount, spellCounted } from '../mesh-error';
+import { showText } from '../mesh-words';
 import { carryCrc32 } from './crc32';
 import { readZipDirectory, type ZipEntry } from './zip-directory';
 
@@ -32,7 +33,7 @@ export function openZip(archive: Uint8Array, limits: Pick<ReadingLimits, 'maximu
     has: (name) => entries.has(name.toLowerCase()),
     read(name, take) {
       const entry = entries.get(name.toLowerCase());
-      if (entry === undefined) throw new MeshError('syntax-invalid', `This 3MF file refers to “${name.slice(0, 60)}”, which is not in it. Export it again.`, { byte: 0 });
+      if (entry === undefined) throw new MeshError('syntax-invalid', `This 3MF file refers to “${showText(name, 60)}”, which is not in it. Export it again.`, { byte: 0 });
       const packed = findContent(archive, entry);
       let checksum = 0;
       let length = 0;
@@ -52,7 +53,7 @@ export function openZip(archive: Uint8Array, limits: Pick<ReadingLimits, 'maximu
 }
 
 function refuse({ name, headerAt }: ZipEntry, what: string): never {
-  throw new MeshError('archive-damaged', `In this 3MF file, “${name.slice(0, 60)}” ${what}. Export it again.`, { byte: headerAt });
+  throw new MeshError('archive-damaged', `In this 3MF file, “${showText(name, 60)}” ${what}. Export it again.`, { byte: headerAt });
 }
 
 /** The packed bytes of a file. */

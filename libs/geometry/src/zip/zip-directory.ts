@@ -1,4 +1,5 @@
 import { MeshError, spellCount } from '../mesh-error';
+import { showText } from '../mesh-words';
 
 /** A file in a ZIP archive, as the archive's directory tells of it. */
 export interface ZipEntry {
@@ -51,7 +52,7 @@ export function readZipDirectory(archive: Uint8Array): Map<string, ZipEntry> {
     const entry = readEntry(archive, view, at, nameBytes, extraBytes);
     checkName(entry.name, at);
     const key = entry.name.replace(/^\//, '').toLowerCase();
-    if (found.has(key)) refuse(`has two files of the name “${entry.name.slice(0, 60)}”`, at);
+    if (found.has(key)) refuse(`has two files of the name “${showText(entry.name, 60)}”`, at);
     found.set(key, entry);
     at = next;
   }
@@ -104,5 +105,5 @@ function readLargeNumbers(view: DataView, from: number, length: number, numbers:
 }
 
 function checkName(name: string, at: number): void {
-  if (/(^|[/\\])\.\.([/\\]|$)|^\\|^[a-z]:|\0/i.test(name)) refuse(`has a file whose name leads out of it (“${name.slice(0, 60).replace(/[^\x20-\x7e]/g, '?')}”)`, at);
+  if (/(^|[/\\])\.\.([/\\]|$)|^\\|^[a-z]:|\0/i.test(name)) refuse(`has a file whose name leads out of it (“${showText(name, 60)}”)`, at);
 }
