@@ -30,11 +30,12 @@ function makeEnvironment(services, apiPort, workerPort) {
   };
 }
 
-/** Our libraries by name, as the compiler knows them. @returns {Record<string, string>} */
+/** Our libraries by name, as the compiler knows them; what is within one comes before it, since the first that fits is taken. @returns {Record<string, string>} */
 function readAliases() {
   /** @type {{ compilerOptions: { paths: Record<string, string[]> } }} */
   const { compilerOptions } = JSON.parse(readFileSync(inCheckout('tsconfig.base.json'), 'utf8'));
-  return Object.fromEntries(Object.entries(compilerOptions.paths).map(([name, [place = '']]) => [name, inCheckout(place)]));
+  const places = Object.entries(compilerOptions.paths).sort(([one], [two]) => two.length - one.length);
+  return Object.fromEntries(places.map(([name, [place = '']]) => [name, inCheckout(place)]));
 }
 
 /**
