@@ -37,7 +37,7 @@ export type FigureChanges = z.infer<typeof figureChanges>;
 export const uncertaintyTermName = z.enum(['density', 'weighing', 'facets', 'as-made', 'gap', 'polygons', 'file-rounding', 'arithmetic']);
 export type UncertaintyTermName = z.infer<typeof uncertaintyTermName>;
 
-/** Expanded uncertainties, k = 2, and the terms that they are made of, the largest first: of each figure the term's share of the sum of squares, from 0 to 1. */
+/** Expanded uncertainties, k = 2, and the terms that they are made of, the largest in mass first: of each figure the term's share of the sum of squares, from 0 to 1. */
 export const uncertainty = figureChanges.extend({
   k: z.literal(2),
   terms: z.array(z.object({ name: uncertaintyTermName, shares: figureChanges })),

@@ -9,7 +9,7 @@ export interface FigureTerm {
 /** Coverage factor: an expanded uncertainty is twice the standard one. */
 const k = 2;
 
-/** U = 2 √Σu² for every figure, and of each the share that every term has of Σu²; the terms with the largest shares first. */
+/** U = 2 √Σu² for every figure, and of each the share that every term has of Σu²; the terms with the largest share of the mass first. */
 export function addShares(terms: readonly FigureTerm[]): Uncertainty | null {
   const squares = terms.map(({ name, changes }) => ({ name, sum: changes.reduce<FigureChanges | null>((sum, change) => add(sum, square(change)), null) }));
   const total = squares.reduce<FigureChanges | null>((sum, term) => (term.sum ? add(sum, term.sum) : sum), null);
@@ -26,9 +26,9 @@ function add(sum: FigureChanges | null, other: FigureChanges): FigureChanges {
   return sum === null ? other : combine(sum, other, (one, two) => one + two);
 }
 
-function weigh({ volumeM3, massKg, centreOfMassM, inertiaAtCentreOfMassKgM2: tensor }: FigureChanges): number {
-  const centre = centreOfMassM[0] + centreOfMassM[1] + centreOfMassM[2];
-  return (massKg ?? volumeM3) + centre / 3 + (tensor ? (tensor.xx + tensor.yy + tensor.zz) / 3 : 0);
+/** By the mass, or the volume while there is none: what a reader looks at first. A term that weighs nothing there stands by what it does to the moments. */
+function weigh({ volumeM3, massKg, inertiaAtCentreOfMassKgM2: tensor }: FigureChanges): number {
+  return (massKg ?? volumeM3) + (tensor ? 1e-6 * (tensor.xx + tensor.yy + tensor.zz) : 0);
 }
 
 /** One number of two for each figure; null where either has none. */

@@ -138,6 +138,8 @@ describe('terms of the budget', () => {
     const { terms } = getUncertainty(doubtful, setting);
     expect(terms.map(({ name }) => name).sort()).toEqual(['arithmetic', 'as-made', 'density', 'facets', 'file-rounding', 'gap', 'polygons']);
     for (const name of Object.keys(listFigures(statement))) expect(terms.reduce((sum, { shares }) => sum + (listFigures(shares)[name] ?? NaN), 0)).toBeCloseTo(1, 12);
+    const ofMass = terms.map(({ shares }) => shares.massKg ?? NaN);
+    expect(ofMass).toEqual([...ofMass].sort((one, two) => two - one));
     expect(terms[0]?.name).toBe('density');
     expect(terms[0]?.shares.massKg).toBeGreaterThan(0.8);
     expect(terms.at(-1)?.name).toBe('arithmetic');
