@@ -1,12 +1,24 @@
+import { execFileSync } from 'node:child_process';
 import { createHash } from 'node:crypto';
-import { closeSync, mkdtempSync, openSync, readSync, rmSync, statSync, writeFileSync } from 'node:fs';
+import { closeSync, mkdtempSync, openSync, readFileSync, readSync, rmSync, statSync, writeFileSync, writeSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
-import { createMeasurer, createMeshReader, writeAsciiStl, writeBinaryStl } from '@masswright/geometry';
+import { Worker } from 'node:worker_threads';
+import RAPIER from '@dimforge/rapier3d-compat';
+import { createIntegralsPass, createMeasurer, createMeshReader, writeAsciiStl, writeBinaryStl, type IntegralsPass } from '@masswright/geometry';
+import { OBJLoader, STLLoader } from 'three-stdlib';
+import { integrateByDataView } from './geometry/data-view-loop';
+import { integratePacked } from './geometry/packed-integrals';
 
 /** Each figure is the median of so many rounds; in a round every task has its turn, so that a slow spell hits all alike. */
 const rounds = 7;
-const chunkBytes = 1 << 20;
+/** As much as a stream of a file hands on at once. */
+const chunkBytes = 1 << 17;
+const headerBytes = 84;
+
+interface Context {
+  print: (line: string) => void;
+}
 
 /** A sphere by rings of quadrilaterals, about 2 n² facets. */
 function makeSphere(rings: number): Float64Array {
@@ -25,6 +37,14 @@ function makeSphere(rings: number): Float64Array {
   return Float64Array.from(corners);
 }
 
+/** A text OBJ of the facets, each with three vertices of its own. */
+function writeObj(corners: Float64Array): string {
+  const lines: string[] = [];
+  for (let at = 0; at < corners.length; at += 3) lines.push(`v ${corners[at]} ${corners[at + 1]} ${corners[at + 2]}`);
+  for (let facet = 0; facet < corners.length / 9; facet++) lines.push(`f ${3 * facet + 1} ${3 * facet + 2} ${3 * facet + 3}`);
+  return `${lines.join('\n')}\n`;
+}
+
 /** Reads a file chunk by chunk into one buffer, as a stream would hand it on. */
 function readChunks(file: string, take: (chunk: Uint8Array) => void): void {
   const buffer = new Uint8Array(chunkBytes);
@@ -39,24 +59,35 @@ function hashFile(file: string): void {
   hash.digest();
 }
 
-function parseFile(file: string): void {
-  const reader = createMeshReader({ sizeBytes: statSync(file).size, maximumFacets: Infinity, onFacets: () => undefined });
-  readChunks(file, (chunk) => reader.push(chunk));
-  reader.finish();
+function integrateFile(file: string, also: (chunk: Uint8Array) => void = () => undefined): void {
+  let pass: IntegralsPass = createIntegralsPass({ sizeBytes: statSync(file).size });
+  readChunks(file, (chunk) => {
+    also(chunk);
+    pass.push(chunk);
+  });
+  for (let end = pass.finish(); end.kind === 'again'; end = pass.finish()) {
+    ({ pass } = end);
+    readChunks(file, (chunk) => pass.push(chunk));
+  }
 }
 
-function measureFile(file: string): void {
+function integrateAndHash(file: string): void {
   const hash = createHash('sha256');
-  const measurer = createMeasurer({ sizeBytes: statSync(file).size });
-  readChunks(file, (chunk) => {
-    hash.update(chunk);
-    measurer.push(chunk);
-  });
+  integrateFile(file, (chunk) => void hash.update(chunk));
   hash.digest();
+}
+
+function examineFile(file: string): void {
+  const measurer = createMeasurer({ sizeBytes: statSync(file).size });
+  readChunks(file, (chunk) => measurer.push(chunk));
   measurer.finish();
 }
 
-const median = (values: number[]): number => values.sort((one, two) => one - two)[values.length >> 1] ?? NaN;
+function parseBytes(bytes: Uint8Array): void {
+  const reader = createMeshReader({ sizeBytes: bytes.length, onFacets: () => undefined });
+  reader.push(bytes);
+  reader.finish();
+}
 
 /** Milliseconds of processor time, so that what else the machine does counts little. */
 function time(task: () => void): number {
@@ -66,32 +97,152 @@ function time(task: () => void): number {
   return (user + system) / 1000;
 }
 
-/** What measuring costs beside reading and hashing the file, which has to be done in any case. */
-export function run(context: { print: (line: string) => void }): Promise<void> {
+const median = (values: number[]): number => values.sort((one, two) => one - two)[values.length >> 1] ?? NaN;
+
+/** Medians of the tasks, each of which has its turn in every round. */
+function compare<Name extends string>(tasks: Record<Name, () => void>, times: (task: () => void) => number = time): Record<Name, number> {
+  const names = Object.keys(tasks) as Name[];
+  const taken = Object.fromEntries(names.map((name) => [name, [] as number[]])) as Record<Name, number[]>;
+  for (let round = -1; round < rounds; round++) {
+    for (const name of names) {
+      const one = times(tasks[name]);
+      if (round >= 0) taken[name].push(one);
+    }
+  }
+  return Object.fromEntries(names.map((name) => [name, median(taken[name])])) as Record<Name, number>;
+}
+
+const perFacet = (milliseconds: number, facets: number): string => `${((1e6 * milliseconds) / facets).toFixed(1)} ns a facet`;
+const ratio = (value: number): string => `${value.toFixed(2)} ×`;
+
+/** The kernel on bytes that are in memory, against C, against the plain loop, and against a physics engine that loads the mesh for its mass. */
+function compareKernel(file: string, folder: string, { print }: Context): void {
+  const bytes = readFileSync(file);
+  const facets = (bytes.length - headerBytes) / 50;
+  const integrate = (): void => {
+    const pass = createIntegralsPass({ sizeBytes: bytes.length });
+    pass.push(bytes);
+    pass.finish();
+  };
+  const { kernel, loop, whole } = compare({ kernel: () => integratePacked(bytes), loop: () => integrateByDataView(bytes), whole: integrate });
+  print(`kernel with its bounds, twenty integrals: ${perFacet(kernel, facets)}; with the sketch of the edges: ${perFacet(whole, facets)}`);
+  print(`  against a DataView loop of the same work (${perFacet(loop, facets)}): ${ratio(loop / kernel)} (bar: 1.7)`);
+  const c = timeC(file, folder);
+  print(c === undefined ? '  no C compiler here, so no comparison with C' : `  against C -O3 of the same work (${c.toFixed(1)} ns a facet): ${ratio((c * facets) / 1e6 / kernel)} (bar: 1.0)`);
+}
+
+async function compareEngine({ print }: Context): Promise<void> {
+  await RAPIER.init();
+  const corners = makeSphere(160);
+  const facets = corners.length / 9;
+  const bytes = writeBinaryStl(corners);
+  const vertices = Float32Array.from(corners);
+  const indices = Uint32Array.from({ length: vertices.length / 3 }, (_, corner) => corner);
+  const load = (): void => {
+    const world = new RAPIER.World({ x: 0, y: 0, z: 0 });
+    const body = world.createRigidBody(RAPIER.RigidBodyDesc.dynamic());
+    world.createCollider(RAPIER.ColliderDesc.trimesh(vertices, indices).setDensity(1), body);
+    body.recomputeMassPropertiesFromColliders();
+    body.mass();
+    world.free();
+  };
+  const { engine, kernel } = compare({ engine: load, kernel: () => integratePacked(bytes) });
+  print(`  against a physics engine that loads the mesh and states its mass (${perFacet(engine, facets)}, in binary32): ${ratio(engine / kernel)} (bar: 20)`);
+}
+
+/** Nanoseconds a facet; undefined where no compiler is. */
+function timeC(file: string, folder: string): number | undefined {
+  const program = path.join(folder, 'same-work');
+  try {
+    execFileSync('cc', ['-O3', '-o', program, path.join(import.meta.dirname, 'geometry/same-work.c'), '-lm'], { stdio: 'ignore' });
+  } catch {
+    return undefined;
+  }
+  return Number(execFileSync(program, [file, String(rounds)], { encoding: 'utf8' }).split(' ')[0]);
+}
+
+function compareReading(file: string, facets: number, { print }: Context): void {
+  const { hash, integrate, examine } = compare({ hash: () => hashFile(file), integrate: () => integrateAndHash(file), examine: () => examineFile(file) });
+  print(`${facets} facets of binary STL, processor time:`);
+  print(`  read + SHA-256: ${perFacet(hash, facets)}`);
+  print(`  read + SHA-256 + integrals, bounds, box and closedness: ${perFacet(integrate, facets)}, ${ratio(integrate / hash)} read + SHA-256 (bar: at most 1.7)`);
+  print(`  read + examine to the end: ${perFacet(examine, facets)}, ${ratio(examine / hash)} read + SHA-256`);
+}
+
+/** Ten million facets and more: the hash in a thread beside the integrals, by the clock. */
+async function compareThreads(file: string, facets: number, { print }: Context): Promise<void> {
+  const alone: number[] = [];
+  const beside: number[] = [];
+  for (let round = -1; round < 5; round++) {
+    const begin = performance.now();
+    hashFile(file);
+    const middle = performance.now();
+    const thread = new Worker(hashThread, { eval: true, workerData: { file, chunkBytes } });
+    const ended = new Promise((resolve, reject) => thread.once('message', resolve).once('error', reject));
+    integrateFile(file);
+    await ended;
+    const end = performance.now();
+    if (round < 0) continue;
+    alone.push(middle - begin);
+    beside.push(end - middle);
+  }
+  print(`${facets} facets on two threads, by the clock: read + SHA-256 ${(median(alone) / 1000).toFixed(2)} s, with integrals and closedness beside it ${(median(beside) / 1000).toFixed(2)} s, ${ratio(median(beside) / median(alone))} (bar: at most 1.1)`);
+}
+
+const hashThread = `
+const { createHash } = require('node:crypto');
+const { closeSync, openSync, readSync } = require('node:fs');
+const { parentPort, workerData } = require('node:worker_threads');
+const hash = createHash('sha256');
+const buffer = new Uint8Array(workerData.chunkBytes);
+const descriptor = openSync(workerData.file, 'r');
+for (let read = readSync(descriptor, buffer); read > 0; read = readSync(descriptor, buffer)) hash.update(buffer.subarray(0, read));
+closeSync(descriptor);
+parentPort.postMessage(hash.digest('hex'));`;
+
+/** The same facets again and again under one header: what is measured is time, not the body. */
+function writeLarge(file: string, small: Uint8Array, times: number): number {
+  const facets = ((small.length - headerBytes) / 50) * times;
+  const descriptor = openSync(file, 'w');
+  const header = Buffer.from(small.subarray(0, headerBytes));
+  header.writeUInt32LE(facets, 80);
+  writeSync(descriptor, header);
+  for (let turn = 0; turn < times; turn++) writeSync(descriptor, small, headerBytes);
+  closeSync(descriptor);
+  return facets;
+}
+
+function compareLoaders(corners: Float64Array, { print }: Context): void {
+  const facets = corners.length / 9;
+  const stl = writeAsciiStl(corners);
+  const obj = new TextEncoder().encode(writeObj(corners));
+  // Theirs take a text, or bytes that they make one of; ours takes bytes.
+  const { ours, theirs, oursObj, theirsObj } = compare({
+    ours: () => parseBytes(stl),
+    theirs: () => void new STLLoader().parse(stl.slice().buffer),
+    oursObj: () => parseBytes(obj),
+    theirsObj: () => void new OBJLoader().parse(new TextDecoder().decode(obj)),
+  });
+  print(`text of ${facets} facets against three-stdlib's loaders, processor time:`);
+  print(`  ASCII STL ${perFacet(ours, facets)} against ${perFacet(theirs, facets)}: ${ratio(theirs / ours)} (bar: 30)`);
+  print(`  OBJ ${perFacet(oursObj, facets)} against ${perFacet(theirsObj, facets)}: ${ratio(theirsObj / oursObj)} (bar: 100)`);
+}
+
+/** What the library costs, each figure beside its bar. */
+export async function run(context: Context): Promise<void> {
   const folder = mkdtempSync(path.join(tmpdir(), 'masswright-bench-'));
   try {
-    for (const rings of [50, 707]) {
-      const corners = makeSphere(rings);
-      const facets = corners.length / 9;
-      const [binary, ascii] = [path.join(folder, 'binary.stl'), path.join(folder, 'ascii.stl')];
-      writeFileSync(binary, writeBinaryStl(corners));
-      // A tenth of the facets: a text of a million would not fit a string.
-      const some = corners.subarray(0, 9 * Math.ceil(facets / 10));
-      writeFileSync(ascii, writeAsciiStl(some));
-      const tasks: Record<string, { facets: number; run: () => void }> = {
-        'read + SHA-256': { facets, run: () => hashFile(binary) },
-        'read + parse, binary': { facets, run: () => parseFile(binary) },
-        'read + parse, ASCII': { facets: some.length / 9, run: () => parseFile(ascii) },
-        'read + SHA-256 + measure, binary': { facets, run: () => measureFile(binary) },
-      };
-      const times = Object.fromEntries(Object.keys(tasks).map((name) => [name, [] as number[]]));
-      for (let round = 0; round < rounds; round++) for (const [name, task] of Object.entries(tasks)) times[name]?.push(time(task.run));
-      const perFacet = (name: string): number => (1e6 * median(times[name] ?? [])) / (tasks[name]?.facets ?? NaN);
-      context.print(`${facets} facets, processor time a facet, and as a multiple of read + SHA-256 of the binary file:`);
-      for (const name of Object.keys(tasks)) context.print(`${name.padEnd(34)} ${perFacet(name).toFixed(0).padStart(6)} ns ${(perFacet(name) / perFacet('read + SHA-256')).toFixed(1).padStart(6)} ×`);
-    }
+    const file = path.join(folder, 'sphere.stl');
+    const bytes = writeBinaryStl(makeSphere(707));
+    const facets = (bytes.length - headerBytes) / 50;
+    writeFileSync(file, bytes);
+    compareKernel(file, folder, context);
+    await compareEngine(context);
+    compareReading(file, facets, context);
+    const large = path.join(folder, 'large.stl');
+    await compareThreads(large, writeLarge(large, bytes, 10), context);
+    compareLoaders(makeSphere(160), context);
   } finally {
     rmSync(folder, { recursive: true, force: true });
   }
-  return Promise.resolve();
 }

@@ -18,10 +18,10 @@ import { BOX, FACETS, SECRETS, SKETCH } from './layout';
 }
 
 /** From 96 bits: x and y side by side, and z. */
-@inline function hashPacked(xy: u64, z: u64): u64 {
-  let hash = (xy ^ load<u64>(SECRETS)) * load<u64>(SECRETS + 8);
+@inline function hashPacked(xy: u64, z: u64, s0: u64, s1: u64, s2: u64, s3: u64): u64 {
+  let hash = (xy ^ s0) * s1;
   hash ^= hash >> 32;
-  hash = (hash + z * load<u64>(SECRETS + 16)) * load<u64>(SECRETS + 24);
+  hash = (hash + z * s2) * s3;
   return hash ^ (hash >> 29);
 }
 
@@ -30,6 +30,8 @@ export function sketchStl(count: i32): void {
   const zero = f32x4.splat(0);
   let least0 = v128.load(BOX), least1 = v128.load(BOX, 16), least2 = v128.load(BOX, 32);
   let most0 = v128.load(BOX, 48), most1 = v128.load(BOX, 64), most2 = v128.load(BOX, 80);
+  // In locals: loads in the loop would be made anew for every facet.
+  const s0 = load<u64>(SECRETS), s1 = load<u64>(SECRETS + 8), s2 = load<u64>(SECRETS + 16), s3 = load<u64>(SECRETS + 24);
   const s4 = load<u64>(SECRETS + 32), s5 = load<u64>(SECRETS + 40), s6 = load<u64>(SECRETS + 48), s7 = load<u64>(SECRETS + 56);
   let one = load<u64>(SKETCH), two = load<u64>(SKETCH + 8);
   let at = FACETS;
@@ -38,9 +40,9 @@ export function sketchStl(count: i32): void {
     const p = f32x4.add(v128.load(at, 12), zero), q = f32x4.add(v128.load(at, 28), zero), r = f32x4.add(v128.load32_splat(at, 44), zero);
     least0 = f32x4.min(least0, p); least1 = f32x4.min(least1, q); least2 = f32x4.min(least2, r);
     most0 = f32x4.max(most0, p); most1 = f32x4.max(most1, q); most2 = f32x4.max(most2, r);
-    const a = hashPacked(<u64>i64x2.extract_lane(p, 0), <u64>(<u32>i32x4.extract_lane(p, 2)));
-    const b = hashPacked(<u64>(<u32>i32x4.extract_lane(p, 3)) | ((<u64>(<u32>i32x4.extract_lane(q, 0))) << 32), <u64>(<u32>i32x4.extract_lane(q, 1)));
-    const c = hashPacked(<u64>i64x2.extract_lane(q, 1), <u64>(<u32>i32x4.extract_lane(r, 0)));
+    const a = hashPacked(<u64>i64x2.extract_lane(p, 0), <u64>(<u32>i32x4.extract_lane(p, 2)), s0, s1, s2, s3);
+    const b = hashPacked(<u64>(<u32>i32x4.extract_lane(p, 3)) | ((<u64>(<u32>i32x4.extract_lane(q, 0))) << 32), <u64>(<u32>i32x4.extract_lane(q, 1)), s0, s1, s2, s3);
+    const c = hashPacked(<u64>i64x2.extract_lane(q, 1), <u64>(<u32>i32x4.extract_lane(r, 0)), s0, s1, s2, s3);
     let wa = (a ^ s4) * s5, wb = (b ^ s4) * s5, wc = (c ^ s4) * s5;
     wa ^= wa >> 32; wb ^= wb >> 32; wc ^= wc >> 32;
     let ta = (a ^ s6) * s7, tb = (b ^ s6) * s7, tc = (c ^ s6) * s7;
