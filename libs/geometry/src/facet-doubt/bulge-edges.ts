@@ -1,4 +1,5 @@
 import { allocate } from '../grow-array';
+import { allocateSingle } from './allocate-single';
 import { sharp } from './merge-flats';
 import { next, none } from './pair-edges';
 import type { OutwardFacets } from './read-facets';
@@ -9,10 +10,9 @@ import type { Fans } from './walk-fans';
  * edge's own sag is b/4 and its mean is b/6. From the slopes at its two ends, -n_i·e and n_j·e: half their sum, and for an arc, whose slope is the
  * sine of half its turn, 0.3 of the slope's square more.
  */
-export function bulgeEdges(facets: OutwardFacets, kinds: Uint8Array, fans: Fans, normals: Float64Array): Float64Array {
+export function bulgeEdges(facets: OutwardFacets, kinds: Uint8Array, fans: Fans, normals: Float32Array): Float64Array {
   const halfCount = 3 * facets.count;
-  // Two a half-edge, in binary32: seven digits of a prediction are enough, and a plane's two slopes still cancel to the bit.
-  const slopes = new Float32Array(allocate(() => new Uint32Array(2 * halfCount)).buffer);
+  const slopes = allocateSingle(2 * halfCount);
   for (let half = 0; half < halfCount; half++) putSlopes(facets, fans, normals, half, slopes);
   const points = findPoints(fans, slopes);
   const bulges = allocate(() => new Float64Array(halfCount));
@@ -37,7 +37,7 @@ function lengthOf({ corners, places }: OutwardFacets, half: number): number {
 }
 
 /** Slopes at the beginning and at the end of a half-edge, positive where the surface rises from the chord. */
-function putSlopes(facets: OutwardFacets, { of }: Fans, normals: Float64Array, half: number, slopes: Float32Array): void {
+function putSlopes(facets: OutwardFacets, { of }: Fans, normals: Float32Array, half: number, slopes: Float32Array): void {
   const { corners, places } = facets;
   const a = 3 * (corners[half] ?? 0), b = 3 * (corners[next(half)] ?? 0);
   const i = 3 * (of[half] ?? 0), j = 3 * (of[next(half)] ?? 0);

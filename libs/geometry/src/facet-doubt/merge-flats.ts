@@ -140,14 +140,14 @@ function join(of: Uint32Array, one: number, other: number): void {
   else of[a] = b;
 }
 
-function sumFlats({ count, areas: facetAreas, normals: facetNormals }: OutwardFacets, of: Uint32Array): Pick<Flats, 'areas' | 'normals'> {
+/** In the place of the facets' own normals, which are asked for no more: those of flats lie at their first facets, which come first. */
+function sumFlats({ count, areas: facetAreas, normals }: OutwardFacets, of: Uint32Array): Pick<Flats, 'areas' | 'normals'> {
   const areas = allocate(() => new Float64Array(count));
-  const normals = allocate(() => new Float64Array(3 * count));
   for (let facet = 0; facet < count; facet++) {
     const to = of[facet] ?? 0;
     const area = facetAreas[facet] ?? 0;
     areas[to] = (areas[to] ?? 0) + area;
-    for (let k = 0; k < 3; k++) normals[3 * to + k] = (normals[3 * to + k] ?? 0) + area * (facetNormals[3 * facet + k] ?? 0);
+    for (let k = 0; k < 3; k++) normals[3 * to + k] = (to === facet ? 0 : (normals[3 * to + k] ?? 0)) + area * (normals[3 * facet + k] ?? 0);
   }
   for (let at = 0; at < 3 * count; at += 3) {
     const x = normals[at] ?? 0, y = normals[at + 1] ?? 0, z = normals[at + 2] ?? 0;

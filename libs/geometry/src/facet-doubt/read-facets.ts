@@ -22,7 +22,7 @@ export interface OutwardFacets {
   /** Three a vertex. */
   places: Float64Array;
   areas: Float64Array;
-  /** Three a facet, of length 1; 0 where the facet has no area. */
+  /** Three a facet, of length 1; 0 where the facet has no area. `mergeFlats` puts those of the flats in their place. */
   normals: Float64Array;
   /** A length that rounding of the file's coordinates to binary32 can make up: what lies nearer to a plane lies in it. */
   rounding: number;

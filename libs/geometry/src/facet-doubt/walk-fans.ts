@@ -36,7 +36,8 @@ export function walkFans(partners: Uint32Array, kinds: Uint8Array): Fans {
     count += 1;
     starts[count] = placed;
   }
-  return { count, of, order, starts, closed };
+  // Copies of what is used: a smooth mesh has six times as many corners as fans.
+  return { count, of, order, starts: starts.slice(0, count + 1), closed: closed.slice(0, count) };
 }
 
 /** Clockwise as far as there is no sharp edge; a fan that comes round begins where it was found. */

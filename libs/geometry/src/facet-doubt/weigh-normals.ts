@@ -1,4 +1,4 @@
-import { allocate } from '../grow-array';
+import { allocateSingle } from './allocate-single';
 import type { Fans } from './walk-fans';
 import { third, type Flats } from './merge-flats';
 import { next, previous } from './pair-edges';
@@ -27,8 +27,9 @@ export interface Weighting {
 const weights: readonly Weight[] = ['angle', 'product', 'square', 'fourth'];
 
 /** Unit normals of the surface, three a fan, for each way of weighing. All in one walk, for most of the time goes into the angles. */
-export function weighNormals(facets: OutwardFacets, flats: Flats, fans: Fans, weightings: readonly Weighting[]): Float64Array[] {
-  const found = weightings.map(() => allocate(() => new Float64Array(3 * fans.count)));
+export function weighNormals(facets: OutwardFacets, flats: Flats, fans: Fans, weightings: readonly Weighting[]): Float32Array[] {
+  const found = weightings.map(() => allocateSingle(3 * fans.count));
+  const normal = new Float64Array(3);
   const sums = new Float64Array(3 * weights.length);
   for (let fan = 0; fan < fans.count; fan++) {
     const ratio = findAreaRatio(flats, fans, fan);
@@ -39,16 +40,19 @@ export function weighNormals(facets: OutwardFacets, flats: Flats, fans: Fans, we
     sums.fill(0);
     addRuns(facets, flats, fans, fan, sums);
     for (let at = 0; at < sums.length; at += 3) makeUnit(sums, at);
-    weightings.forEach((weighting, k) => blend(sums, weighting, ratio, found[k] ?? sums, 3 * fan));
+    weightings.forEach((weighting, k) => {
+      blend(sums, weighting, ratio, normal);
+      found[k]?.set(normal, 3 * fan);
+    });
   }
   return found;
 }
 
-function blend(sums: Float64Array, { alike, unlike, from, to }: Weighting, ratio: number, found: Float64Array, at: number): void {
+function blend(sums: Float64Array, { alike, unlike, from, to }: Weighting, ratio: number, normal: Float64Array): void {
   const share = Math.min(1, Math.max(0, (ratio - from) / (to - from)));
   const one = 3 * weights.indexOf(alike), other = 3 * weights.indexOf(unlike);
-  for (let k = 0; k < 3; k++) found[at + k] = (1 - share) * (sums[one + k] ?? 0) + share * (sums[other + k] ?? 0);
-  makeUnit(found, at);
+  for (let k = 0; k < 3; k++) normal[k] = (1 - share) * (sums[one + k] ?? 0) + share * (sums[other + k] ?? 0);
+  makeUnit(normal, 0);
 }
 
 function makeUnit(vectors: Float64Array, at: number): void {
@@ -77,7 +81,7 @@ function findAreaRatio({ of, areas }: Flats, { order, starts }: Fans, fan: numbe
 }
 
 /** To the bit, so that nothing is predicted of a plane. */
-function copyFlat({ of, normals }: Flats, { order, starts }: Fans, fan: number, found: Float64Array): void {
+function copyFlat({ of, normals }: Flats, { order, starts }: Fans, fan: number, found: Float32Array): void {
   const flat = of[third(order[starts[fan] ?? 0] ?? 0)] ?? 0;
   for (let k = 0; k < 3; k++) found[3 * fan + k] = normals[3 * flat + k] ?? 0;
 }
