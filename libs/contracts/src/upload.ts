@@ -111,6 +111,17 @@ export function cleanFileName(given: string): string {
   return `${letters.slice(0, longestFileName - keptEnding - 1).join('')}…${letters.slice(-keptEnding).join('')}`;
 }
 
+/** How names of mesh files end. What a file is is told by its content, and by its name only where the content can't be looked at. */
+export const meshFileEndings = ['stl', 'obj', 'ply', 'off', '3mf', 'glb', 'gltf'] as const;
+const meshEnding = new RegExp(`\\.(${meshFileEndings.join('|')})$`, 'i');
+const packedEnding = /\.gz$/i;
+
+/** Whether a file is a mesh by its name; any may be packed with gzip. */
+export const hasMeshEnding = (given: string): boolean => meshEnding.test(given.replace(packedEnding, ''));
+
+/** The name of a file without what it says of its format and packing. */
+export const dropMeshEnding = (given: string): string => cleanFileName(given).replace(packedEnding, '').replace(meshEnding, '');
+
 /** The rule for folders: the same as for names, part by part, without `.` and `..`; of more than 400 characters the last are kept. */
 export function cleanFolder(given: string): string {
   const names = given.split(/[/\\]/).map((name) => name.normalize('NFC').replace(invisible, '').trim());

@@ -146,7 +146,7 @@ describe('3MF files that are refused', () => {
     ['a placing beyond all bounds', whole.replace('<item ', '<item transform="1e38 0 0 0 1e38 0 0 0 1e38 0 0 0" '), 'number-not-finite', /placed beyond 3\.4e38/, { line: 2 }],
     ['an object twice', whole.replace('</resources>', `${blockObject(1)}</resources>`), 'syntax-invalid', /has the object 1 for a second time/, { line: 20 }],
     ['an object that looks inwards', writeModel(`<object id="1">${writeMeshXml(turn(block))}</object>`, '<item objectid="1"/>'), 'syntax-invalid', /object 1, whose triangles look inwards: by the rule of 3MF nothing of it is filled/, { line: 2 }],
-    ['an extension that it requires', whole.replace('unit=', 'xmlns:b="urn:beams" requiredextensions="b" unit='), 'syntax-invalid', /requires urn:beams, which is not read/, { line: 2 }],
+    ['an extension that it requires', whole.replace('unit=', 'xmlns:b="urn:beams" requiredextensions="b" unit='), 'syntax-invalid', /requires “urn:beams”, which is not read/, { line: 2 }],
     ['beams', whole.replace('</triangles>', '</triangles><b:beamlattice/>'), 'syntax-invalid', /not made of triangles/, { line: 20 }],
     ['another kind of model', whole.replace(coreNamespace, 'urn:other'), 'syntax-invalid', /no model of the 3MF core specification/, { line: 2 }],
     ['XML that is not well formed', whole.replace('</mesh>', ''), 'syntax-invalid', /not well-formed XML/, { line: 20 }],

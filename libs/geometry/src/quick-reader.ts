@@ -1,12 +1,14 @@
 import { emptyBox, extendBox, type BoundingBox } from './bounding-box';
 import type { FacetBatch } from './facet-batch';
-import type { MeshCompression, MeshFormat, Vector3 } from './measurement';
+import type { DeclaredUnit, MeshCompression, MeshFormat, Vector3 } from './measurement';
 import { createMeshReader, type MeshReaderOptions } from './mesh-reader';
 
 /** What can be said of a mesh without examining it, in its own unit. */
 export interface QuickFigures {
   format: MeshFormat;
   compression: MeshCompression | null;
+  /** Null where the file states none. */
+  declaredUnit: DeclaredUnit | null;
   facets: number;
   boundingBox: BoundingBox;
   /**
@@ -40,8 +42,8 @@ export function createQuickReader(options: Omit<MeshReaderOptions, 'onFacets'>):
   return {
     push: (chunk) => reader.push(chunk),
     finish() {
-      const { format, compression, facets } = reader.finish();
-      return { format, compression, facets, boundingBox, volume: Math.abs(sixfold) / 6 };
+      const { format, compression, declaredUnit, facets } = reader.finish();
+      return { format, compression, declaredUnit, facets, boundingBox, volume: Math.abs(sixfold) / 6 };
     },
   };
 }

@@ -4,8 +4,12 @@ import { gzipSync } from 'node:zlib';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { measureMesh } from './measurer';
+import { write3mf } from './testing/3mf-files';
 import { anyMesh } from './testing/arbitrary-meshes';
+import { writeGlb } from './testing/gltf-files';
 import { blockObj, encode, writeObj } from './testing/obj-files';
+import { writeOff } from './testing/off-files';
+import { writePly } from './testing/ply-files';
 import * as shapes from './testing/shapes';
 import { createQuickReader, createSilhouetteReader, readMeshFile, type FileFigures, type FileOptions, type Silhouette } from './web-worker';
 import { writeAsciiStl, writeBinaryStl } from './write-stl';
@@ -52,6 +56,18 @@ describe('the figures of a first look', () => {
       }),
       { numRuns: 100 },
     );
+  });
+
+  it('say the unit that the file states, and none where it states none', async () => {
+    const block = shapes.makeBlock([0, 0, 0], [2, 3, 4]);
+    for (const [bytes, format, declaredUnit] of [
+      [write3mf(block, 'unit="inch"'), '3mf', 'inch'],
+      [writeGlb(block), 'glb', 'm'],
+      [gzipSync(writePly(block, 'ascii')), 'ply-ascii', null],
+      [encode(writeOff(block)), 'off', null],
+    ] as const) {
+      expect(await readFigures(bytes)).toMatchObject({ format, declaredUnit, facets: 12, volume: 24, boundingBox: { min: [0, 0, 0], max: [2, 3, 4] } });
+    }
   });
 
   it('can be cloned on their way out of a worker', async () => {

@@ -12,6 +12,9 @@ describe('the first name of a part', () => {
     ['line\nbreak\u0000.stl', 'linebreak'],
     [`${'x'.repeat(300)}.stl`, `${'x'.repeat(159)}…${'x'.repeat(36)}`],
     ['pawl.OBJ.gz', 'pawl'],
+    ['pawl.3MF', 'pawl'],
+    ['pawl.ply.gz', 'pawl'],
+    ['pawl.glb', 'pawl'],
     ['pawl.stl.old', 'pawl.stl.old'],
   ])('of %j is %j', (fileName, name) => {
     expect(nameOfPart(fileName)).toBe(name);

@@ -1,7 +1,7 @@
-import { cleanFileName } from '@masswright/contracts';
+import { dropMeshEnding } from '@masswright/contracts';
 
 /** A first name for a part from its file's: without folders, endings and what can't be seen. */
 export function nameOfPart(fileName: string): string {
-  const name = cleanFileName(fileName).replace(/\.gz$/i, '').replace(/\.(stl|obj)$/i, '').trim();
+  const name = dropMeshEnding(fileName).trim();
   return name === '' ? 'Unnamed part' : name;
 }

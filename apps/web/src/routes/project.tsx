@@ -84,7 +84,7 @@ function NoParts({ projectId, add }: { projectId: string; add: React.ReactNode }
       <h2>This project has no parts yet</h2>
       <p className="soft">
         {add
-          ? 'Drop STL or OBJ files, or a folder of them, anywhere on this page, or add them with the button. Each file becomes a part; its mass properties appear in its row a moment after it has arrived.'
+          ? 'Drop mesh files (STL, OBJ, PLY, OFF, 3MF or glTF), or a folder of them, anywhere on this page, or add them with the button. Each file becomes a part; its mass properties appear in its row a moment after it has arrived.'
           : 'An engineer or an administrator of your organisation can add meshes to it.'}
       </p>
     </section>

@@ -46,7 +46,7 @@ export function createModelPartReader(name: string, totals: ModelTotals, limits:
   function openModel(element: string, attributes: Attributes): void {
     prefixes = readPrefixes(element, attributes);
     if (prefixes === undefined) return refuse('is no model of the 3MF core specification');
-    if (prefixes.unread !== undefined) refuse(`requires ${showText(prefixes.unread, 80)}, which is not read`);
+    if (prefixes.unread !== undefined) refuse(`requires “${showText(prefixes.unread, 80)}”, which is not read`);
     part.unit = parseUnit(attributes['unit']) ?? refuse('has a unit that 3MF does not have');
     places.push('model');
   }

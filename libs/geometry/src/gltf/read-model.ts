@@ -83,10 +83,10 @@ const harmless = /^((KHR|EXT|ADOBE|MSFT|NV|CESIUM|AGI|GODOT|FB)_(materials|textu
 function checkAsset(model: JsonObject): void {
   const asset = model.object('asset');
   const version = asset?.text('minVersion') ?? asset?.text('version');
-  if (version !== '2.0') asset?.refuse('syntax-invalid', `This glTF model is of version ${showText(version ?? 'none', 8)}; only 2.0 is read. Export it in that version.`);
+  if (version !== '2.0') asset?.refuse('syntax-invalid', `This glTF model is of version “${showText(version ?? '', 8)}”; only 2.0 is read. Export it in that version.`);
   for (const name of model.texts('extensionsRequired')) {
     if (name === 'KHR_draco_mesh_compression') model.refuse('syntax-invalid', 'This glTF model is compressed by Draco, which is not read. Export it without compression, or with that of meshopt.', 'extensionsRequired');
-    if (!harmless.test(name)) model.refuse('syntax-invalid', `This glTF model can't be read without ${showText(name, 40)}, which is not read. Export it without.`, 'extensionsRequired');
+    if (!harmless.test(name)) model.refuse('syntax-invalid', `This glTF model can't be read without “${showText(name, 40)}”, which is not read. Export it without.`, 'extensionsRequired');
   }
 }
 

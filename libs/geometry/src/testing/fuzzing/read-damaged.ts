@@ -81,7 +81,7 @@ function checkRefusal(error: unknown): Pick<Outcome, 'result' | 'message'> {
   if (!meshErrorCodes.includes(code)) throw new Error(`${code} is no code of a refusal.`);
   if (place === undefined ? !withoutPlace.has(code) : !Number.isSafeInteger(place) || place < (at?.line === undefined ? 0 : 1)) throw new Error(`A refusal has no place: ${code}, ${message}`);
   if (format === null && !beforeFormat.has(code)) throw new Error(`A refusal has no format: ${code}, ${message}`);
-  if (!/^[^\p{C}\ufffd]{10,600}\.$/u.test(message) || /undefined|NaN[^”"]|\[object/.test(message)) throw new Error(`A refusal has no proper sentence: ${code}, ${message}`);
+  if (!/^[^\p{C}\ufffd]{10,600}\.$/u.test(message) || /undefined|NaN|\[object/.test(message.replaceAll(/“[^”]*”|"[^"]*"/g, ''))) throw new Error(`A refusal has no proper sentence: ${code}, ${message}`);
   return { result: code, message: `${message} ${JSON.stringify(at)} ${format}` };
 }
 

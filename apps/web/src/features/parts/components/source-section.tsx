@@ -1,4 +1,4 @@
-import type { Material, Part, StatementRecord } from '@masswright/contracts';
+import type { Material, MeshFormat, Part, StatementRecord } from '@masswright/contracts';
 import { formatCount } from '@masswright/units';
 import { Link } from 'react-router-dom';
 import { CopyButton } from '../../../components/copy-button';
@@ -9,7 +9,17 @@ import { DensityFacts } from './density-facts';
 import { Fact, Section, sectionNames } from './section';
 import { UnitFact } from './unit-fact';
 
-const formatNames = { 'stl-binary': 'binary STL', 'stl-ascii': 'text STL', obj: 'OBJ' } as const;
+const formatNames: Readonly<Record<MeshFormat, string>> = {
+  'stl-binary': 'binary STL',
+  'stl-ascii': 'text STL',
+  obj: 'OBJ',
+  'ply-ascii': 'text PLY',
+  'ply-binary': 'binary PLY',
+  off: 'OFF',
+  '3mf': '3MF',
+  gltf: 'glTF',
+  glb: 'binary glTF',
+};
 
 interface SourceSectionProps {
   part: Part;

@@ -24,7 +24,7 @@ const aluminium: Material = {
   usedByParts: 0,
   can: { edit: false },
 };
-const box = { format: 'stl-binary', compression: null, facets: 12, boundingBox: { min: [0, 0, 0], max: [40, 30, 20] }, volume: 24_000, silhouette: null } as const;
+const box = { format: 'stl-binary', compression: null, facets: 12, boundingBox: { min: [0, 0, 0], max: [40, 30, 20] }, volume: 24_000, declaredUnit: null, silhouette: null } as const;
 const entry = (key: string, more: Partial<UploadEntry> = {}): UploadEntry => ({
   key,
   projectId: 'project',

@@ -145,7 +145,7 @@ function Others({ count }: { count: number }) {
   return (
     <p className="others-line">
       <span className="soft">
-        {countOf(count, 'file')} that {count === 1 ? 'is' : 'are'} neither STL nor OBJ by name {count === 1 ? 'was' : 'were'} left out.
+        {countOf(count, 'file')} that {count === 1 ? 'is no mesh by its name was' : 'are no meshes by their names were'} left out.
       </span>
       <Button size="small" onClick={takeOthers}>
         Send {count === 1 ? 'it' : 'them'} all the same

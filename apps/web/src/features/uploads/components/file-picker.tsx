@@ -1,4 +1,5 @@
 import { Button } from '@blueprintjs/core';
+import { meshFileEndings } from '@masswright/contracts';
 import { useRef, type InputHTMLAttributes } from 'react';
 import { collectChosen, type DroppedFile } from '../../../lib/dropped-files';
 
@@ -10,7 +11,8 @@ interface FilePickerProps {
   small?: boolean;
 }
 
-const accepted = '.stl,.obj,.gz,model/stl,model/obj,application/sla,application/gzip';
+const types = ['model/stl', 'model/obj', 'model/3mf', 'model/gltf+json', 'model/gltf-binary', 'application/sla', 'application/gzip'];
+const accepted = [...meshFileEndings.map((ending) => `.${ending}`), '.gz', ...types].join(',');
 /** Browsers know it; the types of React do not. */
 const folderField = { webkitdirectory: '' } as InputHTMLAttributes<HTMLInputElement>;
 
@@ -34,7 +36,7 @@ export function FilePicker({ onFiles, single = false, small = false }: FilePicke
           </Button>
         )}
       </p>
-      {!small && <p className="soft">STL, binary or text, and OBJ; either may be packed with gzip.{single ? '' : ' One file is one part.'}</p>}
+      {!small && <p className="soft">STL, OBJ, PLY, OFF, 3MF and glTF; each may be packed with gzip.{single ? '' : ' One file is one part.'}</p>}
       <input ref={files} type="file" multiple={!single} accept={accepted} className="hidden-visually" tabIndex={-1} aria-label="Mesh files" onChange={(event) => take(event.currentTarget)} />
       {!single && <input ref={folder} type="file" multiple {...folderField} className="hidden-visually" tabIndex={-1} aria-label="Folder of meshes" onChange={(event) => take(event.currentTarget)} />}
     </div>

@@ -7,6 +7,7 @@ import { MaterialPicker } from '../../../components/material-picker';
 import { readDensity } from '../../../lib/density';
 import { countOf } from '../../../lib/plural';
 import { unitTexts } from '../../../lib/unit-texts';
+import { describeDeclaredUnits, findCommonUnit } from '../model/declared-units';
 import { isRead } from '../model/quick-figures';
 import { computeUnitEvidence, findMedianMesh } from '../model/unit-evidence';
 import type { UploadEntry } from '../model/upload-entry';
@@ -38,7 +39,9 @@ function readAnswer({ material, text }: DensityAnswer, materials: readonly Mater
 
 /** The one question of a drop: in which unit the meshes are; with what each answer would mean before the person's eyes. */
 export function UnitPanel({ entries, materials, onAnswered }: UnitPanelProps) {
-  const [unit, setUnit] = useState<LengthUnit>();
+  const [chosen, setUnit] = useState<LengthUnit>();
+  // Nothing is chosen for the person but what all of the files say themselves.
+  const unit = chosen ?? findCommonUnit(entries);
   const [density, setDensity] = useState<DensityAnswer>({ material: null, text: '' });
   const [byFile, setByFile] = useState<readonly string[]>();
   const [asked, setAsked] = useState(false);
@@ -79,7 +82,7 @@ export function UnitPanel({ entries, materials, onAnswered }: UnitPanelProps) {
     >
       <h3>{entries.length === 1 ? 'What unit is this mesh in?' : `What unit are these ${entries.length} meshes in?`}</h3>
       <p className="soft">
-        {entries.length === 1 ? 'The file does not say.' : 'The files do not say. One answer serves all of them, and any can differ.'} No mass is stated until you answer; the answer can be changed at any time.
+        {describeDeclaredUnits(entries)} No mass is stated until you answer; the answer can be changed at any time.
       </p>
       <div className="unit-panel-material">
         <div className="unit-panel-field">

@@ -24,7 +24,7 @@ function Rough({ figure, unit }: { figure: string; unit: string }) {
 const nothing = { figure: '–', unit: '' };
 const unitsBySize: readonly LengthUnit[] = ['micron', 'mm', 'cm', 'inch', 'foot', 'm'];
 
-/** Mesh files don't say their unit, and a wrong one is wrong by its cube: so it is asked, with what each answer would mean, and none is preselected. */
+/** Most mesh files don't say their unit, and a wrong one is wrong by its cube: so it is asked, with what each answer would mean, and none is preselected but what the files say. */
 export function UnitQuestion({ evidence, answer, onAnswer, count }: UnitQuestionProps) {
   const name = useId();
   const single = count === 1;

@@ -6,9 +6,9 @@ const names = (files: { file: File }[]): string[] => files.map(({ file }) => fil
 
 describe('what a drop may hold', () => {
   it('sends meshes by their names and leaves the rest for the person to say', () => {
-    const { meshes, others } = separateMeshes(['a.stl', 'B.STL', 'c.obj.gz', 'd.OBJ', 'notes.txt', 'archive.gz', 'stl', '.DS_Store'].map((name) => dropped(name)));
-    expect(names(meshes)).toEqual(['a.stl', 'B.STL', 'c.obj.gz', 'd.OBJ']);
-    expect(names(others)).toEqual(['notes.txt', 'archive.gz', 'stl', '.DS_Store']);
+    const { meshes, others } = separateMeshes(['a.stl', 'B.STL', 'c.obj.gz', 'd.OBJ', 'e.ply', 'f.off', 'g.3MF', 'h.glb', 'i.gltf', 'j.ply.gz', 'notes.txt', 'skin.png', '.gz.stl.zip', 'archive.gz', 'stl', '.DS_Store'].map((name) => dropped(name)));
+    expect(names(meshes)).toEqual(['a.stl', 'B.STL', 'c.obj.gz', 'd.OBJ', 'e.ply', 'f.off', 'g.3MF', 'h.glb', 'i.gltf', 'j.ply.gz']);
+    expect(names(others)).toEqual(['notes.txt', 'skin.png', '.gz.stl.zip', 'archive.gz', 'stl', '.DS_Store']);
   });
   it('takes 500 files and 5 GB, and says by how much one is over', () => {
     expect(describeExcess(Array.from({ length: 500 }, () => dropped('a.stl', 10_000_000)))).toBeUndefined();

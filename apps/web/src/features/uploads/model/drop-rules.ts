@@ -1,16 +1,14 @@
-import { dropLimits } from '@masswright/contracts';
+import { dropLimits, hasMeshEnding } from '@masswright/contracts';
 import type { DroppedFile } from '../../../lib/dropped-files';
 import { formatBytes } from '../../../lib/format-bytes';
 import { countOf } from '../../../lib/plural';
-
-const meshEnding = /\.(stl|obj)(\.gz)?$/i;
 
 /**
  * Meshes by their names, and the rest. What a file is is told by its content, when it is read; but of a folder full of drawings and notes,
  * those are not sent unless a person says so.
  */
 export function separateMeshes(files: readonly DroppedFile[]): { meshes: DroppedFile[]; others: DroppedFile[] } {
-  return { meshes: files.filter(({ file }) => meshEnding.test(file.name)), others: files.filter(({ file }) => !meshEnding.test(file.name)) };
+  return { meshes: files.filter(({ file }) => hasMeshEnding(file.name)), others: files.filter(({ file }) => !hasMeshEnding(file.name)) };
 }
 
 /** Why a drop is more than one may hold, and by how much; undefined where it isn't. */

@@ -1,4 +1,4 @@
-import { cleanFileName, cleanFolder, fileNameKey, type ServerEvent } from '@masswright/contracts';
+import { cleanFileName, cleanFolder, dropMeshEnding, fileNameKey, type ServerEvent } from '@masswright/contracts';
 import pLimit from 'p-limit';
 import { getSentence, isProblem, isWorthAnotherTry } from '../../../lib/problem';
 import { createStore, useStore } from '../../../lib/store';
@@ -108,8 +108,7 @@ function ship(key: string, how: 'send' | 'retry'): void {
 function findPartName({ file, folder }: DroppedFile, all: readonly DroppedFile[]): string | undefined {
   const key = fileNameKey(file.name);
   if (folder === '' || all.filter((other) => fileNameKey(other.file.name) === key).length < 2) return undefined;
-  const name = cleanFileName(file.name).replace(/\.gz$/i, '').replace(/\.(stl|obj)$/i, '');
-  return `${name} (${cleanFolder(folder)})`.slice(0, 200);
+  return `${dropMeshEnding(file.name)} (${cleanFolder(folder)})`.slice(0, 200);
 }
 
 /** Files of which is being asked whether parts have them; they are sent once that is known. */
