@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { axis, changeSettingRequest, createUploadRequest, emailAddress, linkToken, newPassword } from './index';
+import { asMade, axis, changeSettingRequest, createUploadRequest, emailAddress, linkToken, newPassword, setting, shellDensity } from './index';
 
 describe('contracts', () => {
   it('an e-mail address is trimmed and lowered, so that one person is not two', () => {
@@ -29,5 +29,19 @@ describe('contracts', () => {
   it('a new password has at least 12 characters', () => {
     expect(newPassword.safeParse('elevenchars').success).toBe(false);
     expect(newPassword.safeParse('twelve chars').success).toBe(true);
+  });
+  it('a setting from before tolerances and densities of shells reads as it was stored', () => {
+    const stored = { lengthUnit: 'mm', densityKgM3: 2700, densitySpreadKgM3: null, material: null, weighing: null, axis: { kind: 'mesh', along: 'z' }, drive: null };
+    expect(setting.parse(stored)).toEqual(stored);
+    const made = { ...stored, asMade: { kind: 'offset', spreadM: 1e-4 }, shellDensities: [{ shell: 2, densityKgM3: null }] };
+    expect(setting.parse(made)).toEqual(made);
+  });
+  it('a tolerance is of scale or along the normal, not negative and not absurd', () => {
+    expect(asMade.safeParse({ kind: 'scale', spread: 0.003 }).success).toBe(true);
+    expect(asMade.safeParse({ kind: 'scale', spread: -0.003 }).success).toBe(false);
+    expect(asMade.safeParse({ kind: 'scale', spread: 3 }).success).toBe(false);
+    expect(asMade.safeParse({ kind: 'offset', spread: 0.003 }).success).toBe(false);
+    expect(shellDensity.safeParse({ shell: 200, densityKgM3: 1 }).success).toBe(false);
+    expect(shellDensity.safeParse({ shell: 0, densityKgM3: 0 }).success).toBe(false);
   });
 });

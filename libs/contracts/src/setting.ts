@@ -98,7 +98,5 @@ export const settingChange = densityChoice.extend({
   weighing: weighing.nullable().optional(),
   axis: axis.optional(),
   drive: drive.nullable().optional(),
-  asMade: asMade.nullable().optional(),
-  shellDensities: z.array(shellDensity).max(200).optional(),
 });
 export type SettingChange = z.infer<typeof settingChange>;
