@@ -1,6 +1,4 @@
-import { beginSums, borrowKernel, readSums, returnKernel } from '../../libs/geometry/src/kernel/compiled-kernel';
-import { kernelFacets } from '../../libs/geometry/src/kernel/kernel-memory';
-import { blockedRoundings, computeErrorBound } from '../../libs/geometry/src/error-bound';
+import { beginSums, blockedRoundings, borrowKernel, computeErrorBound, kernelFacets, readSums, returnKernel } from '@masswright/geometry/kernels';
 
 const headerBytes = 84;
 const facetBytes = 50;

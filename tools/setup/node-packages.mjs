@@ -24,12 +24,13 @@ function isCurrent() {
 
 /**
  * Runs `npm ci` when node_modules is missing or not the lock's.
+ * @param {'inherit' | number} [output] where what npm prints goes
  * @returns {boolean} whether it had to
  */
-export function ensureNodePackages() {
+export function ensureNodePackages(output = 'inherit') {
   if (isCurrent()) return false;
   console.log('Installing the Node packages of the lock file (npm ci) …');
-  const done = spawnSync('npm', ['ci', '--no-audit', '--no-fund', '--loglevel=error'], { cwd: root, stdio: ['ignore', 'inherit', 'inherit'] });
+  const done = spawnSync('npm', ['ci', '--no-audit', '--no-fund', '--loglevel=error'], { cwd: root, stdio: ['ignore', output, 'inherit'] });
   if (done.status !== 0) throw new Obstacle('npm ci failed; its message is above.');
   writeFileSync(stamp, hashLock());
   return true;
