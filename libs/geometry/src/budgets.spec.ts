@@ -21,6 +21,8 @@ function* repeat(...pieces: [text: string | Uint8Array, times: number][]): Gener
   }
 }
 
+const plyHead = 'ply\nformat ascii 1.0\nelement vertex 3\nproperty float x\nproperty float y\nproperty float z\nelement face 1\nproperty list uchar int vertex_indices\nend_header\n';
+
 interface Refusal {
   error: MeshError;
   /** How much had been handed over when the file was refused. */
@@ -56,7 +58,7 @@ describe('a file that claims more facets than anything can hold', () => {
   it('and announces a size to match is refused by its header', () => {
     const { error, pushedBytes, memoryBytes } = refuse(repeat([head.subarray(0, 84), 1], [facet, 1e6]), { sizeBytes: 84 + 50 * 0xffffffff });
     expect(error).toMatchObject({ code: 'too-many-facets', at: { byte: 84 + 50 * defaultLimits.maximumFacets } });
-    expect(error.message).toMatch(/\(binary STL\) has more than 20\u2009000\u2009000 facets/);
+    expect(error.message).toMatch(/\(binary STL\) has more than [\d\u2009]+ facets/);
     expect(pushedBytes).toBeLessThanOrEqual(2 * chunkBytes);
     expect(memoryBytes).toBeLessThan(4 * megabyte);
   });
@@ -77,6 +79,8 @@ describe('lines, words and polygons without end', () => {
     ['a comment of 100 MB in OBJ', [['v 0 0 0\n#', 1], ['-', 1e8]], /Line 2 is longer than 4\u2009194\u2009304 bytes, the most that is read of one line of OBJ/, 2],
     ['a name of 100 MB in OBJ', [['v 0 0 0\no', 1], [' word', 2e7]], /Line 2 is longer/, 2],
     ['100 MB of blanks in OBJ', [['v 0 0 0\nv', 1], [' ', 1e8]], /Line 2 is longer/, 2],
+    ['a comment of 100 MB in OFF', [['OFF\n#', 1], ['-', 1e8]], /Line 2 is longer than 4\u2009194\u2009304 bytes, the most that is read of one line of OFF/, 2],
+    ['100 MB of blanks in PLY', [[plyHead, 1], [' ', 1e8]], /Line 10 goes on for more than 4\u2009194\u2009304 bytes/, 10],
   ];
   it.each(endless)('%s', (_name, pieces, sentence, line) => {
     const { error, pushedBytes, memoryBytes } = refuse(repeat(...pieces));
@@ -90,6 +94,8 @@ describe('lines, words and polygons without end', () => {
     ['a number of a million digits in ASCII STL', [['solid a\nfacet normal 0 0 1\nouter loop\nvertex 0.', 1], ['3', 1e6]], /not an STL mesh/, 4],
     ['a number of a million digits in OBJ', [['v 0 0 0\nv 0.', 1], ['3', 1e6]], /not an OBJ mesh/, 2],
     ['the number of a vertex with a million digits in OBJ', [['v 0 0 0\nf ', 1], ['3', 1e6]], /not an OBJ mesh/, 2],
+    ['a number of a million digits in OFF', [['OFF\n3 1 0\n0.', 1], ['3', 1e6]], /not an OFF mesh/, 3],
+    ['a number of a million digits in PLY', [[`${plyHead}0.`, 1], ['3', 1e6]], /not a PLY mesh/, 10],
     ['a keyword of a million letters in OBJ', [['v 0 0 0\n', 1], ['v', 1e6]], /not an OBJ mesh/, 2],
   ];
   it.each(words)('%s', (_name, pieces, format, line) => {
@@ -137,6 +143,39 @@ describe('an OBJ file of vertices without end', () => {
     const { error } = refuse(repeat(['v 0 0 0\nv 1 0 0\nv 0 1 0\n', 1], ['f 1 2 3\n', 3e5]), { maximumFacets: 1e5 });
     expect(error).toMatchObject({ code: 'too-many-facets', at: { line: 100_004 } });
     expect(error.message).toMatch(/\(OBJ\)/);
+  });
+});
+
+describe('a file that has to be there as a whole', () => {
+  it.each([
+    ['binary glTF', 'glTF\x02\0\0\0\xff\xff\xff\xff'],
+    ['3MF', 'PK\x03\x04\x14\0\0\0\x08\0'],
+  ])('of %s is refused once it is too large, with memory for what came', (_name, head) => {
+    const { error, pushedBytes, memoryBytes } = refuse(repeat([head, 1], ['\0', 1e9]), { maximumKeptBytes: 20 * megabyte });
+    expect(error).toMatchObject({ code: 'too-large-expanded', at: { byte: 20 * megabyte } });
+    expect(pushedBytes).toBeLessThan(21 * megabyte);
+    expect(memoryBytes).toBeLessThan(3 * 20 * megabyte);
+  });
+
+  it('of JSON has a limit of its own', () => {
+    const { error, memoryBytes } = refuse(repeat(['{"asset":{"version":"2.0"},"nodes":[', 1], ['{},', 1e7]), { maximumJsonBytes: megabyte });
+    expect(error).toMatchObject({ code: 'too-large-expanded', format: 'gltf' });
+    expect(memoryBytes).toBeLessThan(4 * megabyte);
+  });
+});
+
+describe('a file that declares what it does not have', () => {
+  it.each([
+    ['vertices in PLY', `${plyHead.replace('vertex 3', 'vertex 19999999').replace('ascii', 'binary_little_endian')}\0\0`, 'file-truncated'],
+    ['faces in PLY', `${plyHead.replace('face 1', 'face 19999999')}0 0 0\n1 0 0\n0 1 0\n`, 'file-truncated'],
+    ['corners in PLY', `${plyHead}0 0 0\n1 0 0\n0 1 0\n4294967295 0 1 2\n`, 'syntax-invalid'],
+    ['vertices in OFF', 'OFF\n19999999 1 0\n0 0 0\n', 'file-truncated'],
+    ['corners in OFF', 'OFF\n3 1 0\n0 0 0\n1 0 0\n0 1 0\n4294967295 0 1 2\n', 'syntax-invalid'],
+  ])('%s is refused without memory for them', (_name, text, code) => {
+    const bytes = encode(text);
+    const { error, memoryBytes } = refuse([bytes], { sizeBytes: bytes.length });
+    expect(error.code).toBe(code);
+    expect(memoryBytes).toBeLessThan(4 * megabyte);
   });
 });
 

@@ -25,7 +25,8 @@ export interface MeshReader {
 
 /**
  * Reads a mesh file that is pushed in chunks of any size; what comes out does not depend on the sizes. Memory is constant for STL: a batch of facets
- * and the pieces that straddle chunks; of OBJ the vertices are kept. `push` and `finish` throw a MeshError; after that the reader is of no more use.
+ * and the pieces that straddle chunks; of OBJ, PLY and OFF the vertices are kept, 3MF and glTF as they are. `push` and `finish` throw a MeshError; after
+ * that the reader is of no more use.
  */
 export function createMeshReader({ sizeBytes, onFacets, packed, ...limits }: MeshReaderOptions): MeshReader {
   const content = createContentReader({ sizeBytes, limits: completeLimits(limits), onFacets, packed });
