@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm';
-import { and, eq, inArray, isNull, ne, or } from 'drizzle-orm';
+import { and, desc, eq, inArray, isNull, ne, or } from 'drizzle-orm';
 import type { Finding, Integrals, Measurement, MeasuringError, MeasuringRun, Soundness, Symmetric3, Vector3 } from '@masswright/contracts';
 import { measurements, measuringRuns, parts, revisions, uploads } from '../schema';
 import type { Transaction } from '../tenancy/database';
@@ -238,6 +238,17 @@ async function findMeasurement(tx: Transaction, sha256: Buffer, measuringVersion
     .from(measurements)
     .where(and(eq(measurements.sha256, sha256), eq(measurements.measuringVersion, measuringVersion)));
   return row?.id;
+}
+
+/** What the organisation knows of a file by another measuring version, the latest of them. */
+export async function findMeasuredByOtherVersion(tx: Transaction, sha256: Buffer, version: string): Promise<Measurement | undefined> {
+  const [row] = await tx
+    .select()
+    .from(measurements)
+    .where(and(eq(measurements.sha256, sha256), ne(measurements.measuringVersion, version)))
+    .orderBy(desc(measurements.createdAt))
+    .limit(1);
+  return row && presentMeasurement(row);
 }
 
 /** The id of the organisation's measurement of a file that nothing remains to be examined of. */

@@ -800,7 +800,7 @@ export interface components {
                         /** @enum {string} */
                         state: "queued" | "running" | "done" | "failed";
                         /** @enum {string} */
-                        stage: "waiting" | "hashing" | "reading" | "measuring" | "storing";
+                        stage: "waiting" | "hashing" | "reading" | "measuring" | "examining" | "storing";
                         progress: number;
                         error: {
                             /** @enum {string} */
@@ -853,6 +853,19 @@ export interface components {
                             speedRadPerS: number;
                             timeS: number;
                         } | null;
+                        asMade?: ({
+                            /** @enum {string} */
+                            kind: "scale";
+                            spread: number;
+                        } | {
+                            /** @enum {string} */
+                            kind: "offset";
+                            spreadM: number;
+                        }) | null;
+                        shellDensities?: {
+                            shell: number;
+                            densityKgM3: number | null;
+                        }[];
                         version: number;
                         /** Format: date-time */
                         changedAt: string;
@@ -866,7 +879,7 @@ export interface components {
                 };
                 soundness: {
                     defensible: boolean;
-                    closed: boolean;
+                    closed: boolean | null;
                     oriented: boolean;
                     turned: boolean;
                 } | null;
@@ -1029,7 +1042,7 @@ export interface components {
                     /** @enum {string} */
                     state: "queued" | "running" | "done" | "failed";
                     /** @enum {string} */
-                    stage: "waiting" | "hashing" | "reading" | "measuring" | "storing";
+                    stage: "waiting" | "hashing" | "reading" | "measuring" | "examining" | "storing";
                     progress: number;
                     error: {
                         /** @enum {string} */
@@ -1082,6 +1095,19 @@ export interface components {
                         speedRadPerS: number;
                         timeS: number;
                     } | null;
+                    asMade?: ({
+                        /** @enum {string} */
+                        kind: "scale";
+                        spread: number;
+                    } | {
+                        /** @enum {string} */
+                        kind: "offset";
+                        spreadM: number;
+                    }) | null;
+                    shellDensities?: {
+                        shell: number;
+                        densityKgM3: number | null;
+                    }[];
                     version: number;
                     /** Format: date-time */
                     changedAt: string;
@@ -1093,13 +1119,17 @@ export interface components {
                     } | null;
                 };
                 sha256: string | null;
-                format: ("stl-binary" | "stl-ascii" | "obj") | null;
+                format: ("stl-binary" | "stl-ascii" | "obj" | "ply-ascii" | "ply-binary" | "off" | "3mf" | "gltf" | "glb") | null;
                 compression: "gzip" | null;
                 measurement: {
                     measuringVersion: string;
                     /** @enum {string} */
-                    format: "stl-binary" | "stl-ascii" | "obj";
+                    format: "stl-binary" | "stl-ascii" | "obj" | "ply-ascii" | "ply-binary" | "off" | "3mf" | "gltf" | "glb";
                     compression: "gzip" | null;
+                    declaredUnit: ("micron" | "mm" | "cm" | "m" | "inch" | "foot") | null;
+                    declaredMaterials: string[];
+                    /** @enum {string} */
+                    examined: "integrals" | "whole" | "limited";
                     facets: number;
                     origin: [
                         number,
@@ -1133,6 +1163,7 @@ export interface components {
                             yz: number;
                             zx: number;
                         };
+                        errorBound: number;
                     } | null;
                     surface: {
                         content: number;
@@ -1149,24 +1180,322 @@ export interface components {
                             yz: number;
                             zx: number;
                         };
+                        errorBound: number;
                     };
                     soundness: {
-                        closed: boolean;
+                        closed: boolean | null;
                         oriented: boolean;
                         outward: boolean;
                         turned: boolean;
-                        boundaryEdges: number;
-                        nonManifoldEdges: number;
-                        degenerateFacets: number;
-                        duplicateFacets: number;
+                        boundaryEdges: number | null;
+                        nonManifoldEdges: number | null;
+                        nonManifoldVertices: number | null;
+                        degenerateFacets: number | null;
+                        duplicateFacets: number | null;
+                        shells: number | null;
+                        cavities: number | null;
+                        selfIntersections: number | null;
                         defensible: boolean;
                         findings: {
                             /** @enum {string} */
-                            kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons" | "folded-polygons";
+                            kind: "boundary-edges" | "hairline-gaps" | "crowded-edges" | "unbalanced-edges" | "turned-facets" | "crowded-vertices" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "turned-shells" | "overlapping-shells" | "self-intersections" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons" | "folded-polygons";
                             count: number;
                             facets: number[];
+                            lines: [
+                                number,
+                                number,
+                                number,
+                                number,
+                                number,
+                                number
+                            ][];
                         }[];
                     };
+                    shells: {
+                        /** @enum {string} */
+                        kind: "solid" | "detached" | "cavity" | "overlapping" | "open";
+                        facets: number;
+                        firstFacet: number;
+                        inside: number | null;
+                        turned: boolean;
+                        boundingBox: {
+                            min: [
+                                number,
+                                number,
+                                number
+                            ];
+                            max: [
+                                number,
+                                number,
+                                number
+                            ];
+                        };
+                        area: number;
+                        volume: {
+                            content: number;
+                            centreFromOrigin: [
+                                number,
+                                number,
+                                number
+                            ];
+                            second: {
+                                xx: number;
+                                yy: number;
+                                zz: number;
+                                xy: number;
+                                yz: number;
+                                zx: number;
+                            };
+                            errorBound: number;
+                        } | null;
+                    }[] | null;
+                    openings: {
+                        loops: {
+                            edges: number;
+                            length: number;
+                            centre: [
+                                number,
+                                number,
+                                number
+                            ];
+                            width: number;
+                        }[];
+                        loopCount: number;
+                        volumes: {
+                            aboutMiddle: number;
+                            fanned: number;
+                        };
+                        lostVolume: number | null;
+                    } | null;
+                    polygonVolume: number;
+                    facetDoubt: {
+                        body: {
+                            correction: {
+                                content: number;
+                                first: [
+                                    number,
+                                    number,
+                                    number
+                                ];
+                                second: {
+                                    xx: number;
+                                    yy: number;
+                                    zz: number;
+                                    xy: number;
+                                    yz: number;
+                                    zx: number;
+                                };
+                            };
+                            spread: {
+                                content: number;
+                                first: [
+                                    number,
+                                    number,
+                                    number
+                                ];
+                                second: {
+                                    xx: number;
+                                    yy: number;
+                                    zz: number;
+                                    xy: number;
+                                    yz: number;
+                                    zx: number;
+                                };
+                            }[];
+                        };
+                        area: {
+                            correction: number;
+                            spread: number[];
+                        };
+                    } | null;
+                } | null;
+                measuredBefore: {
+                    measuringVersion: string;
+                    /** @enum {string} */
+                    format: "stl-binary" | "stl-ascii" | "obj" | "ply-ascii" | "ply-binary" | "off" | "3mf" | "gltf" | "glb";
+                    compression: "gzip" | null;
+                    declaredUnit: ("micron" | "mm" | "cm" | "m" | "inch" | "foot") | null;
+                    declaredMaterials: string[];
+                    /** @enum {string} */
+                    examined: "integrals" | "whole" | "limited";
+                    facets: number;
+                    origin: [
+                        number,
+                        number,
+                        number
+                    ];
+                    boundingBox: {
+                        min: [
+                            number,
+                            number,
+                            number
+                        ];
+                        max: [
+                            number,
+                            number,
+                            number
+                        ];
+                    };
+                    volume: {
+                        content: number;
+                        centreFromOrigin: [
+                            number,
+                            number,
+                            number
+                        ];
+                        second: {
+                            xx: number;
+                            yy: number;
+                            zz: number;
+                            xy: number;
+                            yz: number;
+                            zx: number;
+                        };
+                        errorBound: number;
+                    } | null;
+                    surface: {
+                        content: number;
+                        centreFromOrigin: [
+                            number,
+                            number,
+                            number
+                        ];
+                        second: {
+                            xx: number;
+                            yy: number;
+                            zz: number;
+                            xy: number;
+                            yz: number;
+                            zx: number;
+                        };
+                        errorBound: number;
+                    };
+                    soundness: {
+                        closed: boolean | null;
+                        oriented: boolean;
+                        outward: boolean;
+                        turned: boolean;
+                        boundaryEdges: number | null;
+                        nonManifoldEdges: number | null;
+                        nonManifoldVertices: number | null;
+                        degenerateFacets: number | null;
+                        duplicateFacets: number | null;
+                        shells: number | null;
+                        cavities: number | null;
+                        selfIntersections: number | null;
+                        defensible: boolean;
+                        findings: {
+                            /** @enum {string} */
+                            kind: "boundary-edges" | "hairline-gaps" | "crowded-edges" | "unbalanced-edges" | "turned-facets" | "crowded-vertices" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "turned-shells" | "overlapping-shells" | "self-intersections" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons" | "folded-polygons";
+                            count: number;
+                            facets: number[];
+                            lines: [
+                                number,
+                                number,
+                                number,
+                                number,
+                                number,
+                                number
+                            ][];
+                        }[];
+                    };
+                    shells: {
+                        /** @enum {string} */
+                        kind: "solid" | "detached" | "cavity" | "overlapping" | "open";
+                        facets: number;
+                        firstFacet: number;
+                        inside: number | null;
+                        turned: boolean;
+                        boundingBox: {
+                            min: [
+                                number,
+                                number,
+                                number
+                            ];
+                            max: [
+                                number,
+                                number,
+                                number
+                            ];
+                        };
+                        area: number;
+                        volume: {
+                            content: number;
+                            centreFromOrigin: [
+                                number,
+                                number,
+                                number
+                            ];
+                            second: {
+                                xx: number;
+                                yy: number;
+                                zz: number;
+                                xy: number;
+                                yz: number;
+                                zx: number;
+                            };
+                            errorBound: number;
+                        } | null;
+                    }[] | null;
+                    openings: {
+                        loops: {
+                            edges: number;
+                            length: number;
+                            centre: [
+                                number,
+                                number,
+                                number
+                            ];
+                            width: number;
+                        }[];
+                        loopCount: number;
+                        volumes: {
+                            aboutMiddle: number;
+                            fanned: number;
+                        };
+                        lostVolume: number | null;
+                    } | null;
+                    polygonVolume: number;
+                    facetDoubt: {
+                        body: {
+                            correction: {
+                                content: number;
+                                first: [
+                                    number,
+                                    number,
+                                    number
+                                ];
+                                second: {
+                                    xx: number;
+                                    yy: number;
+                                    zz: number;
+                                    xy: number;
+                                    yz: number;
+                                    zx: number;
+                                };
+                            };
+                            spread: {
+                                content: number;
+                                first: [
+                                    number,
+                                    number,
+                                    number
+                                ];
+                                second: {
+                                    xx: number;
+                                    yy: number;
+                                    zz: number;
+                                    xy: number;
+                                    yz: number;
+                                    zx: number;
+                                };
+                            }[];
+                        };
+                        area: {
+                            correction: number;
+                            spread: number[];
+                        };
+                    } | null;
                 } | null;
             };
             revisions: {
@@ -2357,26 +2686,38 @@ export interface operations {
                         file: string;
                         sha256: string;
                         /** @enum {string} */
-                        format: "stl-binary" | "stl-ascii" | "obj";
+                        format: "stl-binary" | "stl-ascii" | "obj" | "ply-ascii" | "ply-binary" | "off" | "3mf" | "gltf" | "glb";
                         /** @enum {string} */
                         lengthUnit: "micron" | "mm" | "cm" | "m" | "inch" | "foot";
                         facets: number;
                         measuringVersion: string;
                         soundness: {
-                            closed: boolean;
+                            closed: boolean | null;
                             oriented: boolean;
                             outward: boolean;
                             turned: boolean;
-                            boundaryEdges: number;
-                            nonManifoldEdges: number;
-                            degenerateFacets: number;
-                            duplicateFacets: number;
+                            boundaryEdges: number | null;
+                            nonManifoldEdges: number | null;
+                            nonManifoldVertices: number | null;
+                            degenerateFacets: number | null;
+                            duplicateFacets: number | null;
+                            shells: number | null;
+                            cavities: number | null;
+                            selfIntersections: number | null;
                             defensible: boolean;
                             findings: {
                                 /** @enum {string} */
-                                kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons" | "folded-polygons";
+                                kind: "boundary-edges" | "hairline-gaps" | "crowded-edges" | "unbalanced-edges" | "turned-facets" | "crowded-vertices" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "turned-shells" | "overlapping-shells" | "self-intersections" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons" | "folded-polygons";
                                 count: number;
                                 facets: number[];
+                                lines: [
+                                    number,
+                                    number,
+                                    number,
+                                    number,
+                                    number,
+                                    number
+                                ][];
                             }[];
                         };
                         material: string | null;
@@ -2461,6 +2802,108 @@ export interface operations {
                             ];
                             inertiaKgM2: number;
                             radiusOfGyrationM: number;
+                        } | null;
+                        correction: {
+                            volumeM3: number;
+                            areaM2: number | null;
+                            massKg: number | null;
+                            centreOfMassM: [
+                                number,
+                                number,
+                                number
+                            ];
+                            inertiaAtCentreOfMassKgM2: {
+                                xx: number;
+                                yy: number;
+                                zz: number;
+                                xy: number;
+                                yz: number;
+                                zx: number;
+                            } | null;
+                            principalMomentsKgM2: [
+                                number,
+                                number,
+                                number
+                            ] | null;
+                            radiiOfGyrationM: [
+                                number,
+                                number,
+                                number
+                            ] | null;
+                            aboutAxis: {
+                                inertiaKgM2: number;
+                                radiusOfGyrationM: number;
+                            } | null;
+                        } | null;
+                        uncertainty: {
+                            volumeM3: number;
+                            areaM2: number | null;
+                            massKg: number | null;
+                            centreOfMassM: [
+                                number,
+                                number,
+                                number
+                            ];
+                            inertiaAtCentreOfMassKgM2: {
+                                xx: number;
+                                yy: number;
+                                zz: number;
+                                xy: number;
+                                yz: number;
+                                zx: number;
+                            } | null;
+                            principalMomentsKgM2: [
+                                number,
+                                number,
+                                number
+                            ] | null;
+                            radiiOfGyrationM: [
+                                number,
+                                number,
+                                number
+                            ] | null;
+                            aboutAxis: {
+                                inertiaKgM2: number;
+                                radiusOfGyrationM: number;
+                            } | null;
+                            /** @constant */
+                            k: 2;
+                            terms: {
+                                /** @enum {string} */
+                                name: "density" | "weighing" | "facets" | "as-made" | "gap" | "polygons" | "file-rounding" | "arithmetic";
+                                shares: {
+                                    volumeM3: number;
+                                    areaM2: number | null;
+                                    massKg: number | null;
+                                    centreOfMassM: [
+                                        number,
+                                        number,
+                                        number
+                                    ];
+                                    inertiaAtCentreOfMassKgM2: {
+                                        xx: number;
+                                        yy: number;
+                                        zz: number;
+                                        xy: number;
+                                        yz: number;
+                                        zx: number;
+                                    } | null;
+                                    principalMomentsKgM2: [
+                                        number,
+                                        number,
+                                        number
+                                    ] | null;
+                                    radiiOfGyrationM: [
+                                        number,
+                                        number,
+                                        number
+                                    ] | null;
+                                    aboutAxis: {
+                                        inertiaKgM2: number;
+                                        radiusOfGyrationM: number;
+                                    } | null;
+                                };
+                            }[];
                         } | null;
                         part: {
                             number: number;
@@ -2869,26 +3312,38 @@ export interface operations {
                         file: string;
                         sha256: string;
                         /** @enum {string} */
-                        format: "stl-binary" | "stl-ascii" | "obj";
+                        format: "stl-binary" | "stl-ascii" | "obj" | "ply-ascii" | "ply-binary" | "off" | "3mf" | "gltf" | "glb";
                         /** @enum {string} */
                         lengthUnit: "micron" | "mm" | "cm" | "m" | "inch" | "foot";
                         facets: number;
                         measuringVersion: string;
                         soundness: {
-                            closed: boolean;
+                            closed: boolean | null;
                             oriented: boolean;
                             outward: boolean;
                             turned: boolean;
-                            boundaryEdges: number;
-                            nonManifoldEdges: number;
-                            degenerateFacets: number;
-                            duplicateFacets: number;
+                            boundaryEdges: number | null;
+                            nonManifoldEdges: number | null;
+                            nonManifoldVertices: number | null;
+                            degenerateFacets: number | null;
+                            duplicateFacets: number | null;
+                            shells: number | null;
+                            cavities: number | null;
+                            selfIntersections: number | null;
                             defensible: boolean;
                             findings: {
                                 /** @enum {string} */
-                                kind: "boundary-edges" | "crowded-edges" | "unbalanced-edges" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons" | "folded-polygons";
+                                kind: "boundary-edges" | "hairline-gaps" | "crowded-edges" | "unbalanced-edges" | "turned-facets" | "crowded-vertices" | "degenerate-facets" | "duplicate-facets" | "turned-whole" | "turned-shells" | "overlapping-shells" | "self-intersections" | "no-volume" | "trailing-bytes" | "several-solids" | "nonzero-attributes" | "contradicting-normals" | "non-planar-polygons" | "folded-polygons";
                                 count: number;
                                 facets: number[];
+                                lines: [
+                                    number,
+                                    number,
+                                    number,
+                                    number,
+                                    number,
+                                    number
+                                ][];
                             }[];
                         };
                         material: string | null;
@@ -2973,6 +3428,108 @@ export interface operations {
                             ];
                             inertiaKgM2: number;
                             radiusOfGyrationM: number;
+                        } | null;
+                        correction: {
+                            volumeM3: number;
+                            areaM2: number | null;
+                            massKg: number | null;
+                            centreOfMassM: [
+                                number,
+                                number,
+                                number
+                            ];
+                            inertiaAtCentreOfMassKgM2: {
+                                xx: number;
+                                yy: number;
+                                zz: number;
+                                xy: number;
+                                yz: number;
+                                zx: number;
+                            } | null;
+                            principalMomentsKgM2: [
+                                number,
+                                number,
+                                number
+                            ] | null;
+                            radiiOfGyrationM: [
+                                number,
+                                number,
+                                number
+                            ] | null;
+                            aboutAxis: {
+                                inertiaKgM2: number;
+                                radiusOfGyrationM: number;
+                            } | null;
+                        } | null;
+                        uncertainty: {
+                            volumeM3: number;
+                            areaM2: number | null;
+                            massKg: number | null;
+                            centreOfMassM: [
+                                number,
+                                number,
+                                number
+                            ];
+                            inertiaAtCentreOfMassKgM2: {
+                                xx: number;
+                                yy: number;
+                                zz: number;
+                                xy: number;
+                                yz: number;
+                                zx: number;
+                            } | null;
+                            principalMomentsKgM2: [
+                                number,
+                                number,
+                                number
+                            ] | null;
+                            radiiOfGyrationM: [
+                                number,
+                                number,
+                                number
+                            ] | null;
+                            aboutAxis: {
+                                inertiaKgM2: number;
+                                radiusOfGyrationM: number;
+                            } | null;
+                            /** @enum {number} */
+                            k: 2;
+                            terms: {
+                                /** @enum {string} */
+                                name: "density" | "weighing" | "facets" | "as-made" | "gap" | "polygons" | "file-rounding" | "arithmetic";
+                                shares: {
+                                    volumeM3: number;
+                                    areaM2: number | null;
+                                    massKg: number | null;
+                                    centreOfMassM: [
+                                        number,
+                                        number,
+                                        number
+                                    ];
+                                    inertiaAtCentreOfMassKgM2: {
+                                        xx: number;
+                                        yy: number;
+                                        zz: number;
+                                        xy: number;
+                                        yz: number;
+                                        zx: number;
+                                    } | null;
+                                    principalMomentsKgM2: [
+                                        number,
+                                        number,
+                                        number
+                                    ] | null;
+                                    radiiOfGyrationM: [
+                                        number,
+                                        number,
+                                        number
+                                    ] | null;
+                                    aboutAxis: {
+                                        inertiaKgM2: number;
+                                        radiusOfGyrationM: number;
+                                    } | null;
+                                };
+                            }[];
                         } | null;
                     } | {
                         file: string;

@@ -107,6 +107,8 @@ export const part = z.object({
     format: meshFormat.nullable(),
     compression: meshCompression.nullable(),
     measurement: measurement.nullable(),
+    /** What an earlier measuring version found in the same bytes, where there is that: the latest of them. Its differences to `measurement` are those of the versions. */
+    measuredBefore: measurement.nullable(),
   }),
   /** All revisions, the latest first. */
   revisions: z.array(revisionHead.pick({ id: true, letter: true, fileName: true, reason: true, createdAt: true, createdBy: true })),

@@ -1,4 +1,4 @@
-import { measuringErrorCodes, type FailedRecord, type MeasuringError, type MeasuringRun, type Part, type PartRow, type StatementRecord } from '@masswright/contracts';
+import { measuringErrorCodes, type FailedRecord, type Measurement, type MeasuringError, type MeasuringRun, type Part, type PartRow, type StatementRecord } from '@masswright/contracts';
 import { presentMeasurement, readSetting, readStoredSetting, readSummarySource, type listRevisions, type listSameBytes, type StoredPart } from '@masswright/drizzle';
 import { computeStatement, summarisePart } from '@masswright/mechanics';
 import type { Actor } from '../platform/work';
@@ -87,10 +87,11 @@ export function presentPartRow(stored: StoredPart, sameBytes: ReadonlyMap<string
 export interface PartSurroundings {
   revisions: Awaited<ReturnType<typeof listRevisions>>;
   sameBytes: Awaited<ReturnType<typeof listSameBytes>>;
+  measuredBefore: Measurement | undefined;
   actor: Pick<Actor, 'role'>;
 }
 
-export function presentPart(stored: StoredPart, { revisions, sameBytes, actor }: PartSurroundings): Part {
+export function presentPart(stored: StoredPart, { revisions, sameBytes, measuredBefore, actor }: PartSurroundings): Part {
   const { measurement, part, upload } = stored;
   const { state, unitDoubt } = summarisePart(readSummarySource(stored));
   return {
@@ -107,6 +108,7 @@ export function presentPart(stored: StoredPart, { revisions, sameBytes, actor }:
       format: measurement?.format ?? null,
       compression: measurement?.compression ?? null,
       measurement: measurement === null ? null : presentMeasurement(measurement),
+      measuredBefore: measuredBefore ?? null,
     },
     revisions: revisions.map(({ id, ordinal, fileName, reason, createdAt, createdByName }) => ({
       id,

@@ -1,5 +1,5 @@
 import { Inject, Injectable } from '@nestjs/common';
-import type { ChangeSettingRequest, FailedRecord, Part, Setting, StatementRecord } from '@masswright/contracts';
+import { measuringVersion, type ChangeSettingRequest, type FailedRecord, type Part, type Setting, type StatementRecord } from '@masswright/contracts';
 import { addToOutbox, changeSetting, publishEvent, readSetting, refreshPartSummaries, renamePart, restartRun, type StoredPart, type Transaction } from '@masswright/drizzle';
 import { summarisePart } from '@masswright/mechanics';
 import { chooseDensity } from '../materials/choose-density';
@@ -56,17 +56,19 @@ export class PartsService {
     });
   }
 
-  /** Has a file that could not be measured read once more: its bytes are still there. */
+  /** Has a file read once more that could not be measured, or that an earlier measuring version measured: its bytes are still there. */
   measureAgain(context: SignedInContext, partId: string): Promise<Part> {
     return this.work.run(context, async (tx, actor) => {
       requireEdit(actor);
       const stored = await getPresentPart(tx, partId);
-      if (stored.run.state === 'done') throw new AppError('conflict', 'This file is measured; the same bytes give the same figures.');
-      if (stored.run.state === 'failed') {
+      const { run, measurement } = stored;
+      if (run.state === 'done' && measurement?.measuringVersion === measuringVersion) throw new AppError('conflict', 'This file is measured; the same bytes give the same figures.');
+      if (run.state === 'failed' || run.state === 'done') {
         const { organisationId, requestId } = context;
         const runId = await restartRun(tx, stored.revision.id);
         await addToOutbox(tx, { organisationId, job: 'measurement.run', payload: { organisationId, runId }, requestId });
-        await audit(tx, context, { action: 'measurement.restart', subject: { type: 'revision', id: stored.revision.id }, before: { code: stored.run.errorCode } });
+        const before = run.state === 'failed' ? { code: run.errorCode } : { measurementId: measurement?.id, measuringVersion: measurement?.measuringVersion };
+        await audit(tx, context, { action: 'measurement.restart', subject: { type: 'revision', id: stored.revision.id }, before });
         await this.announce(tx, context, stored);
       }
       return readPart(tx, partId, actor);

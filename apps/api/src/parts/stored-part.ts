@@ -1,5 +1,5 @@
 import type { Part } from '@masswright/contracts';
-import { findPart, holdParts, listRevisions, listSameBytes, type StoredPart, type Transaction } from '@masswright/drizzle';
+import { findMeasuredByOtherVersion, findPart, holdParts, listRevisions, listSameBytes, type StoredPart, type Transaction } from '@masswright/drizzle';
 import { AppError, notFound } from '../platform/app-error';
 import type { Actor } from '../platform/work';
 import { presentPart } from './part.presenter';
@@ -35,6 +35,7 @@ export async function readPart(tx: Transaction, partId: string, actor: Pick<Acto
   return presentPart(stored, {
     revisions: await listRevisions(tx, partId),
     sameBytes: sha256 === null ? [] : await listSameBytes(tx, sha256, stored.revision.id),
+    measuredBefore: sha256 === null || stored.measurement === null ? undefined : await findMeasuredByOtherVersion(tx, sha256, stored.measurement.measuringVersion),
     actor,
   });
 }

@@ -1,4 +1,4 @@
-import { finding, measurement, measuringErrorCodes, type Measurement, type MeasuringError } from '@masswright/contracts';
+import { finding, measurement, measuringErrorCodes, measuringVersion, type Measurement, type MeasuringError } from '@masswright/contracts';
 import * as geometry from '@masswright/geometry';
 import { describe, expect, expectTypeOf, it } from 'vitest';
 
@@ -10,6 +10,7 @@ describe('what geometry returns', () => {
     expectTypeOf<geometry.MeshErrorCode | 'file-missing' | 'gave-up' | 'took-too-long'>().toEqualTypeOf<MeasuringError['code']>();
     expect([...geometry.meshErrorCodes, 'file-missing', 'gave-up', 'took-too-long'].sort()).toEqual([...measuringErrorCodes].sort());
     expect([...geometry.findingKinds]).toEqual(finding.shape.kind.options);
+    expect(measuringVersion).toBe(geometry.measuringVersion);
   });
   it('is accepted by the contracts as it is, of a sound mesh and of an open one', () => {
     const [a, b, c, d] = [[0, 0, 0], [1, 0, 0], [0, 1, 0], [0, 0, 1]] as const;
