@@ -1,24 +1,24 @@
 import fc from 'fast-check';
 import { MeshoptEncoder } from 'meshoptimizer/encoder';
 import { beforeAll, describe, expect, it } from 'vitest';
-import { applyExponentialFilter, decodeMeshoptAttributes, decodeMeshoptIndices, decodeMeshoptTriangles } from './decode-meshopt';
+import { createRandom } from '../testing/fuzzing/random';
+import { applyExponentialFilter, decodeMeshoptAttributes } from './decode-meshopt-attributes';
+import { decodeMeshoptIndices, decodeMeshoptTriangles } from './decode-meshopt-indices';
 
 beforeAll(() => MeshoptEncoder.ready);
 
 /** Elements that follow one another more or less closely, so that every way of packing comes up. */
 const anyElements = fc.record({
-  stride: fc.constantFrom(4, 8, 12, 16, 40, 256),
+  stride: fc.constantFrom(4, 8, 12, 16, 40, 100, 256),
   count: fc.integer({ min: 1, max: 700 }),
   step: fc.constantFrom(0, 1, 3, 20, 255),
-  random: fc.infiniteStream(fc.nat(0xffffff)),
+  seed: fc.nat(),
 });
 
-function makeElements({ stride, count, step, random }: { stride: number; count: number; step: number; random: Iterator<number> }): Uint8Array {
+function makeElements({ stride, count, step, seed }: { stride: number; count: number; step: number; seed: number }): Uint8Array {
+  const random = createRandom(seed);
   const bytes = new Uint8Array(count * stride);
-  for (let at = 0; at < bytes.length; at++) {
-    const draw = random.next().value as number;
-    bytes[at] = (bytes[at - stride] ?? 0) + (draw % 97 === 0 ? draw >> 8 : (draw >> 8) % (step + 1));
-  }
+  for (let at = 0; at < bytes.length; at++) bytes[at] = (bytes[at - stride] ?? 0) + random.below(random.oneIn(97) ? 256 : step + 1);
   return bytes;
 }
 
@@ -83,7 +83,7 @@ describe('what the package meshoptimizer has packed', () => {
   });
 
   it('and was cut off, lengthened or damaged at its ends is refused', () => {
-    const bytes = makeElements({ stride: 12, count: 100, step: 3, random: Array.from({ length: 2000 }, (_, k) => k * 7919)[Symbol.iterator]() });
+    const bytes = makeElements({ stride: 12, count: 100, step: 3, seed: 1 });
     const [attributes, triangles, indices] = [MeshoptEncoder.encodeVertexBuffer(bytes, 100, 12), MeshoptEncoder.encodeIndexBuffer(new Uint8Array(Uint32Array.of(0, 1, 2, 2, 1, 3).buffer), 6, 4), MeshoptEncoder.encodeIndexSequence(new Uint8Array(Uint32Array.of(5, 9, 700).buffer), 3, 4)];
     const changes = [(packed: Uint8Array): Uint8Array => packed.subarray(0, -1), (packed: Uint8Array): Uint8Array => Uint8Array.from([...packed, 0]), (packed: Uint8Array): Uint8Array => packed.map((byte, k) => (k === 0 ? byte ^ 0x40 : byte)), (): Uint8Array => new Uint8Array(0)];
     for (const change of changes) {

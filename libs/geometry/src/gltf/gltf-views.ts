@@ -1,7 +1,8 @@
 import type { ReadingLimits } from '../limits';
 import { MeshError, spellCount, spellCounted } from '../mesh-error';
 import { showText } from '../mesh-words';
-import { applyExponentialFilter, decodeMeshoptAttributes, decodeMeshoptIndices, decodeMeshoptTriangles } from './decode-meshopt';
+import { applyExponentialFilter, decodeMeshoptAttributes } from './decode-meshopt-attributes';
+import { decodeMeshoptIndices, decodeMeshoptTriangles } from './decode-meshopt-indices';
 import type { JsonObject } from './gltf-json';
 
 /** Bytes of a buffer view. */

@@ -4,17 +4,11 @@
  * undefined where a stream does not make sense.
  */
 
+import { next, undoZigzag, type Cursor } from './meshopt-stream';
+
 /** Bits of a delta for each of the four codes of a group: in version 0, and in version 1 by the control mode. */
 const widths = { zero: [0, 2, 4, 8], narrow: [0, 1, 2, 4], wide: [1, 2, 4, 8] } as const;
 type Widths = (typeof widths)[keyof typeof widths];
-
-/** Reads a stream byte by byte; `at` runs beyond the end where the stream is too short. */
-interface Cursor {
-  readonly bytes: Uint8Array;
-  at: number;
-}
-
-const next = (cursor: Cursor): number => cursor.bytes[cursor.at++] ?? 0;
 
 /** Elements of any kind, as differences byte by byte: mode "ATTRIBUTES". */
 export function decodeMeshoptAttributes(source: Uint8Array, count: number, stride: number): Uint8Array<ArrayBuffer> | undefined {
@@ -82,8 +76,6 @@ function readGroup(cursor: Cursor, width: number, row: Uint8Array, at: number): 
   }
 }
 
-const undoZigzag = (value: number): number => (value >>> 1) ^ -(value & 1);
-
 /** Adds the differences of four bytes to those of the element before, as the channel says. */
 function addDeltas(channel: number, deltas: Uint8Array, spacing: number, byte: number, previous: Uint8Array, target: Uint8Array, first: number, elements: number, stride: number): void {
   const [a, b, c, d] = [byte * spacing, (byte + 1) * spacing, (byte + 2) * spacing, (byte + 3) * spacing];
@@ -116,98 +108,6 @@ function addDeltas(channel: number, deltas: Uint8Array, spacing: number, byte: n
 
 const addHalves = (before: number, delta: number): number =>
   (((before & 0xffff) + undoZigzag(delta & 0xffff)) & 0xffff) | (((before >>> 16) + undoZigzag(delta >>> 16)) << 16);
-
-/** A number of seven bits a byte, the lowest first. */
-function readVarint(cursor: Cursor): number {
-  let value = 0;
-  for (let shift = 0; shift < 35; shift += 7) {
-    const byte = next(cursor);
-    value |= (byte & 127) << shift;
-    if (byte < 128) break;
-  }
-  return value >>> 0;
-}
-
-/** The corners of separate triangles, told by edges and vertices that came shortly before: mode "TRIANGLES". */
-export function decodeMeshoptTriangles(source: Uint8Array, count: number): Uint32Array<ArrayBuffer> | undefined {
-  const codesAt = 1;
-  const cursor: Cursor = { bytes: source, at: codesAt + count / 3 };
-  const end = source.length - 16;
-  if (source[0] !== 0xe1 || count % 3 !== 0 || cursor.at > end) return undefined;
-  const table = source.subarray(end);
-  const target = new Uint32Array(count);
-  const edges = new Uint32Array(32);
-  const vertices = new Uint32Array(16);
-  let edgeAt = 0, vertexAt = 0, fresh = 0, last = 0;
-
-  const pushEdge = (from: number, to: number): void => {
-    edges[2 * edgeAt] = from;
-    edges[2 * edgeAt + 1] = to;
-    edgeAt = (edgeAt + 1) & 15;
-  };
-  const pushVertex = (vertex: number): void => {
-    vertices[vertexAt] = vertex;
-    vertexAt = (vertexAt + 1) & 15;
-  };
-  const recent = (back: number): number => vertices[(vertexAt - 1 - back) & 15] ?? 0;
-  const explicit = (): number => (last = (last + undoZigzag(readVarint(cursor))) >>> 0);
-  /** A corner by half a byte: the next new one, one of the last, or (where that is allowed) one that is written out. */
-  const corner = (code: number, mayBeExplicit: boolean): number => (code === 0 ? fresh++ : mayBeExplicit && code === 15 ? explicit() : recent(code - 1));
-
-  function takeByEdge(code: number, at: number): void {
-    const edge = (edgeAt - 1 - (code >> 4)) & 15;
-    const a = edges[2 * edge] ?? 0, b = edges[2 * edge + 1] ?? 0;
-    const low = code & 15;
-    const c = low === 0 ? fresh++ : low < 13 ? recent(low) : low === 15 ? explicit() : (last = (last + (low === 13 ? -1 : 1)) >>> 0);
-    if (low === 0 || low >= 13) pushVertex(c);
-    pushEdge(c, b);
-    pushEdge(a, c);
-    target.set([a, b, c], at);
-  }
-
-  function takeFree(code: number, at: number): void {
-    const written = code >= 0xfe;
-    const pair = written ? next(cursor) : (table[code & 15] ?? 0);
-    if (written && pair === 0) fresh = 0;
-    const a = code === 0xff ? explicit() : fresh++;
-    const high = pair >> 4, low = pair & 15;
-    const b = corner(high, written);
-    const c = corner(low, written);
-    pushVertex(a);
-    if (high === 0 || (written && high === 15)) pushVertex(b);
-    if (low === 0 || (written && low === 15)) pushVertex(c);
-    pushEdge(b, a);
-    pushEdge(c, b);
-    pushEdge(a, c);
-    target.set([a, b, c], at);
-  }
-
-  for (let at = 0; at < count; at += 3) {
-    const code = source[codesAt + at / 3] ?? 0;
-    if (code < 0xf0) takeByEdge(code, at);
-    else takeFree(code, at);
-    if (cursor.at > end) return undefined;
-  }
-  return cursor.at === end ? target : undefined;
-}
-
-/** Indices of any kind, as differences from one of two before: mode "INDICES". */
-export function decodeMeshoptIndices(source: Uint8Array, count: number): Uint32Array<ArrayBuffer> | undefined {
-  const cursor: Cursor = { bytes: source, at: 1 };
-  const end = source.length - 4;
-  // Each takes a byte at least.
-  if (source[0] !== 0xd1 || count > end - 1) return undefined;
-  const target = new Uint32Array(count);
-  const last: [number, number] = [0, 0];
-  for (let k = 0; k < count; k++) {
-    const value = readVarint(cursor);
-    const which = (value & 1) as 0 | 1;
-    last[which] = (last[which] + undoZigzag(value >>> 1)) >>> 0;
-    target[k] = last[which];
-    if (cursor.at > end) return undefined;
-  }
-  return cursor.at === end ? target : undefined;
-}
 
 /** Turns 24 bits of a number and 8 of a power of two into binary32, in place: filter "EXPONENTIAL". */
 export function applyExponentialFilter(bytes: Uint8Array<ArrayBuffer>): void {
