@@ -106,6 +106,7 @@ describe('PLY files that are refused', () => {
     ['another version', square.replace('ascii 1.0', 'ascii 2.0'), 'syntax-invalid', /version other than 1\.0/, { line: 2 }],
     ['another encoding', square.replace('ascii 1.0', 'packed 1.0'), 'syntax-invalid', /no format that PLY knows/, { line: 2 }],
     ['no format', square.replace('format ascii 1.0\n', ''), 'syntax-invalid', /none before has said what format/, { line: 8 }],
+    ['a format after a thousand bytes', square.replace('format ascii 1.0', `comment ${'-'.repeat(1100)}\nformat binary_little_endian 1.0`), 'syntax-invalid', /says too late what format/, { line: 10 }],
     ['a property without an element', square.replace('element vertex 4\n', ''), 'syntax-invalid', /before any element/, { line: 3 }],
     ['an element without a number', square.replace('vertex 4', 'vertex many'), 'syntax-invalid', /without a name or number/, { line: 3 }],
     ['too many vertices', square.replace('vertex 4', 'vertex 99999999999'), 'too-many-vertices', /\(PLY\) has more than [\d\u2009]+ vertices/, { line: 9 }],

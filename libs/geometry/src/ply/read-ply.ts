@@ -29,6 +29,10 @@ export function createPlyReader(format: 'ply-ascii' | 'ply-binary', limits: Read
 
   function begin(found: PlyHeader): PlyNumbers {
     checkPlyHeader(found, format, limits, { line: headerScanner.line });
+    // What the file is was told by its first thousand bytes.
+    if ((found.encoding === 'ascii') !== (format === 'ply-ascii')) {
+      throw new MeshError('syntax-invalid', 'The header of this PLY file says too late what format the file is in. Export the mesh again, without so many comments.', { line: headerScanner.line });
+    }
     header = found;
     body = createPlyBody(found, mesh, (code, message) => {
       throw new MeshError(code, message, getPlace());
