@@ -2,17 +2,12 @@ import { findDiagonal, type BoundingBox } from '../bounding-box';
 import { integrateBody, turnIntegrals, type BodyIntegrals } from '../integrate-body';
 import type { FindingKind, Integrals, Openings, Shell, Soundness, Vector3 } from '../measurement';
 import type { WeldedMesh } from '../weld-corners';
-import { checkDuplicates } from './duplicates';
-import { checkEdges, findUnusualEdges } from './edges';
-import { createEdgeTable } from './edge-table';
 import { examineShells, type ShellExamination } from './examine-shells';
+import { examineSurface } from './examine-surface';
 import { findKinds, listShells } from './list-shells';
 import { createNotes, type Notes, type Occurrence, type Places } from './notes';
-import { examineOpenings, type ClosedMesh, type OpenMesh } from './openings';
-import { checkOrientation } from './orientation';
-import { findShells } from './shells';
+import type { ClosedMesh } from './openings';
 import { judgeSoundness } from './verdict';
-import { checkVertices } from './vertices';
 
 export interface ExaminationContext {
   /** A point in the box of the mesh, from which centroids are told. */
@@ -50,34 +45,16 @@ export const usualIntersectionFacets = 200_000;
  */
 export function examineMesh(mesh: WeldedMesh, context: ExaminationContext): Examination {
   const { origin, boundingBox, remarks, maximumIntersectionFacets = usualIntersectionFacets } = context;
+  const diagonal = findDiagonal(boundingBox);
   const notes = createNotes(mesh);
   for (const [kind, occurrence] of Object.entries(remarks) as [FindingKind, Occurrence][]) notes.addOccurrence(kind, occurrence);
-  const { min, max } = boundingBox;
-  const diagonal = findDiagonal(boundingBox);
-  const middle: Vector3 = [min[0] + (max[0] - min[0]) / 2, min[1] + (max[1] - min[1]) / 2, min[2] + (max[2] - min[2]) / 2];
-
-  let table = createEdgeTable(mesh);
-  let unusual = findUnusualEdges(mesh, table);
-  checkEdges(notes, table, unusual);
-  checkVertices(notes, table);
-  const duplicates = checkDuplicates(notes, table);
-  const flipped = checkOrientation(notes, table);
-  const closed = notes.count('boundary-edges') === 0;
-  const oriented = closed && notes.count('unbalanced-edges') === 0;
-  const open = closed ? undefined : examineOpenings(notes, table, unusual, origin, middle, diagonal);
-
-  // Where hairlines are closed, shells are those of the closed mesh.
+  const surface = examineSurface(notes, { origin, boundingBox, body: context.body });
+  const { closed, oriented, open, shells } = surface;
   const mended = open?.closed;
   const work = mended?.mesh ?? mesh;
-  if (mended !== undefined) {
-    table = createEdgeTable(work);
-    unusual = findUnusualEdges(work, table);
-  }
   const body = mended?.body ?? context.body;
   const encloses = oriented || mended !== undefined;
-  const isWholeNegative = encloses && body.volumeSign < 0;
-  const shells = findShells(work, table, unusual, mended?.joined);
-  const found = examineShells(notes, work, shells, { fileFacets: mesh.facetCount, diagonal, isWholeNegative, flipped, duplicates, maximumIntersectionFacets });
+  const found = examineShells(notes, work, shells, { ...surface, fileFacets: mesh.facetCount, diagonal, isWholeNegative: encloses && body.volumeSign < 0, maximumIntersectionFacets });
   const read = readBody(notes, mesh, mended, body, found, origin, diagonal);
   if (encloses && read.volumeSign === 0) notes.add('no-volume');
 
@@ -85,7 +62,7 @@ export function examineMesh(mesh: WeldedMesh, context: ExaminationContext): Exam
   const soundness = judgeSoundness(notes, {
     closed,
     oriented,
-    outward: isOutward(context.body, oriented, open, middle, mesh, diagonal),
+    outward: surface.outward,
     turned: found.turned !== undefined,
     shells: shells.count,
     cavities: kinds.filter((kind) => kind === 'cavity').length,
@@ -129,9 +106,4 @@ function turnAdded(added: Float64Array, turned: Uint8Array): Float64Array {
     read.set(added.subarray(9 * facet + 3, 9 * facet + 6), 9 * facet + 6);
   }
   return read;
-}
-
-function isOutward(body: BodyIntegrals, oriented: boolean, open: OpenMesh | undefined, middle: Vector3, mesh: WeldedMesh, diagonal: number): boolean {
-  if (oriented) return body.volumeSign > 0;
-  return open === undefined ? integrateBody(mesh, middle, diagonal).volumeSign > 0 : open.outward;
 }

@@ -1,6 +1,7 @@
 import type { WeldedMesh } from '../weld-corners';
+import { createContacts, findPassages, type Contacts } from './contacts';
 import { createFacetTree, type FacetTree } from './facet-tree';
-import { locatePoint, type Location, type Probe } from './locate-point';
+import { haveSeparatePictures, shareCorner } from './relate-facets';
 import { visitBox } from './search-tree';
 import { createPairList, haveSameCorners, visitMeetings, type Meeting, type PairList } from './self-intersections';
 import type { ShellFigures } from './shell-figures';
@@ -40,10 +41,12 @@ export function findOverlaps(search: OverlapSearch): Overlaps {
   const { mesh, shells, tree, flips, fileFacets } = search;
   const isWhole = fileFacets <= search.maximumIntersectionFacets;
   const overlaps: Overlaps = { selfIntersections: createPairList(mesh), shells: new Set(), meetings: createPairList(mesh) };
-  const contacts: Contacts = new Map();
+  const contacts = createContacts(shells.count);
   const visit = (meeting: Meeting): void => noteMeeting(search, overlaps, contacts, meeting);
   if (isWhole) {
-    const wanted = (one: number, two: number): boolean => one < fileFacets && two < fileFacets;
+    // Neighbours in one shell may touch; only what passes through or lies upon another counts.
+    const areApart = (one: number, two: number): boolean => shells.shellOf[one] === shells.shellOf[two] && shareCorner(mesh, one, two) && haveSeparatePictures(mesh, one, two);
+    const wanted = (one: number, two: number): boolean => one < fileFacets && two < fileFacets && !areApart(one, two);
     if (!visitMeetings(mesh, tree, flips, wanted, visit)) overlaps.selfIntersections = null;
   } else {
     overlaps.selfIntersections = null;
@@ -51,34 +54,30 @@ export function findOverlaps(search: OverlapSearch): Overlaps {
     const wanted = (one: number, two: number): boolean => shells.shellOf[one] !== shells.shellOf[two];
     if (common.length > 0) visitMeetings(mesh, createFacetTree(mesh, common), flips, wanted, visit);
   }
-  settleContacts(search, overlaps, contacts);
+  for (const { shells: passing, facets } of findPassages(search, contacts, overlaps.shells)) {
+    for (const shell of passing) overlaps.shells.add(shell);
+    overlaps.meetings.add(...facets);
+  }
   noteDoubled(search, overlaps);
   return overlaps;
 }
 
-/** Facets of one shell that touch another, by both shells; each facet with one that it touches. */
-type Contacts = Map<number, { shell: number; other: number; facets: Map<number, number> }>;
-
-/** So many touching facets of a pair of shells are asked on which side they lie. */
-const mostContacts = 2000;
-
 function noteMeeting({ mesh, shells, figures }: OverlapSearch, overlaps: Overlaps, contacts: Contacts, { one, two, relation }: Meeting): void {
-  if (haveSameCorners(mesh, one, two)) return;
   const passes = relation === 'crossing' || relation === 'upon';
-  if (passes) overlaps.selfIntersections?.add(one, two);
+  // Doubled facets have a finding of their own, and `noteDoubled`.
+  const isDoubled = haveSameCorners(mesh, one, two);
+  if (passes && !isDoubled) overlaps.selfIntersections?.add(one, two);
   const a = shells.shellOf[one] ?? noShell, b = shells.shellOf[two] ?? noShell;
   if (a === b || !encloses(shells, figures, a) || !encloses(shells, figures, b)) return;
+  if (passes && isDoubled) return;
   if (passes) {
     overlaps.shells.add(a).add(b);
     overlaps.meetings.add(one, two);
     return;
   }
-  if (relation === 'against') return;
   for (const [shell, other, facet, touched] of [[a, b, one, two], [b, a, two, one]] as const) {
-    const key = shell * shells.count + other;
-    const contact = contacts.get(key) ?? { shell, other, facets: new Map<number, number>() };
-    if (contact.facets.size === 0) contacts.set(key, contact);
-    if (contact.facets.size < mostContacts) contact.facets.set(facet, touched);
+    if (relation === 'against') contacts.addUpon(facet, other);
+    else contacts.add(shell, other, facet, touched);
   }
 }
 
@@ -109,44 +108,6 @@ function findFacing({ corners }: WeldedMesh, facet: number): number {
   const [a, b, c] = [corners[3 * facet] ?? 0, corners[3 * facet + 1] ?? 0, corners[3 * facet + 2] ?? 0];
   const least = Math.min(a, b, c), greatest = Math.max(a, b, c);
   return (a === least ? b : b === least ? c : a) === greatest ? 1 : 0;
-}
-
-/**
- * Surfaces may pass through each other along their edges alone, so that no facet passes through another. Then some of the facets that touch lie within the
- * other shell and some outside.
- */
-function settleContacts({ mesh, tree, shells }: OverlapSearch, overlaps: Overlaps, contacts: Contacts): void {
-  const known = new Map<number, Location>();
-  const locate = (probe: Probe): Location => {
-    const location = ('vertex' in probe ? known.get(probe.vertex) : undefined) ?? locatePoint(mesh, tree, shells, probe);
-    if ('vertex' in probe) known.set(probe.vertex, location);
-    return location;
-  };
-  for (const key of [...contacts.keys()].sort((one, two) => one - two)) {
-    const contact = contacts.get(key);
-    if (contact === undefined || (overlaps.shells.has(contact.shell) && overlaps.shells.has(contact.other))) continue;
-    let inside: number | undefined;
-    let outside: number | undefined;
-    for (const facet of contact.facets.keys()) {
-      const side = findFacetSide(mesh, facet, contact.other, locate);
-      if (side === 'inside') inside ??= facet;
-      else if (side === 'outside') outside ??= facet;
-      if (inside !== undefined && outside !== undefined) break;
-    }
-    if (inside === undefined || outside === undefined) continue;
-    overlaps.shells.add(contact.shell).add(contact.other);
-    overlaps.meetings.add(inside, contact.facets.get(inside) ?? inside);
-  }
-}
-
-/** Where a facet lies that does not pass through a shell: by the first of its points that isn't on the surface of it. */
-function findFacetSide({ corners }: WeldedMesh, facet: number, shell: number, locate: (probe: Probe) => Location): 'inside' | 'outside' | 'upon' {
-  const [a, b, c] = [corners[3 * facet] ?? 0, corners[3 * facet + 1] ?? 0, corners[3 * facet + 2] ?? 0];
-  for (const probe of [{ vertex: a }, { vertex: b }, { vertex: c }, { inside: [a, b, c] as const }]) {
-    const { windings, touched } = locate(probe);
-    if (!touched.has(shell)) return windings.has(shell) ? 'inside' : 'outside';
-  }
-  return 'upon';
 }
 
 /** Facets in the boxes that two shells have in common; none where there are more than the limit. */

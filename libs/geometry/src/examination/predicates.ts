@@ -101,11 +101,18 @@ export function findTurn(points: Points, i: number, j: number, a: number, b: num
   const bound = planeBound * (Math.abs(left) + Math.abs(right));
   if (determinant > bound) return 1;
   if (-determinant > bound) return -1;
+  // Along axes most that are on one line have a difference of zero, which no rounding can feign.
+  if (left === 0 && right === 0 && bound === 0 && isZeroProduct(points, a, b, c, i, j) && isZeroProduct(points, a, b, c, j, i)) return 0;
   counts[0] = writeDifference(points[3 * a + i] ?? 0, ci, at(0));
   counts[1] = writeDifference(points[3 * a + j] ?? 0, cj, at(1));
   counts[3] = writeDifference(points[3 * b + i] ?? 0, ci, at(3));
   counts[4] = writeDifference(points[3 * b + j] ?? 0, cj, at(4));
   return signOf(minor, writeMinor(0, 4, 1, 3));
+}
+
+/** Whether (a - c) along one axis times (b - c) along another is zero because a factor is, and not by underflow. */
+function isZeroProduct(points: Points, a: number, b: number, c: number, i: number, j: number): boolean {
+  return points[3 * a + i] === points[3 * c + i] || points[3 * b + j] === points[3 * c + j];
 }
 
 /** `findTurn` of a, b and the point inside a facet. */

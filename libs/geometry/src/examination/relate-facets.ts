@@ -76,20 +76,52 @@ function findApex(from: number): number {
 
 /** Two facets in one plane, in the picture along an axis in which both have an area. */
 function relateInPlane({ corners, coordinates }: WeldedMesh, one: number, two: number): FacetRelation {
-  const [a, b, c] = [corners[3 * one] ?? 0, corners[3 * one + 1] ?? 0, corners[3 * one + 2] ?? 0];
-  const [d, e, f] = [corners[3 * two] ?? 0, corners[3 * two + 1] ?? 0, corners[3 * two + 2] ?? 0];
   for (let i = 0; i < 3; i++) {
     const j = (i + 1) % 3;
-    const turn = findTurn(coordinates, i, j, a, b, c);
+    const turn = findTurn(coordinates, i, j, corners[3 * one] ?? 0, corners[3 * one + 1] ?? 0, corners[3 * one + 2] ?? 0);
     if (turn === 0) continue;
-    const other = findTurn(coordinates, i, j, d, e, f);
+    const other = findTurn(coordinates, i, j, corners[3 * two] ?? 0, corners[3 * two + 1] ?? 0, corners[3 * two + 2] ?? 0);
     if (other === 0) return 'apart';
-    const isBeyond = (from: number, to: number, sense: number, points: readonly number[]): boolean =>
-      points.every((point) => point === from || point === to || findTurn(coordinates, i, j, from, to, point) * sense <= 0);
-    // Two convex figures are apart where a side of one has all of the other beyond it.
-    for (const [from, to] of [[a, b], [b, c], [c, a]] as const) if (isBeyond(from, to, turn, [d, e, f])) return 'touching';
-    for (const [from, to] of [[d, e], [e, f], [f, d]] as const) if (isBeyond(from, to, other, [a, b, c])) return 'touching';
+    if (isBeyond(coordinates, corners, i, j, one, two, turn) || isBeyond(coordinates, corners, i, j, two, one, other)) return 'touching';
     return turn === other ? 'upon' : 'against';
   }
   return 'apart';
+}
+
+/** Whether one side of a facet has all of another facet beyond it, or on it. Of two convex figures that are apart, one has such a side. */
+function isBeyond(coordinates: Float64Array, corners: Uint32Array, i: number, j: number, facet: number, other: number, turn: number): boolean {
+  for (let k = 0; k < 3; k++) {
+    const from = corners[3 * facet + k] ?? 0, to = corners[3 * facet + ((k + 1) % 3)] ?? 0;
+    let beyond = true;
+    for (let corner = 0; corner < 3 && beyond; corner++) {
+      const point = corners[3 * other + corner] ?? 0;
+      beyond = point === from || point === to || findTurn(coordinates, i, j, from, to, point) * turn <= 0;
+    }
+    if (beyond) return true;
+  }
+  return false;
+}
+
+/**
+ * Whether the pictures of two facets that share a corner, along the axis to which the first is nearest to square, have no area in common: then neither passes through
+ * the other nor lies upon it. It tells most neighbours on a flat apart, whose planes only exact sums could.
+ */
+export function haveSeparatePictures({ corners, coordinates }: WeldedMesh, one: number, two: number): boolean {
+  const a = 3 * (corners[3 * one] ?? 0), b = 3 * (corners[3 * one + 1] ?? 0), c = 3 * (corners[3 * one + 2] ?? 0);
+  const ex = (coordinates[b] ?? 0) - (coordinates[a] ?? 0), ey = (coordinates[b + 1] ?? 0) - (coordinates[a + 1] ?? 0), ez = (coordinates[b + 2] ?? 0) - (coordinates[a + 2] ?? 0);
+  const fx = (coordinates[c] ?? 0) - (coordinates[a] ?? 0), fy = (coordinates[c + 1] ?? 0) - (coordinates[a + 1] ?? 0), fz = (coordinates[c + 2] ?? 0) - (coordinates[a + 2] ?? 0);
+  const nx = Math.abs(ey * fz - ez * fy), ny = Math.abs(ez * fx - ex * fz), nz = Math.abs(ex * fy - ey * fx);
+  const [i, j] = nx >= ny && nx >= nz ? [1, 2] : ny >= nz ? [2, 0] : [0, 1];
+  const turn = findTurn(coordinates, i, j, corners[3 * one] ?? 0, corners[3 * one + 1] ?? 0, corners[3 * one + 2] ?? 0);
+  const other = findTurn(coordinates, i, j, corners[3 * two] ?? 0, corners[3 * two + 1] ?? 0, corners[3 * two + 2] ?? 0);
+  if (turn === 0 || other === 0) return false;
+  return isBeyond(coordinates, corners, i, j, one, two, turn) || isBeyond(coordinates, corners, i, j, two, one, other);
+}
+
+export function shareCorner({ corners }: WeldedMesh, one: number, two: number): boolean {
+  for (let k = 0; k < 3; k++) {
+    const corner = corners[3 * one + k];
+    if (corner === corners[3 * two] || corner === corners[3 * two + 1] || corner === corners[3 * two + 2]) return true;
+  }
+  return false;
 }
