@@ -25,20 +25,27 @@ const mostPairs = 50_000;
 const mostInsides = 2000;
 
 export function createContacts(shellCount: number): Contacts {
-  const pairs = new Map<number, Map<number, number>>();
+  // For each pair of shells facets and what they touch, in turn: arrays, since there may be many pairs.
+  const pairs = new Map<number, number[]>();
   const upon = new Set<number>();
   return {
     add(shell, other, facet, touched) {
       const key = shell * shellCount + other;
       const known = pairs.get(key);
-      if (known !== undefined && known.size < mostFacets) known.set(facet, touched);
-      else if (known === undefined && pairs.size < mostPairs) pairs.set(key, new Map([[facet, touched]]));
+      if (known === undefined) {
+        if (pairs.size < mostPairs) pairs.set(key, [facet, touched]);
+      } else if (known.length < 2 * mostFacets && known[known.length - 2] !== facet) known.push(facet, touched);
     },
     addUpon: (facet, other) => void upon.add(facet * shellCount + other),
     list: () =>
       [...pairs.keys()].sort((one, two) => one - two).map((key) => {
         const other = key % shellCount;
-        const facets = [...(pairs.get(key) ?? [])].filter(([facet]) => !upon.has(facet * shellCount + other));
+        const facets: Contact['facets'] = [];
+        const known = pairs.get(key) ?? [];
+        for (let k = 0; k < known.length; k += 2) {
+          const facet = known[k] ?? 0;
+          if (!upon.has(facet * shellCount + other)) facets.push([facet, known[k + 1] ?? 0]);
+        }
         return { shell: (key - other) / shellCount, other, facets };
       }),
   };

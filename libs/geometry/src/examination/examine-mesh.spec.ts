@@ -167,6 +167,7 @@ describe('shells', () => {
     ['two blocks that share a face', join(cube, move(cube, [1, 0, 0])), 2, ['solid 1', 'detached 1'], { 'crowded-edges': 5, 'duplicate-facets': 2 }],
     ['two blocks that share a face, one inside out', join(cube, turn(makeBlock([1, 0, 0], [3, 1, 1]))), 3, ['detached 1', 'solid turned 2'], { 'crowded-edges': 5, 'duplicate-facets': 2, 'turned-shells': 1 }],
     ['two blocks that share an edge, one inside out', join(cube, turn(makeBlock([1, 1, 0], [3, 2, 1]))), 3, ['detached 1', 'solid turned 2'], { 'crowded-edges': 1, 'turned-shells': 1 }],
+    ['two blocks that share an edge, both inside out', turn(join(cube, makeBlock([1, 1, 0], [3, 2, 1]))), 3, ['detached turned 1', 'solid turned 2'], { 'crowded-edges': 1, 'turned-whole': 1 }],
     ['the two boxes of a housing, which touch in a part of a face', shapes.makeHousing(), 39_000, ['solid 24000', 'detached 15000'], { 'crowded-vertices': 1 }],
   ])('%s', (_name, corners, volume, shells, findings) => {
     const found = examineCorners(corners);

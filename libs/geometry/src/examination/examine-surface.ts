@@ -41,9 +41,10 @@ export function examineSurface(notes: Notes, { origin, boundingBox, body }: { or
   const oriented = closed && notes.count('unbalanced-edges') === 0;
   const open = closed ? undefined : examineOpenings(notes, table, unusual, origin, middle, diagonal);
   const outward = oriented ? body.volumeSign > 0 : (open?.outward ?? integrateBody(mesh, middle, diagonal).volumeSign > 0);
-  if (open?.closed === undefined) return { closed, oriented, outward, duplicates, flipped, open, shells: findShells(mesh, table, unusual) };
+  if (open?.closed === undefined) return { closed, oriented, outward, duplicates, flipped, open, shells: findShells(mesh, table, unusual, oriented && body.volumeSign < 0) };
   // Where hairlines are closed, shells are those of the closed mesh.
-  const work = open.closed.mesh;
+  const { mesh: work, body: closedBody, joined } = open.closed;
   const closedTable = createEdgeTable(work);
-  return { closed, oriented, outward, duplicates, flipped, open, shells: findShells(work, closedTable, findUnusualEdges(work, closedTable), open.closed.joined) };
+  const shells = findShells(work, closedTable, findUnusualEdges(work, closedTable), closedBody.volumeSign < 0, joined);
+  return { closed, oriented, outward, duplicates, flipped, open, shells };
 }

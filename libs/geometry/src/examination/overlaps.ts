@@ -75,9 +75,12 @@ function noteMeeting({ mesh, shells, figures }: OverlapSearch, overlaps: Overlap
     overlaps.meetings.add(one, two);
     return;
   }
-  for (const [shell, other, facet, touched] of [[a, b, one, two], [b, a, two, one]] as const) {
-    if (relation === 'against') contacts.addUpon(facet, other);
-    else contacts.add(shell, other, facet, touched);
+  if (relation === 'against') {
+    contacts.addUpon(one, b);
+    contacts.addUpon(two, a);
+  } else {
+    contacts.add(a, b, one, two);
+    contacts.add(b, a, two, one);
   }
 }
 

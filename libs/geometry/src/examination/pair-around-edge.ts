@@ -10,13 +10,15 @@ import { findSide, findTurn } from './predicates';
  * Where facets lie upon each other, wedges are closed before others are opened; and facets that lie upon each other facing the same way nest by their numbers,
  * alike at all their edges. Decided exactly.
  *
+ * @param isInsideOut the whole mesh is: material lies on the other side of its facets
  * @returns pairs of facets; undefined where a facet without area has no place around the edge
  */
-export function pairAroundEdge(mesh: WeldedMesh, halfEdges: Uint32Array): [number, number][] | undefined {
+export function pairAroundEdge(mesh: WeldedMesh, halfEdges: Uint32Array, isInsideOut = false): [number, number][] | undefined {
   const first = halfEdges[0] ?? 0;
   const lesser = Math.min(fromVertex(mesh, first), toVertex(mesh, first));
   const greater = Math.max(fromVertex(mesh, first), toVertex(mesh, first));
   const axes = chooseAxes(mesh, lesser, greater);
+  const opens = (halfEdge: number): boolean => opensMaterial(mesh, halfEdge) !== isInsideOut;
   const opposite = (halfEdge: number): number => oppositeVertex(mesh, halfEdge);
   const sideOfFirst = findTurn(mesh.coordinates, ...axes, lesser, greater, opposite(first));
   if ([...halfEdges].some((halfEdge) => isOnLine(mesh, lesser, greater, opposite(halfEdge)))) return undefined;
@@ -33,11 +35,11 @@ export function pairAroundEdge(mesh: WeldedMesh, halfEdges: Uint32Array): [numbe
     if (sector !== 0) return sector;
     const between = (sectors.get(one) ?? 0) % 2 === 0 ? 0 : -findSide(mesh.coordinates, lesser, greater, opposite(one), opposite(two));
     if (between !== 0) return between;
-    const oneOpens = opensMaterial(mesh, one), twoOpens = opensMaterial(mesh, two);
+    const oneOpens = opens(one), twoOpens = opens(two);
     if (oneOpens !== twoOpens) return oneOpens ? 1 : -1;
     return oneOpens ? one - two : two - one;
   };
-  return matchBrackets(mesh, [...halfEdges].sort(compare));
+  return matchBrackets([...halfEdges].sort(compare), opens);
 }
 
 type Axes = readonly [number, number];
@@ -69,14 +71,14 @@ function isSameDirection({ coordinates }: WeldedMesh, axes: Axes, a: number, b: 
 const opensMaterial = (mesh: WeldedMesh, halfEdge: number): boolean => !runsForward(mesh, halfEdge);
 
 /** Pairs the facets that open material with those that close it, going around once and on to what was open before the beginning. */
-function matchBrackets(mesh: WeldedMesh, around: readonly number[]): [number, number][] {
+function matchBrackets(around: readonly number[], opens: (halfEdge: number) => boolean): [number, number][] {
   const pairs: [number, number][] = [];
   const open: number[] = [];
   const left: number[] = [];
   for (const halfEdge of around) {
-    const partner = opensMaterial(mesh, halfEdge) ? undefined : open.pop();
+    const partner = opens(halfEdge) ? undefined : open.pop();
     if (partner !== undefined) pairs.push([facetOf(partner), facetOf(halfEdge)]);
-    else (opensMaterial(mesh, halfEdge) ? open : left).push(halfEdge);
+    else (opens(halfEdge) ? open : left).push(halfEdge);
   }
   for (const halfEdge of left) pairs.push([facetOf(open.pop() ?? halfEdge), facetOf(halfEdge)]);
   return pairs;

@@ -21,9 +21,10 @@ export const noShell = 0xffff_ffff;
 
 /**
  * @param unusual edges that are not shared by two facets running along them both ways
+ * @param isInsideOut the whole mesh encloses a negative volume
  * @param joined pairs of facets that belong together though no edge says so
  */
-export function findShells(mesh: WeldedMesh, table: EdgeTable, unusual: readonly number[], joined: readonly [number, number][] = []): ShellTable {
+export function findShells(mesh: WeldedMesh, table: EdgeTable, unusual: readonly number[], isInsideOut: boolean, joined: readonly [number, number][] = []): ShellTable {
   const { starts, halfEdges, edgeCount } = table;
   const sets = createDisjointSets(mesh.facetCount);
   const unbalanced: number[] = [];
@@ -33,7 +34,7 @@ export function findShells(mesh: WeldedMesh, table: EdgeTable, unusual: readonly
     if (isUnusual) k += 1;
     if (isUnusual && balanceEdge(mesh, table, edge).surplus !== 0) unbalanced.push(facetOf(halfEdges[begin] ?? 0));
     else if (isUnusual) {
-      const pairs = pairAroundEdge(mesh, halfEdges.subarray(begin, starts[edge + 1] ?? 0));
+      const pairs = pairAroundEdge(mesh, halfEdges.subarray(begin, starts[edge + 1] ?? 0), isInsideOut);
       for (const [one, two] of pairs ?? []) sets.join(one, two);
       if (pairs !== undefined) continue;
     }
