@@ -88,8 +88,9 @@ function checkRefusal(error: unknown): Pick<Outcome, 'result' | 'message'> {
 /** Measures a damaged file as a whole; throws where that fails in any way but a refusal. */
 export function measureDamagedFile(bytes: Uint8Array): void {
   try {
-    const found = JSON.stringify(measureMesh(bytes, { ...limits, maximumFacets: 5000 }).surface);
-    if (found.includes('null')) throw new Error(`A figure is no number: ${found}`);
+    const { content, centreFromOrigin, second } = measureMesh(bytes, { ...limits, maximumFacets: 5000 }).surface;
+    const figures = [content, ...centreFromOrigin, second.xx, second.yy, second.zz, second.xy, second.yz, second.zx];
+    if (!figures.every((figure) => Number.isFinite(figure))) throw new Error(`A figure is no number: ${figures.join(', ')}`);
   } catch (error) {
     if (!(error instanceof MeshError)) throw error;
   }
