@@ -22,5 +22,6 @@ ALTER TABLE "measurements" ADD CONSTRAINT "measurements_examined_is_known" CHECK
 ALTER TABLE "measuring_runs" ADD CONSTRAINT "measuring_runs_stage_is_known" CHECK ("measuring_runs"."stage" in ('waiting', 'hashing', 'reading', 'measuring', 'examining', 'storing'));--> statement-breakpoint
 ALTER TABLE "measuring_runs" ADD CONSTRAINT "measuring_runs_end_has_a_reason" CHECK (("measuring_runs"."state" <> 'done' or "measuring_runs"."measurement_id" is not null) and ("measuring_runs"."state" <> 'failed' or "measuring_runs"."measurement_id" is null) and ("measuring_runs"."state" = 'failed') = ("measuring_runs"."error_code" is not null));--> statement-breakpoint
 -- A measurement of which only the integrals stand is completed once; one that was examined never changes.
-grant update on measurements to masswright_app;--> statement-breakpoint
+grant update (examined, closed, oriented, outward, turned, defensible, boundary_edges, non_manifold_edges, non_manifold_vertices, degenerate_facets, duplicate_facets, shells, cavities, self_intersections, findings,
+  volume, volume_centre_from_origin, volume_second, volume_error_bound, listed_shells, openings, facet_doubt) on measurements to masswright_app;--> statement-breakpoint
 create policy measurements_examined_never_change on measurements as restrictive for update using (examined = 'integrals') with check (true);

@@ -179,21 +179,32 @@ function presentSoundness(row: MeasurementRow): Soundness {
   return { closed, oriented, outward, turned, boundaryEdges, nonManifoldEdges, nonManifoldVertices, degenerateFacets, duplicateFacets, shells, cavities, selfIntersections, defensible, findings };
 }
 
-function rowOf({ volume, surface, soundness, boundingBox, shells, ...measurement }: Measurement) {
+/** What an examination may find otherwise than the integrals alone say. */
+function examinedOf({ volume, soundness, examined, openings, facetDoubt, shells }: Measurement) {
   return {
-    ...measurement,
-    boxMin: boundingBox.min,
-    boxMax: boundingBox.max,
+    ...soundness,
+    examined,
     volume: volume?.content ?? null,
     volumeCentreFromOrigin: volume?.centreFromOrigin ?? null,
     volumeSecond: volume === null ? null : listOf(volume.second),
     volumeErrorBound: volume?.errorBound ?? 0,
+    openings,
+    facetDoubt,
+    listedShells: shells,
+  };
+}
+
+function rowOf(measurement: Measurement) {
+  const { measuringVersion, format, compression, declaredUnit, declaredMaterials, facets, origin, boundingBox, surface, polygonVolume } = measurement;
+  return {
+    ...{ measuringVersion, format, compression, declaredUnit, declaredMaterials, facets, origin, polygonVolume },
+    boxMin: boundingBox.min,
+    boxMax: boundingBox.max,
     area: surface.content,
     areaCentreFromOrigin: surface.centreFromOrigin,
     areaSecond: listOf(surface.second),
     areaErrorBound: surface.errorBound,
-    ...soundness,
-    listedShells: shells,
+    ...examinedOf(measurement),
   };
 }
 
@@ -206,16 +217,15 @@ export async function keepMeasurement(
   kept: { organisationId: string; sha256: Buffer; measurement: Measurement },
 ): Promise<string> {
   const { organisationId, sha256, measurement } = kept;
-  const row = rowOf(measurement);
   const [inserted] = await tx
     .insert(measurements)
-    .values({ organisationId, sha256, ...row })
+    .values({ organisationId, sha256, ...rowOf(measurement) })
     .onConflictDoNothing({ target: [measurements.organisationId, measurements.sha256, measurements.measuringVersion] })
     .returning({ id: measurements.id });
   if (inserted !== undefined) return inserted.id;
   const id = await findMeasurement(tx, sha256, measurement.measuringVersion);
   if (id === undefined) throw new Error('A measurement conflicts with one that cannot be seen.');
-  if (measurement.examined !== 'integrals') await tx.update(measurements).set(row).where(and(eq(measurements.id, id), eq(measurements.examined, 'integrals')));
+  if (measurement.examined !== 'integrals') await tx.update(measurements).set(examinedOf(measurement)).where(and(eq(measurements.id, id), eq(measurements.examined, 'integrals')));
   return id;
 }
 

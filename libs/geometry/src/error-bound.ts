@@ -5,6 +5,7 @@ import { sizes, sumsOfBody, sumsOfSurface, type FacetSums } from './facet-sums';
  * those times lengths.
  */
 export interface KernelRoundings {
+  /** 2⁻⁵³ or 2⁻¹⁰⁰. */
   readonly roundoff: number;
   readonly content: number;
   readonly first: number;
@@ -16,13 +17,13 @@ export interface KernelRoundings {
  * difference, a product and two sums. First moments: the sum of three corners, within √3 of the root of their squares (6), and a product more. Second moments: a square of the sum of corners
  * within √3 of their squares' sum (11), the sums of squares (6) and a product. The folding by two-sum rounds in the square of the roundoff.
  */
-export const blockedRoundings: KernelRoundings = { roundoff: 2 ** -53, content: 15, first: 22, second: 33 };
+export const blockedRoundings: KernelRoundings = { roundoff: 1.1102230246251565e-16, content: 15, first: 22, second: 33 };
 
 /** The careful kernel: every operation of double-double is within 2⁻¹⁰⁰ (Joldes, Muller & Popescu 2017), sums over all facets included up to 2³² of them. */
-export const doubleDoubleRoundings: KernelRoundings = { roundoff: 2 ** -100, content: 64, first: 96, second: 128 };
+export const doubleDoubleRoundings: KernelRoundings = { roundoff: 7.888609052210118e-31, content: 64, first: 96, second: 128 };
 
 /** Each figure is rounded twice at most on its way out. */
-const finishing = 2 * 2 ** -53;
+const finishing = 2.220446049250313e-16;
 
 /**
  * A bound on what rounding does to the integrals that are finished from sums, in the natural scale: content relative to itself, centroid to the diagonal,

@@ -66,7 +66,7 @@ describe('the compiled kernels', () => {
 
   it('keep their state where the library looks for it', () => {
     const layout = readFileSync(path.join(import.meta.dirname, '../assembly/layout.ts'), 'utf8');
-    const stated = Object.fromEntries([...layout.matchAll(/export const (\w+): usize = (\d+);/g)].map(([, name, at]) => [name, Number(at)]));
+    const stated = Object.fromEntries([...layout.matchAll(/export const (\w+): usize = (\d+);/g)].map(([, name = '', at]): [string, number] => [name, Number(at)]));
     expect(stated).toEqual(kernelLayout);
   });
 });

@@ -119,7 +119,7 @@ export interface IntegralsPass {
  */
 export function createIntegralsPass(options: MeasurerOptions): IntegralsPass {
   const pass = createFacetPass();
-  const reader = createMeshReader({ ...options, onFacets: pass.takeBatch, packed: pass.packed });
+  const reader = createMeshReader({ ...options, onFacets: (batch) => pass.takeBatch(batch), packed: pass.packed });
   return {
     push: (chunk) => reader.push(chunk),
     finish() {

@@ -2,7 +2,7 @@ import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
 import process from 'node:process';
 import { describe, expect, it } from 'vitest';
-import { measuringVersion, type Integrals, type Measurement } from './measurement';
+import { measuringVersion, type Integrals, type Measurement, type Symmetric3 } from './measurement';
 import { measureMesh } from './measurer';
 import * as shapes from './testing/shapes';
 import { writeAsciiStl, writeBinaryStl } from './write-stl';
@@ -45,13 +45,14 @@ const corpus: Record<string, Uint8Array> = {
 };
 
 const hexOf = (values: readonly number[]): string => Buffer.from(Float64Array.from(values).buffer).toString('hex');
+const elementsOf = ({ xx, yy, zz, xy, yz, zx }: Symmetric3): number[] => [xx, yy, zz, xy, yz, zx];
 const listOf = (integrals: Integrals | null): number[] =>
-  integrals === null ? [] : [integrals.content, ...integrals.centreFromOrigin, ...Object.values(integrals.second), integrals.errorBound];
+  integrals === null ? [] : [integrals.content, ...integrals.centreFromOrigin, ...elementsOf(integrals.second), integrals.errorBound];
 const bitsOf = ({ origin, boundingBox, volume, surface, facetDoubt }: Measurement): string[] => [
   hexOf([...origin, ...boundingBox.min, ...boundingBox.max]),
   hexOf(listOf(volume)),
   hexOf(listOf(surface)),
-  hexOf(facetDoubt === null ? [] : [facetDoubt.body.correction.content, ...facetDoubt.body.correction.first, ...Object.values(facetDoubt.body.correction.second), facetDoubt.area.correction]),
+  hexOf(facetDoubt === null ? [] : [facetDoubt.body.correction.content, ...facetDoubt.body.correction.first, ...elementsOf(facetDoubt.body.correction.second), facetDoubt.area.correction]),
 ];
 
 const file = path.join(import.meta.dirname, `testing/bits-${measuringVersion}.json`);

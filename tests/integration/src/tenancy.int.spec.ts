@@ -236,7 +236,13 @@ describe('the catalogue', () => {
       may: ['SELECT', 'INSERT'],
       update: ['name', 'group_name', 'density_kg_m3', 'density_spread_kg_m3', 'spread_basis', 'source', 'version', 'archived_at', 'changed_at', 'changed_by'],
     },
-    measurements: { may: ['SELECT', 'INSERT'], update: [] },
+    measurements: {
+      may: ['SELECT', 'INSERT'],
+      update: [
+        ...['examined', 'closed', 'oriented', 'outward', 'turned', 'defensible', 'boundary_edges', 'non_manifold_edges', 'non_manifold_vertices', 'degenerate_facets', 'duplicate_facets', 'shells', 'cavities'],
+        ...['self_intersections', 'findings', 'volume', 'volume_centre_from_origin', 'volume_second', 'volume_error_bound', 'listed_shells', 'openings', 'facet_doubt'],
+      ],
+    },
     measuring_runs: {
       may: ['SELECT', 'INSERT', 'DELETE'],
       update: ['state', 'stage', 'progress', 'fence', 'unended_take_ups', 'measurement_id', 'error_code', 'error_message', 'error_byte', 'error_line', 'started_at', 'finished_at'],
@@ -263,7 +269,7 @@ describe('the catalogue', () => {
     settings_changes: { may: ['SELECT', 'INSERT'], update: [] },
     settings: {
       may: ['SELECT', 'INSERT', 'DELETE'],
-      update: ['length_unit', 'unit_stated_at', 'unit_stated_by', 'density_kg_m3', 'density_spread_kg_m3', 'material_id', 'material_name', 'weighed_mass_kg', 'weighed_mass_uncertainty_kg', 'axis', 'drive_speed_rad_per_s', 'drive_time_s', 'version', 'changed_at', 'changed_by'],
+      update: ['length_unit', 'unit_stated_at', 'unit_stated_by', 'density_kg_m3', 'density_spread_kg_m3', 'material_id', 'material_name', 'weighed_mass_kg', 'weighed_mass_uncertainty_kg', 'axis', 'drive_speed_rad_per_s', 'drive_time_s', 'as_made', 'shell_densities', 'version', 'changed_at', 'changed_by'],
     },
     uploads: { may: ['SELECT', 'INSERT'], update: ['state', 'sha256', 'stored_at'] },
     users: { may: ['SELECT', 'INSERT'], update: ['name', 'password_hash'] },

@@ -72,7 +72,15 @@ export function presentPartRow(stored: StoredPart, sameBytes: ReadonlyMap<string
     soundness:
       measurement === null
         ? null
-        : { defensible: measurement.defensible, closed: measurement.closed, oriented: measurement.oriented, turned: measurement.turned },
+        : {
+            defensible: measurement.defensible,
+            closed: measurement.closed,
+            oriented: measurement.oriented,
+            turned: measurement.turned,
+            selfIntersections: measurement.selfIntersections,
+            overlapping: measurement.findings.some(({ kind }) => kind === 'overlapping-shells'),
+            examined: measurement.examined,
+          },
     sizeM: figures.sizeM,
     volumeM3: figures.volumeM3,
     massKg: figures.massKg,

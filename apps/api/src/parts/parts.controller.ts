@@ -42,7 +42,7 @@ export class PartsController {
   }
 
   @Post('parts/:partId/run')
-  @Operation({ summary: 'Read a file that could not be measured once more', answer: part })
+  @Operation({ summary: 'Read a file once more that could not be measured, or that an earlier measuring version measured', answer: part })
   measureAgain(@SignedIn() context: SignedInContext, @Param('partId', { schema: id }) partId: string): Promise<Part> {
     return this.service.measureAgain(context, partId);
   }

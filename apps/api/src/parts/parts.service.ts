@@ -1,7 +1,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { measuringVersion, type ChangeSettingRequest, type FailedRecord, type Part, type Setting, type StatementRecord } from '@masswright/contracts';
-import { addToOutbox, changeSetting, publishEvent, readSetting, refreshPartSummaries, renamePart, restartRun, type StoredPart, type Transaction } from '@masswright/drizzle';
-import { summarisePart } from '@masswright/mechanics';
+import { addToOutbox, changeSetting, presentMeasurement, publishEvent, readSetting, refreshPartSummaries, renamePart, restartRun, type StoredPart, type Transaction } from '@masswright/drizzle';
+import { checkShellDensities, summarisePart } from '@masswright/mechanics';
 import { chooseDensity } from '../materials/choose-density';
 import { AppError } from '../platform/app-error';
 import type { SignedInContext } from '../platform/request-context';
@@ -9,6 +9,13 @@ import { audit, Work } from '../platform/work';
 import { requireEdit } from '../projects/project.policy';
 import { presentStatement } from './part.presenter';
 import { getPresentPart, getStoredPart, readPart } from './stored-part';
+
+/** Densities of shells belong to shells that are there; a file that is measured yet has none. */
+function requireFittingShells({ measurement }: StoredPart, setting: Setting): void {
+  const unmeasured = setting.shellDensities?.length ? 'The mesh is not measured yet, so its shells are not known.' : undefined;
+  const message = measurement === null ? unmeasured : checkShellDensities(presentMeasurement(measurement), setting);
+  if (message !== undefined) throw new AppError('invalid-input', message, { fields: [{ path: 'shellDensities', message }] });
+}
 
 @Injectable()
 export class PartsService {
@@ -45,6 +52,7 @@ export class PartsService {
       const { version, densityKgM3, densitySpreadKgM3, material, ...changes } = request;
       const density = await chooseDensity(tx, before, { densityKgM3, densitySpreadKgM3, material });
       const setting: Setting = { ...before, ...changes, ...density };
+      if (changes.shellDensities !== undefined) requireFittingShells(stored, setting);
       const statesUnit = changes.lengthUnit !== undefined;
       const isChanged = await changeSetting(tx, { revisionId: stored.revision.id, version, setting, statesUnit, changedBy: context.userId });
       if (!isChanged) {

@@ -129,9 +129,10 @@ export class MeasuringHandler {
     let figures = Promise.resolve();
     try {
       return await work((news) => {
-        if (news.kind === 'progress') notes.push(news.progress);
+        // One after the other: what is noted later must not be overtaken by figures that are written yet.
+        if (news.kind === 'progress') void figures.then(() => notes.push(news.progress));
         // Whoever took the run up meanwhile has figures of its own; any other failure is that of the end, which is yet to come.
-        else figures = this.show(run, news.figures, context).catch(() => undefined);
+        else figures = notes.settle().then(() => this.show(run, news.figures, context)).catch(() => undefined);
       });
     } finally {
       await figures;
