@@ -85,7 +85,7 @@ export type Soundness = z.infer<typeof soundness>;
  * `content` is ∫1 (volume: unit³, area: unit²); `centreFromOrigin` is the centroid less the measurement's `origin` (unit);
  * `second` holds ∫x²…, ∫xy… about the centroid, axes of the mesh frame, all with a plus sign (unit⁵ over a body, unit⁴ over a surface).
  * `errorBound` is what rounding may have done at most: to the content relative to it, to the centroid relative to the diagonal of the box,
- * to the second moments relative to content times diagonal².
+ * to the second moments relative to content times diagonal². 1 where the content may be zero.
  */
 export const integrals = z.object({
   content: z.number(),

@@ -17,7 +17,7 @@ export interface FacetSelection {
 }
 
 export interface BodyIntegrals {
-  /** As the facets are read: the content is negative where they look inwards. Infinite error bound where it may be zero. */
+  /** As the facets are read: the content is negative where they look inwards. An error bound of 1 where it may be zero. */
   volume: Integrals;
   /** Of the volume; 0 where it is within its error bound of zero, or the body is too small for its fifth powers to be numbers. */
   volumeSign: -1 | 0 | 1;
@@ -31,6 +31,9 @@ const surfaceTolerance = 1e-12;
 /** A body whose box is smaller cannot be integrated: fifth powers would leave the range of binary64. */
 const leastDiagonal = 1e-45;
 
+/** What may be zero is known no better than to itself; a record can't hold an infinite number. */
+const stateBound = (bound: number): number => Math.min(bound, 1);
+
 /** Chooses the sums that are exact enough: the usual ones where their bounds allow it, those of the careful kernel otherwise, which are asked for only then. */
 export function finishBody(usual: FacetSums, diagonal: number, sumCarefully: () => FacetSums): BodyIntegrals {
   const usualBound = computeErrorBound(usual, 'body', diagonal, blockedRoundings);
@@ -43,9 +46,9 @@ export function finishBody(usual: FacetSums, diagonal: number, sumCarefully: () 
   const surfaceBound = surfaceStands ? usualSurfaceBound : computeErrorBound(careful, 'surface', diagonal, doubleDoubleRoundings);
   const content = body.high[sumsOfBody] ?? 0;
   return {
-    volume: finishIntegrals(body, 'body', bound),
+    volume: finishIntegrals(body, 'body', stateBound(bound)),
     volumeSign: !(bound < 1) || diagonal < leastDiagonal ? 0 : content > 0 ? 1 : -1,
-    surface: finishIntegrals(surfaceStands ? usual : careful, 'surface', surfaceBound),
+    surface: finishIntegrals(surfaceStands ? usual : careful, 'surface', stateBound(surfaceBound)),
   };
 }
 
@@ -75,9 +78,9 @@ export function turnIntegrals({ content, centreFromOrigin, second, errorBound }:
 /** Sums over facets of a welded mesh by a kernel, batch by batch. */
 export function sumSelection(kernel: Kernel, mesh: WeldedMesh, origin: Vector3, { facets, turned, added }: FacetSelection = {}): FacetSums {
   const summing = kernel(origin);
-  const batch = new Float64Array(9 * batchFacets);
   const own = facets === undefined ? mesh.facetCount : facets.length;
   const total = own + (added === undefined ? 0 : added.length / 9);
+  const batch = new Float64Array(9 * Math.min(batchFacets, total));
   for (let begin = 0; begin < total; begin += batchFacets) {
     const count = Math.min(batchFacets, total - begin);
     for (let k = 0; k < count; k++) {

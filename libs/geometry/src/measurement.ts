@@ -100,7 +100,7 @@ export interface Soundness {
  * content: ∫1. centreFromOrigin: the centroid less the measurement's origin.
  * second: ∫x², …, ∫xy, … about the centroid along the axes of the mesh frame, every one with a plus sign.
  * errorBound: what rounding may have done at most: to the content relative to it, to the centroid relative to the diagonal of the box, to the second
- * moments relative to content times diagonal².
+ * moments relative to content times diagonal². 1 where the content may be zero.
  */
 export interface Integrals {
   content: number;

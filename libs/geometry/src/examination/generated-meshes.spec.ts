@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { createDraw, runSeed } from './testing/draw';
+import { createDraw, runSeed } from '../testing/draw';
 import { examineCorners } from './testing/examine-corners';
 import { plantedFaults } from './testing/plant-faults';
 import { plantedShells } from './testing/plant-shells';

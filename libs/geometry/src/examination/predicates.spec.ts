@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { findSide, findSideOfInside, findTurn, findTurnOfInside } from './predicates';
-import { createDraw, type Draw } from './testing/draw';
+import { createDraw, type Draw } from '../testing/draw';
 
 /** Numbers as multiples of 2⁻²⁰⁰, which all that are drawn here are. */
 function toWhole(value: number): bigint {

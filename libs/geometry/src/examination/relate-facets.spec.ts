@@ -3,7 +3,7 @@ import { createFacetTree } from './facet-tree';
 import { relateFacets } from './relate-facets';
 import { haveSameCorners, visitMeetings } from './self-intersections';
 import { weldFacets } from './testing/examine-corners';
-import { createDraw } from './testing/draw';
+import { createDraw } from '../testing/draw';
 import { relateExactly } from './testing/relate-exactly';
 
 const facet = (corners: Float64Array, k: number): Float64Array => corners.subarray(9 * k, 9 * k + 9);

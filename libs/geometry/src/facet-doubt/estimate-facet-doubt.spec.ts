@@ -5,7 +5,7 @@ import { estimateFacetDoubt } from './estimate-facet-doubt';
 import { ballCorners, icosahedralCorners, makeEllipsoid } from './testing/smooth-balls';
 import { arc, line } from './testing/smooth-curves';
 import { drawUpConvex, makePlate, turnProfile } from './testing/smooth-grids';
-import { createDraw } from './testing/smooth-families';
+import { createDraw } from '../testing/draw';
 import type { SmoothBody } from './testing/smooth-truth';
 
 const turn = 2 * Math.PI, quarter = Math.PI / 2;
@@ -81,7 +81,7 @@ describe('the predicted change from a mesh to the smooth body behind it', () => 
   });
 
   it('a sphere without order in its facets is predicted as well as one of meridians', () => {
-    for (const corners of [icosahedralCorners(8), ballCorners(64, 32, 0.2, createDraw(7))]) {
+    for (const corners of [icosahedralCorners(8), ballCorners(64, 32, 0.2, createDraw(7).next)]) {
       const [volume, area] = comparePrediction(makeEllipsoid([1, 1, 1], corners));
       for (const figure of [volume, area]) expect((figure?.predicted ?? NaN) / (figure?.actual ?? NaN)).toSatisfy((ratio: number) => ratio >= 0.9 && ratio <= 1.15);
     }

@@ -4,7 +4,7 @@ import type { Corners, Point } from '../../testing/shapes';
 import { integrateBody } from '../../integrate-body';
 import type { Examination } from '../examine-mesh';
 import { relateFacets } from '../relate-facets';
-import type { Draw } from './draw';
+import type { Draw } from '../../testing/draw';
 import { countFindings, weldFacets } from './examine-corners';
 
 /** A mesh with a fault, or with something that looks like one, and what must be said of it. */

@@ -1,7 +1,7 @@
 import { expect } from 'vitest';
 import * as shapes from '../../testing/shapes';
 import type { Corners, Point } from '../../testing/shapes';
-import type { Draw } from './draw';
+import type { Draw } from '../../testing/draw';
 import { countFindings } from './examine-corners';
 import { countCrossings, countFacets, drawBall, drawBody, drawPlace, expectNone, expectVolume, facet, findDiagonal, without, volumeOf, type FaultyMesh } from './faulty-meshes';
 

@@ -1,7 +1,7 @@
 import { expect } from 'vitest';
 import * as shapes from '../../testing/shapes';
 import type { Corners, Point } from '../../testing/shapes';
-import type { Draw } from './draw';
+import type { Draw } from '../../testing/draw';
 import { countFindings, examineCorners } from './examine-corners';
 import { countCrossings, countFacets, drawBall, drawPlace, expectNone, expectVolume, volumeOf, type FaultyMesh } from './faulty-meshes';
 

@@ -1,3 +1,4 @@
+import { createDraw } from '../../testing/draw';
 import { makeBlock, makeRotation, move, rotate, roundToBinary32 } from '../../testing/shapes';
 import { ballCorners, icosahedralCorners, makeEllipsoid, makeRoundedBlock } from './smooth-balls';
 import { arc, line, stepsOf, type Curve } from './smooth-curves';
@@ -10,17 +11,6 @@ import { placeTruth, type SmoothBody } from './smooth-truth';
  */
 export const familySeed = 20_261_201;
 export const bodiesPerFamily = 50;
-
-/** Numbers in [0, 1), the same for the same seed (mulberry32). */
-export function createDraw(seed: number): () => number {
-  let state = seed | 0;
-  return () => {
-    state = (state + 0x6d2b79f5) | 0;
-    let word = Math.imul(state ^ (state >>> 15), 1 | state);
-    word = (word + Math.imul(word ^ (word >>> 7), 61 | word)) ^ word;
-    return ((word ^ (word >>> 14)) >>> 0) / 4_294_967_296;
-  };
-}
 
 interface Dice {
   draw: () => number;
@@ -104,7 +94,7 @@ export const families: Record<string, (dice: Dice) => SmoothBody> = {
 /** One body of the set, turned and moved at random; every other one has its coordinates in binary32, as most files have. */
 export function drawBody(family: string, number: number): SmoothBody {
   const names = Object.keys(families);
-  const dice = createDice(createDraw(familySeed + 1000 * names.indexOf(family) + number));
+  const dice = createDice(createDraw(familySeed + 1000 * names.indexOf(family) + number).next);
   const make = families[family];
   if (make === undefined) throw new RangeError(`There is no family ${family}.`);
   const { corners, truth } = make(dice);

@@ -2,11 +2,11 @@
 export interface Draw {
   readonly seed: number;
   /** From 0 to below 1. */
-  next(): number;
-  between(least: number, greatest: number): number;
+  readonly next: () => number;
+  readonly between: (least: number, greatest: number) => number;
   /** A whole number, both ends included. */
-  whole(least: number, greatest: number): number;
-  pick<Item>(items: readonly Item[]): Item;
+  readonly whole: (least: number, greatest: number) => number;
+  readonly pick: <Item>(items: readonly Item[]) => Item;
 }
 
 /** The seed of the run: given as FC_SEED, or another one every time. */
