@@ -409,7 +409,7 @@ export interface paths {
         };
         get?: never;
         put?: never;
-        /** Read a file that could not be measured once more */
+        /** Read a file once more that could not be measured, or that an earlier measuring version measured */
         post: operations["parts.measureAgain"];
         delete?: never;
         options?: never;
@@ -882,6 +882,10 @@ export interface components {
                     closed: boolean | null;
                     oriented: boolean;
                     turned: boolean;
+                    selfIntersections: number | null;
+                    overlapping: boolean;
+                    /** @enum {string} */
+                    examined: "integrals" | "whole" | "limited";
                 } | null;
                 sizeM: [
                     number,
@@ -1567,6 +1571,19 @@ export interface components {
                 speedRadPerS: number;
                 timeS: number;
             } | null;
+            asMade?: ({
+                /** @enum {string} */
+                kind: "scale";
+                spread: number;
+            } | {
+                /** @enum {string} */
+                kind: "offset";
+                spreadM: number;
+            }) | null;
+            shellDensities?: {
+                shell: number;
+                densityKgM3: number | null;
+            }[];
             version: number;
         };
         MaterialList: {
@@ -3260,7 +3277,7 @@ export interface operations {
         };
         requestBody?: never;
         responses: {
-            /** @description Read a file that could not be measured once more */
+            /** @description Read a file once more that could not be measured, or that an earlier measuring version measured */
             200: {
                 headers: {
                     [name: string]: unknown;

@@ -45,7 +45,8 @@ export type PartList = z.infer<typeof partList>;
 
 /** Columns that an export can have, in any order. What they mean, in which unit and about what, stands in the export itself. */
 export const exportColumns = [
-  'number', 'name', 'revision', 'file', 'sha256', 'material', 'unit', 'density', 'facets', 'size', 'volume', 'area', 'mass', 'centre', 'tensor', 'moments', 'axes', 'radii', 'soundness', 'state',
+  'number', 'name', 'revision', 'file', 'sha256', 'material', 'unit', 'density', 'facets', 'size', 'volume', 'area', 'mass', 'uncertainty', 'centre', 'tensor', 'moments', 'axes', 'radii', 'soundness',
+  'shells', 'state',
 ] as const;
 export const exportColumn = z.enum(exportColumns);
 export type ExportColumn = z.infer<typeof exportColumn>;

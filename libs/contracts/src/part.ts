@@ -79,7 +79,16 @@ export const partRow = z.object({
   revision: revisionHead,
   /** Null until the file is measured. */
   soundness: z
-    .object({ defensible: z.boolean(), closed: z.boolean().nullable(), oriented: z.boolean(), turned: z.boolean() })
+    .object({
+      defensible: z.boolean(),
+      closed: z.boolean().nullable(),
+      oriented: z.boolean(),
+      turned: z.boolean(),
+      selfIntersections: z.number().int().nonnegative().nullable(),
+      /** Some of the shells pass through each other, or add to a body that they lie within. */
+      overlapping: z.boolean(),
+      examined: measurement.shape.examined,
+    })
     .nullable(),
   /** Null where the unit is not stated or the file is not measured. */
   sizeM: vector3.nullable(),

@@ -98,5 +98,8 @@ export const settingChange = densityChoice.extend({
   weighing: weighing.nullable().optional(),
   axis: axis.optional(),
   drive: drive.nullable().optional(),
+  asMade: asMade.nullable().optional(),
+  /** All shells that are not of the part's density: those that are left out of the list get it back. */
+  shellDensities: z.array(shellDensity).max(200).optional(),
 });
 export type SettingChange = z.infer<typeof settingChange>;

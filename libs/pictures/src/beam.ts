@@ -11,6 +11,8 @@ export interface BeamInput {
   unit: string;
   /** Writes a number of that unit for people. */
   format: (value: number) => string;
+  /** The same for the centre, where its uncertainty decides on its digits or stands with it. */
+  formatCentre?: (value: number) => string;
   width?: number;
 }
 
@@ -31,7 +33,7 @@ export function computeShare(minimum: number, maximum: number, value: number): n
  * the numbers at the ends say how long each is.
  */
 export function computeBeam(input: BeamInput): Picture {
-  const { axis, minimum, maximum, centre, unit, format, width = 260 } = input;
+  const { axis, minimum, maximum, centre, unit, format, formatCentre = format, width = 260 } = input;
   const height = 76;
   const barY = 34;
   const left = margin;
@@ -42,7 +44,7 @@ export function computeBeam(input: BeamInput): Picture {
   const shapes: Shape[] = [
     { kind: 'text', at: [left, 14], text: axis.toUpperCase(), anchor: 'start', face: 'label', size: 12, fill: 'soft', bold: true },
     { kind: 'text', at: [left + 13, 14], text: unit, anchor: 'start', face: 'label', size: 12, fill: 'soft' },
-    { kind: 'text', at: [right, 14], text: format(centre), anchor: 'end', face: 'figure', size: 14, fill: 'ink', bold: true },
+    { kind: 'text', at: [right, 14], text: formatCentre(centre), anchor: 'end', face: 'figure', size: 14, fill: 'ink', bold: true },
     { kind: 'line', from: [middle, barY - 7], to: [middle, barY + 7], stroke: 'edge', strokeWidth: 1 },
     { kind: 'line', from: [left, barY - 5], to: [left, barY + 5], stroke: 'ink', strokeWidth: 1 },
     { kind: 'line', from: [right, barY - 5], to: [right, barY + 5], stroke: 'ink', strokeWidth: 1 },
@@ -64,7 +66,7 @@ export function computeBeam(input: BeamInput): Picture {
     width,
     height,
     shapes,
-    alternative: `Along ${axis} the box reaches from ${format(minimum)} to ${format(maximum)} ${unit}; the centre of mass is at ${format(centre)} ${unit}.`,
+    alternative: `Along ${axis} the box reaches from ${format(minimum)} to ${format(maximum)} ${unit}; the centre of mass is at ${formatCentre(centre)} ${unit}.`,
   };
 }
 

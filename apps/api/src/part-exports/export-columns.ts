@@ -39,6 +39,14 @@ const columns: Record<ExportColumn, Columns> = {
   volume: { volume_m3: ofRecord(({ volumeM3 }) => volumeM3) },
   area: { area_m2: ofRecord(({ areaM2 }) => areaM2) },
   mass: { mass_kg: ofRecord(({ massKg }) => massKg) },
+  // Expanded, k = 2. The predicted correction of the facets is no part of it and has columns of its own.
+  uncertainty: {
+    volume_uncertainty_m3: ofRecord(({ uncertainty }) => uncertainty?.volumeM3),
+    mass_uncertainty_kg: ofRecord(({ uncertainty }) => uncertainty?.massKg),
+    coverage_factor: ofRecord(({ uncertainty }) => uncertainty?.k),
+    volume_correction_m3: ofRecord(({ correction }) => correction?.volumeM3),
+    mass_correction_kg: ofRecord(({ correction }) => correction?.massKg),
+  },
   centre: {
     centre_of_mass_x_m: ofRecord(({ centreOfMassM }) => centreOfMassM?.[0]),
     centre_of_mass_y_m: ofRecord(({ centreOfMassM }) => centreOfMassM?.[1]),
@@ -69,6 +77,13 @@ const columns: Record<ExportColumn, Columns> = {
   soundness: Object.fromEntries(
     (['defensible', 'closed', 'oriented', 'outward', 'turned'] as const).map((verdict) => [verdict, ({ stored }: ExportedPart) => stored.measurement?.[verdict] ?? null]),
   ),
+  // Empty where it was not examined; `examined` says how far the examination went.
+  shells: {
+    shells: ({ stored }) => stored.measurement?.shells ?? null,
+    cavities: ({ stored }) => stored.measurement?.cavities ?? null,
+    self_intersections: ({ stored }) => stored.measurement?.selfIntersections ?? null,
+    examined: ({ stored }) => stored.measurement?.examined ?? null,
+  },
   state: { state: ({ state }) => state },
 };
 

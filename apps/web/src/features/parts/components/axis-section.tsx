@@ -5,6 +5,7 @@ import { useState } from 'react';
 import { ChoiceBar } from '../../../components/choice-bar';
 import { Figure } from '../../../components/figure';
 import { Notice } from '../../../components/notice';
+import { Uncertain } from '../../../components/uncertain';
 import { axisChoices, computeAxis, describeAxis, findChoice } from '../model/axis-choice';
 import { describeAxes, isAxisUnique } from '../model/axes-words';
 import { chooseDisplayUnit } from '../model/display-units';
@@ -14,8 +15,16 @@ import { DriveFields } from './drive-fields';
 import { Fact, Section, sectionNames } from './section';
 import { TypedAxisFields } from './typed-axis';
 
-function Shown({ quantity, value }: { quantity: Quantity; value: number }) {
+interface ShownProps {
+  quantity: Quantity;
+  value: number;
+  /** Expanded, k = 2; left out where none is told. */
+  uncertainty?: number;
+}
+
+function Shown({ quantity, value, uncertainty }: ShownProps) {
   const unit = chooseDisplayUnit(quantity, value);
+  if (uncertainty !== undefined) return <Uncertain value={fromSi(value, unit)} uncertainty={fromSi(uncertainty, unit)} unit={unit.symbol} />;
   return <Figure value={fromSi(value, unit)} unit={unit.symbol} />;
 }
 
@@ -27,13 +36,14 @@ function AxisFigures({ statement, state }: { statement: StatementRecord; state: 
   const { axis } = state.draft;
   const line = resolveAxis(axis, { centreOfMassM, principalAxes });
   if (massKg === null || !centreOfMassM || !inertiaAtCentreOfMassKgM2 || !line) return null;
+  const doubt = statement.uncertainty?.aboutAxis ?? undefined;
   const moment = computeAxisMoment({ massKg, centreOfMassM, inertiaAtCentreOfMassKgM2 }, line);
   const apart = moment.distanceM > armThatCounts * Math.max(moment.radiusOfGyrationM, moment.distanceM);
   return (
     <dl className="facts">
       <Fact name="Moment">
         <b className="axis-moment">
-          <Shown quantity="inertia" value={moment.inertiaKgM2} />
+          <Shown quantity="inertia" value={moment.inertiaKgM2} uncertainty={doubt?.inertiaKgM2} />
         </b>{' '}
         <span className="soft">{describeAxis(axis, line)}</span>
       </Fact>
@@ -56,7 +66,7 @@ function AxisFigures({ statement, state }: { statement: StatementRecord; state: 
         </Fact>
       )}
       <Fact name="Gyration">
-        <Shown quantity="length" value={moment.radiusOfGyrationM} /> <span className="soft">radius of gyration about this axis</span>
+        <Shown quantity="length" value={moment.radiusOfGyrationM} uncertainty={doubt?.radiusOfGyrationM} /> <span className="soft">radius of gyration about this axis</span>
       </Fact>
     </dl>
   );

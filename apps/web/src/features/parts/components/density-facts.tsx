@@ -1,21 +1,12 @@
 import { Button } from '@blueprintjs/core';
 import type { Material, Setting, StatementRecord } from '@masswright/contracts';
 import { MaterialPicker } from '../../../components/material-picker';
-import { StatusTag } from '../../../components/status-tag';
 import { TypedField } from '../../../components/typed-field';
 import { writePlain, writeSpreadDensity } from '../../../lib/material-words';
 import type { SettingEditor, SettingEditorState } from '../model/setting-editor';
-import {
-  describeMassChange,
-  describeTypedDensity,
-  describeTypedWeighing,
-  pickDensity,
-  readTypedDensity,
-  readTypedWeighing,
-  writeTypedDensity,
-  writeTypedWeighing,
-} from '../model/typed-density';
-import { describeDensityInForce, describeWeighing } from '../model/weighing-words';
+import { describeMassChange, describeTypedDensity, pickDensity, readTypedDensity, writeTypedDensity } from '../model/typed-density';
+import { describeDensityInForce } from '../model/weighing-words';
+import { DeclaredMaterials } from './declared-materials';
 import { Fact } from './section';
 
 interface DensityFactsProps {
@@ -24,6 +15,8 @@ interface DensityFactsProps {
   canEdit: boolean;
   materials: readonly Material[];
   statement: StatementRecord | undefined;
+  /** Names of materials that the file gives. */
+  declared: readonly string[];
 }
 
 /** What a setting takes over of a material: its name, and the density that it has at this moment. */
@@ -49,20 +42,14 @@ function NewerDensity({ draft, materials, statement, canEdit, editor }: Pick<Den
   );
 }
 
-/** Of what the part is: a material, a typed density, or its weight. */
-export function DensityFacts({ editor, state, canEdit, materials, statement }: DensityFactsProps) {
+/** Of what the part is: a material, or a typed density. */
+export function DensityFacts({ editor, state, canEdit, materials, statement, declared }: DensityFactsProps) {
   const { draft } = state;
   const density = pickDensity(draft);
   const inForce = describeDensityInForce(statement, draft);
-  const weighing = draft.weighing && describeWeighing(statement?.weighing, draft);
-  const verdict = weighing && (
-    <p className="weighing-verdict">
-      <StatusTag tone={weighing.tone}>{weighing.word}</StatusTag> {weighing.words}
-    </p>
-  );
   return (
     <>
-      {(canEdit || draft.material) && (
+      {(canEdit || draft.material || declared.length > 0) && (
         <Fact name="Material">
           {canEdit ? (
             <MaterialPicker
@@ -72,8 +59,9 @@ export function DensityFacts({ editor, state, canEdit, materials, statement }: D
               onChange={(material) => editor.change(material ? takeMaterial(material) : { material: null })}
             />
           ) : (
-            draft.material?.name
+            (draft.material?.name ?? 'not stated')
           )}
+          {draft.material === null && <DeclaredMaterials names={declared} materials={materials} onTake={canEdit ? (material) => editor.change(takeMaterial(material)) : undefined} />}
           <NewerDensity draft={draft} materials={materials} statement={statement} canEdit={canEdit} editor={editor} />
         </Fact>
       )}
@@ -94,28 +82,6 @@ export function DensityFacts({ editor, state, canEdit, materials, statement }: D
         )}
         {inForce && <p className="density-in-force">{inForce}</p>}
       </Fact>
-      {(canEdit || draft.weighing) && (
-        <Fact name="Weighed">
-          {canEdit ? (
-            <TypedField
-              label="Weighed mass"
-              value={draft.weighing}
-              write={writeTypedWeighing}
-              read={readTypedWeighing}
-              describe={describeTypedWeighing}
-              emptyHint="What the scale said, and how sure it is (k = 2)."
-              placeholder="0.311 kg ± 0.002 kg"
-              consequence={verdict}
-              onChange={(typed) => editor.change({ weighing: typed })}
-            />
-          ) : (
-            <>
-              <span className="figure">{writeTypedWeighing(draft.weighing)}</span>
-              {verdict}
-            </>
-          )}
-        </Fact>
-      )}
     </>
   );
 }

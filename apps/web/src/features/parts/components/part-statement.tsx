@@ -5,7 +5,9 @@ import { useMemo } from 'react';
 import { ProblemNotice } from '../../../components/problem-notice';
 import { useMeasureAgain } from '../api/parts';
 import type { SettingEditor, SettingEditorState } from '../model/setting-editor';
+import { findShellFault } from '../model/shell-densities';
 import { AxisSection } from './axis-section';
+import { DoubtSection } from './doubt-section';
 import { FiguresSection } from './figures-section';
 import { RunProgress } from './run-progress';
 import { SaveStatus } from './save-status';
@@ -14,6 +16,7 @@ import { SoundnessSection } from './soundness-section';
 import { SourceSection } from './source-section';
 import './part-grid.css';
 import './statement.css';
+import './examination.css';
 
 interface PartStatementProps {
   part: Part;
@@ -55,11 +58,13 @@ export function PartStatement({ part, editor, state, ownName, materials, onRepla
     () => (measurement ? computeStatement(measurement, draft, { file: fileName, sha256: sha256 ?? '' }) : undefined),
     [measurement, draft, fileName, sha256],
   );
+  const own = can.edit ? editor : undefined;
   const hasAxis = statement?.massKg !== null && statement !== undefined;
   const sections: SectionName[] = [
     sectionNames.source,
     ...(measurement ? [sectionNames.soundness, sectionNames.figures] : []),
     ...(hasAxis ? [sectionNames.axis] : []),
+    ...(statement?.uncertainty ? [sectionNames.doubt] : []),
   ];
   return (
     <div className="statement-page">
@@ -84,9 +89,12 @@ export function PartStatement({ part, editor, state, ownName, materials, onRepla
             <RunProgress run={run} actions={can.edit && <FailedActions part={part} onReplace={onReplace} />} />
           </div>
         )}
-        {measurement && <SoundnessSection soundness={measurement.soundness} />}
-        {measurement && <FiguresSection soundness={measurement.soundness} statement={statement} canEdit={can.edit} />}
+        {measurement && <SoundnessSection measurement={measurement} run={run} setting={draft} editor={own} />}
+        {measurement && (
+          <FiguresSection soundness={measurement.soundness} statement={statement} shellFault={findShellFault(measurement, draft)} isMixed={(draft.shellDensities ?? []).length > 0} editor={own} />
+        )}
         {statement && hasAxis && <AxisSection statement={statement} canEdit={can.edit} editor={editor} state={state} />}
+        {measurement && statement?.uncertainty && <DoubtSection statement={statement} setting={draft} measurement={measurement} />}
       </article>
     </div>
   );

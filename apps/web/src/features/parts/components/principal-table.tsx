@@ -1,11 +1,12 @@
 import type { StatementRecord, Vector3 } from '@masswright/contracts';
-import { fromSi } from '@masswright/units';
+import { fromSi, writeFigure, type Unit } from '@masswright/units';
 import { PowerText } from '../../../components/figure';
-import { createGroupFormat, formatDecimals } from '../../../lib/fixed-figure';
+import { AlignedText, computeTailRoom } from '../../../components/uncertain';
+import { formatDecimals } from '../../../lib/fixed-figure';
+import { writeUncertain, type UncertainText } from '../../../lib/uncertain-figure';
 import { describeAxes, isAxisUnique } from '../model/axes-words';
 import { chooseDisplayUnit } from '../model/display-units';
 
-const digits = 6;
 const directionDecimals = 5;
 
 type Principal = { moments: Vector3; axes: [Vector3, Vector3, Vector3]; kind: NonNullable<StatementRecord['axes']>; radii: Vector3 };
@@ -15,14 +16,52 @@ export function findPrincipal({ principalMomentsKgM2, principalAxes, axes, radii
   return { moments: principalMomentsKgM2, axes: principalAxes, kind: axes, radii: radiiOfGyrationM };
 }
 
-export function PrincipalTable({ principal }: { principal: Principal }) {
+/** A column of figures with their ±, one below the other. */
+interface Column {
+  texts: readonly UncertainText[];
+  all: readonly string[];
+  /** Room behind the points. */
+  behind: number;
+  isUncertain: boolean;
+}
+
+function writeColumn(values: Vector3, uncertainties: Vector3 | null | undefined, unit: Unit): Column {
+  const shown = values.map((value) => fromSi(value, unit));
+  const texts = shown.map((value, k) => writeUncertain(value, uncertainties ? fromSi(uncertainties[k] ?? 0, unit) : null));
+  return { texts, all: shown.map((value) => `${writeFigure(value)} ${unit.symbol}`), behind: computeTailRoom(texts.map(({ value }) => value)), isUncertain: Boolean(uncertainties) };
+}
+
+/** Two cells: the figure, and its ± beside it. */
+function ColumnCells({ column, index, isMain = false }: { column: Column; index: number; isMain?: boolean }) {
+  const { value, spread, power } = column.texts[index] ?? { value: '—', spread: null, power: '' };
+  const isPlain = !value.includes('×');
+  return (
+    <>
+      <td className={`figure${isMain ? ' figure-main' : ''}`} title={column.all[index]}>
+        {isPlain ? <AlignedText text={value} behind={column.behind} /> : <PowerText text={value} />}
+        {spread === null && <PowerText text={power} />}
+      </td>
+      {column.isUncertain && (
+        <td className="figure figure-spread principal-spread">
+          ± <AlignedText text={spread ?? ''} behind={column.behind} />
+          <PowerText text={power} />
+        </td>
+      )}
+    </>
+  );
+}
+
+interface PrincipalTableProps {
+  principal: Principal;
+  uncertainty: StatementRecord['uncertainty'];
+}
+
+export function PrincipalTable({ principal, uncertainty }: PrincipalTableProps) {
   const { moments, axes, kind, radii } = principal;
   const inertia = chooseDisplayUnit('inertia', moments[2]);
   const length = chooseDisplayUnit('length', radii[2]);
-  const shownMoments = moments.map((moment) => fromSi(moment, inertia));
-  const shownRadii = radii.map((radius) => fromSi(radius, length));
-  const formatMoment = createGroupFormat(shownMoments, digits);
-  const formatRadius = createGroupFormat(shownRadii, digits);
+  const momentColumn = writeColumn(moments, uncertainty?.principalMomentsKgM2, inertia);
+  const radiusColumn = writeColumn(radii, uncertainty?.radiiOfGyrationM, length);
   return (
     <div className="principal" role="group" aria-label="Principal moments" tabIndex={0}>
       <table className="principal-table">
@@ -34,10 +73,10 @@ export function PrincipalTable({ principal }: { principal: Principal }) {
             <th scope="col">
               <span className="hidden-visually">Axis</span>
             </th>
-            <th scope="col">
+            <th scope="col" colSpan={momentColumn.isUncertain ? 2 : 1}>
               <span className="unit">{inertia.symbol}</span>
             </th>
-            <th scope="col">
+            <th scope="col" colSpan={radiusColumn.isUncertain ? 2 : 1}>
               <span className="unit">radius of gyration, {length.symbol}</span>
             </th>
             <th scope="col">
@@ -55,8 +94,8 @@ export function PrincipalTable({ principal }: { principal: Principal }) {
               <th scope="row">
                 <span className={`axis-numeral axis-numeral-${number}`}>{number}</span>
               </th>
-              <td className="figure figure-main"><PowerText text={formatMoment(shownMoments[number - 1] ?? 0)} /></td>
-              <td className="figure"><PowerText text={formatRadius(shownRadii[number - 1] ?? 0)} /></td>
+              <ColumnCells column={momentColumn} index={number - 1} isMain />
+              <ColumnCells column={radiusColumn} index={number - 1} />
               <td className="figure principal-direction">
                 {isAxisUnique(kind, number) ? (
                   (axes[number - 1] ?? []).map((component, index) => <span key={index}>{formatDecimals(component, directionDecimals)}</span>)

@@ -8,6 +8,7 @@ const stages = [
   { stage: 'hashing', name: 'Comparing' },
   { stage: 'reading', name: 'Reading' },
   { stage: 'measuring', name: 'Measuring' },
+  { stage: 'examining', name: 'Examining' },
   { stage: 'storing', name: 'Storing' },
 ] as const satisfies readonly { stage: MeasuringRun['stage']; name: string }[];
 

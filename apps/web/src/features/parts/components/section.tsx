@@ -12,6 +12,7 @@ export const sectionNames = {
   soundness: { number: 2, id: 'soundness', title: 'Soundness' },
   figures: { number: 3, id: 'figures', title: 'Figures' },
   axis: { number: 4, id: 'axis', title: 'Axis and torque' },
+  doubt: { number: 5, id: 'doubt', title: 'Doubt' },
 } as const satisfies Record<string, SectionName>;
 
 export function Section({ name, aside, children }: { name: SectionName; aside?: ReactNode; children: ReactNode }) {

@@ -1,44 +1,43 @@
-import type { Soundness } from '@masswright/contracts';
-import { formatCount } from '@masswright/units';
+import type { Measurement, MeasuringRun, Setting, Shell } from '@masswright/contracts';
 import { StatusTag } from '../../../components/status-tag';
-import { describeEdges, describeFinding, describeVerdict } from '../model/soundness-words';
+import type { SettingEditor } from '../model/setting-editor';
+import { describeShells } from '../model/shell-words';
+import { describeEdges, describeIntersections, describeVertices, describeVerdict, describeWinding, pickVerdict } from '../model/soundness-words';
+import { ExaminationNote } from './examination-note';
+import { FindingList } from './finding-list';
+import { OpeningsFact } from './openings-fact';
 import { Fact, Section, sectionNames } from './section';
+import { ShellTable } from './shell-table';
 
-export function SoundnessSection({ soundness }: { soundness: Soundness }) {
-  const verdict = describeVerdict(soundness);
+interface SoundnessSectionProps {
+  measurement: Measurement;
+  run: MeasuringRun;
+  setting: Setting;
+  /** Undefined where the reader may change nothing. */
+  editor: SettingEditor | undefined;
+}
+
+const hasShells = (measurement: Measurement): measurement is Measurement & { shells: Shell[] } => measurement.shells !== null && measurement.shells.length > 1;
+
+export function SoundnessSection({ measurement, run, setting, editor }: SoundnessSectionProps) {
+  const { soundness, openings, examined } = measurement;
+  const { lengthUnit } = setting;
+  const verdict = describeVerdict(pickVerdict(measurement));
+  const nothing = examined === 'whole' ? 'None.' : examined === 'integrals' ? 'None so far.' : 'None, as far as it was examined.';
   return (
     <Section name={sectionNames.soundness} aside={<StatusTag tone={verdict.tone}>{verdict.words}</StatusTag>}>
+      <ExaminationNote measurement={measurement} run={run} />
       <dl className="facts">
         <Fact name="Edges">{describeEdges(soundness)}</Fact>
-        <Fact name="Winding">
-          {!soundness.closed
-            ? 'Not judged: the mesh is open.'
-            : soundness.oriented
-              ? soundness.turned
-                ? 'All one way, inwards: read the other way round.'
-                : 'All one way, outwards.'
-              : 'Facets are wound both ways.'}
+        <Fact name="Winding">{describeWinding(soundness)}</Fact>
+        <Fact name="Vertices">{describeVertices(soundness, examined)}</Fact>
+        {openings && <OpeningsFact openings={openings} unit={lengthUnit} />}
+        <Fact name="Shells">
+          {describeShells(measurement)}
+          {hasShells(measurement) && <ShellTable measurement={measurement} setting={setting} editor={editor} />}
         </Fact>
-        <Fact name="Findings">
-          {soundness.findings.length === 0 ? (
-            'None.'
-          ) : (
-            <ul className="findings">
-              {soundness.findings.map((finding) => (
-                <li key={finding.kind}>
-                  {describeFinding(finding)}
-                  {finding.facets.length > 0 && (
-                    <span className="soft">
-                      {' '}
-                      Facet{finding.facets.length > 1 && 's'} <span className="figure">{finding.facets.slice(0, 6).map((facet) => formatCount(facet + 1)).join(', ')}</span>
-                      {finding.facets.length > 6 && ' …'}, counted from 1.
-                    </span>
-                  )}
-                </li>
-              ))}
-            </ul>
-          )}
-        </Fact>
+        <Fact name="Crossings">{describeIntersections(soundness, measurement)}</Fact>
+        <Fact name="Findings">{soundness.findings.length === 0 ? nothing : <FindingList findings={soundness.findings} unit={lengthUnit} />}</Fact>
       </dl>
     </Section>
   );

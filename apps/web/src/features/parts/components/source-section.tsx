@@ -6,8 +6,10 @@ import { formatBytes } from '../../../lib/format-bytes';
 import { formatDay, formatDuration, formatMoment } from '../../../lib/format-time';
 import type { SettingEditor, SettingEditorState } from '../model/setting-editor';
 import { DensityFacts } from './density-facts';
+import { MadeFacts } from './made-facts';
 import { Fact, Section, sectionNames } from './section';
 import { UnitFact } from './unit-fact';
+import { VersionFacts } from './version-facts';
 
 const formatNames: Readonly<Record<MeshFormat, string>> = {
   'stl-binary': 'binary STL',
@@ -30,7 +32,7 @@ interface SourceSectionProps {
 }
 
 export function SourceSection({ part, editor, state, materials, statement }: SourceSectionProps) {
-  const { run } = part.revision;
+  const { run, measurement } = part.revision;
   const measured = run.finishedAt && run.state === 'done';
   return (
     <Section
@@ -46,8 +48,10 @@ export function SourceSection({ part, editor, state, materials, statement }: Sou
     >
       <dl className="facts">
         <FileFacts part={part} />
+        <VersionFacts part={part} setting={state.draft} />
         <UnitFact part={part} editor={editor} state={state} />
-        <DensityFacts editor={editor} state={state} canEdit={part.can.edit} materials={materials} statement={statement} />
+        <DensityFacts editor={editor} state={state} canEdit={part.can.edit} materials={materials} statement={statement} declared={measurement?.declaredMaterials ?? []} />
+        <MadeFacts editor={editor} state={state} canEdit={part.can.edit} statement={statement} />
         <Fact name="Setting">
           <span className="soft">
             version {state.saved.version}, last changed {formatMoment(state.saved.changedAt)} by {state.saved.changedBy}

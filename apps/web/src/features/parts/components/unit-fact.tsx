@@ -20,11 +20,30 @@ interface UnitFactProps {
 /** Who says that it is this unit: a person for this file, or nobody yet. */
 function describeOrigin({ part, state }: Pick<UnitFactProps, 'part' | 'state'>): string {
   const { draft, saved } = state;
-  if (draft.lengthUnit === null) return 'The file does not say it, and none is assumed.';
+  const declared = part.revision.measurement?.declaredUnit ?? null;
+  if (draft.lengthUnit === null) return declared === null ? 'The file does not say it, and none is assumed.' : `The file says it is in ${unitTexts[declared].plural}.`;
   if (draft.lengthUnit !== saved.lengthUnit) return 'stated by you, just now';
   if (saved.unitStated) return `stated by ${saved.unitStated.by}, ${formatMoment(saved.unitStated.at)}`;
   const before = part.revisions[1];
   return before ? `taken over from revision ${before.letter}; nobody has stated it for this file` : '';
+}
+
+/** What the file itself says, as long as that is not what is stated. */
+function Declared({ part, editor, state }: UnitFactProps) {
+  const declared = part.revision.measurement?.declaredUnit ?? null;
+  const { lengthUnit } = state.draft;
+  if (declared === null || declared === lengthUnit) return null;
+  const { plural } = unitTexts[declared];
+  return (
+    <p className="declared">
+      {lengthUnit !== null && `The file says ${plural}. `}
+      {part.can.edit && (
+        <Button size="small" className="screen-only" onClick={() => editor.change({ lengthUnit: declared })}>
+          Take {plural}
+        </Button>
+      )}
+    </p>
+  );
 }
 
 /** A new revision whose volume does not fit the unit that it took over. */
@@ -85,6 +104,7 @@ export function UnitFact({ part, editor, state }: UnitFactProps) {
         'not stated'
       )}{' '}
       <span className="soft">{describeOrigin({ part, state })}</span>
+      <Declared part={part} editor={editor} state={state} />
       <Doubt part={part} editor={editor} state={state} />
     </Fact>
   );

@@ -13,8 +13,9 @@ function isEqual(one: unknown, other: unknown): boolean {
 export const isSameAxis = (one: Axis, other: Axis): boolean => isEqual(one, other);
 export const isSameDrive = (one: Drive | null, other: Drive | null): boolean => isEqual(one, other);
 
-export function pickSetting({ lengthUnit, densityKgM3, densitySpreadKgM3, material, weighing, axis, drive }: Setting): Setting {
-  return { lengthUnit, densityKgM3, densitySpreadKgM3, material, weighing, axis, drive };
+/** Settings from before there were tolerances and densities of shells have neither. */
+export function pickSetting({ lengthUnit, densityKgM3, densitySpreadKgM3, material, weighing, axis, drive, asMade = null, shellDensities = [] }: Setting): Setting {
+  return { lengthUnit, densityKgM3, densitySpreadKgM3, material, weighing, axis, drive, asMade, shellDensities };
 }
 
 /** The library may have given the material another name since: who it is stays the same. */
@@ -33,6 +34,8 @@ export function computeDifference(wanted: Setting, known: Setting): SettingChang
   if (!isEqual(wanted.weighing, known.weighing)) difference.weighing = wanted.weighing;
   if (!isSameAxis(wanted.axis, known.axis)) difference.axis = wanted.axis;
   if (!isSameDrive(wanted.drive, known.drive)) difference.drive = wanted.drive;
+  if (!isEqual(wanted.asMade ?? null, known.asMade ?? null)) difference.asMade = wanted.asMade ?? null;
+  if (!isEqual(wanted.shellDensities ?? [], known.shellDensities ?? [])) difference.shellDensities = wanted.shellDensities ?? [];
   return difference;
 }
 

@@ -1,67 +1,82 @@
-import type { Measurement, Soundness } from '@masswright/contracts';
+import type { Measurement, PartRow, Soundness } from '@masswright/contracts';
+import { formatCount } from '@masswright/units';
 import type { Tone } from '../../../components/status-tag';
 import { countOf } from '../../../lib/plural';
 
-type Verdict = Pick<Soundness, 'closed' | 'oriented' | 'turned' | 'defensible'>;
+export type Verdict = NonNullable<PartRow['soundness']>;
 
-/** One or two words for a row, and the colour and shape that go with them. */
-export function describeVerdict(soundness: Verdict): { tone: Tone; word: string; words: string } {
-  if (!soundness.closed) return { tone: 'wrong', word: 'Open', words: 'Open: not defensible' };
-  if (!soundness.oriented) return { tone: 'wrong', word: 'Mixed winding', words: 'Closed, but wound both ways: not defensible' };
-  if (!soundness.defensible) return { tone: 'wrong', word: 'No volume', words: 'Closed, but without volume: not defensible' };
-  if (soundness.turned) return { tone: 'doubt', word: 'Closed, turned', words: 'Closed and oriented; it was inside out and was turned' };
+/** What a row says of a measurement, for a page that has all of it. */
+export function pickVerdict({ soundness, examined }: Pick<Measurement, 'soundness' | 'examined'>): Verdict {
+  const { defensible, closed, oriented, turned, selfIntersections, findings } = soundness;
+  return { defensible, closed, oriented, turned, selfIntersections, overlapping: findings.some(({ kind }) => kind === 'overlapping-shells'), examined };
+}
+
+export interface VerdictWords {
+  tone: Tone;
+  /** One or two words, for a row. */
+  word: string;
+  words: string;
+}
+
+/** What is said of a mesh as a whole, and the colour and shape that go with it. */
+export function describeVerdict(verdict: Verdict): VerdictWords {
+  const said = verdict.defensible ? describeDefensible(verdict) : describeNotDefensible(verdict);
+  const more = { integrals: '; the rest is being examined', limited: '; the rest was not examined', whole: '' }[verdict.examined];
+  return { ...said, words: `${said.words}${more}` };
+}
+
+function describeNotDefensible({ closed, oriented, overlapping, examined }: Verdict): VerdictWords {
+  // The sum over the edges tells that something is wrong with them, and not yet what.
+  if (closed === null) {
+    return { tone: examined === 'integrals' ? 'doubt' : 'wrong', word: 'Edges unpaired', words: 'Open, or wound both ways: not defensible' };
+  }
+  if (!closed) return { tone: 'wrong', word: 'Open', words: 'Open: not defensible' };
+  if (!oriented) return { tone: 'wrong', word: 'Mixed winding', words: 'Closed, but wound both ways: not defensible' };
+  if (overlapping) return { tone: 'wrong', word: 'Overlapping', words: 'Closed, but shells overlap: not defensible' };
+  return { tone: 'wrong', word: 'No volume', words: 'Closed, but without volume: not defensible' };
+}
+
+function describeDefensible({ closed, turned, selfIntersections }: Verdict): VerdictWords {
+  if (closed === false) return { tone: 'doubt', word: 'Hairline gaps', words: 'Open by hairlines only: defensible with a stated gap' };
+  if (selfIntersections !== null && selfIntersections > 0) return { tone: 'doubt', word: 'Crosses itself', words: 'Closed and oriented, but the surface passes through itself' };
+  if (turned) return { tone: 'doubt', word: 'Closed, turned', words: 'Closed and oriented; what was inside out was turned' };
   return { tone: 'agreement', word: 'Closed', words: 'Closed, oriented, outward' };
 }
 
 /** What the edges say, in a sentence. */
 export function describeEdges({ closed, boundaryEdges, nonManifoldEdges }: Soundness): string {
+  if (closed === null) return 'They do not cancel: the surface is open, or wound both ways somewhere. Which, and where, is not examined.';
+  if (nonManifoldEdges === null) return closed ? 'They cancel: the mesh is closed and wound one way. Edges of more than two facets are not counted.' : 'The mesh is open.';
   if (closed && nonManifoldEdges === 0) return 'Every edge is shared by two facets.';
   const sentences = [];
-  if (boundaryEdges > 0) sentences.push(`${countOf(boundaryEdges, 'edge')} ${boundaryEdges === 1 ? 'has' : 'have'} a facet on one side only.`);
+  if (boundaryEdges !== null && boundaryEdges > 0) sentences.push(`${countOf(boundaryEdges, 'edge')} ${boundaryEdges === 1 ? 'has' : 'have'} a facet on one side only.`);
   if (nonManifoldEdges > 0) sentences.push(`${countOf(nonManifoldEdges, 'edge')} ${nonManifoldEdges === 1 ? 'is' : 'are'} shared by more than two facets.`);
   return sentences.join(' ');
 }
 
-type FindingKind = Measurement['soundness']['findings'][number]['kind'];
-
-/** A finding as a sentence: what is so, and what it means for the figures. */
-const findingSentences: Record<FindingKind, (number: number) => string> = {
-  'boundary-edges': (n) => `${countOf(n, 'edge')} ${n === 1 ? 'is' : 'are'} open: there the surface ends, so there is no inside.`,
-  'crowded-edges': (n) => `${countOf(n, 'edge')} ${n === 1 ? 'has' : 'have'} more than two facets, as where two bodies touch along a line. The integrals hold all the same.`,
-  'unbalanced-edges': (n) => `Along ${countOf(n, 'edge')} neighbouring facets are wound against each other: inside and outside change places there.`,
-  'degenerate-facets': (n) => `${countOf(n, 'facet')} ${n === 1 ? 'has' : 'have'} no area. They add nothing to the figures.`,
-  'duplicate-facets': (n) => `${countOf(n, 'facet')} ${n === 1 ? 'lies' : 'lie'} exactly on another one.`,
-  'turned-whole': () => 'All facets are wound inwards, so the volume of the file as stored is negative. It was read the other way round; mass and inertia are those of the turned mesh.',
-  'no-volume': () => 'The surface encloses a volume that can not be told from nothing.',
-  'trailing-bytes': (n) => `${countOf(n, 'byte')} ${n === 1 ? 'follows' : 'follow'} the last facet. They were passed over.`,
-  'several-solids': (n) => `The file holds ${countOf(n, 'solid')}. They are measured together as one part.`,
-  'nonzero-attributes': (n) => `${countOf(n, 'facet')} ${n === 1 ? 'carries' : 'carry'} attribute bytes (colours, often). They mean nothing to the figures.`,
-  'contradicting-normals': (n) => `${countOf(n, 'facet')} ${n === 1 ? 'has' : 'have'} a stored normal that points against the order of the corners. The corners decide.`,
-  'non-planar-polygons': (n) => `${countOf(n, 'polygon')} ${n === 1 ? 'has' : 'have'} corners that lie in no one plane. Each was cut into triangles from its first corner; another cut would give slightly other figures.`,
-  'folded-polygons': (n) => `${countOf(n, 'polygon')} ${n === 1 ? 'bends' : 'bend'} inwards, so triangles from the first corner lie over one another there. The volume holds all the same; the area comes out too large.`,
-};
-
-export function describeFinding({ kind, count: number }: Measurement['soundness']['findings'][number]): string {
-  return findingSentences[kind](number);
+export function describeWinding({ closed, oriented, turned, findings }: Soundness): string {
+  if (closed === null) return 'Not judged: the edges do not cancel.';
+  const against = findings.some(({ kind }) => kind === 'turned-facets' || kind === 'unbalanced-edges');
+  if (!closed) return against ? 'Facets are wound both ways, beside the openings.' : 'All one way, as far as the surface goes.';
+  if (!oriented) return 'Facets are wound both ways.';
+  if (!turned) return 'All one way, outwards.';
+  return findings.some(({ kind }) => kind === 'turned-shells') ? 'One way within each shell; some shells were inside out and were read the other way round.' : 'All one way, inwards: read the other way round.';
 }
 
-/** Why a mesh gives no figures and what can be done about it; undefined where it gives them. */
-export function findRefusal(soundness: Soundness): { why: string; remedy: string } | undefined {
-  if (soundness.defensible) return undefined;
-  if (!soundness.closed) {
-    return {
-      why: `The mesh is open at ${countOf(soundness.boundaryEdges, 'edge')}. A surface with a gap encloses nothing, so it has no volume, no mass and no inertia that could be defended; a number could still be computed, and it would change with the place of the origin.`,
-      remedy: 'Close the gap where the body is modelled, or export it again as one solid with a finer or watertight setting, and add the file anew.',
-    };
+export function describeVertices({ nonManifoldVertices }: Soundness, examined: Measurement['examined']): string {
+  if (nonManifoldVertices === null) return examined === 'integrals' ? 'Not examined yet.' : 'Not examined.';
+  if (nonManifoldVertices === 0) return 'The facets at every vertex form one fan.';
+  return `At ${countOf(nonManifoldVertices, 'vertex', 'vertices')} more than one fan of facets meets.`;
+}
+
+/** Larger meshes are not searched for facets that pass through each other. */
+const examinedFacets = 200_000;
+
+export function describeIntersections({ selfIntersections }: Soundness, { facets, examined }: Pick<Measurement, 'facets' | 'examined'>): string {
+  if (selfIntersections === null) {
+    if (examined === 'integrals') return 'Not examined yet.';
+    if (facets <= examinedFacets) return 'Not examined: too many of the facets lie close together.';
+    return `Not examined: meshes of up to ${formatCount(examinedFacets)} facets are searched for them, and this one has ${formatCount(facets)}.`;
   }
-  if (!soundness.oriented) {
-    return {
-      why: 'The mesh is closed, but some of its facets are wound against their neighbours. What is inside for one is outside for the other, so parts of the volume would be taken away that should be added.',
-      remedy: 'Have the modelling program make the normals consistent, export again, and add the file anew.',
-    };
-  }
-  return {
-    why: 'The surface is closed, but what it encloses can not be told from nothing: a sheet folded onto itself, for instance.',
-    remedy: 'Give the body a thickness where it is modelled, export again, and add the file anew.',
-  };
+  return selfIntersections === 0 ? 'None: no facet passes through another.' : `${countOf(selfIntersections, 'pair')} of facets pass through each other.`;
 }

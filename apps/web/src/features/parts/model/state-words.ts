@@ -66,7 +66,10 @@ export function findNote(row: PartRow): RowNote | undefined {
     case 'not-defensible':
       return { text: 'No figures: the mesh has no inside that could be defended.' };
     case 'measuring':
-      return { text: '' };
+      // Figures that stand while the rest is examined stay in their columns.
+      if (row.soundness === null) return { text: '' };
+      if (row.revision.setting.lengthUnit === null) return { text: 'No size and no mass before the unit is stated.', ask: 'unit' };
+      return row.soundness.defensible ? undefined : { text: 'No figures so far: the edges of the mesh do not cancel.' };
     case 'unit-doubt':
       return row.unitDoubt ? { text: askUnit(row.unitDoubt), ask: 'unit-doubt' } : undefined;
     case 'weight-disagrees':

@@ -58,6 +58,7 @@ const part = (id: string): Part => ({
     format: null,
     compression: null,
     measurement: null,
+    measuredBefore: null,
   },
 });
 

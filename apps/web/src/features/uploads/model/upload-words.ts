@@ -6,6 +6,7 @@ const stageWords: Record<MeasuringRun['stage'], string> = {
   hashing: 'Comparing with known files',
   reading: 'Reading the file',
   measuring: 'Measuring',
+  examining: 'Measured, being examined',
   storing: 'Storing the figures',
 };
 

@@ -1,0 +1,20 @@
+import type { Measurement, Shell } from '@masswright/contracts';
+import { countOf } from '../../../lib/plural';
+
+export const shellKinds: Record<Shell['kind'], string> = {
+  solid: 'solid',
+  detached: 'detached body',
+  cavity: 'cavity',
+  overlapping: 'overlapping',
+  open: 'open',
+};
+
+/** How many pieces the mesh is of, in a sentence. */
+export function describeShells({ soundness, shells: listed, examined }: Pick<Measurement, 'soundness' | 'shells' | 'examined'>): string {
+  const { shells, cavities } = soundness;
+  if (shells === null) return examined === 'integrals' ? 'Not examined yet.' : 'Not examined.';
+  if (shells === 1) return 'One: all facets hang together by edges.';
+  const hollow = cavities !== null && cavities > 0 ? `, ${cavities === shells ? 'all' : countOf(cavities, 'of them', 'of them')} the ${cavities === 1 ? 'wall of a cavity' : 'walls of cavities'}` : '';
+  const left = listed !== null && listed.length < shells ? ` The ${countOf(listed.length, 'largest', 'largest')} are listed.` : '';
+  return `${countOf(shells, 'piece')} that hang together by edges${hollow}.${left}`;
+}
