@@ -1,4 +1,4 @@
-// Writes what is generated from the code and committed: the OpenAPI document, the types of the web's client, and geometry's compiled kernels.
+// Writes what is generated from the code and committed: the OpenAPI document, the types of the web's client, and geometry's compiled modules.
 // `--check` only compares and fails where something is out of date.
 import { spawnSync } from 'node:child_process';
 import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
@@ -17,15 +17,16 @@ function run([program, ...parameters], environment = {}) {
   if (result.status !== 0) throw new Error(`${program} ${parameters.join(' ')} failed.`);
 }
 
-/** Memory is fixed: the kernels' state and a batch of facets fit into six pages of 64 KiB. */
-const kernelFlags = ['-O3', '--noAssert', '--runtime', 'stub', '--enable', 'simd', '--initialMemory', '6', '--maximumMemory', '6'];
-
-/** The WebAssembly module as a source file, so that browsers and threads take it with the code. @param {string} target */
-function compileKernels(target) {
-  const compiled = path.join(work, 'kernels.wasm');
-  run(['npx', 'asc', 'libs/geometry/assembly/index.ts', ...kernelFlags, '-o', compiled]);
+/**
+ * A WebAssembly module as a source file, so that browsers and threads take it with the code. Its memory is fixed.
+ * @param {{ source: string, pages: number, name: string, target: string }} module pages are of 64 KiB
+ */
+function compileModule({ source, pages, name, target }) {
+  const compiled = path.join(work, `${name}.wasm`);
+  const memory = ['--initialMemory', String(pages), '--maximumMemory', String(pages)];
+  run(['npx', 'asc', `libs/geometry/assembly/${source}`, '-O3', '--noAssert', '--runtime', 'stub', '--enable', 'simd', ...memory, '-o', compiled]);
   const base64 = readFileSync(compiled).toString('base64');
-  writeFileSync(target, `/* Compiled from assembly/ by \`npm run generate\`; not to be edited. */\nexport const compiledKernel =\n  '${base64}';\n`);
+  writeFileSync(target, `/* Compiled from assembly/ by \`npm run generate\`; not to be edited. */\nexport const ${name} =\n  '${base64}';\n`);
 }
 
 try {
@@ -35,12 +36,15 @@ try {
   run(['node', path.join(root, 'node_modules/.cache/openapi/openapi.js'), document]);
   run(['npx', 'openapi-typescript', document, '--output', types]);
   const kernels = path.join(work, 'kernel.generated.ts');
-  compileKernels(kernels);
+  compileModule({ source: 'index.ts', pages: 6, name: 'compiledKernel', target: kernels });
+  const lane = path.join(work, 'lane.generated.ts');
+  compileModule({ source: 'text/index.ts', pages: 7, name: 'compiledLane', target: lane });
   /** @type {[string, string][]} what was generated, and where it is kept */
   const pairs = [
     [document, path.join(client, 'openapi.json')],
     [types, path.join(client, 'schema.generated.ts')],
     [kernels, path.join(root, 'libs/geometry/src/kernel/kernel.generated.ts')],
+    [lane, path.join(root, 'libs/geometry/src/text-lane/lane.generated.ts')],
   ];
   const read = (/** @type {string} */ file) => {
     try {

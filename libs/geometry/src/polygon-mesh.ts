@@ -8,22 +8,34 @@ import { findingFacets, type MeshFormat } from './measurement';
 import { MeshError, spellCount, type MeshPlace } from './mesh-error';
 import { findPolygonShape } from './polygon-shape';
 import { measurePolygonDoubt } from './polygon-doubt';
+import { noCorner } from './text-lane/lane-memory';
 
 /** A mesh of vertices, and of polygons that name them. Vertices keep binary64. */
 export interface PolygonMesh {
   /** Throws a MeshError where the vertices become too many. */
   addVertex(x: number, y: number, z: number): void;
+  /** Adds vertices of three coordinates each, as many as there is room for. */
+  addVertices(coordinates: Float64Array, count: number): void;
   beginPolygon(): void;
   /** Adds a corner, the number (from 0) of a vertex that is there. Throws a MeshError where the corners become too many. */
   addCorner(vertex: number): void;
   /** Hands on the triangles of a polygon of three corners or more. Throws a MeshError where the facets become too many. */
   endPolygon(): void;
+  /**
+   * Adds polygons, as many as there is room for: four numbers of vertices that are there (from 0) each, of which the fourth is `noCorner` where it is a
+   * triangle.
+   */
+  addPolygons(polygons: Uint32Array, count: number): void;
   /** Hands on the last facets. */
   finish(): FileRemarks;
   readonly vertexCount: number;
+  /** How many vertices more it takes. */
+  readonly vertexRoom: number;
   /** Corners of the polygon that was begun. */
   readonly corners: number;
   readonly facets: number;
+  /** How many facets more it takes. */
+  readonly facetRoom: number;
 }
 
 /**
@@ -52,6 +64,13 @@ export function createPolygonMesh(format: MeshFormat, limits: ReadingLimits, sin
     vertexCount += 1;
   }
 
+  function addVertices(coordinates: Float64Array, count: number): void {
+    const at = 3 * vertexCount;
+    if (vertices.length < at + 3 * count) vertices = growArray(vertices, at + 3 * count, 3 * limits.maximumVertices);
+    vertices.set(coordinates.subarray(0, 3 * count), at);
+    vertexCount += count;
+  }
+
   function addCorner(vertex: number): void {
     if (corners === limits.maximumPolygonCorners) {
       const at = getPlace();
@@ -69,6 +88,17 @@ export function createPolygonMesh(format: MeshFormat, limits: ReadingLimits, sin
     for (let k = 2; k < corners; k++) {
       if (triangles === undefined) writer.add(vertices, polygon[0] ?? 0, polygon[k - 1] ?? 0, polygon[k] ?? 0);
       else writer.add(vertices, triangles[3 * k - 6] ?? 0, triangles[3 * k - 5] ?? 0, triangles[3 * k - 4] ?? 0);
+    }
+  }
+
+  function addPolygons(polygons: Uint32Array, count: number): void {
+    for (let at = 0; at < 4 * count; at += 4) {
+      if (polygons[at + 3] === noCorner) {
+        writer.add(vertices, polygons[at] ?? 0, polygons[at + 1] ?? 0, polygons[at + 2] ?? 0);
+        continue;
+      }
+      for (corners = 0; corners < 4; corners++) polygon[corners] = polygons[at + corners] ?? 0;
+      endPolygon();
     }
   }
 
@@ -91,11 +121,13 @@ export function createPolygonMesh(format: MeshFormat, limits: ReadingLimits, sin
 
   return {
     addVertex,
+    addVertices,
     beginPolygon: () => {
       corners = 0;
     },
     addCorner,
     endPolygon,
+    addPolygons,
     finish() {
       writer.finish();
       return remarks;
@@ -103,11 +135,17 @@ export function createPolygonMesh(format: MeshFormat, limits: ReadingLimits, sin
     get vertexCount() {
       return vertexCount;
     },
+    get vertexRoom() {
+      return limits.maximumVertices - vertexCount;
+    },
     get corners() {
       return corners;
     },
     get facets() {
       return writer.count;
+    },
+    get facetRoom() {
+      return limits.maximumFacets - writer.count;
     },
   };
 }

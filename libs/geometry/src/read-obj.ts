@@ -7,6 +7,7 @@ import { findObjStatement } from './obj-statements';
 import { parseDecimal } from './parse-decimal';
 import { createPolygonMesh } from './polygon-mesh';
 import { createStatementScanner } from './scan-statements';
+import { createStatementLane } from './text-lane/statement-lane';
 
 /** A position, a weight and four of a colour are the most numbers that anything writes after `v`. */
 const mostVertexNumbers = 8;
@@ -23,6 +24,26 @@ export function createObjReader(limits: ReadingLimits, sink: FacetSink): FormatR
   let statement: 'none' | 'vertex' | 'face' = 'none';
   let surfaceLine: number | undefined;
   const scanner = createStatementScanner('OBJ', limits, takeWord, endStatement);
+  const lane = createStatementLane(limits);
+
+  function push(bytes: Uint8Array): void {
+    lane?.beginChunk();
+    let at = 0;
+    do at = scanner.push(bytes, takeLines(bytes, at));
+    while (at < bytes.length);
+  }
+
+  /** Takes lines of the usual shape where one begins; gives the place after them. */
+  function takeLines(bytes: Uint8Array, from: number): number {
+    let at = from;
+    while (lane !== undefined && scanner.gap !== undefined && lane.read(bytes, at, scanner.gap, mesh)) {
+      at = lane.position;
+      scanner.passOver(lane.lineEnds);
+      mesh.addVertices(lane.vertices, lane.vertexCount);
+      mesh.addPolygons(lane.polygons, lane.polygonCount);
+    }
+    return at;
+  }
 
   function takeWord(bytes: Uint8Array, start: number, end: number): void {
     if (statement === 'vertex') takeCoordinate(bytes, start, end);
@@ -89,6 +110,7 @@ export function createObjReader(limits: ReadingLimits, sink: FacetSink): FormatR
     if (statement === 'vertex') endVertex();
     else if (statement === 'face') endPolygon();
     statement = 'none';
+    if (lane !== undefined) scanner.pause();
   }
 
   function endVertex(): void {
@@ -110,7 +132,7 @@ export function createObjReader(limits: ReadingLimits, sink: FacetSink): FormatR
   }
 
   return {
-    push: (bytes) => scanner.push(bytes),
+    push,
     finish() {
       scanner.finish();
       const remarks = mesh.finish();

@@ -5,6 +5,7 @@ import { MeshError, spellCount } from './mesh-error';
 import { parseCoordinate, quoteWord, refuseNumber } from './mesh-words';
 import { isNonFiniteWord, parseDecimal } from './parse-decimal';
 import { createWordScanner } from './scan-words';
+import { createFacetLane } from './text-lane/facet-lane';
 
 /** What the reader waits for. In the name states the words up to the end of the line are a name and mean nothing. */
 type Expected = 'solid' | 'facet' | 'normal' | 'normal-number' | 'outer' | 'loop' | 'vertex' | 'coordinate' | 'endloop' | 'endfacet' | NameState;
@@ -36,6 +37,29 @@ export function createAsciiStlReader(limits: ReadingLimits, sink: FacetSink): Fo
   // Whether the name after "endsolid" has the word "solid" in it: another solid may have begun on the same line.
   let solidInName = false;
   const scanner = createWordScanner('STL', limits, takeWord, takeLineEnd);
+  const lane = createFacetLane(limits);
+
+  function push(bytes: Uint8Array): void {
+    lane?.beginChunk();
+    let at = 0;
+    do at = scanner.push(bytes, takeFacets(bytes, at));
+    while (at < bytes.length);
+  }
+
+  /** Takes facets of the usual shape where the next one is due; gives the place after them. */
+  function takeFacets(bytes: Uint8Array, from: number): number {
+    let at = from;
+    while (lane !== undefined && expected === 'facet' && scanner.gap !== undefined) {
+      const facets = lane.read(bytes, at, scanner.gap, Math.min(batchFacets - batch.count, limits.maximumFacets - read));
+      if (facets === 0) break;
+      batch.normals.set(lane.normals.subarray(0, 3 * facets), 3 * batch.count);
+      batch.corners.set(lane.corners.subarray(0, 9 * facets), 9 * batch.count);
+      at = lane.position;
+      scanner.passOver(lane.lineEnds);
+      countFacets(facets);
+    }
+    return at;
+  }
 
   function takeLineEnd(): void {
     if (expected === 'solid-name') expected = 'facet';
@@ -147,10 +171,15 @@ export function createAsciiStlReader(limits: ReadingLimits, sink: FacetSink): Fo
   }
 
   function endFacet(): void {
-    batch.count += 1;
-    read += 1;
     expected = 'facet';
     scanner.restartLine();
+    countFacets(1);
+    if (lane !== undefined) scanner.pause();
+  }
+
+  function countFacets(facets: number): void {
+    batch.count += facets;
+    read += facets;
     if (batch.count === batchFacets) flushFacets(batch, sink);
   }
 
@@ -168,7 +197,7 @@ export function createAsciiStlReader(limits: ReadingLimits, sink: FacetSink): Fo
   }
 
   return {
-    push: (bytes) => scanner.push(bytes),
+    push,
     finish() {
       scanner.finish();
       if (expected !== 'solid' && expected !== 'end-name' && expected !== 'normal-or-end-name') {

@@ -2,8 +2,15 @@ import { MeshError, spellCount, spellCounted } from './mesh-error';
 import type { ReadingLimits } from './limits';
 
 export interface StatementScanner {
-  push(bytes: Uint8Array): void;
+  /** Takes bytes from a place on; gives the place that it came to, which is the end unless it was told to pause. */
+  push(bytes: Uint8Array, from?: number): number;
   finish(): void;
+  /** Leaves off after the statement that is being ended, so that what follows can be read by other means. */
+  pause(): void;
+  /** Goes on after lines that were read by other means. */
+  passOver(lineEnds: number): void;
+  /** The last byte that was taken; undefined within a statement or a comment, and where so long a line has begun that other means would have to watch it. */
+  readonly gap: number | undefined;
   /** Passes over the rest of the statement; to be called while a word is taken. */
   skipStatement(): void;
   /** The line (from 1) that is being read. */
@@ -37,6 +44,8 @@ export function createStatementScanner(
   let mode: 'words' | 'skipped' | 'comment' = 'words';
   let lastByte = 0;
   let atStart = true;
+  let inStatement = false;
+  let paused = false;
 
   function keep(bytes: Uint8Array, start: number, end: number): void {
     checkWord(carried + end - start);
@@ -72,7 +81,9 @@ export function createStatementScanner(
     const marked = atStart && bytes[start] === 0xef && bytes[start + 1] === 0xbb && bytes[start + 2] === 0xbf;
     atStart = false;
     const from = marked ? start + 3 : start;
-    if (end > from) takeWord(bytes, from, end);
+    if (end === from) return;
+    inStatement = true;
+    takeWord(bytes, from, end);
   }
 
   function endLine(at: number, joined: boolean): void {
@@ -80,6 +91,7 @@ export function createStatementScanner(
     if (!joined) {
       endStatement();
       mode = 'words';
+      inStatement = false;
     }
     line += 1;
     lineBytes = 0;
@@ -94,10 +106,11 @@ export function createStatementScanner(
     }
   }
 
-  function push(bytes: Uint8Array): void {
-    let start = 0;
-    lineStart = 0;
-    for (let at = 0; at < bytes.length; at++) {
+  function push(bytes: Uint8Array, from = 0): number {
+    let start = from;
+    lineStart = from;
+    paused = false;
+    for (let at = from; at < bytes.length; at++) {
       const code = bytes[at] ?? 0;
       if (code > 32 && (code !== numberSign || mode === 'comment')) continue;
       const before = at > 0 ? (bytes[at - 1] ?? 0) : lastByte;
@@ -105,11 +118,17 @@ export function createStatementScanner(
       if (code === numberSign) mode = 'comment';
       else if (code !== 32) takeControl(code, at, before);
       start = at + 1;
+      if (paused) return endChunk(bytes, start);
     }
     if (mode === 'words' && start < bytes.length) keep(bytes, start, bytes.length);
-    lastByte = bytes[bytes.length - 1] ?? lastByte;
-    checkLine(bytes.length);
-    lineBytes += bytes.length - lineStart;
+    return endChunk(bytes, bytes.length);
+  }
+
+  function endChunk(bytes: Uint8Array, at: number): number {
+    lastByte = bytes[at - 1] ?? lastByte;
+    checkLine(at);
+    lineBytes += at - lineStart;
+    return at;
   }
 
   return {
@@ -117,6 +136,16 @@ export function createStatementScanner(
     finish() {
       if (mode === 'words') endWord(carry, 0, 0, lastByte === backslash);
       endStatement();
+    },
+    pause: () => {
+      paused = true;
+    },
+    passOver(lineEnds) {
+      line += lineEnds;
+      lineBytes = 0;
+    },
+    get gap() {
+      return mode !== 'words' || inStatement || atStart || carried > 0 || 2 * lineBytes > maximumLineBytes ? undefined : lastByte;
     },
     skipStatement: () => {
       mode = 'skipped';

@@ -2,8 +2,15 @@ import type { ReadingLimits } from './limits';
 import { MeshError, spellCount, spellCounted } from './mesh-error';
 
 export interface WordScanner {
-  push(bytes: Uint8Array): void;
+  /** Takes bytes from a place on; gives the place that it came to, which is the end unless it was told to pause. */
+  push(bytes: Uint8Array, from?: number): number;
   finish(): void;
+  /** Leaves off after the word that is being taken, so that what follows can be read by other means. */
+  pause(): void;
+  /** Goes on after words that were read by other means, to the end of the last of them, from which on the length of its line counts. */
+  passOver(lineEnds: number): void;
+  /** The last byte that was taken; undefined where a word has begun, or so long a line that other means would have to watch it. */
+  readonly gap: number | undefined;
   /** Counts the length of the line from the word on that is being taken. */
   restartLine(): void;
   /** The line (from 1) that is being read. */
@@ -33,6 +40,7 @@ export function createWordScanner(
   let wordEnd = 0;
   let afterReturn = false;
   let atStart = true;
+  let paused = false;
 
   function keep(bytes: Uint8Array, start: number, end: number): void {
     checkLength(carried + end - start);
@@ -88,29 +96,48 @@ export function createWordScanner(
     afterReturn = code === 13;
   }
 
-  function push(bytes: Uint8Array): void {
-    let start = 0;
-    lineStart = 0;
-    for (let at = 0; at < bytes.length; at++) {
+  function push(bytes: Uint8Array, from = 0): number {
+    let start = from;
+    lineStart = from;
+    paused = false;
+    for (let at = from; at < bytes.length; at++) {
       const code = bytes[at] ?? 0;
       if (code > 32) continue;
       wordEnd = at;
       if (at > start || carried > 0) {
         endWord(bytes, start, at);
         afterReturn = false;
+        if (paused) return endChunk(at);
       }
       if (code === 32) afterReturn = false;
       else takeControl(code, at);
       start = at + 1;
     }
     if (start < bytes.length) keep(bytes, start, bytes.length);
-    checkLine(bytes.length);
-    lineBytes += bytes.length - lineStart;
+    return endChunk(bytes.length);
+  }
+
+  function endChunk(at: number): number {
+    checkLine(at);
+    lineBytes += at - lineStart;
+    return at;
   }
 
   return {
     push,
     finish: () => endWord(carry, 0, 0),
+    pause: () => {
+      paused = true;
+    },
+    passOver(lineEnds) {
+      line += lineEnds;
+      lineBytes = 0;
+      afterReturn = false;
+    },
+    get gap() {
+      if (carried > 0 || 2 * lineBytes > maximumLineBytes) return undefined;
+      return afterReturn ? 13 : 32;
+    },
     restartLine: () => restartLine(wordEnd),
     get line() {
       return line;

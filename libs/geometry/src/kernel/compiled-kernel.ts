@@ -3,13 +3,7 @@ import type { Vector3 } from '../measurement';
 import { compiledKernel } from './kernel.generated';
 import { kernelFacets, kernelLayout } from './kernel-memory';
 import type { Summing } from './summing';
-
-/** As much of WebAssembly as is used here: the library is compiled without a browser's types, and may run where there is none of it. */
-interface WebAssemblyApi {
-  Module: new (bytes: Uint8Array) => object;
-  Instance: new (module: object) => { exports: unknown };
-}
-const { WebAssembly: api } = globalThis as unknown as { WebAssembly?: WebAssemblyApi };
+import { compileModule } from './web-assembly';
 
 interface KernelExports {
   memory: { buffer: ArrayBuffer };
@@ -29,34 +23,25 @@ export interface KernelInstance extends Omit<KernelExports, 'memory'> {
   readonly bytes: Uint8Array;
 }
 
-/** Compiled once; undefined where WebAssembly or its SIMD is missing. */
-let compiled: object | null | undefined;
+/** Compiled once; null where WebAssembly or its SIMD is missing. */
+let makeInstance: (() => unknown) | null | undefined;
 /** Instances that nobody uses: a mesh of many shells asks for one a shell. */
 const idle: KernelInstance[] = [];
 const mostIdle = 4;
 
 /** An instance of the compiled kernels; undefined where they can't run. Give it back when it is done with. */
 export function borrowKernel(): KernelInstance | undefined {
-  if (api === undefined) return undefined;
-  if (compiled === undefined) compiled = compileModule(api);
-  return compiled === null ? undefined : (idle.pop() ?? instantiate(api, compiled));
-}
-
-function compileModule({ Module }: WebAssemblyApi): object | null {
-  try {
-    return new Module(Uint8Array.from(atob(compiledKernel), (letter) => letter.charCodeAt(0)));
-  } catch {
-    return null;
-  }
+  if (makeInstance === undefined) makeInstance = compileModule(compiledKernel);
+  return makeInstance === null ? undefined : (idle.pop() ?? instantiate(makeInstance));
 }
 
 export function returnKernel(kernel: KernelInstance): void {
   if (idle.length < mostIdle) idle.push(kernel);
 }
 
-function instantiate({ Instance }: WebAssemblyApi, module: object): KernelInstance {
-  // The module imports nothing, and exports what assembly/index.ts does.
-  const { memory, ...functions } = new Instance(module).exports as KernelExports;
+function instantiate(make: () => unknown): KernelInstance {
+  // It exports what assembly/index.ts does.
+  const { memory, ...functions } = make() as KernelExports;
   const { buffer } = memory;
   return {
     ...functions,

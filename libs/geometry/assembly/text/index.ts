@@ -1,0 +1,3 @@
+export { readFacets } from './facets';
+export { readNumber } from './number';
+export { readStatements } from './statements';
