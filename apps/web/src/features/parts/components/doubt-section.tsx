@@ -1,9 +1,9 @@
 import { HTMLSelect } from '@blueprintjs/core';
 import type { Measurement, Setting, StatementRecord } from '@masswright/contracts';
-import { fromSi, type Unit } from '@masswright/units';
+import { formatFigure, fromSi, type Unit } from '@masswright/units';
 import { useId, useState } from 'react';
+import { PowerText } from '../../../components/figure';
 import { Uncertain } from '../../../components/uncertain';
-import { writeUncertain } from '../../../lib/uncertain-figure';
 import { doubtfulFigures, listDoubt, listUncounted, type DoubtfulFigure, type LedgerLine } from '../model/doubt-ledger';
 import { chooseDisplayUnit } from '../model/display-units';
 import { Fact, Section, sectionNames } from './section';
@@ -21,7 +21,7 @@ function Line({ line, unit }: { line: LedgerLine; unit: Unit }) {
         </span>
       </td>
       <td className="figure numeric">{share === null ? <span className="soft">not told</span> : `${percent(share)} %`}</td>
-      <td className="figure numeric">{alone === null ? '–' : `± ${writeUncertain(fromSi(alone, unit), fromSi(alone, unit)).value}`}</td>
+      <td className="figure numeric">{alone === null ? '–' : <PowerText text={`± ${formatFigure(fromSi(alone, unit), { digits: 2 })}`} />}</td>
       <td className="ledger-words">
         {what}. <span className="soft">{remedy}</span>
       </td>
@@ -58,14 +58,12 @@ function Ledger({ statement, figure, unit }: { statement: StatementRecord; figur
 }
 
 /** What the smooth body behind the facets has more, in the unit of the figure. */
-function Correction({ correction, uncertainty, unit }: { correction: number; uncertainty: number | null; unit: Unit }) {
-  const shown = fromSi(correction, unit);
-  const below = Math.max(0, fromSi(correction, unit)) + fromSi(uncertainty ?? 0, unit);
+function Correction({ correction, unit }: { correction: number; unit: Unit }) {
   return (
     <Fact name="Smooth body">
       <span className="figure">
         {correction > 0 && '+'}
-        {writeUncertain(shown, Math.max(Math.abs(shown), below * 1e-3)).value}
+        <PowerText text={formatFigure(fromSi(correction, unit), { digits: 2 })} />
         <span className="unit"> {unit.symbol}</span>
       </span>{' '}
       <span className="soft">
@@ -106,7 +104,7 @@ export function DoubtSection({ statement, setting, measurement }: DoubtSectionPr
             <Uncertain value={fromSi(value, unit)} uncertainty={spread === null ? null : fromSi(spread, unit)} unit={unit.symbol} />
           </span>
         </Fact>
-        {corrected !== null && corrected !== 0 && <Correction correction={corrected} uncertainty={spread} unit={unit} />}
+        {corrected !== null && corrected !== 0 && <Correction correction={corrected} unit={unit} />}
       </dl>
       <Ledger statement={statement} figure={figure} unit={unit} />
       {uncounted.length > 0 && (

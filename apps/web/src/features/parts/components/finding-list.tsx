@@ -1,9 +1,14 @@
 import type { Finding } from '@masswright/contracts';
 import { formatCount, type LengthUnit } from '@masswright/units';
 import { describeFinding } from '../model/finding-words';
-import { writeMeshPlace, writeMeshUnit } from '../model/mesh-words';
+import { writeMeshPlace, writeMeshUnit, type Box } from '../model/mesh-words';
 
 const shownFacets = 6;
+
+interface MeshFrame {
+  box: Box;
+  unit: LengthUnit | null;
+}
 
 /** Facets by their numbers in the file, as an editor counts them. */
 function Facets({ facets }: Pick<Finding, 'facets'>) {
@@ -18,7 +23,7 @@ function Facets({ facets }: Pick<Finding, 'facets'>) {
 }
 
 /** The first of the lines where it is, in the mesh's own unit and frame. */
-function FirstLine({ lines, unit }: Pick<Finding, 'lines'> & { unit: LengthUnit | null }) {
+function FirstLine({ lines, box, unit }: Pick<Finding, 'lines'> & MeshFrame) {
   const [first] = lines;
   if (!first) return null;
   const [ax, ay, az, bx, by, bz] = first;
@@ -26,21 +31,21 @@ function FirstLine({ lines, unit }: Pick<Finding, 'lines'> & { unit: LengthUnit 
   return (
     <span className="soft">
       {' '}
-      {lines.length > 1 ? 'The first is' : 'It is'} at <span className="figure place">({writeMeshPlace([ax, ay, az])})</span> to <span className="figure place">({writeMeshPlace([bx, by, bz])})</span>
+      {lines.length > 1 ? 'The first is' : 'It is'} at <span className="figure place">({writeMeshPlace([ax, ay, az], box)})</span> to <span className="figure place">({writeMeshPlace([bx, by, bz], box)})</span>
       {symbol && ` ${symbol}`}.
     </span>
   );
 }
 
 /** What was found in a mesh, each with what it means and where it is. */
-export function FindingList({ findings, unit }: { findings: readonly Finding[]; unit: LengthUnit | null }) {
+export function FindingList({ findings, ...frame }: { findings: readonly Finding[] } & MeshFrame) {
   return (
     <ul className="findings">
       {findings.map((finding) => (
         <li key={finding.kind}>
           {describeFinding(finding)}
           <Facets facets={finding.facets} />
-          <FirstLine lines={finding.lines} unit={unit} />
+          <FirstLine lines={finding.lines} {...frame} />
         </li>
       ))}
     </ul>

@@ -25,7 +25,7 @@ export function writeCorrection(value: number, uncertainty: number | null, corre
 function HeadFigure({ name, quantity, value, uncertainty, correction }: HeadFigureProps) {
   const unit = chooseDisplayUnit(quantity, value);
   const spread = uncertainty === null || uncertainty === undefined ? null : fromSi(uncertainty, unit);
-  const more = correction && writeCorrection(fromSi(value, unit), spread, fromSi(correction, unit));
+  const more = correction ? writeCorrection(fromSi(value, unit), spread, fromSi(correction, unit)) : undefined;
   return (
     <div className="head-figure">
       <dt className="caption">{name}</dt>

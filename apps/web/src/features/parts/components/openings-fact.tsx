@@ -1,14 +1,14 @@
 import type { Openings } from '@masswright/contracts';
 import { formatCount, formatFigure, type LengthUnit } from '@masswright/units';
 import { PowerText } from '../../../components/figure';
-import { writeMeshPlace, writeMeshUnit } from '../model/mesh-words';
+import { writeMeshPlace, writeMeshUnit, type Box } from '../model/mesh-words';
 import { describeOpenings, describeOpenVolume } from '../model/opening-words';
 import { Fact } from './section';
 
 const shownLoops = 8;
 
 /** Where the surface ends: its loops, and what hangs on them. */
-export function OpeningsFact({ openings, unit }: { openings: Openings; unit: LengthUnit | null }) {
+export function OpeningsFact({ openings, box, unit }: { openings: Openings; box: Box; unit: LengthUnit | null }) {
   const symbol = writeMeshUnit(unit) || 'mesh unit';
   const shown = openings.loops.slice(0, shownLoops);
   return (
@@ -41,7 +41,7 @@ export function OpeningsFact({ openings, unit }: { openings: Openings; unit: Len
                   <td className="figure numeric">{formatCount(edges)}</td>
                   <td className="figure numeric"><PowerText text={formatFigure(length, { digits: 4 })} /></td>
                   <td className="figure numeric"><PowerText text={formatFigure(width, { digits: 3 })} /></td>
-                  <td className="figure">{writeMeshPlace(centre)}</td>
+                  <td className="figure">{writeMeshPlace(centre, box)}</td>
                 </tr>
               ))}
             </tbody>

@@ -1,46 +1,15 @@
-import { measuringVersion, type Material, type Measurement, type Part, type Setting } from '@masswright/contracts';
+import type { Material, Measurement, Part, Setting } from '@masswright/contracts';
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { cleanup, fireEvent, render, screen, within } from '@testing-library/react';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { MemoryRouter } from 'react-router-dom';
 import { useStore } from '../../../lib/store';
 import { createSettingEditor, type SettingEditor } from '../model/setting-editor';
+import { makeMeasurement } from '../model/testing/measurements';
 import { PartStatement } from './part-statement';
 
-/** A block of 30 × 20 × 10 units with a corner at the origin, measured: volume 6000, second moments V·a²/12. */
-const block: Measurement = {
-  measuringVersion,
-  format: 'stl-binary',
-  compression: null,
-  declaredUnit: null,
-  declaredMaterials: [],
-  examined: 'whole',
-  facets: 12,
-  origin: [0, 0, 0],
-  boundingBox: { min: [0, 0, 0], max: [30, 20, 10] },
-  volume: { content: 6000, centreFromOrigin: [15, 10, 5], second: { xx: 6000 * 75, yy: (6000 * 400) / 12, zz: (6000 * 100) / 12, xy: 0, yz: 0, zx: 0 }, errorBound: 1e-15 },
-  surface: { content: 2200, centreFromOrigin: [15, 10, 5], second: { xx: 225_000, yy: 340_000 / 3, zz: 115_000 / 3, xy: 0, yz: 0, zx: 0 }, errorBound: 1e-15 },
-  soundness: {
-    closed: true,
-    oriented: true,
-    outward: true,
-    turned: false,
-    boundaryEdges: 0,
-    nonManifoldEdges: 0,
-    nonManifoldVertices: 0,
-    degenerateFacets: 0,
-    duplicateFacets: 0,
-    shells: 1,
-    cavities: 0,
-    selfIntersections: 0,
-    defensible: true,
-    findings: [],
-  },
-  shells: null,
-  openings: null,
-  polygonVolume: 0,
-  facetDoubt: null,
-};
+/** A block of 30 × 20 × 10 units. */
+const block = makeMeasurement();
 
 const openBlock: Measurement = {
   ...block,

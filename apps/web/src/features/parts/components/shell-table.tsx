@@ -6,7 +6,7 @@ import { PowerText } from '../../../components/figure';
 import { AlignedText, computeTailRoom } from '../../../components/uncertain';
 import { writeMeshContents } from '../model/mesh-words';
 import { findShellRefusal } from '../model/shell-densities';
-import { shellKinds } from '../model/shell-words';
+import { describeShellRules, shellKinds } from '../model/shell-words';
 import type { SettingEditor } from '../model/setting-editor';
 import { ShellDensityCell } from './shell-density-cell';
 
@@ -38,6 +38,8 @@ export function ShellTable({ measurement, setting, editor }: ShellTableProps) {
   const { shells } = measurement;
   const { lengthUnit } = setting;
   const refusal = findShellRefusal(measurement);
+  // Whichever of them counts: what the mesh encloses can't be told.
+  const canDiffer = refusal === undefined && measurement.soundness.defensible;
   const shown = isWhole ? shells : shells.slice(0, shownFirst);
   const volumes = computeContents(shells.map(({ volume }) => volume?.content ?? 0), 3, lengthUnit);
   const areas = computeContents(shells.map(({ area }) => area), 2, lengthUnit);
@@ -63,7 +65,7 @@ export function ShellTable({ measurement, setting, editor }: ShellTableProps) {
               <th scope="col" className="numeric">
                 Surface <span className="unit">{areas.symbol}</span>
               </th>
-              {refusal === undefined && <th scope="col">Density</th>}
+              {canDiffer && <th scope="col">Density</th>}
             </tr>
           </thead>
           <tbody>
@@ -80,7 +82,7 @@ export function ShellTable({ measurement, setting, editor }: ShellTableProps) {
                 <td className="figure numeric">
                   <AlignedContent text={areas.texts[index] ?? ''} behind={areas.behind} />
                 </td>
-                {refusal === undefined && (
+                {canDiffer && (
                   <td>
                     <ShellDensityCell shell={index} kind={shell.kind} setting={setting} editor={editor} />
                   </td>
@@ -96,7 +98,7 @@ export function ShellTable({ measurement, setting, editor }: ShellTableProps) {
         </Button>
       )}
       <p className="soft fact-words">
-        {refusal ?? 'A cavity goes with the shell around it, unless it is given a density itself: left out, it is filled with the material around it. A volume counts with its sign.'}
+        {refusal ?? describeShellRules(shells)}
       </p>
     </div>
   );

@@ -20,7 +20,7 @@ interface SoundnessSectionProps {
 const hasShells = (measurement: Measurement): measurement is Measurement & { shells: Shell[] } => measurement.shells !== null && measurement.shells.length > 1;
 
 export function SoundnessSection({ measurement, run, setting, editor }: SoundnessSectionProps) {
-  const { soundness, openings, examined } = measurement;
+  const { soundness, openings, examined, boundingBox } = measurement;
   const { lengthUnit } = setting;
   const verdict = describeVerdict(pickVerdict(measurement));
   const nothing = examined === 'whole' ? 'None.' : examined === 'integrals' ? 'None so far.' : 'None, as far as it was examined.';
@@ -31,13 +31,13 @@ export function SoundnessSection({ measurement, run, setting, editor }: Soundnes
         <Fact name="Edges">{describeEdges(soundness)}</Fact>
         <Fact name="Winding">{describeWinding(soundness)}</Fact>
         <Fact name="Vertices">{describeVertices(soundness, examined)}</Fact>
-        {openings && <OpeningsFact openings={openings} unit={lengthUnit} />}
+        {openings && <OpeningsFact openings={openings} box={boundingBox} unit={lengthUnit} />}
         <Fact name="Shells">
           {describeShells(measurement)}
           {hasShells(measurement) && <ShellTable measurement={measurement} setting={setting} editor={editor} />}
         </Fact>
         <Fact name="Crossings">{describeIntersections(soundness, measurement)}</Fact>
-        <Fact name="Findings">{soundness.findings.length === 0 ? nothing : <FindingList findings={soundness.findings} unit={lengthUnit} />}</Fact>
+        <Fact name="Findings">{soundness.findings.length === 0 ? nothing : <FindingList findings={soundness.findings} box={boundingBox} unit={lengthUnit} />}</Fact>
       </dl>
     </Section>
   );

@@ -1,22 +1,21 @@
-import type { Vector3 } from '@masswright/contracts';
+import type { Measurement, Vector3 } from '@masswright/contracts';
 import { convertToMetres, formatFigure, fromSi, getLengthUnit, type LengthUnit, type Quantity } from '@masswright/units';
+import { createGroupFormat } from '../../../lib/fixed-figure';
 import { chooseDisplayUnit } from './display-units';
 
 /** The symbol of the mesh's unit; nothing where it is not stated. */
 export const writeMeshUnit = (unit: LengthUnit | null): string => (unit === null ? '' : getLengthUnit(unit).symbol);
 
 const digits = 4;
-/** A place in a mesh needs as many digits as its coordinates have. */
+/** A place is told as closely as the largest coordinate of the mesh is with six digits. */
 const placeDigits = 6;
 
-/** A length as it stands in the mesh. */
-export function writeMeshLength(length: number, unit: LengthUnit | null): string {
-  return [formatFigure(length, { digits }), writeMeshUnit(unit)].filter(Boolean).join(' ');
-}
+export type Box = Measurement['boundingBox'];
 
 /** A place as it stands in the mesh: x, y and z without their unit. */
-export function writeMeshPlace(place: Vector3): string {
-  return place.map((coordinate) => formatFigure(coordinate, { digits: placeDigits })).join(', ');
+export function writeMeshPlace(place: Vector3, { min, max }: Box): string {
+  const write = createGroupFormat([...min, ...max], placeDigits);
+  return place.map((coordinate) => write(coordinate)).join(', ');
 }
 
 /** Volumes or areas of one mesh, all in one unit that suits the largest of them; in the mesh's own where its unit is not stated. */

@@ -18,3 +18,10 @@ export function describeShells({ soundness, shells: listed, examined }: Pick<Mea
   const left = listed !== null && listed.length < shells ? ` The ${countOf(listed.length, 'largest', 'largest')} are listed.` : '';
   return `${countOf(shells, 'piece')} that hang together by edges${hollow}.${left}`;
 }
+
+/** How the list is to be read. */
+export function describeShellRules(shells: readonly Shell[]): string {
+  const hasCavity = shells.some(({ kind }) => kind === 'cavity');
+  const cavity = hasCavity ? ' The volume of a cavity is taken away; it goes with the shell around it, and filled it counts as if it were not there.' : '';
+  return `“Inside” names the smallest shell around one.${cavity}`;
+}
