@@ -7,6 +7,6 @@ export const SIZES: usize = 320; // 4 f64
 export const ORIGIN: usize = 352; // 3 f64
 export const BOX: usize = 384; // least and greatest of 12 f32 as they stand in a facet: four v128 used of each, 96 bytes
 export const SKETCH: usize = 480; // 2 u64
-export const SECRETS: usize = 496; // 4 u64
+export const SECRETS: usize = 496; // 8 u64
 export const REGISTERS: usize = 1024; // 32 double-double numbers of two lanes
 export const FACETS: usize = 4096;

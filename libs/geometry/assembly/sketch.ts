@@ -1,10 +1,21 @@
 import { BOX, FACETS, SECRETS, SKETCH } from './layout';
 
 /*
- * A linear sketch of the directed edges. A vertex has a number u of 64 bits, mixed with secrets from the bits of its coordinates; an edge from a to b adds
- * u(a) v(b) - u(b) v(a), modulo 2⁶⁴, where v is u turned by 21 bits, and the same with u turned by 42. Edges that run as often one way as the
- * other cancel, whatever their order. src/closedness-sketch.ts has the same in plain words, and says how sure it is.
+ * A linear sketch of the directed edges. A vertex has three random numbers u, w, t, drawn by secrets from the bits of its coordinates; an edge from a to b adds
+ * u(a) w(b) - u(b) w(a), modulo 2⁶⁴, and the same with t. Edges that run as often one way as the other cancel, whatever their order; any other
+ * set of edges leaves both sums zero with a probability near 2⁻¹²⁸, for sums modulo 2⁶⁴ of products of random numbers. src/closedness-sketch.ts has the
+ * same in plain words.
  */
+
+@inline function finishHash(mixed: u64, place: usize): u64 {
+  let hash = (mixed ^ load<u64>(SECRETS + place)) * load<u64>(SECRETS + place + 8);
+  hash ^= hash >> 32;
+  return hash;
+}
+
+@inline function addEdges(ua: u64, ub: u64, uc: u64, place: usize, a: u64, b: u64, c: u64): void {
+  store<u64>(SKETCH + place, load<u64>(SKETCH + place) + ua * (b - c) + ub * (c - a) + uc * (a - b));
+}
 
 /** From 96 bits: x and y side by side, and z. */
 @inline function hashPacked(xy: u64, z: u64, s0: u64, s1: u64, s2: u64, s3: u64): u64 {
@@ -21,6 +32,7 @@ export function sketchStl(count: i32): void {
   let most0 = v128.load(BOX, 48), most1 = v128.load(BOX, 64), most2 = v128.load(BOX, 80);
   // In locals: loads in the loop would be made anew for every facet.
   const s0 = load<u64>(SECRETS), s1 = load<u64>(SECRETS + 8), s2 = load<u64>(SECRETS + 16), s3 = load<u64>(SECRETS + 24);
+  const s4 = load<u64>(SECRETS + 32), s5 = load<u64>(SECRETS + 40), s6 = load<u64>(SECRETS + 48), s7 = load<u64>(SECRETS + 56);
   let one = load<u64>(SKETCH), two = load<u64>(SKETCH + 8);
   let at = FACETS;
   for (let facet = 0; facet < count; facet++, at += 50) {
@@ -31,19 +43,17 @@ export function sketchStl(count: i32): void {
     const a = hashPacked(<u64>i64x2.extract_lane(p, 0), <u64>(<u32>i32x4.extract_lane(p, 2)), s0, s1, s2, s3);
     const b = hashPacked(<u64>(<u32>i32x4.extract_lane(p, 3)) | ((<u64>(<u32>i32x4.extract_lane(q, 0))) << 32), <u64>(<u32>i32x4.extract_lane(q, 1)), s0, s1, s2, s3);
     const c = hashPacked(<u64>i64x2.extract_lane(q, 1), <u64>(<u32>i32x4.extract_lane(r, 0)), s0, s1, s2, s3);
-    const va = rotl<u64>(a, 21), vb = rotl<u64>(b, 21), vc = rotl<u64>(c, 21);
-    const wa = rotl<u64>(a, 42), wb = rotl<u64>(b, 42), wc = rotl<u64>(c, 42);
-    one += a * (vb - vc) + b * (vc - va) + c * (va - vb);
-    two += a * (wb - wc) + b * (wc - wa) + c * (wa - wb);
+    let wa = (a ^ s4) * s5, wb = (b ^ s4) * s5, wc = (c ^ s4) * s5;
+    wa ^= wa >> 32; wb ^= wb >> 32; wc ^= wc >> 32;
+    let ta = (a ^ s6) * s7, tb = (b ^ s6) * s7, tc = (c ^ s6) * s7;
+    ta ^= ta >> 32; tb ^= tb >> 32; tc ^= tc >> 32;
+    one += a * (wb - wc) + b * (wc - wa) + c * (wa - wb);
+    two += a * (tb - tc) + b * (tc - ta) + c * (ta - tb);
   }
   store<u64>(SKETCH, one);
   store<u64>(SKETCH + 8, two);
   v128.store(BOX, least0); v128.store(BOX, least1, 16); v128.store(BOX, least2, 32);
   v128.store(BOX, most0, 48); v128.store(BOX, most1, 64); v128.store(BOX, most2, 80);
-}
-
-@inline function addEdges(ua: u64, ub: u64, uc: u64, place: usize, a: u64, b: u64, c: u64): void {
-  store<u64>(SKETCH + place, load<u64>(SKETCH + place) + ua * (b - c) + ub * (c - a) + uc * (a - b));
 }
 
 /** From three binary64 coordinates. */
@@ -62,7 +72,7 @@ export function sketchCorners(count: i32): void {
   let at = FACETS;
   for (let facet = 0; facet < count; facet++, at += 72) {
     const a = hashVertex(at), b = hashVertex(at + 24), c = hashVertex(at + 48);
-    addEdges(a, b, c, 0, rotl<u64>(a, 21), rotl<u64>(b, 21), rotl<u64>(c, 21));
-    addEdges(a, b, c, 8, rotl<u64>(a, 42), rotl<u64>(b, 42), rotl<u64>(c, 42));
+    addEdges(a, b, c, 0, finishHash(a, 32), finishHash(b, 32), finishHash(c, 32));
+    addEdges(a, b, c, 8, finishHash(a, 48), finishHash(b, 48), finishHash(c, 48));
   }
 }

@@ -1,19 +1,19 @@
 /*
- * Whether the directed edges of a mesh cancel, in constant memory. A vertex has a number u of 64 bits, mixed from the bits of its coordinates with secrets; an edge from
- * a to b adds u(a) v(b) - u(b) v(a) to one sum, where v is u turned by 21 bits, and the same with u turned by 42 bits to another, modulo 2^64. An edge that is run along
- * once each way adds nothing, so both sums of a closed and oriented mesh are zero, whatever the order of its facets. Of any other mesh each is zero with a probability
- * near 2^-64, as a product of numbers without order is; and two different vertices have the same u with one near 2^-64 (20 million facets: about one in a million
- * that any two have, and then it would still have to matter). The compiled kernel does the same (assembly/sketch.ts), by other mixing for packed facets.
+ * Whether the directed edges of a mesh cancel, in constant memory. A vertex has three numbers u, w and t of 64 bits, mixed from the bits of its coordinates
+ * with secrets; an edge from a to b adds u(a) w(b) - u(b) w(a) to one sum and the same with t to another, modulo 2^64. An edge that is run along once each
+ * way adds nothing, so both sums of a closed and oriented mesh are zero, whatever the order of its facets. Of any other mesh they are both zero with a
+ * probability near 2^-128; two different vertices have the same u with one near 2^-64 (20 million facets: about one in a million that any two have).
+ * The compiled kernel does the same (assembly/sketch.ts), by other mixing for packed facets.
  */
 
 const mask = (1n << 64n) - 1n;
 
-/** Four secrets; the last three multiply, and are odd. */
+/** Eight secrets; the multipliers, at odd places and at the third, are odd. */
 export type SketchSecrets = BigUint64Array;
 
 /** Any bits: nothing that comes out depends on them but with a probability that can be neglected. They are secret so that no file can be made to deceive. */
 export function drawSecrets(): SketchSecrets {
-  const words = Uint32Array.from({ length: 8 }, () => Math.floor(Math.random() * 4_294_967_296));
+  const words = Uint32Array.from({ length: 16 }, () => Math.floor(Math.random() * 4_294_967_296));
   return new BigUint64Array(words.buffer).map((word) => word | 1n);
 }
 
@@ -45,10 +45,13 @@ export function createSketch(secrets: SketchSecrets): ClosednessSketch {
     return hash ^ (hash >> 29n);
   }
 
-  const turn = (hash: bigint, by: bigint): bigint => ((hash << by) & mask) | (hash >> (64n - by));
+  function mix(hash: bigint, place: number): bigint {
+    const mixed = ((hash ^ secret(place)) * secret(place + 1)) & mask;
+    return mixed ^ (mixed >> 32n);
+  }
 
-  function addEdges([a, b, c]: readonly [bigint, bigint, bigint], by: bigint): bigint {
-    const [p, q, r] = [turn(a, by), turn(b, by), turn(c, by)];
+  function addEdges([a, b, c]: readonly [bigint, bigint, bigint], place: number): bigint {
+    const [p, q, r] = [mix(a, place), mix(b, place), mix(c, place)];
     return a * (q - r) + b * (r - p) + c * (p - q);
   }
 
@@ -57,8 +60,8 @@ export function createSketch(secrets: SketchSecrets): ClosednessSketch {
       for (let at = 0; at < 9 * count; at += 9) {
         const hash = (from: number): bigint => hashVertex(corners[from] ?? 0, corners[from + 1] ?? 0, corners[from + 2] ?? 0);
         const vertices = [hash(at), hash(at + 3), hash(at + 6)] as const;
-        one = (one + addEdges(vertices, 21n)) & mask;
-        two = (two + addEdges(vertices, 42n)) & mask;
+        one = (one + addEdges(vertices, 4)) & mask;
+        two = (two + addEdges(vertices, 6)) & mask;
       }
     },
     get sums() {
