@@ -86,15 +86,15 @@ export function createPolygonMesh(format: MeshFormat, limits: ReadingLimits, sin
     writer.checkRoom(corners - 2);
     const triangles = corners > 3 ? cutFolded() : undefined;
     for (let k = 2; k < corners; k++) {
-      if (triangles === undefined) writer.add(vertices, polygon[0] ?? 0, polygon[k - 1] ?? 0, polygon[k] ?? 0);
-      else writer.add(vertices, triangles[3 * k - 6] ?? 0, triangles[3 * k - 5] ?? 0, triangles[3 * k - 4] ?? 0);
+      if (triangles === undefined) writer.addTriangle(vertices, polygon[0] ?? 0, polygon[k - 1] ?? 0, polygon[k] ?? 0);
+      else writer.addTriangle(vertices, triangles[3 * k - 6] ?? 0, triangles[3 * k - 5] ?? 0, triangles[3 * k - 4] ?? 0);
     }
   }
 
   function addPolygons(polygons: Uint32Array, count: number): void {
     for (let at = 0; at < 4 * count; at += 4) {
       if (polygons[at + 3] === noCorner) {
-        writer.add(vertices, polygons[at] ?? 0, polygons[at + 1] ?? 0, polygons[at + 2] ?? 0);
+        writer.addTriangle(vertices, polygons[at] ?? 0, polygons[at + 1] ?? 0, polygons[at + 2] ?? 0);
         continue;
       }
       for (corners = 0; corners < 4; corners++) polygon[corners] = polygons[at + corners] ?? 0;

@@ -1,4 +1,4 @@
-import { countSpaces, isWord } from './digits';
+import { countSpaces, isWord, pass } from './digits';
 import { FIRST, LINES, POSITION, SECOND, WINDOW } from './layout';
 import { readNumber } from './number';
 
@@ -9,7 +9,7 @@ let lines: i32 = 0;
   let p = at;
   let code: u32 = load<u8>(p);
   while (code <= 32) {
-    if (code == 32) p += countSpaces(load<u64>(p));
+    if (code == 32) p = pass(p, countSpaces(load<u64>(p)));
     else {
       if (code < 9 || code > 13) return 0;
       if (code == 13 || (code == 10 && load<u8>(p - 1) != 13)) lines += 1;

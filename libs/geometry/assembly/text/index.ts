@@ -1,3 +1,9 @@
+import { readNumber as read } from './number';
+
 export { readFacets } from './facets';
-export { readNumber } from './number';
 export { readStatements } from './statements';
+
+/** For tests: one number. */
+export function readNumber(at: usize, target: usize): usize {
+  return read(at, target);
+}

@@ -1,4 +1,4 @@
-import { countDigits, joinDigits } from './digits';
+import { countDigits, findNoDigits, joinDigits, pass } from './digits';
 import { EXACT_POWERS, GREATEST_POWER, LEAST_POWER, LONGEST_WORD, POWERS, TENS } from './layout';
 
 /** What is taken for a coordinate: see src/mesh-words.ts. */
@@ -8,17 +8,33 @@ const largest: f64 = 3.4028234663852886e38;
  * Reads a decimal number to the last bit and stores it. Gives the place after it; 0 where there is none, or one that is not decided here: more than 19 digits,
  * powers beyond the table, numbers too large for a coordinate.
  */
-export function readNumber(at: usize, target: usize): usize {
-  let code: u32 = load<u8>(at);
-  // Without branches where chance would decide them.
+@inline export function readNumber(at: usize, target: usize): usize {
+  const code: u32 = load<u8>(at);
+  // Without branches where chance would decide them. 43 and 45 are plus and minus.
   const negative = <u64>(code == 45);
   const first = at + <usize>negative + <usize>(code == 43);
+  // What C programs print most, `1.234567e+01`: the point of the first eight bytes is left out, and all is looked at together.
+  const bytes = load<u64>(first), end = load<u64>(first, 8);
+  const digits = ((bytes & 0xff) << 8) | (bytes & 0xffffffffffff0000) | 0x30;
+  const sign = (end >> 8) & 0xff;
+  const power = ((end >> 16) & 0xffff) ^ 0x3030;
+  const other = findNoDigits(digits) | findNoDigits(power ^ 0x3030303030303030) | (((bytes >> 8) & 0xff) ^ 46) | (((end | 32) & 0xff) ^ 101) | ((sign - 43) & ~2) | <u64>(((end >> 32) & 0xff) > 32);
+  if (other != 0) return readAnyNumber(at, first, negative, target);
+  const scale = <i32>(44 - sign) * <i32>(10 * (power & 0xff) + (power >> 8)) - 6;
+  // Seven digits are exact, and so is such a power of ten: one operation rounds correctly (Clinger 1990).
+  if (scale > 0 || scale < -22) return readAnyNumber(at, first, negative, target);
+  const size = <f64><i64>joinDigits(digits, 8) / load<f64>(EXACT_POWERS - (<usize>scale << 3));
+  store<u64>(target, reinterpret<u64>(size) | (negative << 63));
+  return first + 12;
+}
+
+function readAnyNumber(at: usize, first: usize, negative: u64, target: usize): usize {
   let p = first;
   let bytes = load<u64>(p);
   let count = countDigits(bytes);
   let mantissa: u64 = count == 0 ? 0 : joinDigits(bytes, count);
-  p += count;
-  code = load<u8>(p);
+  p = pass(p, count);
+  let code: u32 = load<u8>(p);
   if (count == 8) {
     while (code >= 48 && code <= 57) {
       mantissa = mantissa * 10 + code - 48;
@@ -43,7 +59,7 @@ export function readNumber(at: usize, target: usize): usize {
     }
     if (count > 0) {
       mantissa = mantissa * load<u64>(TENS + (<usize>count << 3)) + joinDigits(bytes, count);
-      p += count;
+      p = pass(p, count);
     }
     scale = -<i32>(p - fraction);
     digits -= scale;
@@ -53,39 +69,39 @@ export function readNumber(at: usize, target: usize): usize {
   if (digits == 0) return 0;
   // Zeros in front are no digits of the number; what ran over was only more of those.
   if (significant > 19 && significant - countLeadingZeros(first) > 19) return 0;
-  // 101 is e.
+  // 101 is e; 43 and 45 are plus and minus.
   if ((code | 32) == 101) {
-    const end = readExponent(p);
-    if (end == 0) return 0;
-    p = end;
-    scale += exponent;
+    const sign: u32 = load<u8>(p, 1);
+    const ten = <u32>load<u8>(p, 2) - 48, one = <u32>load<u8>(p, 3) - 48;
+    if ((<u32>(((sign - 43) & ~2) == 0) & <u32>(ten < 10) & <u32>(one < 10) & <u32>(load<u8>(p, 4) <= 32)) != 0) {
+      scale += (44 - <i32>sign) * <i32>(10 * ten + one);
+      p += 4;
+    } else {
+      p = readExponent(p);
+      if (p == 0) return 0;
+      scale += exponent;
+    }
   }
   if (p - at > LONGEST_WORD) return 0;
-  let size: f64;
-  if (mantissa <= 9007199254740992 && scale >= -22 && scale <= 22) {
-    // Both operands are exact, so one operation rounds correctly (Clinger 1990). No coordinate is larger than what comes of these.
-    const power = load<f64>(EXACT_POWERS + (<usize>(scale < 0 ? -scale : scale) << 3));
-    size = scale < 0 ? <f64><i64>mantissa / power : <f64><i64>mantissa * power;
-  } else {
-    size = scaleLong(mantissa, scale);
-    if (!(size <= largest)) return 0;
-  }
+  const size = scaleNumber(mantissa, scale);
   store<u64>(target, reinterpret<u64>(size) | (negative << 63));
-  return p;
+  return size <= largest ? p : 0;
+}
+
+/** mantissa · 10^scale, rounded to nearest; NaN where that is not decided here. */
+@inline function scaleNumber(mantissa: u64, scale: i32): f64 {
+  if (mantissa > 9007199254740992 || scale < -22 || scale > 22) return scaleLong(mantissa, scale);
+  // Both operands are exact, so one operation rounds correctly (Clinger 1990).
+  const power = load<f64>(EXACT_POWERS + (<usize>abs(scale) << 3));
+  return scale < 0 ? <f64><i64>mantissa / power : <f64><i64>mantissa * power;
 }
 
 let exponent: i32 = 0;
 
-/** Reads the `e-05` of a number into `exponent`; gives the place after it, or 0 where it is something else or has more than four digits. */
-@inline function readExponent(at: usize): usize {
-  let code: u32 = load<u8>(at, 1);
-  // 43 is the plus and 45 the minus.
-  const ten = <u32>load<u8>(at, 2) - 48, one = <u32>load<u8>(at, 3) - 48;
-  if ((code == 43 || code == 45) && ten < 10 && one < 10 && load<u8>(at, 4) <= 32) {
-    exponent = (44 - <i32>code) * <i32>(10 * ten + one);
-    return at + 4;
-  }
+/** Reads the `e-5` of a number into `exponent`; gives the place after it, or 0 where it is something else or has more than four digits. */
+function readExponent(at: usize): usize {
   let p = at + 1;
+  let code: u32 = load<u8>(p);
   const below = code == 45;
   if (below || code == 43) p += 1;
   const begin = p;

@@ -1,4 +1,4 @@
-import { countDigits, countSpaces, joinDigits } from './digits';
+import { countDigits, countSpaces, joinDigits, pass } from './digits';
 import { FIRST, LINES, LONGEST_WORD, NO_CORNER, POLYGONS, POSITION, SECOND, VERTICES, WINDOW } from './layout';
 import { readNumber } from './number';
 
@@ -19,7 +19,7 @@ const aside: usize = 32;
 
 @inline function passBlanks(at: usize): usize {
   let p = at;
-  for (let code: u32 = load<u8>(p); isBlank(code); code = load<u8>(p)) p += code == 32 ? countSpaces(load<u64>(p)) : 1;
+  for (let code: u32 = load<u8>(p); isBlank(code); code = load<u8>(p)) p = code == 32 ? pass(p, countSpaces(load<u64>(p))) : p + 1;
   return p;
 }
 
@@ -92,7 +92,7 @@ function readPolygon(at: usize, target: usize, vertexCount: u64): usize {
     const digits = countDigits(bytes);
     if (digits == 0) return 0;
     let index = joinDigits(bytes, digits);
-    p += digits;
+    p = pass(p, digits);
     code = load<u8>(p);
     // Twelve digits are more than there can be vertices.
     for (let more = digits; code >= 48 && code <= 57; more++) {
