@@ -43,6 +43,9 @@ describe('an export of the list as a table', () => {
     expect(['xx', 'yy', 'zz', 'xy', 'yz', 'zx'].map((element) => Number(heaviest?.[`inertia_${element}_kg_m2`]))).toEqual(['xx', 'yy', 'zz', 'xy', 'yz', 'zx'].map((element) => record.inertiaAtCentreOfMassKgM2?.[element as 'xx']));
     expect(['x', 'y', 'z'].map((axis) => Number(heaviest?.[`centre_of_mass_${axis}_m`]))).toEqual(record.centreOfMassM);
     expect(heaviest).toMatchObject({ length_unit: 'mm', material: 'Aluminium 6061-T6', density_kg_m3: '2700', state: 'ready', closed: 'true', sha256: record.sha256 });
+    expect([Number(heaviest?.['mass_uncertainty_kg']), Number(heaviest?.['volume_uncertainty_m3']), heaviest?.['coverage_factor']]).toEqual([record.uncertainty?.massKg, record.uncertainty?.volumeM3, '2']);
+    const counts = (['shells', 'cavities', 'selfIntersections'] as const).map((name) => record.soundness[name]?.toString() ?? '');
+    expect([heaviest?.['shells'], heaviest?.['cavities'], heaviest?.['self_intersections'], heaviest?.['examined']]).toEqual([...counts, part.revision.measurement?.examined]);
     const masses = rows.map((row) => row['mass_kg']);
     expect(masses.filter((mass) => mass !== '').map(Number)).toEqual(masses.filter((mass) => mass !== '').map(Number).sort((a, b) => b - a));
   });

@@ -64,6 +64,16 @@ describe('one change for many parts', () => {
     for (const setting of await settings()) expect(setting).toMatchObject({ densityKgM3: 2700, densitySpreadKgM3: 27, material: { id: 'al-6061-t6', name: 'Aluminium 6061-T6' } });
   });
 
+  it('leaves the tolerance as made as it is, and so does taking it back', async () => {
+    const asMade = { kind: 'scale', spread: 0.003 };
+    const { status } = await engineer.ask<Part>('PATCH', `/parts/${at(0)}/setting`, { version: 1, asMade });
+    expect(status).toBe(200);
+    const { body } = await change({ ids }, { lengthUnit: 'cm' });
+    expect(await settingOf(at(0))).toMatchObject({ lengthUnit: 'cm', asMade });
+    await undo(body.id);
+    expect(await settingOf(at(0))).toMatchObject({ asMade, shellDensities: [] });
+  });
+
   it('by a filter takes what matches the text and the states, but some', async () => {
     const { items } = await engineer.get<PartList>(`/projects/${projectId}/parts?text=housing&states=ready`);
     expect(items.length).toBeGreaterThan(1);

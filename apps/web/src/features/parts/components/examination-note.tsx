@@ -1,5 +1,6 @@
 import type { Measurement, MeasuringRun } from '@masswright/contracts';
 import { formatCount } from '@masswright/units';
+import { useState } from 'react';
 import { Notice } from '../../../components/notice';
 import { describeRun } from '../model/run-words';
 
@@ -18,6 +19,8 @@ function Progress({ run, children }: { run: MeasuringRun; children: string }) {
 /** Which of the figures stand already while a file is examined or measured again, and what was not examined at all. */
 export function ExaminationNote({ measurement, run }: { measurement: Measurement; run: MeasuringRun }) {
   const { examined, facets } = measurement;
+  const [wasSeen, setWasSeen] = useState(false);
+  if (examined === 'integrals' && !wasSeen) setWasSeen(true);
   const isRunning = run.state === 'queued' || run.state === 'running';
   if (isRunning && examined !== 'integrals') return <Progress run={run}>{`The file is measured again: ${describeRun(run).toLowerCase()}. What stands here is from before, until it is done.`}</Progress>;
   if (run.state === 'failed') {
@@ -36,7 +39,14 @@ export function ExaminationNote({ measurement, run }: { measurement: Measurement
       </Progress>
     );
   }
-  if (examined === 'whole') return null;
+  if (examined === 'whole') {
+    // It keeps its room for as long as the page is open: nothing that is being read is to move.
+    return wasSeen ? (
+      <div className="examination screen-only" role="status">
+        <p>Everything is examined: all that stands here is final.</p>
+      </div>
+    ) : null;
+  }
   return (
     <Notice tone="doubt">
       <p>

@@ -1,4 +1,4 @@
-import type { Soundness, StatementRecord } from '@masswright/contracts';
+import type { Measurement, StatementRecord } from '@masswright/contracts';
 import type { SettingEditor } from '../model/setting-editor';
 import { Balance } from './balance';
 import { HeadFigures } from './head-figures';
@@ -8,7 +8,7 @@ import { Section, sectionNames } from './section';
 import { TensorView } from './tensor-view';
 
 interface FiguresSectionProps {
-  soundness: Soundness;
+  measurement: Measurement;
   statement: StatementRecord | undefined;
   shellFault: string | undefined;
   /** Some shells have densities of their own, or are left out. */
@@ -17,7 +17,7 @@ interface FiguresSectionProps {
   editor: SettingEditor | undefined;
 }
 
-export function FiguresSection({ soundness, statement, shellFault, isMixed, editor }: FiguresSectionProps) {
+export function FiguresSection({ measurement: { soundness, examined }, statement, shellFault, isMixed, editor }: FiguresSectionProps) {
   const principal = statement && findPrincipal(statement);
   const complete = statement?.massKg !== null && statement !== undefined;
   const uncertainty = statement?.uncertainty ?? null;
@@ -25,7 +25,7 @@ export function FiguresSection({ soundness, statement, shellFault, isMixed, edit
   return (
     <Section name={sectionNames.figures} aside={complete && aside}>
       {!complete && <NoFigures soundness={soundness} statement={statement} shellFault={shellFault} editor={editor} />}
-      {statement && soundness.defensible && <HeadFigures statement={statement} />}
+      {statement && soundness.defensible && <HeadFigures statement={statement} isExamining={examined === 'integrals'} />}
       {statement?.centreOfMassM && <Balance box={statement.boundingBoxM} centreM={statement.centreOfMassM} uncertaintyM={uncertainty?.centreOfMassM ?? null} />}
       {statement?.inertiaAtCentreOfMassKgM2 && principal && (
         <div className="turning">

@@ -11,6 +11,8 @@ interface HeadFigureProps {
   value: number;
   uncertainty: number | null | undefined;
   correction: number | null | undefined;
+  /** The facets are being examined: a correction may come. */
+  isAwaited: boolean;
 }
 
 /** A correction that moves no digit that is shown needs no words. */
@@ -22,7 +24,7 @@ export function writeCorrection(value: number, uncertainty: number | null, corre
   return correction > 0 ? `+${text}` : text;
 }
 
-function HeadFigure({ name, quantity, value, uncertainty, correction }: HeadFigureProps) {
+function HeadFigure({ name, quantity, value, uncertainty, correction, isAwaited }: HeadFigureProps) {
   const unit = chooseDisplayUnit(quantity, value);
   const spread = uncertainty === null || uncertainty === undefined ? null : fromSi(uncertainty, unit);
   const more = correction ? writeCorrection(fromSi(value, unit), spread, fromSi(correction, unit)) : undefined;
@@ -31,6 +33,7 @@ function HeadFigure({ name, quantity, value, uncertainty, correction }: HeadFigu
       <dt className="caption">{name}</dt>
       <dd>
         <BigUncertain value={fromSi(value, unit)} uncertainty={spread} unit={unit.symbol} />
+        {isAwaited && <span className="head-correction soft">smooth body …</span>}
         {more && (
           <span className="head-correction soft" title="What the curved surfaces behind the facets are predicted to add; no part of the figure.">
             smooth body <span className="figure">{more}</span>
@@ -43,13 +46,13 @@ function HeadFigure({ name, quantity, value, uncertainty, correction }: HeadFigu
 }
 
 /** Mass, volume and surface, each with what is in doubt about it. */
-export function HeadFigures({ statement }: { statement: StatementRecord }) {
+export function HeadFigures({ statement, isExamining }: { statement: StatementRecord; isExamining: boolean }) {
   const { massKg, volumeM3, areaM2, uncertainty, correction } = statement;
   return (
     <dl className="head-figures">
-      {massKg !== null && <HeadFigure name="Mass" quantity="mass" value={massKg} uncertainty={uncertainty?.massKg} correction={correction?.massKg} />}
-      {volumeM3 !== null && <HeadFigure name="Volume" quantity="volume" value={volumeM3} uncertainty={uncertainty?.volumeM3} correction={correction?.volumeM3} />}
-      <HeadFigure name="Surface" quantity="area" value={areaM2} uncertainty={uncertainty?.areaM2} correction={correction?.areaM2} />
+      {massKg !== null && <HeadFigure name="Mass" quantity="mass" value={massKg} uncertainty={uncertainty?.massKg} correction={correction?.massKg} isAwaited={isExamining} />}
+      {volumeM3 !== null && <HeadFigure name="Volume" quantity="volume" value={volumeM3} uncertainty={uncertainty?.volumeM3} correction={correction?.volumeM3} isAwaited={isExamining} />}
+      <HeadFigure name="Surface" quantity="area" value={areaM2} uncertainty={uncertainty?.areaM2} correction={correction?.areaM2} isAwaited={isExamining} />
     </dl>
   );
 }

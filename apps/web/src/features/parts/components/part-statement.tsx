@@ -91,7 +91,7 @@ export function PartStatement({ part, editor, state, ownName, materials, onRepla
         )}
         {measurement && <SoundnessSection measurement={measurement} run={run} setting={draft} editor={own} />}
         {measurement && (
-          <FiguresSection soundness={measurement.soundness} statement={statement} shellFault={findShellFault(measurement, draft)} isMixed={(draft.shellDensities ?? []).length > 0} editor={own} />
+          <FiguresSection measurement={measurement} statement={statement} shellFault={findShellFault(measurement, draft)} isMixed={(draft.shellDensities ?? []).length > 0} editor={own} />
         )}
         {statement && hasAxis && <AxisSection statement={statement} canEdit={can.edit} editor={editor} state={state} />}
         {measurement && statement?.uncertainty && <DoubtSection statement={statement} setting={draft} measurement={measurement} />}

@@ -16,6 +16,8 @@ const row = (change: Partial<PartRow>, lengthUnit: 'mm' | 'inch' | null = 'inch'
   }) as PartRow;
 const doubtful = row({ state: 'unit-doubt', unitDoubt: { lengthUnit: 'mm', volumeRatio: 16387.06 } });
 
+const standing = { defensible: true, closed: true, oriented: true, turned: false, selfIntersections: null, overlapping: false, examined: 'integrals' } as const;
+
 let done: string[] = [];
 function open(shown: PartRow, canEdit = true): void {
   done = [];
@@ -75,5 +77,12 @@ describe('what a row says in the place of its figures', () => {
   it('a part that has its figures, or a weight that contradicts them, has no sentence in their place', () => {
     expect(findNote(row({ state: 'ready' }))).toBeUndefined();
     expect(findNote(row({ state: 'weight-disagrees' }))).toBeUndefined();
+  });
+
+  it('figures that stand while the rest is examined stay in their columns; the unit is asked for all the same', () => {
+    expect(findNote(row({ state: 'measuring', soundness: standing }))).toBeUndefined();
+    expect(findNote(row({ state: 'measuring', soundness: null }))).toEqual({ text: '' });
+    expect(findNote(row({ state: 'measuring', soundness: standing }, null))).toMatchObject({ ask: 'unit' });
+    expect(findNote(row({ state: 'measuring', soundness: { ...standing, closed: null, oriented: false, defensible: false } }))?.text).toContain('do not cancel');
   });
 });
