@@ -5,9 +5,10 @@ import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { Worker } from 'node:worker_threads';
 import RAPIER from '@dimforge/rapier3d-compat';
-import { createIntegralsPass, createMeasurer, createMeshReader, writeAsciiStl, writeBinaryStl, type IntegralsPass } from '@masswright/geometry';
+import { createIntegralsPass, createMeasurer, createMeshReader, writeBinaryStl, type IntegralsPass } from '@masswright/geometry';
 import { OBJLoader, STLLoader } from 'three-stdlib';
 import { integrateByDataView } from './geometry/data-view-loop';
+import { seventeenDigits, sevenDigits, writeObjText, writeStlText } from './geometry/loader-texts';
 import { integratePacked } from './geometry/packed-integrals';
 
 /** Each figure is the median of so many rounds; in a round every task has its turn, so that a slow spell hits all alike. */
@@ -35,14 +36,6 @@ function makeSphere(rings: number): Float64Array {
     }
   }
   return Float64Array.from(corners);
-}
-
-/** A text OBJ of the facets, each with three vertices of its own. */
-function writeObj(corners: Float64Array): string {
-  const lines: string[] = [];
-  for (let at = 0; at < corners.length; at += 3) lines.push(`v ${corners[at]} ${corners[at + 1]} ${corners[at + 2]}`);
-  for (let facet = 0; facet < corners.length / 9; facet++) lines.push(`f ${3 * facet + 1} ${3 * facet + 2} ${3 * facet + 3}`);
-  return `${lines.join('\n')}\n`;
 }
 
 /** Reads a file chunk by chunk into one buffer, as a stream would hand it on. */
@@ -214,20 +207,22 @@ function writeLarge(file: string, small: Uint8Array, times: number): number {
   return facets;
 }
 
+/** Texts as exporters write them: seven digits, and as a second line all seventeen. Theirs take a text, or bytes that they make one of; ours takes bytes. */
 function compareLoaders(corners: Float64Array, { print }: Context): void {
   const facets = corners.length / 9;
-  const stl = writeAsciiStl(corners);
-  const obj = new TextEncoder().encode(writeObj(corners));
-  // Theirs take a text, or bytes that they make one of; ours takes bytes.
-  const { ours, theirs, oursObj, theirsObj } = compare({
-    ours: () => parseBytes(stl),
-    theirs: () => void new STLLoader().parse(stl.slice().buffer),
-    oursObj: () => parseBytes(obj),
-    theirsObj: () => void new OBJLoader().parse(new TextDecoder().decode(obj)),
-  });
+  const compareOne = (name: string, bar: string, bytes: Uint8Array<ArrayBuffer>, parse: (bytes: Uint8Array<ArrayBuffer>) => void): void => {
+    const { ours, theirs } = compare({ ours: () => parseBytes(bytes), theirs: () => parse(bytes) });
+    const speed = (bytes.length / ours / 1e6).toFixed(2);
+    print(`  ${name}: ${perFacet(ours, facets)} (${speed} GB/s) against ${perFacet(theirs, facets)}: ${ratio(theirs / ours)}${bar}`);
+  };
+  const parseStl = (bytes: Uint8Array<ArrayBuffer>): void => void new STLLoader().parse(bytes.slice().buffer);
+  const parseObj = (bytes: Uint8Array<ArrayBuffer>): void => void new OBJLoader().parse(new TextDecoder().decode(bytes));
   print(`text of ${facets} facets against three-stdlib's loaders, processor time:`);
-  print(`  ASCII STL ${perFacet(ours, facets)} against ${perFacet(theirs, facets)}: ${ratio(theirs / ours)} (bar: 30)`);
-  print(`  OBJ ${perFacet(oursObj, facets)} against ${perFacet(theirsObj, facets)}: ${ratio(theirsObj / oursObj)} (bar: 100)`);
+  compareOne('ASCII STL, 7 digits', ' (bar: 30)', writeStlText(corners, sevenDigits), parseStl);
+  compareOne('ASCII STL, 17 digits', '', writeStlText(corners, seventeenDigits), parseStl);
+  compareOne('OBJ of shared vertices, 7 digits', ' (bar: 100)', writeObjText(corners, sevenDigits, false), parseObj);
+  compareOne('OBJ of shared vertices, 17 digits', '', writeObjText(corners, seventeenDigits, false), parseObj);
+  compareOne('OBJ with texture places and normals, 7 digits', '', writeObjText(corners, sevenDigits, true), parseObj);
 }
 
 /** What the library costs, each figure beside its bar. */

@@ -76,7 +76,28 @@ function readVertex(at: usize, target: usize): usize {
   }
 }
 
+/** Three corners counted from the first vertex, a space before each and LF after the last: what most lines are. */
+@inline function readTriangle(at: usize, target: usize, vertexCount: u64): usize {
+  let p = at;
+  for (let corner: usize = 0; corner < 12; corner += 4) {
+    if (load<u8>(p) != 32) return 0;
+    const word = p + 1;
+    const bytes = load<u64>(word);
+    const digits = countDigits(bytes);
+    if (digits == 0 || digits == 8) return 0;
+    const place = joinDigits(bytes, digits) - 1;
+    p = pass(word, digits);
+    if (load<u8>(p) == 47) p = passReference(p);
+    if (place >= vertexCount || p - word > LONGEST_WORD) return 0;
+    store<u32>(target + corner, <u32>place);
+  }
+  store<u32>(target, NO_CORNER, 12);
+  return load<u8>(p) == lineFeed ? p + 1 : 0;
+}
+
 function readPolygon(at: usize, target: usize, vertexCount: u64): usize {
+  const usual = readTriangle(at, target, vertexCount);
+  if (usual != 0) return usual;
   let p = at;
   let corners = 0;
   store<u32>(target, NO_CORNER, 12);
