@@ -23,6 +23,9 @@ const mostFacets = 2000;
 const mostPairs = 50_000;
 /** Points inside of facets are asked by exact sums of many terms. */
 const mostInsides = 2000;
+/** Facets that the rays of all these points may meet: seconds. Where there are more, the rest is taken to touch and no more. */
+const mostFacetsMet = 20_000_000;
+const mostMetByInsides = 500_000;
 
 export function createContacts(shellCount: number): Contacts {
   // For each pair of shells facets and what they touch, in turn: arrays, since there may be many pairs.
@@ -66,9 +69,20 @@ export interface Passage {
 export function findPassages({ mesh, tree, shells }: { mesh: WeldedMesh; tree: FacetTree; shells: ShellTable }, contacts: Contacts, known: ReadonlySet<number>): Passage[] {
   const locations = new Map<number, Location>();
   let insides = 0;
+  let metByInsides = 0;
+  let met = 0;
   const locate = (probe: Probe): Location | undefined => {
-    if (!('vertex' in probe)) return insides++ < mostInsides ? locatePoint(mesh, tree, shells, probe) : undefined;
-    const location = locations.get(probe.vertex) ?? locatePoint(mesh, tree, shells, probe);
+    if (!('vertex' in probe)) {
+      if (insides >= mostInsides || metByInsides > mostMetByInsides) return undefined;
+      const location = locatePoint(mesh, tree, shells, probe);
+      insides += 1;
+      metByInsides += location.facetsMet;
+      return location;
+    }
+    const known = locations.get(probe.vertex);
+    if (known !== undefined || met > mostFacetsMet) return known;
+    const location = locatePoint(mesh, tree, shells, probe);
+    met += location.facetsMet;
     locations.set(probe.vertex, location);
     return location;
   };

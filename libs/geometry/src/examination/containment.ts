@@ -8,18 +8,27 @@ import { facetsOfShell, type ShellTable } from './shells';
 /** Points of a shell that are tried where others lie on the surface of the shell that is asked about. */
 const mostProbes = 2000;
 
+/** Facets that all rays may meet before the mesh is given up as too entangled: some seconds' work. Points inside of facets are asked by exact sums of many terms. */
+export const usualFacetsMet = 20_000_000;
+const costOfInside = 10;
+
 /**
  * For each shell the closed shells that it lies within, ascending. One point of the shell is asked for all others at once; where it lies on the surface of one of
  * them, further points are, vertices first. Shells that coincide are taken as one within the other: a body within the wall that it fills, else the later one.
+ *
+ * @returns undefined where too many shells lie in or upon each other to be told apart in some seconds
  */
-export function findContainers(mesh: WeldedMesh, tree: FacetTree, shells: ShellTable, figures: ShellFigures, asked: Iterable<number>): number[][] {
+export function findContainers(mesh: WeldedMesh, tree: FacetTree, shells: ShellTable, figures: ShellFigures, asked: Iterable<number>, mostFacetsMet = usualFacetsMet): number[][] | undefined {
   const containers: number[][] = Array.from({ length: shells.count }, () => []);
   const mayContain = (outer: number, inner: number): boolean => outer !== inner && shells.open[outer] === 0 && figures.signs[outer] !== 0 && isBoxWithin(figures.boxes, inner, outer);
+  let met = 0;
   for (const shell of asked) {
     const found = new Set<number>();
     let undecided: Set<number> | undefined;
     for (const probe of probesOf(mesh, facetsOfShell(shells, shell))) {
-      const { windings, touched } = locatePoint(mesh, tree, shells, probe);
+      const { windings, touched, facetsMet } = locatePoint(mesh, tree, shells, probe);
+      met += 'vertex' in probe ? facetsMet : costOfInside * facetsMet;
+      if (met > mostFacetsMet) return undefined;
       const before = undecided;
       for (const outer of windings.keys()) if (!touched.has(outer) && mayContain(outer, shell) && before?.has(outer) !== false) found.add(outer);
       undecided = new Set([...touched].filter((outer) => mayContain(outer, shell) && before?.has(outer) !== false));

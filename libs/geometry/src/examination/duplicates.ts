@@ -17,7 +17,8 @@ export function checkDuplicates(notes: Notes, { edgeCount, starts, halfEdges }: 
     const first = halfEdges[begin] ?? 0;
     const greater = Math.max(fromVertex(mesh, first), toVertex(mesh, first));
     if (end - begin === 2 && oppositeVertex(mesh, first) !== oppositeVertex(mesh, halfEdges[begin + 1] ?? 0)) continue;
-    groups.push(...groupByOpposite(notes, halfEdges.subarray(begin, end), greater));
+    // Not by spreading: one edge may have more groups than a call can take arguments.
+    for (const group of groupByOpposite(notes, halfEdges.subarray(begin, end), greater)) groups.push(group);
   }
   for (const group of groups) {
     notes.add('duplicate-facets', group.length - 1);

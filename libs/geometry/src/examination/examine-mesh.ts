@@ -19,6 +19,8 @@ export interface ExaminationContext {
   body: BodyIntegrals;
   /** Meshes of more facets are not searched for self-intersections. */
   maximumIntersectionFacets?: number;
+  /** Shells whose places take more than so many facets on the way of rays are not told apart: which lies in which stays unknown, and no cavities are counted. */
+  maximumFacetsMet?: number;
 }
 
 export interface Examination {
@@ -44,7 +46,7 @@ export const usualIntersectionFacets = 200_000;
  * otherwise than it is stored (facets turned, hairlines closed) is told by the findings.
  */
 export function examineMesh(mesh: WeldedMesh, context: ExaminationContext): Examination {
-  const { origin, boundingBox, remarks, maximumIntersectionFacets = usualIntersectionFacets } = context;
+  const { origin, boundingBox, remarks, maximumIntersectionFacets = usualIntersectionFacets, maximumFacetsMet } = context;
   const diagonal = findDiagonal(boundingBox);
   const notes = createNotes(mesh);
   for (const [kind, occurrence] of Object.entries(remarks) as [FindingKind, Occurrence][]) notes.addOccurrence(kind, occurrence);
@@ -54,7 +56,7 @@ export function examineMesh(mesh: WeldedMesh, context: ExaminationContext): Exam
   const work = mended?.mesh ?? mesh;
   const body = mended?.body ?? context.body;
   const encloses = oriented || mended !== undefined;
-  const found = examineShells(notes, work, shells, { ...surface, fileFacets: mesh.facetCount, diagonal, isWholeNegative: encloses && body.volumeSign < 0, maximumIntersectionFacets });
+  const found = examineShells(notes, work, shells, { ...surface, fileFacets: mesh.facetCount, diagonal, isWholeNegative: encloses && body.volumeSign < 0, maximumIntersectionFacets, maximumFacetsMet });
   const read = readBody(notes, mesh, mended, body, found, origin, diagonal);
   if (encloses && read.volumeSign === 0) notes.add('no-volume');
 
@@ -65,7 +67,7 @@ export function examineMesh(mesh: WeldedMesh, context: ExaminationContext): Exam
     outward: surface.outward,
     turned: found.turned !== undefined,
     shells: shells.count,
-    cavities: kinds.filter((kind) => kind === 'cavity').length,
+    cavities: found.judged.containers === undefined ? null : kinds.filter((kind) => kind === 'cavity').length,
     selfIntersections: found.selfIntersections,
     defensible: encloses && read.volumeSign !== 0 && notes.count('overlapping-shells') === 0,
   });

@@ -26,6 +26,7 @@ export interface ShellContext {
   /** Groups of facets with the same corners. */
   duplicates: readonly (readonly number[])[];
   maximumIntersectionFacets: number;
+  maximumFacetsMet: number | undefined;
 }
 
 /** How the shells lie to each other, how each is read, and which facets pass through each other; notes what is wrong. */
@@ -36,7 +37,7 @@ export function examineShells(notes: Notes, mesh: WeldedMesh, shells: ShellTable
   const needsTree = shells.count > 0 && (fileFacets <= maximumIntersectionFacets || context.duplicates.length > 0 || closePairs === undefined || closePairs.length > 0);
   const tree = needsTree ? createFacetTree(mesh, listShellFacets(shells)) : undefined;
   const asked = closePairs === undefined ? Array.from({ length: shells.count }, (_, shell) => shell) : listInner(figures.boxes, closePairs);
-  const containers = tree === undefined ? [] : findContainers(mesh, tree, shells, figures, asked.filter((shell) => shells.open[shell] === 0));
+  const containers = tree === undefined ? [] : findContainers(mesh, tree, shells, figures, asked.filter((shell) => shells.open[shell] === 0), context.maximumFacetsMet);
   const reading = readShells(shells, figures, containers, context.isWholeNegative);
   const turned = spreadTurns(shells, reading.turned);
   const flips = combine(turned, context.flipped);

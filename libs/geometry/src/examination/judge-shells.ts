@@ -14,19 +14,21 @@ export interface ShellReading {
 /**
  * Where the whole is negative, every facet is read the other way round; then only shells that lie within no other and are negative are, each by itself. What is
  * negative at an odd depth is a cavity. All else is left as it is and told.
+ *
+ * @param containers undefined where it was not examined: then no shell is turned by itself, nor misplaced
  */
-export function readShells(shells: ShellTable, figures: ShellFigures, containers: readonly (readonly number[])[], isWholeNegative: boolean): ShellReading {
+export function readShells(shells: ShellTable, figures: ShellFigures, containers: readonly (readonly number[])[] | undefined, isWholeNegative: boolean): ShellReading {
   const reading: ShellReading = { turned: new Uint8Array(shells.count), signs: new Int8Array(shells.count), misplaced: [] };
   for (let shell = 0; shell < shells.count; shell++) {
     if (shells.open[shell] === 1) continue;
-    const depth = containers[shell]?.length ?? 0;
+    const depth = containers?.[shell]?.length ?? 0;
     const stored = figures.signs[shell] ?? 0;
     const whole = isWholeNegative ? -stored : stored;
-    const turnsBack = depth === 0 && whole < 0;
+    const turnsBack = containers !== undefined && depth === 0 && whole < 0;
     reading.turned[shell] = isWholeNegative !== turnsBack ? 1 : 0;
     const sign = turnsBack ? -whole : whole;
     reading.signs[shell] = sign;
-    if (sign !== 0 && sign > 0 === (depth % 2 === 1)) reading.misplaced.push(shell);
+    if (containers !== undefined && sign !== 0 && sign > 0 === (depth % 2 === 1)) reading.misplaced.push(shell);
   }
   return reading;
 }

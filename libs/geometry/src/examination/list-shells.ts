@@ -8,7 +8,8 @@ import { facetsOfShell, type ShellTable } from './shells';
 export interface JudgedShells {
   shells: ShellTable;
   figures: ShellFigures;
-  containers: readonly (readonly number[])[];
+  /** Of each shell those around it; undefined where there are too many to be told apart. */
+  containers: readonly (readonly number[])[] | undefined;
   reading: ShellReading;
   overlapping: ReadonlySet<number>;
 }
@@ -42,7 +43,7 @@ export function listShells(fileFacets: number, judged: JudgedShells, kinds: read
     const kind = kinds[shell] ?? 'open';
     const own = integrate(facets);
     const body = facets.length === all.length || kind === 'open' ? own : integrate(all);
-    const parent = findParent(figures, containers[shell] ?? []);
+    const parent = findParent(figures, containers?.[shell] ?? []);
     const box = Array.from(figures.boxes.subarray(6 * shell, 6 * shell + 6), (bound) => bound + 0);
     return {
       kind,

@@ -14,6 +14,8 @@ export interface Location {
   windings: Map<number, number>;
   /** Shells on whose surface the point lies. */
   touched: Set<number>;
+  /** Facets whose boxes the ray met: what it cost. */
+  facetsMet: number;
 }
 
 /**
@@ -21,7 +23,7 @@ export interface Location {
  * would graze an edge or a corner, the point is taken as moved by infinitesimals along y and z, and a smaller one along z. A point on a facet touches its shell.
  */
 export function locatePoint(mesh: WeldedMesh, tree: FacetTree, shells: ShellTable, probe: Probe): Location {
-  const location: Location = { windings: new Map(), touched: new Set() };
+  const location: Location = { windings: new Map(), touched: new Set(), facetsMet: 0 };
   const { coordinates, corners } = mesh;
   const place = placeOf(mesh, probe);
   // The rounding of a place inside a facet; boxes are asked a little wider.
@@ -38,9 +40,12 @@ export function locatePoint(mesh: WeldedMesh, tree: FacetTree, shells: ShellTabl
     return dz !== 0 ? -Math.sign(dz) : Math.sign(dy);
   };
   const touches = (a: number, b: number, c: number): boolean => {
+    const isOwn = isPartOf(probe, a, b, c);
+    if (!isOwn && sideOf(a, b, c) !== 0) return false;
     for (let i = 0; i < 3; i++) {
       const j = (i + 1) % 3;
       if (findTurn(coordinates, i, j, a, b, c) === 0) continue;
+      if (isOwn) return true;
       const turns = [turnOf(i, j, a, b), turnOf(i, j, b, c), turnOf(i, j, c, a)];
       return !(turns.includes(1) && turns.includes(-1));
     }
@@ -48,11 +53,12 @@ export function locatePoint(mesh: WeldedMesh, tree: FacetTree, shells: ShellTabl
   };
 
   visitRay(tree, place, slack, (facet) => {
+    location.facetsMet += 1;
     const shell = shells.shellOf[facet] ?? noShell;
     const a = corners[3 * facet] ?? 0, b = corners[3 * facet + 1] ?? 0, c = corners[3 * facet + 2] ?? 0;
     if (shell === noShell || location.touched.has(shell)) return;
     const least = Math.min(coordinates[3 * a] ?? 0, coordinates[3 * b] ?? 0, coordinates[3 * c] ?? 0);
-    if (least <= place[0] + slack && sideOf(a, b, c) === 0 && touches(a, b, c)) {
+    if (least <= place[0] + slack && touches(a, b, c)) {
       location.touched.add(shell);
       return;
     }
@@ -62,6 +68,12 @@ export function locatePoint(mesh: WeldedMesh, tree: FacetTree, shells: ShellTabl
   });
   for (const [shell, winding] of location.windings) if (winding === 0) location.windings.delete(shell);
   return location;
+}
+
+/** Whether a point is one of a facet's corners, or the point inside of a facet with the same corners: it lies on the facet, which exact sums would take long to find. */
+function isPartOf(probe: Probe, a: number, b: number, c: number): boolean {
+  const isCorner = (vertex: number): boolean => vertex === a || vertex === b || vertex === c;
+  return 'vertex' in probe ? isCorner(probe.vertex) : probe.inside.every(isCorner);
 }
 
 function placeOf(mesh: WeldedMesh, probe: Probe): [number, number, number] {

@@ -113,9 +113,13 @@ function findFacing({ corners }: WeldedMesh, facet: number): number {
   return (a === least ? b : b === least ? c : a) === greatest ? 1 : 0;
 }
 
+/** Facets looked at for being in a common box, before there are too many such boxes. */
+const mostLookedAt = 50_000_000;
+
 /** Facets in the boxes that two shells have in common; none where there are more than the limit. */
 function findCommonFacets({ tree, shells, figures, closePairs, fileFacets, maximumIntersectionFacets }: OverlapSearch): Uint32Array {
   const found = new Set<number>();
+  let lookedAt = 0;
   for (const [one, two] of closePairs ?? []) {
     if (!encloses(shells, figures, one) || !encloses(shells, figures, two)) continue;
     const common = new Float64Array(6);
@@ -124,9 +128,10 @@ function findCommonFacets({ tree, shells, figures, closePairs, fileFacets, maxim
       common[k] = k < 3 ? Math.max(p, q) : Math.min(p, q);
     }
     const complete = visitBox(tree, common, (facet) => {
+      lookedAt += 1;
       const shell = shells.shellOf[facet];
       if (facet < fileFacets && (shell === one || shell === two)) found.add(facet);
-      return found.size <= maximumIntersectionFacets;
+      return found.size <= maximumIntersectionFacets && lookedAt <= mostLookedAt;
     });
     if (!complete) return new Uint32Array(0);
   }

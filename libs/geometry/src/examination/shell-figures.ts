@@ -6,7 +6,7 @@ import { facetsOfShell, type ShellTable } from './shells';
 /** Volume and box of each shell as the file has it, plainly summed: enough to tell its sign and to rank it, never recorded. */
 export interface ShellFigures {
   volumes: Float64Array;
-  /** Of the volumes; 0 where one can't be told from zero. */
+  /** Of the volumes; 0 where one can't be told from zero, or the shell is open. */
   signs: Int8Array;
   /** Six bounds a shell. */
   boxes: Float64Array;
@@ -20,6 +20,8 @@ export function findShellFigures(mesh: WeldedMesh, shells: ShellTable, diagonal:
     const facets = facetsOfShell(shells, shell);
     const { volume, size } = sumShell(mesh, facets, figures.boxes, 6 * shell);
     figures.volumes[shell] = volume;
+    // What is open has no volume, and soup has a million such shells.
+    if (shells.open[shell] === 1) continue;
     if (Math.abs(volume) > (facets.length + 16) * roundoff * size) figures.signs[shell] = Math.sign(volume);
     else figures.signs[shell] = integrateBody(mesh, firstCorner(mesh, facets), diagonal, { facets }).volumeSign;
   }

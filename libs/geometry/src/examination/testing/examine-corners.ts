@@ -19,7 +19,7 @@ export function weldFacets(corners: ArrayLike<number>): WeldedMesh {
 }
 
 /** Examines a mesh that is given as nine coordinates a facet, as the measurer does. */
-export function examineCorners(corners: Float64Array, maximumIntersectionFacets?: number): Examination {
+export function examineCorners(corners: Float64Array, maximumIntersectionFacets?: number, maximumFacetsMet?: number): Examination {
   const mesh = weldFacets(corners);
   const boundingBox = emptyBox();
   extendBox(boundingBox, { corners, normals: new Float64Array(0), count: mesh.facetCount, first: 0 });
@@ -33,6 +33,7 @@ export function examineCorners(corners: Float64Array, maximumIntersectionFacets?
     remarks: { 'degenerate-facets': { count: degenerate.length, facets: degenerate.slice(0, 20) } },
     body: integrateBody(mesh, origin, diagonal),
     maximumIntersectionFacets,
+    maximumFacetsMet,
   });
 }
 
