@@ -93,6 +93,7 @@ describe('shells with a density of their own, or left out', () => {
     const cases: [Measurement, Pick<Setting, 'shellDensities'>, RegExp][] = [
       [{ ...assembly, shells: null }, given, /not examined/],
       [{ ...assembly, soundness: { ...assembly.soundness, shells: 900 } }, given, /Only 4 shells/],
+      [{ ...assembly, soundness: { ...assembly.soundness, cavities: null } }, given, /lie in which was not examined/],
       [assembly, { shellDensities: [{ shell: 4, densityKgM3: 1 }] }, /no shell 5/],
       [assembly, { shellDensities: [{ shell: 3, densityKgM3: 1 }, { shell: 3, densityKgM3: 2 }] }, /two densities/],
       [{ ...assembly, shells: shells.map((shell, k) => (k === 2 ? { ...shell, kind: 'open', volume: null } : shell)) }, given, /Shell 3 is open/],

@@ -44,6 +44,7 @@ export interface ShellBody {
 export function checkShellDensities({ shells, soundness }: Pick<Measurement, 'shells' | 'soundness'>, { shellDensities = [] }: Pick<Setting, 'shellDensities'>): string | undefined {
   if (shellDensities.length === 0) return undefined;
   if (!shells) return 'The shells of this mesh were not examined, so none can have a density of its own or be left out.';
+  if (soundness.cavities === null) return 'Which shells of this mesh lie in which was not examined, so none can have a density of its own or be left out.';
   if (soundness.shells === null || shells.length < soundness.shells) return `Only ${shells.length} shells of this mesh are listed, so none can have a density of its own or be left out.`;
   const seen = new Set<number>();
   for (const { shell } of shellDensities) {
