@@ -52,5 +52,9 @@ export function computeErrorBound(sums: FacetSums, of: 'body' | 'surface', diago
 /** Distance of the centroid from the local origin. */
 function findCentre(sums: FacetSums, at: number, firstDivisor: number, total: number): number {
   const [x = 0, y = 0, z = 0] = sums.high.subarray(at + 1, at + 4);
-  return Math.sqrt(x * x + y * y + z * z) / firstDivisor / total;
+  // Squares of fourth powers would leave the range at either end; a power of two changes no other bit.
+  const largest = Math.max(Math.abs(x), Math.abs(y), Math.abs(z));
+  const unit = largest > 1e150 ? 6.223015277861142e-61 : largest < 1e-100 ? 2.037035976334486e90 : 1;
+  const [a, b, c] = [x * unit, y * unit, z * unit];
+  return Math.sqrt(a * a + b * b + c * c) / unit / firstDivisor / total;
 }
