@@ -55,16 +55,19 @@ const binaryShare = 1 / 16_777_216;
 const writtenShare = 5e-6;
 const binaryFormats: readonly Measurement['format'][] = ['stl-binary', 'ply-binary', 'gltf', 'glb'];
 
+/** Half the length of all edges of a mesh of n even facets is about 2 √(A n); twice that is taken, since facets are uneven. */
+const edgesPerRoot = 4;
+
 /**
  * Every vertex within ε of where it was meant: |δ∫f dV| ≤ ε ∫|f| dA, and ∫|x| dA ≤ √(A ∫x² dA), ∫|xy| dA ≤ √(∫x² dA ∫y² dA) by Cauchy and Schwarz.
- * A bound, and a wide one: roundings of many vertices cancel.
+ * A bound, and a wide one: roundings of many vertices cancel. The area changes by at most ε times half the length of all edges, which is estimated from its facets.
  */
-function boundRounding({ area, surfaceSecond: { xx, yy, zz } }: MeasuredBody, { boundingBox: { min, max }, format }: Measurement, unit: LengthUnit): BodyChange[] {
+function boundRounding({ area, surfaceSecond: { xx, yy, zz } }: MeasuredBody, { boundingBox: { min, max }, format, facets }: Measurement, unit: LengthUnit): BodyChange[] {
   const share = binaryFormats.includes(format) ? binaryShare : writtenShare;
   const squares = ([0, 1, 2] as const).reduce<number>((sum, k) => sum + square(share * Math.max(Math.abs(min[k]), Math.abs(max[k]))), 0);
   const offset = convertToMetres(Math.sqrt(squares), unit);
   const spread = (one: number, other: number): number => offset * Math.sqrt(Math.max(0, one * other));
-  return boundChanges(offset * area, [spread(area, xx), spread(area, yy), spread(area, zz)], { xx: offset * xx, yy: offset * yy, zz: offset * zz, xy: spread(xx, yy), yz: spread(yy, zz), zx: spread(zz, xx) });
+  return boundChanges(offset * area, [spread(area, xx), spread(area, yy), spread(area, zz)], { xx: offset * xx, yy: offset * yy, zz: offset * zz, xy: spread(xx, yy), yz: spread(yy, zz), zx: spread(zz, xx) }, offset * edgesPerRoot * Math.sqrt(area * facets));
 }
 
 const square = (x: number): number => x * x;

@@ -28,6 +28,12 @@ function roundTo(value: number, decimals: number): number {
   const digits = exponent + decimals + 1;
   // All of it lies below the place, or begins just there.
   if (digits < 0) return 0;
-  if (digits === 0) return Number(`${Math.round(Number(`${value}e${decimals}`))}e${-decimals}`) + 0;
+  if (digits === 0) return Number(`${Math.round(shiftPoint(value, decimals))}e${-decimals}`) + 0;
   return Number(value.toPrecision(Math.min(digits, 17)));
+}
+
+/** A number times a power of ten, by its decimal digits: nothing is rounded on the way. */
+function shiftPoint(value: number, places: number): number {
+  const [digits = '0', exponent = '0'] = String(value).split('e');
+  return Number(`${digits}e${Number(exponent) + places}`);
 }
