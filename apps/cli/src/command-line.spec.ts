@@ -37,6 +37,7 @@ describe('the command line', () => {
     [['a.stl', '--axis', 'w'], '--axis w:'],
     [['a.stl', '--axis', '0,0,1'], '--axis 0,0,1:'],
     [['a.stl', '--axis', '0,0,0@1,2,3'], 'the direction needs'],
+    [['a.stl', '--axis', '0,0,0x10@1,2,3'], '--axis 0,0,0x10@1,2,3:'],
     [['a.stl', '--axis', '0,0,1@1,2'], '--axis 0,0,1@1,2:'],
     [['a.stl', '--format', 'xml'], '"xml" is no format'],
     [['a.stl', '--fast'], '--fast'],

@@ -94,7 +94,7 @@ function readAxis(text: string): AskedAxis {
 }
 
 function readVector(text: string): Vector3 | undefined {
-  const numbers = text.split(',').map((word) => (word.trim() === '' ? NaN : Number(word)));
+  const numbers = text.split(',').map((word) => (/^\s*[+-]?(?:\d+\.?\d*|\.\d+)(?:e[+-]?\d+)?\s*$/i.test(word) ? Number(word) : NaN));
   const [x = NaN, y = NaN, z = NaN] = numbers;
   return numbers.length === 3 && numbers.every((number) => Number.isFinite(number)) ? [x, y, z] : undefined;
 }

@@ -3,7 +3,7 @@ import { stat } from 'node:fs/promises';
 import path from 'node:path';
 import { Worker } from 'node:worker_threads';
 import type { Measurement } from '@masswright/contracts';
-import { createIntegralsPass, createMeasurer, defaultLimits, type IntegralsPass } from '@masswright/geometry';
+import { createIntegralsPass, createMeasurer, defaultLimits, MeshError, type IntegralsPass } from '@masswright/geometry';
 import { readChunks } from './read-chunks';
 
 /** A smaller file is examined in one reading. */
@@ -30,8 +30,15 @@ export async function measureFile(file: string, quick: boolean, onProgress: (sha
   const measurement = await integrate(file, size, hash.take, half(0));
   const sha256 = await hash.end();
   if (quick) return { sha256, measurement };
-  if (measurement.facets > defaultLimits.maximumExaminedFacets) return { sha256, measurement: { ...measurement, examined: 'limited' } };
-  return { sha256, measurement: await push(file, size, createMeasurer({ sizeBytes: size }), () => undefined, half(0.5)) };
+  const limited: Measurement = { ...measurement, examined: 'limited' };
+  if (measurement.facets > defaultLimits.maximumExaminedFacets) return { sha256, measurement: limited };
+  try {
+    return { sha256, measurement: await push(file, size, createMeasurer({ sizeBytes: size }), () => undefined, half(0.5)) };
+  } catch (error) {
+    // The file was read once without a fault: what is refused now is too large for the memory that there is.
+    if (error instanceof MeshError) return { sha256, measurement: limited };
+    throw error;
+  }
 }
 
 async function integrate(file: string, size: number, alsoTake: (chunk: Uint8Array) => void, onProgress: (share: number) => void): Promise<Measurement> {

@@ -66,15 +66,19 @@ export async function measureObject(
     const first = await integrate(reading, object.sizeBytes);
     if (first.kind !== 'measured') return first;
     const { sha256, measurement } = first;
-    if (measurement.facets > defaultLimits.maximumExaminedFacets) return { kind: 'measured', sha256, measurement: { ...measurement, examined: 'limited' } };
-    // What is open has no figures yet, and may get some.
-    if (measurement.soundness.defensible) onFigures({ sha256, measurement });
-    return await examine(reading, object.sizeBytes, 'examining');
+    if (measurement.facets > defaultLimits.maximumExaminedFacets) return { kind: 'measured', sha256, measurement: withoutExamination(measurement) };
+    onFigures({ sha256, measurement });
+    const whole = await examine(reading, object.sizeBytes, 'examining');
+    // The file was read once without a fault: what is refused now is too large for the memory that there is.
+    return whole.kind === 'refused' ? { kind: 'measured', sha256, measurement: withoutExamination(measurement) } : whole;
   } catch (error) {
     if (error instanceof ObjectStorageError) return { kind: 'interrupted', code: error.code };
     throw error;
   }
 }
+
+/** What stands of a mesh that can't be examined to the end. */
+export const withoutExamination = (measurement: Measurement): Measurement => ({ ...measurement, examined: 'limited' });
 
 async function integrate(reading: ObjectReading, sizeBytes: number): Promise<MeasuringOutcome> {
   let pass: IntegralsPass = createIntegralsPass({ sizeBytes });

@@ -22,7 +22,7 @@ import type { JobPayload } from '@masswright/jobs';
 import { summarisePart } from '@masswright/mechanics';
 import { HandedBackError, SupersededError, TryAgainError, PostponedError, type JobContext } from '../queue/job-handlers';
 import { LatestOnly } from './latest-only';
-import { isReadTwice, type FirstFigures, type MeasuringOutcome, type MeasuringProgress } from './measure-object';
+import { isReadTwice, withoutExamination, type FirstFigures, type MeasuringOutcome, type MeasuringProgress } from './measure-object';
 import type { ThreadNews } from './measure-thread';
 import { MeasuringThreads, TookTooLongError } from './measuring-threads';
 
@@ -75,7 +75,7 @@ export class MeasuringHandler {
       // Whoever took the run up after us does the rest, and says so when it is done.
       if (error instanceof SupersededError) throw error;
       if (error instanceof TookTooLongError) {
-        await (run.figures ? this.keep(run, withoutExamination(run.figures), context) : this.refuse(run, null, tookTooLong, context));
+        await (run.figures ? this.keep(run, { ...run.figures, measurement: withoutExamination(run.figures.measurement) }, context) : this.refuse(run, null, tookTooLong, context));
         return;
       }
       await this.inOrganisation(run, (tx) => handBackRun(tx, run)).catch(() => undefined);
@@ -142,6 +142,9 @@ export class MeasuringHandler {
 
   /** Lets people see the figures while the rest is examined. */
   private async show(run: Held, figures: FirstFigures, { requestId }: JobContext): Promise<void> {
+    run.figures = figures;
+    // What is open has no figures yet, and may get some.
+    if (!figures.measurement.soundness.defensible) return;
     const sha256 = Buffer.from(figures.sha256);
     await this.inOrganisation(run, async (tx) => {
       await setUploadHash(tx, run.uploadId, sha256);
@@ -151,7 +154,6 @@ export class MeasuringHandler {
       await this.audit(tx, run, requestId, 'measurement.show', { measurementId });
       await this.announce(tx, run, { state: 'running', stage: 'examining', progress: firstReadingShare });
     });
-    run.figures = figures;
   }
 
   private async note(run: Held, { stage: noted, bytesRead }: MeasuringProgress): Promise<void> {
@@ -225,9 +227,4 @@ export class MeasuringHandler {
     const { organisationId, projectId, partId } = run;
     return publishEvent(tx, { organisationId, event: { type: 'run', projectId, partId, ...state } });
   }
-}
-
-/** What is kept of a file whose examination took too long: the figures stand. */
-function withoutExamination({ sha256, measurement }: FirstFigures): FirstFigures {
-  return { sha256, measurement: { ...measurement, examined: 'limited' } };
 }
