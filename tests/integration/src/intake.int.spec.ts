@@ -308,5 +308,5 @@ describe('a file that takes too long', () => {
     worker = await startTestWorker(variables);
     await engineer.expect('POST', `/parts/${broken.id}/run`);
     expect((await engineer.waitForRun(broken.id)).state).toBe('ready');
-  });
+  }, 90_000);
 });

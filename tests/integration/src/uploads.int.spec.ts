@@ -121,10 +121,10 @@ describe('an upload', () => {
       await fetch(url, { method: 'PUT', headers, body: bodies[partNumber - 1] ?? null });
     }
     expect((await engineer.get<Upload>(`/uploads/${upload.id}`)).storedParts).toEqual(bodies.map((body, index) => ({ partNumber: index + 1, sizeBytes: body.length, sha256: hashOf(body) })));
-    const part = await engineer.waitForRun((await engineer.complete(upload.id)).id);
+    const part = await engineer.waitForRun((await engineer.complete(upload.id)).id, 60_000);
     expect(part.revision.run.error).toBeNull();
     expect(part.revision.sha256).toBe(createHash('sha256').update(bytes).digest('hex'));
-  });
+  }, 90_000);
 
   it('a part of another length, other bytes, another number or another key than granted is refused by the storage', async () => {
     const upload = await engineer.expect<Upload>('POST', `/projects/${projectId}/uploads`, { fileName: 'a.stl', sizeBytes: good.length });
