@@ -1,7 +1,7 @@
 import { HTMLSelect } from '@blueprintjs/core';
 import type { Measurement, Setting, StatementRecord } from '@masswright/contracts';
 import { formatFigure, fromSi, type Unit } from '@masswright/units';
-import { useId, useState } from 'react';
+import { useState } from 'react';
 import { PowerText } from '../../../components/figure';
 import { Uncertain } from '../../../components/uncertain';
 import { doubtfulFigures, listDoubt, listUncounted, type DoubtfulFigure, type LedgerLine } from '../model/doubt-ledger';
@@ -73,6 +73,8 @@ function Correction({ correction, unit }: { correction: number; unit: Unit }) {
   );
 }
 
+const selectId = 'doubt-figure';
+
 interface DoubtSectionProps {
   statement: StatementRecord;
   setting: Setting;
@@ -81,7 +83,6 @@ interface DoubtSectionProps {
 
 /** The doubt ledger: what the ± of a figure is made of, and what is not in it. */
 export function DoubtSection({ statement, setting, measurement }: DoubtSectionProps) {
-  const id = useId();
   const [chosen, setChosen] = useState('mass');
   const offered = doubtfulFigures.filter(({ read }) => read(statement) !== null);
   const figure = offered.find((one) => one.id === chosen) ?? offered[0];
@@ -97,10 +98,10 @@ export function DoubtSection({ statement, setting, measurement }: DoubtSectionPr
       <dl className="facts">
         <Fact name="Figure">
           <span className="doubt-figure">
-            <label className="hidden-visually" htmlFor={id}>
+            <label className="hidden-visually" htmlFor={selectId}>
               Doubt of
             </label>
-            <HTMLSelect id={id} value={figure.id} options={offered.map((one) => ({ value: one.id, label: one.name }))} onChange={(event) => setChosen(event.currentTarget.value)} />
+            <HTMLSelect id={selectId} value={figure.id} options={offered.map((one) => ({ value: one.id, label: one.name }))} onChange={(event) => setChosen(event.currentTarget.value)} />
             <Uncertain value={fromSi(value, unit)} uncertainty={spread === null ? null : fromSi(spread, unit)} unit={unit.symbol} />
           </span>
         </Fact>
