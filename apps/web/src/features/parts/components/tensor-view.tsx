@@ -47,18 +47,21 @@ export function TensorView({ tensor, uncertainty }: { tensor: InertiaTensor; unc
       <div className="caption tensor-title">Inertia tensor</div>
       <PictureView picture={computeTensorPlate({ tensor: shown, unit: unit.symbol, ...texts })} />
       {/* The same as the picture, for readers of the screen and for copying as a table. */}
-      <table className="hidden-visually">
-        <caption>Inertia tensor in {unit.symbol}</caption>
-        <tbody>
-          {rows.map((row) => (
-            <tr key={row[0] + row[1]}>
-              {row.map((name, index) => (
-                <td key={index}>{[texts.format(shown[name], name), texts.formatBelow?.(name) ?? ''].join(' ').trim()}</td>
-              ))}
-            </tr>
-          ))}
-        </tbody>
-      </table>
+      {/* A table is never narrower than what is in it: only a box around it can be. */}
+      <div className="hidden-visually">
+        <table>
+          <caption>Inertia tensor in {unit.symbol}</caption>
+          <tbody>
+            {rows.map((row) => (
+              <tr key={row[0] + row[1]}>
+                {row.map((name, index) => (
+                  <td key={index}>{[texts.format(shown[name], name), texts.formatBelow?.(name) ?? ''].join(' ').trim()}</td>
+                ))}
+              </tr>
+            ))}
+          </tbody>
+        </table>
+      </div>
       <figcaption>
         <span className="figure">{unit.symbol}</span> about the centre of mass, axes of the mesh frame; off-diagonals are matrix elements,{' '}
         <span className="figure">{tensor.offDiagonals}</span>.
