@@ -1,6 +1,7 @@
 export * from './attempts';
 export * from './deleted-parts';
 export * from './materials';
+export { presentMeasurement } from './measurement-rows';
 export * from './measuring';
 export * from './part-list';
 export * from './part-selection';

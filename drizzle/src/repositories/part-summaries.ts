@@ -3,7 +3,7 @@ import { eq, inArray, isNull } from 'drizzle-orm';
 import { fileNameKey, type Measurement, type PartState, type StoredSetting, type MeasuringRun, type Setting } from '@masswright/contracts';
 import { parts, partSummaries } from '../schema';
 import type { Transaction } from '../tenancy/database';
-import { presentMeasurement } from './measuring';
+import { presentMeasurement } from './measurement-rows';
 import { findParts, readStoredSetting, type StoredPart } from './parts';
 
 /** What a summary follows from, and what it says: `summarisePart` of mechanics, which this project doesn't know. */

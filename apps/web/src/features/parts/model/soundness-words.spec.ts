@@ -4,23 +4,9 @@ import { describe, expect, it } from 'vitest';
 import { describeFinding } from './finding-words';
 import { findRefusal } from './refusal-words';
 import { describeEdges, describeIntersections, describeVertices, describeVerdict, describeWinding, pickVerdict, type Verdict } from './soundness-words';
+import { makeMeasurement } from './testing/measurements';
 
-const sound: Soundness = {
-  closed: true,
-  oriented: true,
-  outward: true,
-  turned: false,
-  boundaryEdges: 0,
-  nonManifoldEdges: 0,
-  nonManifoldVertices: 0,
-  degenerateFacets: 0,
-  duplicateFacets: 0,
-  shells: 1,
-  cavities: 0,
-  selfIntersections: 0,
-  defensible: true,
-  findings: [],
-};
+const sound: Soundness = makeMeasurement().soundness;
 const open: Soundness = { ...sound, closed: false, oriented: false, boundaryEdges: 4, defensible: false };
 const notExamined = { boundaryEdges: null, nonManifoldEdges: null, nonManifoldVertices: null, shells: null, cavities: null, selfIntersections: null };
 const verdictOf = (soundness: Soundness, examined: Verdict['examined'] = 'whole') => describeVerdict(pickVerdict({ soundness, examined }));
